@@ -31,7 +31,7 @@ class Verdict(StrEnum):
 
 @dataclass(frozen=True, slots=True)
 class Amount:
-    """A value in a unit for display; ``text`` is as written, for stated values, else our rounding of the value."""
+    """A value in a unit for display; ``text`` is as written for stated values, else our rounding of the value."""
 
     value: float
     unit: str
@@ -86,7 +86,8 @@ class Finding:
     @property
     def fingerprint(self) -> str:
         """Identity from one revision to the next: rule, record and quantity, never a number or a line."""
-        return hashlib.sha256("\n".join((self.rule, self.record or "", self.quantity or "")).encode()).hexdigest()[:16]
+        identity = "\n".join((self.rule, self.record or "", self.quantity or ""))
+        return hashlib.sha256(identity.encode()).hexdigest()[:16]
 
 
 def reading_order(finding: Finding) -> tuple[int, str, int, int, str, str]:
@@ -137,6 +138,7 @@ class Checked:
     outcome: Outcome
     standing: Standing
     reason: str = ""
+    location: Location | None = None
 
 
 @dataclass(frozen=True, slots=True)
@@ -193,7 +195,11 @@ class StateRow:
 
 @dataclass(frozen=True, slots=True)
 class LedgerLine:
-    """One term of a ledger: ``side`` is ``change``, ``transfer`` or ``generation``; ``sign`` is its sign in the sum."""
+    """One term of a ledger: ``side`` is ``change``, ``transfer`` or ``generation``.
+
+    ``sign`` is its sign in the sum of its side, for the sign in which its amounts are written: ΔU +1, heat in
+    +1, work out −1 (+1 where the originator writes work as positive in).
+    """
 
     label: str
     symbol: str
@@ -323,3 +329,15 @@ class Review:
     def of_record(self, record: str | None) -> tuple[Finding, ...]:
         """Return the findings of a record (None: of the package itself)."""
         return tuple(finding for finding in self.findings if finding.record == record)
+
+    def verdict_of(self, record: RecordReview) -> Verdict:
+        """Return the verdict on one record alone: the definition for a package, held to what concerns it."""
+        grades = {finding.grade for finding in self.of_record(record.id)}
+        outcomes = {checked.outcome for checked in record.checked}
+        # What is inherited may have its origin, and so its finding, in another record.
+        inherited = (Outcome.WRONG, Standing.INHERITED) in {(c.outcome, c.standing) for c in record.checked}
+        if Grade.DISCREPANCY in grades or inherited:
+            return Verdict.REVISE
+        if not record.readable or Grade.QUERY in grades or Outcome.NOT_EVALUABLE in outcomes:
+            return Verdict.HOLD
+        return Verdict.ACCEPT_AS_NOTED if Grade.REMARK in grades else Verdict.ACCEPT
