@@ -31,7 +31,7 @@ class Verdict(StrEnum):
 
 @dataclass(frozen=True, slots=True)
 class Amount:
-    """A value in a unit for display; ``text`` is as written for stated values, else our rounding of the value."""
+    """A value in a unit for display; ``text`` is as written for a stated one, else our rounding."""
 
     value: float
     unit: str
@@ -87,7 +87,7 @@ class Finding:
     def fingerprint(self) -> str:
         """Identity from one revision to the next: rule, record and quantity, never a number or a line."""
         identity = "\n".join((self.rule, self.record or "", self.quantity or ""))
-        return hashlib.sha256(identity.encode()).hexdigest()[:16]
+        return hashlib.sha256(identity.encode("utf-8", "surrogatepass")).hexdigest()[:16]
 
 
 def reading_order(finding: Finding) -> tuple[int, str, int, int, str, str]:
