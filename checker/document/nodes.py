@@ -70,7 +70,7 @@ class Document:
         return node
 
     def position(self, place: Place, at_key: bool = False) -> Position:
-        """Return the position of the value (or key) at ``place``; of the nearest parent where it is missing."""
+        """Return the position of the value (or key) at ``place``; of the nearest parent where missing."""
         node: Node | None = self.root
         found = Position(1, 1) if node is None else node.position
         for depth, part in enumerate(place):
@@ -81,6 +81,13 @@ class Document:
                 return found
             found = node.position
         return found
+
+    def where(self, problem: Problem) -> Position:
+        """Return the line and column of a problem, at the part of the value that is meant."""
+        if problem.line is not None and problem.column is not None:
+            return Position(problem.line, problem.column)
+        start = self.position(problem.place, problem.at_key)
+        return Position(start.line, start.column + problem.offset)
 
 
 def child(node: Node | None, part: str | int) -> Node | None:
