@@ -1,0 +1,175 @@
+"""The review as JSON, for other programs; `review_schema` describes every field.
+
+Diagrams are left out: they are drawings of numbers that the state table already holds.
+"""
+
+from __future__ import annotations
+
+from dataclasses import fields
+from typing import BinaryIO
+
+from checker.findings import (
+    Amount,
+    Checked,
+    Finding,
+    Grade,
+    Ledger,
+    PackageNote,
+    RecordReview,
+    Review,
+    SheetLine,
+    StateRow,
+)
+from reports.jsontext import finite, write_json_text
+
+Tree = dict[str, object]
+
+
+def write_json(review: Review, stream: BinaryIO) -> None:
+    """Write the review as JSON."""
+    write_json_text(review_tree(review), stream)
+
+
+def review_tree(review: Review) -> Tree:
+    """Return the review as dicts, lists, text and finite numbers, keys in their fixed order."""
+    return {
+        "tool": dict(review.tool),
+        "package": {field.name: getattr(review.package, field.name) for field in fields(PackageNote)},
+        "verdict": review.verdict.value,
+        "counts": {grade.value: review.count(grade) for grade in Grade},
+        "records": [_record(review, record) for record in review.records],
+        "findings": [_finding(finding) for finding in review.findings],
+        "basis": dict(review.basis),
+        "cautions": list(review.cautions),
+    }
+
+
+def _record(review: Review, record: RecordReview) -> Tree:
+    return {
+        "id": record.id,
+        "title": record.title,
+        "readable": record.readable,
+        "verdict": review.verdict_of(record).value,
+        "models": list(record.models),
+        "checked": [_checked(item) for item in record.checked],
+        "rules_held": list(record.rules_held),
+        "not_checked": [{"what": item.what, "missing": item.missing} for item in record.not_checked],
+        "assumed": list(record.assumed),
+        "states": [_state(row) for row in record.states],
+        "ledgers": [_ledger(ledger) for ledger in record.ledgers],
+        "sheet": [_step(line) for line in record.sheet],
+    }
+
+
+def _amount(amount: Amount | None) -> Tree | None:
+    if amount is None:
+        return None
+    return {"value": finite(amount.value), "unit": amount.unit, "text": amount.text}
+
+
+def _finding(finding: Finding) -> Tree:
+    place = finding.location
+    return {
+        "rule": finding.rule,
+        "theme": finding.theme,
+        "grade": finding.grade.value,
+        "record": finding.record,
+        "quantity": finding.quantity,
+        "role": finding.role,
+        "stated": _amount(finding.stated),
+        "recomputed": _amount(finding.recomputed),
+        "carried": _amount(finding.carried),
+        "deviation": finite(finding.deviation),
+        "half_width": finite(finding.half_width),
+        "tolerance": finite(finding.tolerance),
+        "origin": finding.origin,
+        "inherits_from": list(finding.inherits_from),
+        "spoils": list(finding.spoils),
+        "causes": [
+            {"slip": c.slip, "value": finite(c.value), "statement": c.statement} for c in finding.causes
+        ],
+        "message": finding.message,
+        "suggestion": finding.suggestion,
+        "basis": finding.basis,
+        "formula": finding.formula,
+        "fingerprint": finding.fingerprint,
+        "location": place
+        and {"file": place.file, "line": place.line, "column": place.column, "pointer": place.pointer},
+    }
+
+
+def _checked(item: Checked) -> Tree:
+    return {
+        "quantity": item.quantity,
+        "symbol": item.symbol,
+        "role": item.role,
+        "stated": _amount(item.stated),
+        "recomputed": _amount(item.recomputed),
+        "carried": _amount(item.carried),
+        "deviation": finite(item.deviation),
+        "tolerance": finite(item.tolerance),
+        "outcome": item.outcome.value,
+        "standing": item.standing.value,
+        "reason": item.reason,
+    }
+
+
+def _state(row: StateRow) -> Tree:
+    return {
+        "state": row.state,
+        "body": row.body,
+        "phase": row.phase,
+        "properties": [
+            {
+                "symbol": cell.symbol,
+                "name": cell.name,
+                "stated": _amount(cell.stated),
+                "recomputed": _amount(cell.recomputed),
+                "deviation": finite(cell.deviation),
+                "outcome": cell.outcome and cell.outcome.value,
+            }
+            for cell in row.cells
+        ],
+    }
+
+
+def _ledger(ledger: Ledger) -> Tree:
+    return {
+        "process": ledger.process,
+        "kind": ledger.kind,
+        "unit": ledger.unit,
+        "terms": [
+            {
+                "label": line.label,
+                "symbol": line.symbol,
+                "side": line.side,
+                "sign": line.sign,
+                "stated": _amount(line.stated),
+                "recomputed": _amount(line.recomputed),
+            }
+            for line in ledger.lines
+        ],
+        "residual_stated": finite(ledger.residual_stated),
+        "residual_recomputed": finite(ledger.residual_recomputed),
+        "closes_stated": ledger.closes_stated,
+        "closes_recomputed": ledger.closes_recomputed,
+    }
+
+
+def _step(line: SheetLine) -> Tree:
+    return {
+        "title": line.title,
+        "formula": line.formula,
+        "substituted": line.substituted,
+        "outputs": [
+            {
+                "quantity": output.quantity,
+                "symbol": output.symbol,
+                "independent": _amount(output.independent),
+                "carried": _amount(output.carried),
+                "stated": _amount(output.stated),
+            }
+            for output in line.outputs
+        ],
+        "note": line.note,
+    }
