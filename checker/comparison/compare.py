@@ -1,0 +1,187 @@
+"""Every stated result against its independent and its carried value (design, sections 5 and 6)."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Mapping
+from dataclasses import dataclass, replace
+
+from checker.basis import Basis
+from checker.comparison.carried import Carried
+from checker.comparison.datums import NO_SHIFT, Shift
+from checker.comparison.moves import Moves
+from checker.comparison.references import References
+from checker.findings import Outcome, Standing
+from checker.outcomes import NotEvaluable
+from checker.sheet.step import Found, Sheet, Values
+from checker.submission import Record, Role, Statement
+
+ILL_CONDITIONED = 0.10
+"""Largest part of its reference quantity that open input digits may move a result (design, section 6)."""
+
+
+@dataclass(frozen=True, slots=True)
+class Compared:
+    """One statement held against the alternate calculation; SI, program's sign, model's datum.
+
+    Attributes
+    ----------
+    stated : float
+        The stated value.
+    independent, carried : float, None or NotEvaluable
+        Recomputed from inputs alone, and from the originator's own stated values.
+    tolerance : float
+        Allowance + U (k = 2), which includes the half-width of the stated digits.
+    digit_move : float
+        What the last digits of the inputs would move.
+    open_tolerance : float
+        The tolerance where zeros ending the stated integer are not significant.
+    explained_by_digits : bool
+        Beyond the tolerance, but the inputs' last digits or the stated value's open zeros explain it.
+    inherits_from : tuple of str
+        Keys of wrong stated ancestors.
+    """
+
+    statement: Statement
+    key: str
+    stated: float
+    independent: Found
+    carried: Found
+    deviation: float | None
+    allowance: float
+    tolerance: float
+    open_tolerance: float
+    carried_tolerance: float
+    digit_move: float
+    outcome: Outcome
+    standing: Standing
+    shift: Shift
+    reason: str = ""
+    explained_by_digits: bool = False
+    inherits_from: tuple[str, ...] = ()
+
+
+def compare_all(
+    record: Record,
+    sheet: Sheet,
+    values: Values,
+    carried: Carried,
+    moves: Moves,
+    references: References,
+    shifts: Mapping[str, Shift],
+    basis: Basis,
+) -> tuple[Compared, ...]:
+    """Return a comparison for every stated result and every surplus input, in document order."""
+    found = [
+        _compare(statement, sheet, values, carried, moves, references, shifts, basis)
+        for statement in record.statements
+        if statement.usable and not statement.term.text and _is_compared(statement, sheet)
+    ]
+    wrong = {c.key for c in found if c.outcome is Outcome.WRONG}
+    return tuple(_with_standing(c, sheet, carried, wrong) for c in found)
+
+
+def _is_compared(statement: Statement, sheet: Sheet) -> bool:
+    """Results always; an input only where the sheet found the quantity by another way (a surplus input)."""
+    if statement.pointer.startswith(("assumptions/", "surroundings/")):
+        return False
+    if statement.role is Role.RESULT:
+        return True
+    key = sheet.key(statement.pointer)
+    step = sheet.made_by.get(key)
+    return step is not None and f"given/{key}" not in step.parents
+
+
+def _compare(
+    statement: Statement,
+    sheet: Sheet,
+    values: Values,
+    carried: Carried,
+    moves: Moves,
+    references: References,
+    shifts: Mapping[str, Shift],
+    basis: Basis,
+) -> Compared:
+    key = sheet.key(statement.pointer)
+    shift = shifts.get(statement.pointer, NO_SHIFT)
+    independent = _value_of(key, sheet, values, shift)
+    stated = statement.value - shift.value
+    half_width, k = statement.quantity.half_width, basis.coverage_factor
+    size = independent if isinstance(independent, float) else stated
+    allowance = references.allowance(key, size)
+    propagated = moves.uncertainty.get(key, 0.0)
+    tolerance = allowance + _expanded(half_width, propagated, k)
+    open_tolerance = allowance + _expanded(statement.quantity.open_half_width, propagated, k)
+    move = moves.digits.get(key, 0.0)
+    bare = Compared(
+        statement,
+        key,
+        stated,
+        independent,
+        carried.value(key),
+        None,
+        allowance,
+        tolerance,
+        open_tolerance,
+        tolerance + carried.spread(key),
+        move,
+        Outcome.NOT_EVALUABLE,
+        Standing.NOT_EVALUABLE,
+        shift,
+    )
+    return _judged(bare, references, key in moves.broken)
+
+
+def _expanded(half_width: float, propagated: float, k: float) -> float:
+    return math.hypot(k * half_width / math.sqrt(3.0), propagated)
+
+
+def _value_of(key: str, sheet: Sheet, values: Values, shift: Shift) -> Found:
+    if not shift.comparable:
+        return NotEvaluable(f"{shift.note}, and a single value of it cannot be compared", "missing")
+    if key in values:
+        return values[key]
+    return NotEvaluable(sheet.missing.get(key, "it follows from no input"), "missing")
+
+
+def _judged(bare: Compared, references: References, broken: bool) -> Compared:
+    """Return the comparison with deviation and outcome."""
+    value = bare.independent
+    if isinstance(value, NotEvaluable):
+        return replace(bare, reason=value.reason)
+    if not isinstance(value, float):
+        return replace(bare, outcome=Outcome.WRONG, reason="it does not exist in this state")
+    deviation = bare.stated - value
+    bare = replace(bare, deviation=deviation)
+    limit = ILL_CONDITIONED * references.reference(bare.key, value)
+    if (broken or bare.digit_move > limit) and bare.digit_move > bare.tolerance:
+        return replace(bare, reason="the last digits of the inputs move it too far to be judged")
+    if abs(deviation) <= bare.tolerance:
+        return replace(bare, outcome=Outcome.AGREES)
+    return replace(
+        bare,
+        outcome=Outcome.WRONG,
+        explained_by_digits=abs(deviation) <= max(bare.open_tolerance, bare.tolerance + bare.digit_move),
+    )
+
+
+def _with_standing(c: Compared, sheet: Sheet, carried: Carried, wrong: set[str]) -> Compared:
+    """Return the comparison with where its deviation comes from: the four cases of section 5."""
+    if c.outcome is Outcome.NOT_EVALUABLE:
+        return c
+    ancestors = sorted(sheet.ancestors(c.key) & wrong)
+    near = carried.agrees(c.key, c.stated, c.carried_tolerance)
+    if c.outcome is Outcome.AGREES:
+        cancels = near is False and bool(ancestors)
+        return replace(
+            c,
+            standing=Standing.ERRORS_CANCEL if cancels else Standing.HOLDS,
+            inherits_from=tuple(ancestors) if cancels else (),
+        )
+    if near is None:
+        return replace(c, standing=Standing.ORIGIN_UNKNOWN)
+    if not near:
+        return replace(c, standing=Standing.ORIGIN)
+    if ancestors:
+        return replace(c, standing=Standing.INHERITED, inherits_from=tuple(ancestors))
+    return replace(c, standing=Standing.EARLY_ROUNDING)

@@ -1,0 +1,110 @@
+"""The reference quantity of a comparison: what an allowance in per cent is a per cent of (design, section 6)."""
+
+from __future__ import annotations
+
+from collections.abc import Iterable
+from typing import Final
+
+from checker.basis import Basis
+from checker.sheet.keys import term_for
+from checker.sheet.step import Sheet, Values
+from checker.vocabulary import PER_MASS, Allowance
+
+ENERGY_TERMS: Final = (
+    "heat",
+    "work",
+    "boundary_work",
+    "shaft_work",
+    "electrical_work",
+    "internal_energy_change",
+    "kinetic_energy_change",
+    "potential_energy_change",
+)
+ENTROPY_TERMS: Final = (
+    "entropy_change",
+    "entropy_transfer",
+    "reservoir_entropy_transfer",
+    "entropy_generation",
+)
+EXERGY_TERMS: Final = ("exergy_change", "exergy_transfer", "exergy_destruction")
+ITEM_ENTROPY: Final = ("item_entropy", "reservoir_entropy")
+FRACTION_REFERENCE: Final = 0.5
+"""A tenth of it, 0.05, is the most that open digits may move a quality or an efficiency (chosen)."""
+TEMPERATURE_REFERENCE: Final = 50.0
+"""A tenth of it, 5 K, is the most that open digits may move a temperature (design, section 6). [K]"""
+
+
+class References:
+    """Reference quantities of one evaluated record."""
+
+    def __init__(self, sheet: Sheet, values: Values, basis: Basis) -> None:
+        self._sheet, self._values, self._basis = sheet, values, basis
+        self._energies: dict[str, float] = {}
+        self._entropies: dict[str, float] = {}
+        for key, value in values.items():
+            self._collect(key, value)
+        self._largest_energy = max(self._energies.values(), default=0.0)
+        self._largest_entropy = max(self._entropies.values(), default=0.0)
+
+    def _collect(self, key: str, value: object) -> None:
+        parts = key.split("/")
+        if parts[0] != "processes" or len(parts) < 3 or not isinstance(value, float):
+            return
+        name = parts[-1]
+        if name in ENERGY_TERMS or name in EXERGY_TERMS or (name == "energy" and len(parts) == 5):
+            self._energies[parts[1]] = max(self._energies.get(parts[1], 0.0), abs(value))
+        elif name in ENTROPY_TERMS or name in ITEM_ENTROPY:
+            self._entropies[parts[1]] = max(self._entropies.get(parts[1], 0.0), abs(value))
+
+    def reference(self, key: str, value: float) -> float:
+        """Return the reference quantity of a comparison. [unit of the quantity]"""
+        term = term_for(key)
+        kind = term.allowance if term else Allowance.VALUE
+        if kind is Allowance.TEMPERATURE:
+            return TEMPERATURE_REFERENCE
+        if kind is Allowance.FRACTION:
+            return FRACTION_REFERENCE
+        if kind is Allowance.PROPERTY_CHANGE:
+            return self._property_change(key, value)
+        process = key.split("/")[1] if key.startswith("processes/") else ""
+        if kind is Allowance.ENERGY:
+            return self._of_balance(self._energies, process, self._largest_energy, value)
+        if kind is Allowance.ENTROPY:
+            return self._of_balance(self._entropies, process, self._largest_entropy, value)
+        if key.rsplit("/", 1)[-1] in PER_MASS:
+            return self._per_mass(key, value)
+        return abs(value)
+
+    def allowance(self, key: str, value: float) -> float:
+        """Return the deviation that the basis tolerates. [unit of the quantity]"""
+        term = term_for(key)
+        kind = term.allowance if term else Allowance.VALUE
+        allowed = self._basis.allowances[kind]
+        if kind in (Allowance.TEMPERATURE, Allowance.FRACTION):
+            return allowed
+        return allowed * self.reference(key, value)
+
+    def _of_balance(self, terms: dict[str, float], process: str, largest: float, value: float) -> float:
+        return terms.get(process, 0.0) or largest or abs(value)
+
+    def _per_mass(self, key: str, value: float) -> float:
+        """Return the balance's reference scaled to the per-mass value."""
+        process, name = key.split("/")[1], PER_MASS[key.rsplit("/", 1)[-1]]
+        total = self._values.get(self._sheet.key(f"processes/{process}/{name}"))
+        if not isinstance(total, float) or total == 0.0:
+            return abs(value)
+        return self.reference(self._sheet.key(f"processes/{process}/{name}"), total) * abs(value / total)
+
+    def _property_change(self, key: str, value: float) -> float:
+        """Return the span of the property over the states of its body."""
+        parts = key.split("/")
+        if parts[0] != "states" or len(parts) != 4:
+            return abs(value)
+        own = self._floats(
+            k for k in self._values if k.startswith("states/") and k.endswith(f"/{parts[2]}/{parts[3]}")
+        )
+        span = max(own) - min(own) if len(own) > 1 else 0.0
+        return span or abs(value)
+
+    def _floats(self, keys: Iterable[str]) -> list[float]:
+        return [value for key in keys if isinstance(value := self._values[key], float)]

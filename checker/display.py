@@ -1,0 +1,111 @@
+"""Numbers for people: a value in the unit that the originator used, else in the vocabulary's unit."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+
+from checker.findings import Amount
+from checker.quantity import unit as unit_of
+from checker.quantity.types import Quantity
+from checker.sheet.keys import plain, term_for
+from checker.sheet.step import Sheet
+from checker.submission import Record
+
+
+def format_number(value: float, digits: int = 5) -> str:
+    """Return a number with ``digits`` significant digits and a typographic minus; no exponent where readable."""
+    if value == 0.0:
+        return "0"
+    if abs(value) < 10.0**-9:
+        return f"{value:.1e}".replace("-", "−")
+    if 1e-4 <= abs(value) < 1e7:
+        text = f"{value:.{digits}g}"
+        if "e" in text:
+            text = f"{value:.0f}"
+    else:
+        text = f"{value:.{digits - 1}e}"
+    return text.replace("-", "−")
+
+
+@dataclass(frozen=True, slots=True)
+class Display:
+    """Turns SI values in the program's sign into amounts in the originator's unit and sign."""
+
+    units: Mapping[str, tuple[Quantity, int]]
+    work_sign: int
+
+    def amount(self, key: str, value: float) -> Amount:
+        """Return a calculated value as an amount."""
+        found = self.units.get(plain(key))
+        if found is not None:
+            quantity, sign = found
+            return _amount(quantity.number_of(sign * value), quantity.unit.text)
+        term = term_for(key)
+        if term is None:
+            return _amount(value, "")
+        sign = self.work_sign if term.work_sign else 1
+        unit = unit_of(term.unit)
+        return _amount((sign * value - unit.offset) / unit.factor, term.unit)
+
+    def difference(self, key: str, value: float) -> float:
+        """Return a difference in the unit of a key, without offset."""
+        found = self.units.get(plain(key))
+        if found is not None:
+            return found[0].difference_of(value)
+        term = term_for(key)
+        return value if term is None else value / unit_of(term.unit).factor
+
+    def text(self, key: str, value: float) -> str:
+        """Return value and unit as text."""
+        return as_text(self.amount(key, value))
+
+
+def as_text(amount: Amount) -> str:
+    """Return an amount with its unit."""
+    return f"{amount.text} {amount.unit}".strip()
+
+
+def _amount(number: float, unit: str) -> Amount:
+    return Amount(number, unit, format_number(number))
+
+
+def difference_text(number: float, unit: str) -> str:
+    """Return a difference with its unit; degrees become differences of degrees."""
+    shown = {"°C": "K", "°F": "Δ°F"}.get(unit, unit.replace("(g)", "").replace("(a)", ""))
+    return f"{format_number(number, 3)} {shown}".strip()
+
+
+def stated_amount(quantity: Quantity) -> Amount:
+    """Return a stated quantity as an amount with the text as written."""
+    return Amount(quantity.number_of(quantity.value), quantity.unit.text, quantity.text)
+
+
+def display_of(record: Record, sheet: Sheet) -> Display:
+    """Return the display of a record: for each quantity the unit of its first statement.
+
+    Where a property is stated for some states only, the unit used for that property elsewhere in the record is
+    taken over, so that a table shows one unit per column.
+    """
+    units: dict[str, tuple[Quantity, int]] = {}
+    families: dict[str, Quantity] = {}
+    for statement in record.statements:
+        if not statement.usable:
+            continue
+        units.setdefault(sheet.key(statement.pointer), (statement.quantity, statement.sign))
+        units.setdefault(statement.pointer, (statement.quantity, statement.sign))
+        families.setdefault(_family(statement.pointer), statement.quantity)
+    for step in sheet.steps:
+        for key in (*step.outputs, *step.parents):
+            pointer = plain(key)
+            quantity, term = families.get(_family(pointer)), term_for(key)
+            if quantity is not None and term is not None and pointer not in units:
+                units[pointer] = (quantity, record.work_sign if term.work_sign else 1)
+    return Display(units, record.work_sign)
+
+
+def _family(pointer: str) -> str:
+    """Return what quantities of one kind share: the level and the name."""
+    parts = pointer.split("/")
+    transfers = parts[2] if len(parts) == 5 and parts[2].endswith("_transfers") else ""
+    return f"{parts[0]}/{transfers}/{parts[-1]}"

@@ -1,0 +1,55 @@
+"""From a record to its case: plan the sheet, evaluate it four ways, compare everything that is stated."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+
+from checker.basis import Basis
+from checker.case import Case
+from checker.comparison.carried import carry
+from checker.comparison.compare import compare_all
+from checker.comparison.datums import shifts_of
+from checker.comparison.moves import moves_of
+from checker.comparison.references import References
+from checker.display import display_of
+from checker.sheet.build import RecordPlan, build_sheet
+from checker.sheet.step import Values, evaluate
+from checker.submission import PackageHead, Record
+
+
+def make_case(head: PackageHead, record: Record, basis: Basis, others: Mapping[str, Case]) -> Case:
+    """Return the case of a record; ``others`` holds the cases of records that it links to."""
+    plan = build_sheet(record)
+    sheet = plan.sheet
+    leaves = {**plan.leaves.values, **_linked(plan, others, carried=False)}
+    values = evaluate(sheet.steps, leaves)
+    references = References(sheet, values, basis)
+    shifts = shifts_of(record, plan, values, references)
+    moves = moves_of(record, sheet, values, plan.substances, basis)
+    carried_leaves = {**plan.leaves.values, **_linked(plan, others, carried=True)}
+    carried = carry(record, plan, carried_leaves, values, shifts)
+    compared = compare_all(record, sheet, values, carried, moves, references, shifts, basis)
+    display = display_of(record, sheet)
+    return Case(head, record, plan, values, carried, moves, references, compared, display, basis)
+
+
+def _linked(plan: RecordPlan, others: Mapping[str, Case], carried: bool) -> dict[str, float]:
+    """Return the leaves that come from other records: independent values, or their stated and carried ones."""
+    found: dict[str, float] = {}
+    for link in plan.sheet.links:
+        case = others.get(link.record)
+        value = None if case is None else _value(case, link.pointer, carried)
+        if value is not None:
+            found[link.key] = value
+    return found
+
+
+def _value(case: Case, pointer: str, carried: bool) -> float | None:
+    if carried:
+        stated = case.stated(pointer)
+        if stated:
+            return stated[0].value
+        value: Values = case.carried.values
+        own = value.get(case.key(pointer))
+        return own if isinstance(own, float) else None
+    return case.value(pointer)

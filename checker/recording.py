@@ -1,0 +1,212 @@
+"""From a case to the record of its review: what was checked, the state table, the ledgers, the sheet."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator, Sequence
+
+from checker.case import Case
+from checker.comparison.compare import Compared
+from checker.display import as_text, stated_amount
+from checker.findings import (
+    Amount,
+    Checked,
+    Finding,
+    NotChecked,
+    RecordReview,
+    SheetLine,
+    SheetValue,
+    Standing,
+    StateCell,
+    StateRow,
+)
+from checker.ledgers import ledgers
+from checker.sheet.keys import plain, state_key, term_for
+from checker.sheet.step import Found, Step
+from checker.submission import Role
+
+TABLE = (
+    "temperature",
+    "pressure",
+    "specific_volume",
+    "quality",
+    "specific_internal_energy",
+    "specific_enthalpy",
+    "specific_entropy",
+    "velocity",
+    "elevation",
+    "exergy",
+)
+"""Columns of the state table; the last three only where stated."""
+WHERE_STATED = frozenset({"velocity", "elevation", "exergy"})
+HIDDEN_STEPS = ("Dead state",)
+
+
+def record_review(
+    case: Case,
+    unchecked: Sequence[NotChecked],
+    held: Sequence[str],
+    findings: Sequence[Finding],
+    diagrams: bool,
+    sheet: bool,
+) -> RecordReview:
+    """Return the review of one record."""
+    del findings
+    drawn = ()
+    if diagrams:
+        from checker.diagrams import draw
+
+        drawn = draw(case)
+    return RecordReview(
+        id=case.record.id,
+        title=case.record.title,
+        readable=True,
+        checked=tuple(_checked(case, c) for c in case.compared),
+        not_checked=tuple(dict.fromkeys((*_not_compared(case), *unchecked))),
+        assumed=tuple(_assumed(case)),
+        models=tuple(_models(case)),
+        rules_held=tuple(held),
+        states=tuple(_state_rows(case)),
+        ledgers=tuple(ledgers(case)),
+        sheet=tuple(_sheet_lines(case)) if sheet else (),
+        diagrams=drawn,
+    )
+
+
+def _checked(case: Case, c: Compared) -> Checked:
+    statement = c.statement
+    term = statement.term
+    return Checked(
+        quantity=statement.pointer,
+        symbol=term.symbol,
+        role="stated result" if statement.role is Role.RESULT else "surplus input",
+        stated=stated_amount(statement.quantity),
+        recomputed=_shown(case, c, c.independent),
+        carried=_shown(case, c, c.carried),
+        deviation=None
+        if c.deviation is None
+        else statement.sign * statement.quantity.difference_of(c.deviation),
+        tolerance=statement.quantity.difference_of(c.tolerance),
+        outcome=c.outcome,
+        standing=c.standing,
+        reason=c.reason or c.shift.note,
+    )
+
+
+def _shown(case: Case, c: Compared, value: Found) -> Amount | None:
+    return (
+        case.display.amount(c.statement.pointer, value + c.shift.value) if isinstance(value, float) else None
+    )
+
+
+def _not_compared(case: Case) -> Iterator[NotChecked]:
+    """Yield stated quantities without an independent value, and assumptions that nothing checks."""
+    for c in case.compared:
+        if c.standing is Standing.NOT_EVALUABLE:
+            yield NotChecked(c.statement.pointer, c.reason)
+    for statement in case.record.statements:
+        if not statement.usable:
+            yield NotChecked(statement.pointer, f"{statement.quantity.text} is not a quantity of this kind")
+
+
+def _assumed(case: Case) -> Iterator[str]:
+    """Yield what the review itself assumed, each once."""
+    yield from dict.fromkeys(step.assumes for step in case.plan.sheet.steps if step.assumes)
+
+
+def _models(case: Case) -> Iterator[str]:
+    for name, body in case.record.bodies.items():
+        substance = case.plan.substances.get(name)
+        if substance is None:
+            yield f"{name}: {body.substance}, {body.model}: not available"
+        else:
+            yield f"{name}: {substance.name}, {substance.model} ({substance.equation})"
+
+
+def _state_rows(case: Case) -> Iterator[StateRow]:
+    by_key = {c.statement.pointer: c for c in case.compared}
+    for state, body in case.record.body_states:
+        cells = [
+            cell
+            for name in TABLE
+            if (cell := _cell(case, state_key(state, body, name), name, by_key)) is not None
+        ]
+        phase = case.word(state_key(state, body, "phase")) or ""
+        yield StateRow(state, body, phase, tuple(cells))
+
+
+def _cell(case: Case, pointer: str, name: str, compared: dict[str, Compared]) -> StateCell | None:
+    statements = case.stated(pointer)
+    if name in WHERE_STATED and not statements:
+        return None
+    value = case.value(pointer)
+    statement = statements[0] if statements else None
+    c = compared.get(pointer)
+    if statement is None and value is None:
+        return None
+    shift = c.shift.value if c is not None else 0.0
+    term = term_for(pointer)
+    return StateCell(
+        symbol=term.symbol if term else name,
+        name=name,
+        stated=stated_amount(statement.quantity) if statement else None,
+        recomputed=None if value is None else case.display.amount(case.key(pointer), value + shift),
+        deviation=None
+        if c is None or c.deviation is None
+        else c.statement.quantity.difference_of(c.deviation),
+        outcome=c.outcome if c is not None else None,
+    )
+
+
+def _sheet_lines(case: Case) -> Iterator[SheetLine]:
+    stated = {case.key(s.pointer): s for s in reversed(case.record.statements) if s.usable}
+    for step in case.plan.sheet.steps:
+        if step.title.startswith(HIDDEN_STEPS) or not step.title:
+            continue
+        outputs = tuple(_sheet_value(case, key, stated) for key in step.outputs)
+        yield SheetLine(
+            step.title,
+            step.formula,
+            _substituted(case, step),
+            tuple(value for value in outputs if value.independent or value.stated),
+            step.assumes or _failure(case, step),
+        )
+
+
+def _failure(case: Case, step: Step) -> str:
+    failure = case.failure(step.outputs[0])
+    return f"not evaluable: {failure.reason}" if failure else ""
+
+
+def _sheet_value(case: Case, key: str, stated: dict) -> SheetValue:  # type: ignore[type-arg]
+    term = term_for(key)
+    independent, carried = case.values.get(key), case.carried.values.get(key)
+    statement = stated.get(key)
+    return SheetValue(
+        quantity=plain(key),
+        symbol=term.symbol if term else key.rsplit("/", 1)[-1],
+        independent=case.display.amount(key, independent)
+        if isinstance(independent, float)
+        else _word(independent),
+        carried=case.display.amount(key, carried) if isinstance(carried, float) else None,
+        stated=stated_amount(statement.quantity) if statement else None,
+    )
+
+
+def _word(value: object) -> Amount | None:
+    return Amount(0.0, "", value) if isinstance(value, str) else None
+
+
+def _substituted(case: Case, step: Step) -> str:
+    """Return the formula's right-hand side with numbers and units."""
+    parts = []
+    for key in step.parents:
+        value = case.values.get(key)
+        parts.append(as_text(case.display.amount(key, value)) if isinstance(value, float) else "…")
+    if step.substitution:
+        return step.substitution.format(*parts)
+    shown = [
+        f"{term.symbol} = {part}"
+        for key, part in zip(step.parents, parts, strict=True)
+        if (term := term_for(key)) is not None and not key.startswith("model/")
+    ]
+    return ", ".join(shown)

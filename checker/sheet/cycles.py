@@ -1,0 +1,119 @@
+"""Balances over several processes: cycles and sequences."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator, Sequence
+
+from checker.outcomes import NotEvaluable
+from checker.sheet.balances import sum_text, total
+from checker.sheet.context import ProcessContext
+from checker.sheet.step import Step
+from checker.submission import Record, Role
+
+SUMS = (
+    "heat",
+    "work",
+    "boundary_work",
+    "shaft_work",
+    "electrical_work",
+    "internal_energy_change",
+    "kinetic_energy_change",
+    "potential_energy_change",
+    "energy_change",
+    "entropy_change",
+    "entropy_transfer",
+    "entropy_generation",
+    "entropy_generation_with_surroundings",
+    "exergy_change",
+    "exergy_transfer",
+    "exergy_destruction",
+    "temperature_change",
+    "duration",
+)
+
+
+def is_cycle(record: Record) -> bool:
+    """Say whether the processes, in some order, lead from every state back to where they began."""
+    starts = sorted(p.from_state for p in record.processes)
+    ends = sorted(p.to_state for p in record.processes)
+    return bool(starts) and starts == ends and len(set(starts)) == len(starts)
+
+
+def cycle_steps(record: Record, contexts: Sequence[ProcessContext]) -> Iterator[Step]:
+    """Yield net work and heat, heat supplied and rejected (magnitudes), efficiency and COP of the record's cycle."""
+    if not record.processes:
+        return
+    works = tuple(ctx.key("work") for ctx in contexts)
+    heats = tuple(key for ctx in contexts for key in _heat_keys(ctx))
+    yield Step("Net work", ("results/net_work",), works, total, "W_net = ΣW", sum_text(len(works)))
+    yield Step("Net heat", ("results/net_heat",), heats, total, "Q_net = ΣQ", sum_text(len(heats)))
+    yield Step(
+        "Heat supplied",
+        ("results/heat_supplied",),
+        heats,
+        lambda *q: (sum(x for x in q if x > 0.0),),
+        "Q_in = ΣQ_k, Q_k > 0",
+    )
+    yield Step(
+        "Heat rejected",
+        ("results/heat_rejected",),
+        heats,
+        lambda *q: (-sum(x for x in q if x < 0.0),),
+        "Q_out = −ΣQ_k, Q_k < 0",
+    )
+    yield Step(
+        "Thermal efficiency",
+        ("results/thermal_efficiency",),
+        ("results/net_work", "results/heat_supplied"),
+        _per_heat,
+        "η = W_net/Q_in",
+        "{0}/{1}",
+    )
+    useful = {"heating": "results/heat_rejected", "cooling": "results/heat_supplied"}.get(
+        record.purpose or ""
+    )
+    if useful:
+        yield Step(
+            "Coefficient of performance",
+            ("results/coefficient_of_performance",),
+            (useful, "results/net_work"),
+            _per_work,
+            "COP = Q_useful/|W_net|",
+            "{0}/|{1}|",
+        )
+
+
+def _heat_keys(ctx: ProcessContext) -> tuple[str, ...]:
+    items = ctx.process.heat_transfers or ()
+    return tuple(ctx.heat_item(item.id) for item in items) if len(items) > 1 else (ctx.key("heat"),)
+
+
+def _per_heat(work: float, heat: float) -> tuple[float]:
+    if heat <= 0.0:
+        raise NotEvaluable("no heat is supplied, so there is no efficiency")
+    return (work / heat,)
+
+
+def _per_work(useful: float, work: float) -> tuple[float]:
+    if work >= 0.0:
+        raise NotEvaluable("no net work is put in, so there is no coefficient of performance")
+    return (useful / -work,)
+
+
+def sequence_steps(record: Record, contexts: Sequence[ProcessContext]) -> Iterator[Step]:
+    """Yield the totals of every sequence that has no inputs of its own."""
+    by_id = {ctx.process.id: ctx for ctx in contexts}
+    for sequence in record.sequences:
+        base = f"sequences/{sequence.id}"
+        if any(s.pointer.startswith(f"{base}/") and s.role is Role.INPUT for s in record.statements):
+            continue
+        members = [by_id[name] for name in sequence.processes if name in by_id]
+        for name in SUMS:
+            yield Step(
+                f"{name.replace('_', ' ').capitalize()}, sequence {sequence.id}",
+                (f"{base}/{name}",),
+                tuple(ctx.key(name) for ctx in members),
+                total,
+                "sum over the sequence",
+                sum_text(len(members)),
+            )

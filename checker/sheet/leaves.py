@@ -1,0 +1,136 @@
+"""The leaves of a sheet: inputs in SI, model factors, links to other records, and which pointers are one quantity."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+
+from checker.outcomes import NotEvaluable
+from checker.sheet.datum import Offset
+from checker.sheet.keys import body_key, given, process_key, share_key, state_key
+from checker.sheet.models import BodyModel, factor_key
+from checker.sheet.step import Link
+from checker.submission import Process, Record, Role
+
+LINKED = ("temperature", "specific_volume")
+"""What a linked state takes over; these two fix a state of any model."""
+
+
+@dataclass(frozen=True, slots=True)
+class Leaves:
+    """Values of the leaves, the keys that are inputs, and why an input could not be used."""
+
+    values: Mapping[str, float]
+    given: frozenset[str]
+    stated: frozenset[str]
+    unusable: Mapping[str, str]
+    links: tuple[Link, ...]
+
+
+def same_quantities(record: Record) -> dict[str, str]:
+    """Return pointer → pointer of the one quantity that both name.
+
+    In a record of one body, the body's share is the total; a heat transfer (or a work transfer of its kind)
+    that stands alone is the total of its kind.
+    """
+    same: dict[str, str] = {}
+    single = len(record.bodies) == 1
+    for process in record.processes:
+        _same_items(process, same)
+        if not single:
+            continue
+        (body,) = record.bodies
+        own, shared = share_key(process.id, body, ""), process_key(process.id, "")
+        for statement in record.statements:
+            if statement.pointer.startswith(own):
+                pointer = shared + statement.pointer.removeprefix(own)
+                same[statement.pointer] = same.get(pointer, pointer)
+    return same
+
+
+def _same_items(process: Process, same: dict[str, str]) -> None:
+    heats = process.heat_transfers or ()
+    base = f"processes/{process.id}"
+    if len(heats) == 1:
+        same[f"{base}/heat_transfers/{heats[0].id}/energy"] = process_key(process.id, "heat")
+    for kind in ("boundary", "shaft", "electrical"):
+        items = [item for item in process.work_transfers or () if item.kind == kind]
+        if len(items) == 1:
+            same[f"{base}/work_transfers/{items[0].id}/energy"] = process_key(process.id, f"{kind}_work")
+
+
+def collect(
+    record: Record,
+    models: Mapping[str, BodyModel],
+    offsets: Mapping[str, Offset | None],
+    same: Mapping[str, str],
+) -> Leaves:
+    """Return the leaves of a record.
+
+    u, h and s among the inputs are moved to the model's own datum by the body's offset; without a datum they
+    are not used, and said so.
+    """
+    values: dict[str, float] = {}
+    unusable: dict[str, str] = {}
+    stated: set[str] = set()
+    for statement in record.statements:
+        key = same.get(statement.pointer, statement.pointer)
+        if not statement.usable:
+            unusable[key] = f"{statement.quantity.text} cannot be used for it"
+            continue
+        stated.add(key)
+        if statement.role is not Role.INPUT or given(key) in values:
+            continue
+        try:
+            values[given(key)] = statement.value - datum_shift(key, offsets)
+        except NotEvaluable as outcome:
+            unusable[key] = outcome.reason
+    known_inputs = frozenset(key.removeprefix("given/") for key in values)
+    for body in models:
+        values[factor_key(body, "density_factor")] = 1.0
+        values[factor_key(body, "caloric_factor")] = 1.0
+    return Leaves(values, known_inputs, frozenset(stated), unusable, tuple(_links(record)))
+
+
+def datum_shift(key: str, offsets: Mapping[str, Offset | None]) -> float:
+    """Return stated − program value of an absolute u, h or s at this key; 0 for anything else.
+
+    Raises NotEvaluable where the body has no datum.
+    """
+    parts = key.split("/")
+    if parts[0] != "states" or len(parts) != 4:
+        return 0.0
+    name = parts[3]
+    if name not in (
+        "specific_internal_energy",
+        "specific_enthalpy",
+        "specific_entropy",
+        "internal_energy",
+        "enthalpy",
+        "entropy",
+    ):
+        return 0.0
+    offset = offsets.get(parts[2])
+    if offset is None:
+        raise NotEvaluable(f"{name.replace('_', ' ')} is an input without a datum", "missing")
+    shift = offset.entropy if name.endswith("entropy") else offset.energy
+    if shift and not name.startswith("specific_"):
+        raise NotEvaluable(f"{name.replace('_', ' ')} as an input needs the model's own datum", "missing")
+    return shift
+
+
+def _links(record: Record) -> list[Link]:
+    links = []
+    for (state, body), found in record.body_states.items():
+        if not found.same_as:
+            continue
+        parts = found.same_as.split("/")
+        if len(parts) != 5 or parts[0] != "records" or parts[2] != "states":
+            continue
+        other, other_state, other_body = parts[1], parts[3], parts[4]
+        for name in LINKED:
+            links.append(
+                Link(f"link/{state_key(state, body, name)}", other, state_key(other_state, other_body, name))
+            )
+        links.append(Link(f"link/{state_key(state, body, 'mass')}", other, body_key(other_body, "mass")))
+    return links

@@ -1,0 +1,160 @@
+"""Heat and work of a process: what is given, what the path says, and the one unknown that the balance closes.
+
+Candidates are offered in the order in which they should be used; the planner takes the first that it can.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+
+from checker.sheet.balances import constant, first_less_rest, less_text, same_value, sum_text, total
+from checker.sheet.context import ProcessContext
+from checker.sheet.keys import given
+from checker.sheet.step import Step
+
+KINDS = {"boundary": "boundary_work", "shaft": "shaft_work", "electrical": "electrical_work"}
+
+
+def heat_candidates(ctx: ProcessContext) -> Iterator[Step]:
+    """Yield the ways to the heat: given, none by the path, none listed, sum of items, balance."""
+    p, heat = ctx.process.id, ctx.key("heat")
+    items = ctx.process.heat_transfers
+    keys = [ctx.heat_item(item.id) for item in items or ()]
+    yield from _given(ctx, heat, f"Heat, {p}", "Q given")
+    for item, key in zip(items or (), keys, strict=True):
+        if key != heat:
+            yield from _given(ctx, key, f"Heat transfer {item.id}, {p}", "Q_k given", rate_of=item.id)
+    if ctx.no_heat:
+        yield constant(heat, f"Heat, {p}", f"Q = 0 ({ctx.no_heat})")
+    if items == ():
+        yield constant(heat, f"Heat, {p}", "Q = 0 (no heat transfer listed)")
+    if len(keys) > 1:
+        yield Step(f"Heat, {p}", (heat,), tuple(keys), total, "Q = ΣQ_k", sum_text(len(keys)))
+        yield from _unknown_item(ctx, keys)
+    if ctx.unknown_heats <= 1 or len(keys) > 1:
+        yield Step(
+            f"Heat from the balance, {p}",
+            (heat,),
+            (ctx.key("energy_change"), ctx.key("work")),
+            total,
+            "Q = ΔE + W",
+            sum_text(2),
+        )
+    for key in keys:
+        if ctx.no_heat and key != heat:
+            yield constant(key, f"Heat transfer, {p}", f"Q_k = 0 ({ctx.no_heat})")
+
+
+def _unknown_item(ctx: ProcessContext, keys: list[str]) -> Iterator[Step]:
+    """Yield the one heat transfer that nobody gave, from the balance less the others."""
+    unknown = [key for key in keys if not ctx.is_given(key)]
+    if len(unknown) != 1:
+        return
+    others = tuple(key for key in keys if key != unknown[0])
+    if ctx.is_given(ctx.key("heat")):
+        yield Step(
+            f"Remaining heat transfer, {ctx.process.id}",
+            (unknown[0],),
+            (ctx.key("heat"), *others),
+            first_less_rest,
+            "Q_k = Q − ΣQ_others",
+            less_text(1 + len(others)),
+        )
+        return
+
+    def from_balance(change: float, work: float, *rest: float) -> tuple[float]:
+        return (change + work - sum(rest),)
+
+    count = len(others)
+    yield Step(
+        f"Heat transfer from the balance, {ctx.process.id}",
+        (unknown[0],),
+        (ctx.key("energy_change"), ctx.key("work"), *others),
+        from_balance,
+        "Q_k = ΔE + W − ΣQ_others",
+        " − ".join(["{0} + {1}", *(f"{{{i + 2}}}" for i in range(count))]),
+    )
+
+
+def _given(ctx: ProcessContext, key: str, title: str, formula: str, rate_of: str = "") -> Iterator[Step]:
+    del rate_of
+    if ctx.is_given(key):
+        yield same_value(key, given(key), title, formula)
+
+
+def work_candidates(ctx: ProcessContext) -> Iterator[Step]:
+    """Yield the ways to the work: given, by the path, none listed, sums, balance."""
+    p, work = ctx.process.id, ctx.key("work")
+    for kind, name in KINDS.items():
+        yield from _kind_candidates(ctx, kind, ctx.key(name))
+    yield from _given(ctx, work, f"Work, {p}", "W given")
+    kinds = tuple(ctx.key(name) for name in KINDS.values())
+    yield Step(f"Work, {p}", (work,), kinds, total, "W = W_b + W_sh + W_el", sum_text(3))
+    if ctx.heat_known_without_balance:
+        yield Step(
+            f"Work from the balance, {p}",
+            (work,),
+            (ctx.key("heat"), ctx.key("energy_change")),
+            first_less_rest,
+            "W = Q − ΔE",
+            less_text(2),
+        )
+    for kind in kinds:
+        if ctx.unknown_work_kind in (None, kind):
+            others = tuple(other for other in kinds if other != kind)
+            yield Step(
+                f"{kind.rsplit('/', 1)[-1].replace('_', ' ').capitalize()} from the total, {p}",
+                (kind,),
+                (work, *others),
+                first_less_rest,
+                "W_kind = W − W_others",
+                less_text(3),
+            )
+
+
+def _kind_candidates(ctx: ProcessContext, kind: str, key: str) -> Iterator[Step]:
+    """Yield the ways to one kind of work, from its items or from nothing being listed."""
+    p = ctx.process.id
+    items = ctx.process.work_transfers
+    keys = [ctx.work_item(item.id) for item in items or () if item.kind == kind]
+    name = KINDS[kind].replace("_", " ").capitalize()
+    yield from _given(ctx, key, f"{name}, {p}", "W given")
+    for item in keys:
+        if item != key:
+            yield from _given(ctx, item, f"Work transfer {item.split('/')[-2]}, {p}", "W_k given")
+    if kind == "boundary":
+        if (step := ctx.boundary_work_step()) is not None:
+            yield step
+    elif items is not None and not keys:
+        yield constant(key, f"{name}, {p}", f"W = 0 (no {kind} work listed)")
+    if len(keys) > 1:
+        yield Step(f"{name}, {p}", (key,), tuple(keys), total, "W = ΣW_k", sum_text(len(keys)))
+        unknown = [item for item in keys if not ctx.is_given(item)]
+        if len(unknown) == 1:
+            others = tuple(item for item in keys if item != unknown[0])
+            yield Step(
+                f"Remaining {kind} work transfer, {p}",
+                (unknown[0],),
+                (key, *others),
+                first_less_rest,
+                "W_k = W − ΣW_others",
+                less_text(1 + len(others)),
+            )
+
+
+def assumed_candidates(ctx: ProcessContext, known: set[str]) -> Iterator[Step]:
+    """Yield what the review assumes where work is not stated and the balance alone cannot tell it."""
+    p = ctx.process.id
+    if ctx.process.work_transfers is not None:
+        return
+    if ctx.key("work") in known and ctx.key("boundary_work") in known:
+        return
+    for kind, name in KINDS.items():
+        key = ctx.key(name)
+        if kind != "boundary" and key not in known and not ctx.is_stated(key):
+            yield constant(
+                key,
+                f"{name.replace('_', ' ').capitalize()}, {p}",
+                f"W = 0 (no {kind} work stated)",
+                assumes=f"{p}: no {kind} work stated, so there is none",
+            )

@@ -1,0 +1,73 @@
+"""What a rule is: one function with its grade, what it needs, why it exists and what it rests on."""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Iterator
+from dataclasses import dataclass
+from enum import StrEnum
+
+from checker.case import Case, Raised, Unchecked, Yielded
+from checker.findings import Grade
+from checker.submission import Submission
+
+
+class Scope(StrEnum):
+    """What a rule looks at, one at a time."""
+
+    PACKAGE = "package"
+    RECORD = "record"
+    BODY = "body"
+    STATE = "state"
+    PROCESS = "process"
+    LIMIT = "limit"
+    ASSUMPTION = "assumption"
+
+
+PackageFunction = Callable[[Submission], Iterator[Raised | Unchecked]]
+RecordFunction = Callable[[Case], Yielded]
+ItemFunction = Callable[[Case, str], Yielded]
+
+
+@dataclass(frozen=True, slots=True)
+class Rule:
+    """A rule of the rulebook.
+
+    Attributes
+    ----------
+    name : str
+        Slug that says what is wrong.
+    function : callable
+        ``(case)`` for a record, ``(case, identifier)`` for a body, process, limit or assumption,
+        ``(case, "STATE/BODY")`` for a state, ``(submission)`` for a package. Yields ``Raised`` or ``Unchecked``.
+    scope : Scope
+        What the function is called for.
+    theme : str
+        form, units, sign, state, path, energy, entropy, exergy, model adequacy, limit, bookkeeping.
+    grade : Grade
+        Of its findings, unless a finding brings its own.
+    says : str
+        What is wrong, in one sentence.
+    rationale : str
+        Why it matters to whoever signs.
+    basis : str
+        Published source, or ``common practice, no source``.
+    needs : tuple of str
+        Names of quantities without which the rule cannot be applied to a process (``processes/P/NAME``) or a
+        state (``states/S/B/NAME``); the engine reports them as not checked.
+    when : callable
+        Says whether the rule applies at all to this item; needs are asked only then.
+    problem : str
+        For rules on the form: the kind of problem of the reading stage that it reports (its own name).
+    """
+
+    name: str
+    function: PackageFunction | RecordFunction | ItemFunction
+    scope: Scope
+    theme: str
+    grade: Grade
+    says: str
+    rationale: str
+    basis: str = "common practice, no source"
+    needs: tuple[str, ...] = ()
+    when: Callable[[Case, str], bool] | None = None
+    from_reading: bool = False

@@ -1,0 +1,145 @@
+"""Stated values that the alternate calculation does not confirm: origins, inherited deviations, cancelling errors."""
+
+from __future__ import annotations
+
+from collections import defaultdict
+from collections.abc import Iterator
+
+from checker.case import Case, Raised, Yielded
+from checker.comparison.compare import Compared
+from checker.findings import Outcome, Standing
+from checker.submission import Role
+
+
+def disagrees(case: Case) -> Yielded:
+    """Yield one finding per origin, with everything that it spoiled."""
+    for group in _origins(case):
+        first = group[0]
+        if first.explained_by_digits or first.statement.role is Role.INPUT:
+            continue
+        others = tuple(c.statement.pointer for c in group[1:])
+        spoiled = tuple(dict.fromkeys((*others, *_spoiled_by(case, group))))
+        yield Raised(
+            _message(case, first),
+            compared=first,
+            theme=first.statement.term.theme,
+            origin=None if first.standing is Standing.ORIGIN_UNKNOWN else True,
+            spoils=spoiled,
+            suggestion=_suggestion(case, first, spoiled),
+        )
+
+
+def digits_explain(case: Case) -> Yielded:
+    """Yield origins that open digits alone would explain."""
+    for group in _origins(case):
+        first = group[0]
+        if not first.explained_by_digits or first.statement.role is Role.INPUT:
+            continue
+        yield Raised(
+            f"{_message(case, first)} The digits that the inputs or the stated number leave open would explain it.",
+            compared=first,
+            theme=first.statement.term.theme,
+            origin=True,
+            spoils=tuple(_spoiled_by(case, group)),
+            suggestion="State the inputs with the digits that were used, or correct the result.",
+        )
+
+
+def surplus_input(case: Case) -> Yielded:
+    """Yield inputs that are not needed and contradict the others."""
+    for c in case.compared:
+        if c.statement.role is Role.INPUT and c.outcome is Outcome.WRONG:
+            yield Raised(
+                f"{c.statement.quantity.text} is more than is needed to find this quantity, and the other inputs "
+                f"give {_recomputed(case, c)}.",
+                compared=c,
+                theme=c.statement.term.theme,
+                suggestion="Keep the inputs that define the case and correct or drop the other.",
+            )
+
+
+def rounded_early(case: Case) -> Yielded:
+    """Yield results that follow from the originator's rounded numbers but not from the inputs."""
+    for c in case.compared:
+        if c.standing is Standing.EARLY_ROUNDING:
+            yield Raised(
+                f"{_message(case, c)} It follows from the rounded numbers stated before it.",
+                compared=c,
+                theme=c.statement.term.theme,
+                origin=True,
+                suggestion="Carry unrounded numbers through the calculation and round at the end.",
+            )
+
+
+def errors_cancel(case: Case) -> Yielded:
+    """Yield results that are right although the numbers they are made from are wrong."""
+    for c in case.compared:
+        if c.standing is Standing.ERRORS_CANCEL:
+            yield Raised(
+                f"{c.statement.quantity.text} agrees with the alternate calculation, but not with the stated "
+                f"numbers that it would be made from.",
+                compared=c,
+                theme=c.statement.term.theme,
+                inherits_from=c.inherits_from,
+                suggestion="Say where this number comes from: errors cancel, or it was taken from another source.",
+            )
+
+
+def not_recomputed(case: Case) -> Yielded:
+    """Yield results without an independent value, one finding per reason."""
+    by_reason: dict[str, list[Compared]] = defaultdict(list)
+    for c in case.compared:
+        if c.outcome is Outcome.NOT_EVALUABLE and c.statement.role is Role.RESULT:
+            by_reason[c.reason].append(c)
+    for reason, group in by_reason.items():
+        also = tuple(c.statement.pointer for c in group[1:])
+        yield Raised(
+            f"{group[0].statement.quantity.text} could not be recomputed: {reason}.",
+            compared=group[0],
+            theme=group[0].statement.term.theme,
+            spoils=also,
+            suggestion="State what is missing, or show the calculation that leads to it.",
+        )
+
+
+def _origins(case: Case) -> Iterator[list[Compared]]:
+    """Yield groups of deviations that start in one step, in document order."""
+    groups: dict[object, list[Compared]] = {}
+    for c in case.compared:
+        if c.standing in (Standing.ORIGIN, Standing.ORIGIN_UNKNOWN) and c.outcome is Outcome.WRONG:
+            step = case.plan.sheet.made_by.get(c.key)
+            groups.setdefault(step.outputs if step else c.key, []).append(c)
+    yield from groups.values()
+
+
+def _spoiled_by(case: Case, group: list[Compared]) -> Iterator[str]:
+    keys = {c.key for c in group}
+    for c in case.compared:
+        if c.standing is Standing.INHERITED and keys & set(c.inherits_from):
+            yield c.statement.pointer
+
+
+def _recomputed(case: Case, c: Compared) -> str:
+    if not isinstance(c.independent, float):
+        return c.reason or "no value"
+    return case.show(c.statement.pointer, c.independent + c.shift.value)
+
+
+def _message(case: Case, c: Compared) -> str:
+    name = c.statement.term.name.replace("_", " ")
+    if c.deviation is None:
+        return f"{name}: {c.statement.quantity.text} is stated, but {c.reason}."
+    note = f" ({c.shift.note})" if c.shift.note else ""
+    deviation = case.show_difference(c.statement.pointer, c.statement.sign * c.deviation)
+    tolerance = case.show_difference(c.statement.pointer, c.tolerance)
+    return (
+        f"{name}: {c.statement.quantity.text} is stated, {_recomputed(case, c)} is recomputed; the difference of "
+        f"{deviation} is beyond {tolerance}{note}."
+    )
+
+
+def _suggestion(case: Case, c: Compared, spoiled: tuple[str, ...]) -> str:
+    if not spoiled:
+        return "Correct this result." if c.deviation is not None else ""
+    count = len(spoiled)
+    return f"Correct this result and the {count} that follow{'s' if count == 1 else ''} from it."
