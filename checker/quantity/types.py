@@ -86,8 +86,8 @@ class QuantityError(ValueError):
     ----------
     kind : str
         Slug of the rule that reports it: ``quantity-unreadable``, ``unit-unknown``, ``unit-ambiguous``,
-        ``gauge-without-atmosphere``, ``reference-conditions-missing``, ``temperature-kind-wrong`` or
-        ``dimension-wrong``.
+        ``gauge-without-atmosphere``, ``reference-conditions-missing``, ``temperature-kind-wrong``,
+        ``below-absolute-zero`` or ``dimension-wrong``.
     message : str
         What is wrong, and what would be right.
     offset : int
