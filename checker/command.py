@@ -65,7 +65,9 @@ def _parser() -> argparse.ArgumentParser:
     review.add_argument("packages", nargs="+", metavar="PACKAGE", help="a YAML or JSON package")
     review.add_argument("--basis", metavar="FILE", help="review basis: allowances and conventions")
     for name in FORMATS:
-        review.add_argument(f"--{name}", metavar="F", help=f"write the {name.upper()} report to F; - is standard output")
+        review.add_argument(
+            f"--{name}", metavar="F", help=f"write the {name.upper()} report to F; - is standard output"
+        )
     review.set_defaults(action=_review)
     rules = commands.add_parser("rules", help="list the rules, or explain one")
     rules.add_argument("name", nargs="?", metavar="NAME", help="name of a rule")
@@ -73,7 +75,9 @@ def _parser() -> argparse.ArgumentParser:
     blank = commands.add_parser("blank", help="print an empty package to fill in")
     blank.set_defaults(action=_blank)
     schema = commands.add_parser("schema", help="print the JSON Schema of a package, or of the JSON review")
-    schema.add_argument("--of", choices=("package", "review"), default="package", help="which schema (package)")
+    schema.add_argument(
+        "--of", choices=("package", "review"), default="package", help="which schema (package)"
+    )
     schema.set_defaults(action=_schema)
     return parser
 

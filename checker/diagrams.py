@@ -15,6 +15,7 @@ from checker.substances.interface import PropertyState, Substance
 DOME_POINTS = 60
 PATH_POINTS = 40
 PASCAL_PER_BAR = 1e5
+CELSIUS_ZERO = 273.15
 Point = tuple[float, float]
 
 
@@ -31,9 +32,7 @@ def _of_body(case: Case, body: str) -> Iterator[Diagram]:
     if not states:
         return
     dome = _dome(substance, list(states.values()))
-    paths = [
-        (f"{ctx.process.id}", list(_along(case, ctx, body, substance, states))) for ctx in case.plan.contexts
-    ]
+    paths = [(f"{ctx.process.id}", list(_along(ctx, body, substance, states))) for ctx in case.plan.contexts]
     for kind, x_label, y_label in (("p-v", "v in m³/kg", "p in bar"), ("T-s", "s in kJ/(kg·K)", "T in °C")):
         curves = [Curve("saturation", "dome", tuple(_point(kind, s) for s in dome))] if dome else []
         for label, points in paths:
@@ -65,8 +64,13 @@ def _state(case: Case, state: str, body: str) -> PropertyState | None:
 
 def _point(kind: str, state: PropertyState) -> Point:
     if kind == "p-v":
-        return (state.specific_volume or 0.0, (state.pressure or 0.0) / PASCAL_PER_BAR)
-    return (state.specific_entropy / 1000.0, state.temperature - 273.15)
+        return _axes(kind, state.specific_volume or 0.0, state.pressure or 0.0)
+    return _axes(kind, state.specific_entropy, state.temperature)
+
+
+def _axes(kind: str, x: float, y: float) -> Point:
+    """Return SI axis values in the units of the axes."""
+    return (x, y / PASCAL_PER_BAR) if kind == "p-v" else (x / 1000.0, y - CELSIUS_ZERO)
 
 
 def _dome(substance: Substance, states: list[PropertyState]) -> list[PropertyState]:
@@ -89,7 +93,7 @@ def _dome(substance: Substance, states: list[PropertyState]) -> list[PropertySta
 
 
 def _along(
-    case: Case, ctx: ProcessContext, body: str, substance: Substance, states: dict[str, PropertyState]
+    ctx: ProcessContext, body: str, substance: Substance, states: dict[str, PropertyState]
 ) -> Iterator[PropertyState]:
     """Yield states along the declared path, or its two ends where the path is not a line of states."""
     first, last = states.get(ctx.process.from_state), states.get(ctx.process.to_state)
@@ -102,16 +106,13 @@ def _along(
     yield first
     for i in range(1, PATH_POINTS):
         try:
-            yield _between(case, ctx, body, substance, path, first, last, i / PATH_POINTS)
+            yield _between(substance, path, first, last, i / PATH_POINTS)
         except (NotEvaluable, ValueError, ArithmeticError):
             continue
     yield last
 
 
 def _between(
-    case: Case,
-    ctx: ProcessContext,
-    body: str,
     substance: Substance,
     path: Path,
     first: PropertyState,
@@ -154,18 +155,4 @@ def _stated_markers(case: Case, kind: str, body: str, states: dict[str, Property
             c.stated if c is not None else getattr(state, axis)
             for c, axis in zip(found, (x_name, y_name), strict=True)
         ]
-        moved = PropertyState(
-            **{**_bare(state), x_name: values[0], y_name: values[1]},
-        )
-        yield Marker(f"{name} as stated", "stated", *_point(kind, moved))
-
-
-def _bare(state: PropertyState) -> dict[str, float]:
-    return {
-        "temperature": state.temperature,
-        "pressure": state.pressure or 0.0,
-        "specific_volume": state.specific_volume or 0.0,
-        "specific_internal_energy": state.specific_internal_energy,
-        "specific_enthalpy": state.specific_enthalpy or 0.0,
-        "specific_entropy": state.specific_entropy,
-    }
+        yield Marker(f"{name} as stated", "stated", *_axes(kind, values[0], values[1]))

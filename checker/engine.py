@@ -88,7 +88,7 @@ def _package_findings(
 ) -> Iterator[Finding]:
     for rule in rulebook:
         if rule.scope is Scope.PACKAGE and not rule.from_reading:
-            for raised in rule.function(submission):  # type: ignore[arg-type]
+            for raised in rule.function(submission):
                 if isinstance(raised, Raised):
                     yield finding_of(rule, raised, None, locator)
 
@@ -125,8 +125,8 @@ def apply_rules(
 
 def _call(rule: Rule, case: Case, item: str) -> Iterable[Raised | Unchecked]:
     if rule.scope is Scope.RECORD:
-        return rule.function(case)  # type: ignore[call-arg, arg-type]
-    return rule.function(case, item)  # type: ignore[call-arg, arg-type]
+        return rule.function(case)
+    return rule.function(case, item)
 
 
 def _lacking(case: Case, rule: Rule, item: str) -> Iterator[NotChecked]:

@@ -10,6 +10,7 @@ from checker.display import as_text, stated_amount
 from checker.findings import (
     Amount,
     Checked,
+    Diagram,
     Finding,
     NotChecked,
     RecordReview,
@@ -51,7 +52,7 @@ def record_review(
 ) -> RecordReview:
     """Return the review of one record."""
     del findings
-    drawn = ()
+    drawn: tuple[Diagram, ...] = ()
     if diagrams:
         from checker.diagrams import draw
 

@@ -19,7 +19,9 @@ def list_rules(rulebook: Sequence[Rule]) -> str:
         for rule in rulebook:
             if rule.theme == theme:
                 lines.append(f"  {rule.name} ({rule.grade})")
-                lines.extend(textwrap.wrap(rule.says, WIDTH, initial_indent="      ", subsequent_indent="      "))
+                lines.extend(
+                    textwrap.wrap(rule.says, WIDTH, initial_indent="      ", subsequent_indent="      ")
+                )
         lines.append("")
     return "\n".join(lines)
 

@@ -203,7 +203,9 @@ class Record:
 
     def stated(self, pointer: str, role: Role | None = None) -> tuple[Statement, ...]:
         """Return the usable statements of a quantity."""
-        return tuple(s for s in self.statements if s.pointer == pointer and s.usable and role in (None, s.role))
+        return tuple(
+            s for s in self.statements if s.pointer == pointer and s.usable and role in (None, s.role)
+        )
 
 
 @dataclass(frozen=True, slots=True)

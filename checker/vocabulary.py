@@ -82,8 +82,9 @@ class Term:
 
 
 def _energy(name: str, symbol: str, meaning: str, theme: str = "energy", work_sign: bool = False) -> Term:
-    return Term(name, symbol, dim.ENERGY, "kJ", meaning, allowance=Allowance.ENERGY, theme=theme,
-                work_sign=work_sign)  # fmt: skip
+    return Term(
+        name, symbol, dim.ENERGY, "kJ", meaning, allowance=Allowance.ENERGY, theme=theme, work_sign=work_sign
+    )
 
 
 def _entropy(name: str, symbol: str, meaning: str) -> Term:
@@ -94,16 +95,33 @@ def _heat_capacity(name: str, symbol: str, meaning: str) -> Term:
     return Term(name, symbol, dim.SPECIFIC_ENTROPY, "kJ/(kg·K)", meaning, positive=True)
 
 
-TEMPERATURE: Final = Term("temperature", "T", dim.TEMPERATURE, "°C", "absolute temperature",
-                          Scale.ABSOLUTE_TEMPERATURE, Allowance.TEMPERATURE)  # fmt: skip
-PRESSURE: Final = Term("pressure", "p", dim.PRESSURE, "bar", "pressure; gauge or absolute by its unit",
-                       Scale.PRESSURE, positive=True)  # fmt: skip
+TEMPERATURE: Final = Term(
+    "temperature",
+    "T",
+    dim.TEMPERATURE,
+    "°C",
+    "absolute temperature",
+    Scale.ABSOLUTE_TEMPERATURE,
+    Allowance.TEMPERATURE,
+)
+PRESSURE: Final = Term(
+    "pressure",
+    "p",
+    dim.PRESSURE,
+    "bar",
+    "pressure; gauge or absolute by its unit",
+    Scale.PRESSURE,
+    positive=True,
+)
 MASS: Final = Term("mass", "m", dim.MASS, "kg", "mass", positive=True)
 VOLUME: Final = Term("volume", "V", dim.VOLUME, "m³", "volume", positive=True)
 DENSITY: Final = Term("density", "ρ", dim.DENSITY, "kg/m³", "mass per volume", positive=True)
-DURATION: Final = Term("duration", "t", dim.TIME, "s", "how long the process takes", theme="bookkeeping",
-                       positive=True)  # fmt: skip
-MEAN_POWER: Final = Term("mean_power", "P", dim.POWER, "kW", "energy transferred per duration", theme="energy")
+DURATION: Final = Term(
+    "duration", "t", dim.TIME, "s", "how long the process takes", theme="bookkeeping", positive=True
+)
+MEAN_POWER: Final = Term(
+    "mean_power", "P", dim.POWER, "kW", "energy transferred per duration", theme="energy"
+)
 
 BODY: Final[tuple[Term, ...]] = (
     MASS,
@@ -113,17 +131,31 @@ BODY: Final[tuple[Term, ...]] = (
     _heat_capacity("gas_constant", "R", "specific gas constant"),
     _heat_capacity("specific_heat", "c", "specific heat capacity of a solid or liquid"),
     _heat_capacity("specific_heat_at_constant_volume", "c_v", "specific heat capacity at constant volume"),
-    _heat_capacity("specific_heat_at_constant_pressure", "c_p", "specific heat capacity at constant pressure"),
+    _heat_capacity(
+        "specific_heat_at_constant_pressure", "c_p", "specific heat capacity at constant pressure"
+    ),
     DENSITY,
     Term("mass_fraction", "w", dim.NONE, "", "mass fraction of the solute", allowance=Allowance.FRACTION),
     replace(TEMPERATURE, name="melting_temperature", symbol="T_m", meaning="melting temperature"),
     Term("latent_heat", "L", dim.SPECIFIC_ENERGY, "kJ/kg", "latent heat of melting", positive=True),
-    Term("heat_transfer_coefficient", "h_c", dim.HEAT_TRANSFER_COEFFICIENT, "W/(m²·K)",
-         "surface heat transfer coefficient", positive=True),
-    Term("thermal_conductivity", "λ", dim.THERMAL_CONDUCTIVITY, "W/(m·K)", "thermal conductivity",
-         positive=True),
+    Term(
+        "heat_transfer_coefficient",
+        "h_c",
+        dim.HEAT_TRANSFER_COEFFICIENT,
+        "W/(m²·K)",
+        "surface heat transfer coefficient",
+        positive=True,
+    ),
+    Term(
+        "thermal_conductivity",
+        "λ",
+        dim.THERMAL_CONDUCTIVITY,
+        "W/(m·K)",
+        "thermal conductivity",
+        positive=True,
+    ),
     Term("characteristic_length", "L_c", dim.LENGTH, "m", "volume per surface", positive=True),
-)  # fmt: skip
+)
 
 STATE: Final[tuple[Term, ...]] = (
     TEMPERATURE,
@@ -132,26 +164,59 @@ STATE: Final[tuple[Term, ...]] = (
     DENSITY,
     Term("quality", "x", dim.NONE, "", "mass of vapour per mass of mixture", allowance=Allowance.FRACTION),
     Term("phase", "", dim.NONE, "", "one of the phase words", text=True),
-    Term("specific_internal_energy", "u", dim.SPECIFIC_ENERGY, "kJ/kg", "internal energy per mass",
-         allowance=Allowance.PROPERTY_CHANGE),
-    Term("specific_enthalpy", "h", dim.SPECIFIC_ENERGY, "kJ/kg", "enthalpy per mass",
-         allowance=Allowance.PROPERTY_CHANGE),
-    Term("specific_entropy", "s", dim.SPECIFIC_ENTROPY, "kJ/(kg·K)", "entropy per mass",
-         allowance=Allowance.PROPERTY_CHANGE),
+    Term(
+        "specific_internal_energy",
+        "u",
+        dim.SPECIFIC_ENERGY,
+        "kJ/kg",
+        "internal energy per mass",
+        allowance=Allowance.PROPERTY_CHANGE,
+    ),
+    Term(
+        "specific_enthalpy",
+        "h",
+        dim.SPECIFIC_ENERGY,
+        "kJ/kg",
+        "enthalpy per mass",
+        allowance=Allowance.PROPERTY_CHANGE,
+    ),
+    Term(
+        "specific_entropy",
+        "s",
+        dim.SPECIFIC_ENTROPY,
+        "kJ/(kg·K)",
+        "entropy per mass",
+        allowance=Allowance.PROPERTY_CHANGE,
+    ),
     VOLUME,
     Term("internal_energy", "U", dim.ENERGY, "kJ", "internal energy", allowance=Allowance.PROPERTY_CHANGE),
     Term("enthalpy", "H", dim.ENERGY, "kJ", "enthalpy", allowance=Allowance.PROPERTY_CHANGE),
     Term("entropy", "S", dim.ENTROPY, "kJ/K", "entropy", allowance=Allowance.PROPERTY_CHANGE),
-    Term("exergy", "X", dim.ENERGY, "kJ", "closed-system exergy", allowance=Allowance.PROPERTY_CHANGE,
-         theme="exergy"),
-    Term("specific_exergy", "x_e", dim.SPECIFIC_ENERGY, "kJ/kg", "closed-system exergy per mass",
-         allowance=Allowance.PROPERTY_CHANGE, theme="exergy"),
+    Term(
+        "exergy",
+        "X",
+        dim.ENERGY,
+        "kJ",
+        "closed-system exergy",
+        allowance=Allowance.PROPERTY_CHANGE,
+        theme="exergy",
+    ),
+    Term(
+        "specific_exergy",
+        "x_e",
+        dim.SPECIFIC_ENERGY,
+        "kJ/kg",
+        "closed-system exergy per mass",
+        allowance=Allowance.PROPERTY_CHANGE,
+        theme="exergy",
+    ),
     Term("velocity", "c", dim.VELOCITY, "m/s", "speed of the body"),
     Term("elevation", "z", dim.LENGTH, "m", "height of the body"),
     Term("relative_humidity", "φ", dim.NONE, "", "relative humidity", allowance=Allowance.FRACTION),
-    Term("humidity_ratio", "W", dim.NONE, "", "mass of water per mass of dry air",
-         allowance=Allowance.FRACTION),
-)  # fmt: skip
+    Term(
+        "humidity_ratio", "W", dim.NONE, "", "mass of water per mass of dry air", allowance=Allowance.FRACTION
+    ),
+)
 
 _PROCESS_ENERGY: Final[tuple[Term, ...]] = (
     _energy("heat", "Q", "heat transfer, positive into the system"),
@@ -165,10 +230,14 @@ _PROCESS_ENERGY: Final[tuple[Term, ...]] = (
     _energy("energy_change", "ΔE", "change of total energy"),
     _energy("enthalpy_change", "ΔH", "change of enthalpy"),
     _energy("exergy_change", "ΔX", "change of closed-system exergy", "exergy"),
-    _energy("exergy_transfer", "X_Q−X_W", "exergy transferred by heat and useful work, positive into the system",
-            "exergy"),
+    _energy(
+        "exergy_transfer",
+        "X_Q−X_W",
+        "exergy transferred by heat and useful work, positive into the system",
+        "exergy",
+    ),
     _energy("exergy_destruction", "X_d", "exergy destroyed", "exergy"),
-)  # fmt: skip
+)
 _PROCESS_ENTROPY: Final[tuple[Term, ...]] = (
     _entropy("entropy_change", "ΔS", "change of entropy"),
     _entropy("entropy_transfer", "ΣQ/T_b", "entropy transferred with heat, positive into the system"),
@@ -199,42 +268,74 @@ PROCESS: Final[tuple[Term, ...]] = (
     *_PROCESS_ENERGY,
     *_PROCESS_ENTROPY,
     *(_per_mass(term) for term in _PROCESS_ENERGY + _PROCESS_ENTROPY),
-    Term("temperature_change", "ΔT", dim.TEMPERATURE, "K", "change of temperature",
-         Scale.TEMPERATURE_DIFFERENCE, Allowance.TEMPERATURE),
+    Term(
+        "temperature_change",
+        "ΔT",
+        dim.TEMPERATURE,
+        "K",
+        "change of temperature",
+        Scale.TEMPERATURE_DIFFERENCE,
+        Allowance.TEMPERATURE,
+    ),
     DURATION,
     MEAN_POWER,
-)  # fmt: skip
+)
 
 TRANSFER: Final[tuple[Term, ...]] = (
     _energy("energy", "E_k", "energy of this transfer"),
     MEAN_POWER,
     DURATION,
-    replace(TEMPERATURE, name="boundary_temperature", symbol="T_b", meaning="temperature where the heat crosses"),
-    replace(TEMPERATURE, name="reservoir_temperature", symbol="T_res", meaning="temperature of the reservoir"),
+    replace(
+        TEMPERATURE, name="boundary_temperature", symbol="T_b", meaning="temperature where the heat crosses"
+    ),
+    replace(
+        TEMPERATURE, name="reservoir_temperature", symbol="T_res", meaning="temperature of the reservoir"
+    ),
 )
 
 PATH: Final[tuple[Term, ...]] = (
     Term("exponent", "n", dim.NONE, "", "exponent of p·vⁿ = constant", theme="path"),
-    replace(PRESSURE, name="external_pressure", symbol="p_ext", meaning="constant pressure outside", theme="path"),
+    replace(
+        PRESSURE, name="external_pressure", symbol="p_ext", meaning="constant pressure outside", theme="path"
+    ),
     Term("stiffness", "k", dim.STIFFNESS, "kN/m", "stiffness of the spring", theme="path", positive=True),
     Term("piston_area", "A", dim.AREA, "m²", "area of the piston", theme="path", positive=True),
-    replace(PRESSURE, name="pressure_at_contact", symbol="p_c", meaning="pressure when the spring is reached",
-            theme="path"),
-    replace(VOLUME, name="volume_at_contact", symbol="V_c", meaning="volume when the spring is reached",
-            theme="path"),
+    replace(
+        PRESSURE,
+        name="pressure_at_contact",
+        symbol="p_c",
+        meaning="pressure when the spring is reached",
+        theme="path",
+    ),
+    replace(
+        VOLUME,
+        name="volume_at_contact",
+        symbol="V_c",
+        meaning="volume when the spring is reached",
+        theme="path",
+    ),
     replace(PRESSURE, theme="path"),
     replace(VOLUME, theme="path"),
-)  # fmt: skip
+)
 
 CYCLE: Final[tuple[Term, ...]] = (
     _energy("net_work", "W_net", "net work of the cycle", work_sign=True),
     _energy("net_heat", "Q_net", "net heat of the cycle"),
     _energy("heat_supplied", "Q_in", "heat supplied in the cycle, a magnitude"),
     _energy("heat_rejected", "Q_out", "heat rejected in the cycle, a magnitude"),
-    Term("thermal_efficiency", "η", dim.NONE, "", "net work per heat supplied", allowance=Allowance.FRACTION,
-         theme="energy"),
-    Term("coefficient_of_performance", "COP", dim.NONE, "", "useful heat per net work put in", theme="energy"),
-)  # fmt: skip
+    Term(
+        "thermal_efficiency",
+        "η",
+        dim.NONE,
+        "",
+        "net work per heat supplied",
+        allowance=Allowance.FRACTION,
+        theme="energy",
+    ),
+    Term(
+        "coefficient_of_performance", "COP", dim.NONE, "", "useful heat per net work put in", theme="energy"
+    ),
+)
 
 SEQUENCE: Final[tuple[Term, ...]] = (
     *PROCESS,
@@ -243,11 +344,26 @@ SEQUENCE: Final[tuple[Term, ...]] = (
 )
 
 ASSUMPTION: Final[tuple[Term, ...]] = (
-    *(term for term in BODY if term.name in {"heat_transfer_coefficient", "thermal_conductivity",
-                                             "characteristic_length", "mass", "specific_heat"}),
-    replace(TEMPERATURE, name="temperature_change", symbol="ΔT", meaning="temperature change of the neglected body",
-            scale=Scale.TEMPERATURE_DIFFERENCE),
-)  # fmt: skip
+    *(
+        term
+        for term in BODY
+        if term.name
+        in {
+            "heat_transfer_coefficient",
+            "thermal_conductivity",
+            "characteristic_length",
+            "mass",
+            "specific_heat",
+        }
+    ),
+    replace(
+        TEMPERATURE,
+        name="temperature_change",
+        symbol="ΔT",
+        meaning="temperature change of the neglected body",
+        scale=Scale.TEMPERATURE_DIFFERENCE,
+    ),
+)
 
 SURROUNDINGS: Final[tuple[Term, ...]] = (
     replace(TEMPERATURE, symbol="T₀", meaning="temperature of the surroundings"),
@@ -257,22 +373,34 @@ SURROUNDINGS: Final[tuple[Term, ...]] = (
 TERMS: Final[dict[Level, dict[str, Term]]] = {
     level: {term.name: term for term in terms}
     for level, terms in (
-        (Level.BODY, BODY), (Level.STATE, STATE), (Level.PROCESS, PROCESS), (Level.TRANSFER, TRANSFER),
-        (Level.PATH, PATH), (Level.CYCLE, CYCLE), (Level.SEQUENCE, SEQUENCE), (Level.ASSUMPTION, ASSUMPTION),
+        (Level.BODY, BODY),
+        (Level.STATE, STATE),
+        (Level.PROCESS, PROCESS),
+        (Level.TRANSFER, TRANSFER),
+        (Level.PATH, PATH),
+        (Level.CYCLE, CYCLE),
+        (Level.SEQUENCE, SEQUENCE),
+        (Level.ASSUMPTION, ASSUMPTION),
         (Level.SURROUNDINGS, SURROUNDINGS),
     )
-}  # fmt: skip
+}
 
 SYNONYMS: Final[dict[Level, dict[str, str]]] = {
     Level.BODY: {"m": "mass", "V": "volume"},
     Level.STATE: {
-        "T": "temperature", "p": "pressure", "v": "specific_volume", "u": "specific_internal_energy",
-        "h": "specific_enthalpy", "s": "specific_entropy", "x": "quality", "V": "volume",
+        "T": "temperature",
+        "p": "pressure",
+        "v": "specific_volume",
+        "u": "specific_internal_energy",
+        "h": "specific_enthalpy",
+        "s": "specific_entropy",
+        "x": "quality",
+        "V": "volume",
     },
     Level.PROCESS: {"Q": "heat", "W": "work"},
     Level.SEQUENCE: {"Q": "heat", "W": "work"},
     Level.SURROUNDINGS: {"T": "temperature", "p": "pressure"},
-}  # fmt: skip
+}
 
 PATH_KINDS: Final[tuple[str, ...]] = (
     "constant volume",

@@ -2,13 +2,12 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Iterator
+from collections.abc import Callable
 from dataclasses import dataclass
 from enum import StrEnum
 
-from checker.case import Case, Raised, Unchecked, Yielded
+from checker.case import Case, Yielded
 from checker.findings import Grade
-from checker.submission import Submission
 
 
 class Scope(StrEnum):
@@ -23,9 +22,7 @@ class Scope(StrEnum):
     ASSUMPTION = "assumption"
 
 
-PackageFunction = Callable[[Submission], Iterator[Raised | Unchecked]]
-RecordFunction = Callable[[Case], Yielded]
-ItemFunction = Callable[[Case, str], Yielded]
+RuleFunction = Callable[..., Yielded]
 
 
 @dataclass(frozen=True, slots=True)
@@ -38,7 +35,8 @@ class Rule:
         Slug that says what is wrong.
     function : callable
         ``(case)`` for a record, ``(case, identifier)`` for a body, process, limit or assumption,
-        ``(case, "STATE/BODY")`` for a state, ``(submission)`` for a package. Yields ``Raised`` or ``Unchecked``.
+        ``(case, "STATE/BODY")`` for a state, ``(submission)`` for a package. Yields ``Raised`` or
+        ``Unchecked``.
     scope : Scope
         What the function is called for.
     theme : str
@@ -56,12 +54,12 @@ class Rule:
         state (``states/S/B/NAME``); the engine reports them as not checked.
     when : callable
         Says whether the rule applies at all to this item; needs are asked only then.
-    problem : str
-        For rules on the form: the kind of problem of the reading stage that it reports (its own name).
+    from_reading : bool
+        The rule reports problems of the reading stage whose kind is its own name.
     """
 
     name: str
-    function: PackageFunction | RecordFunction | ItemFunction
+    function: RuleFunction
     scope: Scope
     theme: str
     grade: Grade

@@ -25,7 +25,7 @@ def disagrees(case: Case) -> Yielded:
             theme=first.statement.term.theme,
             origin=None if first.standing is Standing.ORIGIN_UNKNOWN else True,
             spoils=spoiled,
-            suggestion=_suggestion(case, first, spoiled),
+            suggestion=_suggestion(first, spoiled),
         )
 
 
@@ -138,7 +138,7 @@ def _message(case: Case, c: Compared) -> str:
     )
 
 
-def _suggestion(case: Case, c: Compared, spoiled: tuple[str, ...]) -> str:
+def _suggestion(c: Compared, spoiled: tuple[str, ...]) -> str:
     if not spoiled:
         return "Correct this result." if c.deviation is not None else ""
     count = len(spoiled)

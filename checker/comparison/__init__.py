@@ -1,0 +1,1 @@
+"""Comparison: references and allowances, how results move, carried values, where deviations start."""

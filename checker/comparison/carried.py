@@ -114,7 +114,7 @@ def _reread(
     plan: RecordPlan, step: Step, wrong: str, stated: Mapping[str, float], independent: Values
 ) -> Iterator[dict[str, float]]:
     """Yield a state's unstated properties from the wrong stated one with each of the state's clues."""
-    _, state, body, name = wrong.split("/")
+    _, _, body, name = wrong.split("/")
     substance = plan.substances.get(body)
     if substance is None:
         return

@@ -16,7 +16,7 @@ from checker.submission import Record
 def body_steps(record: Record, body: str, model: BodyModel, first_state: str | None) -> Iterator[Step]:
     """Yield the candidates of one body, the mass first."""
     states = [state for state, name in record.body_states if name == body]
-    yield from _mass_steps(body, model, states, first_state)
+    yield from _mass_steps(body, states, first_state)
     yield from _constant_steps(body, model)
     if first_state is not None:
         yield Step(
@@ -41,7 +41,7 @@ def _ratio(a: float, b: float) -> tuple[float]:
     return (a / b,)
 
 
-def _mass_steps(body: str, model: BodyModel, states: list[str], first_state: str | None) -> Iterator[Step]:
+def _mass_steps(body: str, states: list[str], first_state: str | None) -> Iterator[Step]:
     mass = body_key(body, "mass")
     yield same_value(mass, given(mass), f"Mass of {body}", "m given")
     for state in states:

@@ -170,13 +170,12 @@ class _Builder:
     def _barred(self, state: str, body: str, phase: Phase | None) -> frozenset[tuple[str, str]]:
         """Bar T with p where their stated digits reach across the saturation line and no phase tells."""
         substance = self.substances.get(body)
-        stated = [
+        t, p = (
             next(iter(self.record.stated(state_key(state, body, name), Role.INPUT)), None)
             for name in ("temperature", "pressure")
-        ]
-        if substance is None or phase is not None or stated[0] is None or stated[1] is None:
+        )
+        if substance is None or phase is not None or t is None or p is None:
             return frozenset()
-        t, p = stated
         if substance.crosses_saturation(t.value, t.quantity.half_width, p.value, p.quantity.half_width):
             return frozenset({("temperature", "pressure")})
         return frozenset()

@@ -145,7 +145,7 @@ def reevaluate(
     Keys of ``moved`` that are calculated act as substitutes for their children.
     """
     values = dict(base)
-    values.update({key: value for key, value in moved.items()})
+    values.update(moved)
     instead = {**(substitutes or {}), **moved}
     changed = set(moved)
     touched: set[str] = set()
