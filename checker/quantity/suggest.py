@@ -4,10 +4,12 @@ from __future__ import annotations
 
 from difflib import get_close_matches
 from functools import lru_cache
+from typing import Final
 
 from checker.quantity.allowlist import STANDARD
 
-_LONGEST = 16
+_LONGEST: Final = 16
+_ALIKE: Final = 0.75  # lower, and kjoule would resemble kmol
 
 
 @lru_cache(maxsize=256)
@@ -22,4 +24,4 @@ def nearest_name(word: str) -> str:
     for name in STANDARD:
         if name.casefold() == folded:
             return name
-    return next(iter(get_close_matches(word, STANDARD, n=1, cutoff=0.6)), "")
+    return next(iter(get_close_matches(word, STANDARD, n=1, cutoff=_ALIKE)), "")
