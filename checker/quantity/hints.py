@@ -23,7 +23,9 @@ _GROUPS_BY_COMMA: Final = re.compile(r"[+\-−]?[0-9]{1,3}(?:,[0-9]{3})+")
 
 
 class _Hint(NamedTuple):
-    pattern: re.Pattern[str]
+    """A row: the texts it speaks for, what it says, and how it makes a suggestion (none where a person decides)."""
+
+    pattern: str
     message: str
     suggest: Callable[[re.Match[str]], str] | None = None
 
@@ -57,63 +59,67 @@ def _without_separators(match: re.Match[str]) -> str:
     return re.sub(f"[{_SEPARATORS}]", "", match[1]) + match[2]
 
 
-def _hint(pattern: str, message: str, suggest: Callable[[re.Match[str]], str] | None = None) -> _Hint:
-    return _Hint(re.compile(pattern, re.IGNORECASE | re.DOTALL), message, suggest)
-
-
 _HINTS: Final[tuple[_Hint, ...]] = (
-    _hint(r".*[\x00-\x1f\x7f-\x9f\u2028\u2029]", "a quantity has no line break or control character"),
-    _hint(r"\s*\Z", "a quantity is a number and a unit"),
-    _hint(r".*[\"“”„]|'", "a quantity has no quotation marks", lambda m: re.sub("[\"'“”„]", "", m.string)),
-    _hint(r"[+\-−]?\s*(?:nan|inf|infinity|∞)\b|[+\-−]?\s*∞", "a value that is not a number is left out"),
-    _hint(
+    _Hint(r".*[\x00-\x1f\x7f-\x9f\u2028\u2029]", "a quantity has no line break or control character"),
+    _Hint(r"\s*\Z", "a quantity is a number and a unit"),
+    _Hint(r".*[\"“”„]|'", "a quantity has no quotation marks", lambda m: re.sub("[\"'“”„]", "", m.string)),
+    _Hint(r"[+\-−]?\s*(?:nan|inf|infinity|∞)\b|[+\-−]?\s*∞", "a value that is not a number is left out"),
+    _Hint(
         r"\s*(?:[~≈≃≅<>≤≥≪≫=]+|ca\b\.?|approx\b\.?|about\b|circa\b)\s*(.*)",
         "a quantity is one number: a limit belongs to `limits`, a doubt is written with ±",
         lambda m: m[1],
     ),
-    _hint(
+    _Hint(
         rf"({_PLAIN})\s*(?:-|–|—|−|\.\.\.?|…|\bto\b)\s*([0-9]{{1,20}}(?:\.[0-9]{{1,20}})?)(?![0-9.])(.*)",
         "a range is no quantity: write the middle and a half-width with ±",
         _midpoint,
     ),
-    _hint(r"\s*[–—‒]\s*([0-9.].*)", "a minus is written - or −, not as a dash", lambda m: "-" + m[1]),
-    _hint(r"([+\-−])\s+([0-9.].*)", "no blank after the sign", lambda m: m[1] + m[2]),
-    _hint(
+    _Hint(r"\s*[–—‒]\s*([0-9.].*)", "a minus is written - or −, not as a dash", lambda m: "-" + m[1]),
+    _Hint(r"([+\-−])\s+([0-9.].*)", "no blank after the sign", lambda m: m[1] + m[2]),
+    _Hint(
         r"([+\-−]?[0-9][0-9.,]{0,40})?,([0-9]{1,20})(?![0-9,.])(.*)",
         "the decimal sign is a point, and groups of digits have no comma: 1,000 could be 1000 or 1.000",
         _decimal_comma,
     ),
-    _hint(
+    _Hint(
         r"([+\-−]?[0-9]{1,3}(?:,[0-9]{3}){1,8}\.[0-9]{0,20})(.*)",
         "groups of digits have no comma",
         lambda m: m[1].replace(",", "") + m[2],
     ),
-    _hint(
+    _Hint(
         rf"([+\-−]?[0-9]{{1,3}}(?:[{_SEPARATORS}][0-9]{{3}})+(?:\.[0-9]*)?)(?![0-9,.])(.*)",
         "groups of digits are written together, or with a thin or no-break space",
         _without_separators,
     ),
-    _hint(
+    _Hint(
         rf"[+\-−]?[0-9]+[{_SEPARATORS}][0-9]",
         "digits stand together; a thin or no-break space may separate groups of three",
     ),
-    _hint(
+    _Hint(
         rf"({_PLAIN})\s?\(([0-9]{{1,8}})\)(.*)",
         "the uncertainty of the last digits is written with ±",
         _last_digits,
     ),
-    _hint(
+    _Hint(
         r"([+\-−]?)10(?:(?:\^|\*\*)([+\-−]?[0-9]{1,2})|([⁺⁻]?[⁰¹²³⁴-⁹]{1,2}))(?![0-9⁰¹²³⁴-⁹])(.*)",
         "a power of ten is written 1e5 or 1×10^5",
         lambda m: f"{m[1]}1e{m[2] or fold_superscripts(m[3])}{m[4]}",
     ),
-    _hint(r"[+\-−]?[0-9.]{1,40}e[+\-−]?[0-9]{4}", "an exponent has at most three digits"),
-    _hint(
+    _Hint(r"[+\-−]?[0-9.]{1,40}e[+\-−]?[0-9]{4}", "an exponent has at most three digits"),
+    _Hint(
         r"[+\-−]?[0-9.]{1,40}\s*(?:\*\*|[*/+^×·x])\s*[0-9(]",
         "nothing is calculated in a quantity: write the result",
     ),
-    _hint(r"[+\-−]?[0-9.]*\s*[½¼¾⅓⅔⅛]", "a fraction is written as a decimal number"),
-    _hint(r"[+\-−]?[0-9]*\.[0-9]*[.]", "a number has one decimal point"),
+    _Hint(
+        rf"({_PLAIN})\s*\[(?!\s*[-–—]?\s*\])([^\[\]]*)\]\Z",
+        "a unit has no square brackets",
+        lambda m: f"{m[1]} {m[2].strip()}",
+    ),
+    _Hint(
+        rf"({_PLAIN})\s*(?:[-–—]|\[\s*[-–—]?\s*\])\s*\Z", "a pure number is written without a unit", lambda m: m[1]
+    ),
+    _Hint(r"[+\-−]?[0-9.]*\s*[½¼¾⅓⅔⅛]", "a fraction is written as a decimal number"),
+    _Hint(r"[+\-−]?[0-9]*\.[0-9]*[.]", "a number has one decimal point"),
 )  # fmt: skip
 
 
@@ -123,7 +129,7 @@ def explain(text: str) -> QuantityError | None:
     if foreign is not None:
         return QuantityError("quantity-unreadable", "digits are 0 to 9", foreign, "".join(map(_ascii, text)))
     for pattern, message, suggest in _HINTS:
-        match = pattern.match(text)
+        match = re.compile(pattern, re.IGNORECASE | re.DOTALL).match(text)  # re keeps what it compiled
         if match is not None:
             return QuantityError("quantity-unreadable", message, 0, suggest(match) if suggest else "")
     return None

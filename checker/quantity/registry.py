@@ -9,7 +9,6 @@ from __future__ import annotations
 from collections.abc import Iterable
 from fractions import Fraction
 from functools import lru_cache
-from importlib.resources import files
 from threading import Lock
 from typing import TYPE_CHECKING, Any, Final
 
@@ -25,6 +24,8 @@ _LOCK: Final = Lock()  # pint fills its caches while it answers
 @lru_cache(maxsize=1)
 def _registry() -> UnitRegistry[Any]:
     """Build the registry on first use: pint costs a quarter of a second to import."""
+    from importlib.resources import files
+
     from pint import UnitRegistry
 
     registry: UnitRegistry[Any] = UnitRegistry(None, non_int_type=Fraction)

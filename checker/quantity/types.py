@@ -102,3 +102,6 @@ class QuantityError(ValueError):
         self.message = message
         self.offset = offset
         self.suggestion = suggestion
+
+    def __reduce__(self) -> tuple[type[QuantityError], tuple[str, str, int, str]]:
+        return (type(self), (self.kind, self.message, self.offset, self.suggestion))

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import pickle
 import subprocess
 import sys
 from decimal import Decimal
@@ -13,6 +14,8 @@ from hypothesis import strategies as st
 
 from checker.quantity import Quantity, QuantityError, Scale, known_units, parse_quantity, unit
 from checker.quantity import dimensions as dim
+from checker.quantity.reading import read_unit
+from checker.quantity.suggest import nearest_name
 
 ROOT = Path(__file__).parents[3]
 ATMOSPHERE = 101300.0
@@ -109,3 +112,30 @@ def test_reading_is_deterministic():
     """The same text gives an equal quantity, cached or not."""
     first = parse_quantity("1.2 kJ/kg·K", expected=dim.SPECIFIC_ENTROPY)
     assert parse_quantity("1.2 kJ/kg·K", expected=dim.SPECIFIC_ENTROPY) == first
+
+
+def test_first_use_from_several_threads():
+    """Eight threads that need the unit table at once all get the same answer."""
+    code = (
+        "from concurrent.futures import ThreadPoolExecutor\n"
+        "from checker.quantity import parse_quantity\n"
+        "texts = [f'5 {u}' for u in ('kJ', 'bar', 'kJ/kg', 'psi', 'BTU', 'W/(m²·K)', 'lb/ft³', '°F')] * 4\n"
+        "with ThreadPoolExecutor(8) as pool:\n    together = list(pool.map(parse_quantity, texts))\n"
+        "assert together == [parse_quantity(text) for text in texts]\n"
+    )
+    subprocess.run([sys.executable, "-c", code], cwd=ROOT, check=True, timeout=60)
+
+
+def test_caches_are_bounded():
+    """However many distinct unit texts a package brings, the caches keep a fixed number."""
+    assert read_unit.cache_info().maxsize == 1024
+    assert unit.cache_info().maxsize == 256
+    assert nearest_name.cache_info().maxsize == 256
+
+
+def test_quantities_and_errors_travel_between_processes():
+    """A pickled quantity is equal to itself, and a pickled error keeps its fields."""
+    quantity = parse_quantity("8 ± 0.1 bar(g)", atmosphere=ATMOSPHERE)
+    assert pickle.loads(pickle.dumps(quantity)) == quantity
+    error = pickle.loads(pickle.dumps(QuantityError("unit-unknown", "no", 3, "5 kJ")))
+    assert (error.kind, error.message, error.offset, error.suggestion) == ("unit-unknown", "no", 3, "5 kJ")

@@ -100,6 +100,28 @@ def test_unit_is_read(text: str, factor: float, dimension: Dimension):
         assert parse_quantity(f"1.0{text}").value == unit(text).factor
 
 
+@pytest.mark.parametrize(
+    ("texts", "dimension"),
+    [
+        (("lbm", "Kg", "gm"), dim.MASS),
+        (("lbmol", "kgmol"), dim.AMOUNT),
+        (
+            ("psia", "bara", "kPa(a)", "ata", "psf", "KPa", "Mpa", "Torr", "in Hg", "mm Hg", "N/m2"),
+            dim.PRESSURE,
+        ),
+        (("psig", "barg", "kPa(g)"), dim.PRESSURE),
+        (("MMBtu", "MMBTU", "btu", "KJ"), dim.ENERGY),
+        (("ft3", "m3", "cm3", "dm3", "in3", "ltr", "cu ft", "cft"), dim.VOLUME),
+        (("Celsius", "Rankine", "ºC"), dim.TEMPERATURE),
+        (("kg/cm2",), (-2, 1, 0, 0, 0)),
+    ],
+)
+def test_trade_notation_is_read(texts: tuple[str, ...], dimension: Dimension):
+    """Notations that the unit library does not know, and that have one meaning, are read."""
+    for text in texts:
+        assert parse_quantity(f"5 {text}", atmosphere=1e5).dimension == dimension, text
+
+
 AMBIGUOUS_DENOMINATORS = [
     ("kJ/kg·K", dim.SPECIFIC_ENTROPY, 1e3, "kJ/(kg·K)"),
     ("kJ/kg⋅K", dim.SPECIFIC_ENTROPY, 1e3, "kJ/(kg·K)"),
