@@ -69,6 +69,7 @@ class Body:
     composition: Mapping[str, float] | None = None
     composition_basis: str = "mole"
     property_source: str = "reference"  # or "industrial": water by IAPWS-IF97
+    table: tuple[Mapping[str, Quantity], ...] = ()
 
 
 @dataclass(frozen=True, slots=True)
@@ -83,7 +84,11 @@ class Datum:
 
 @dataclass(frozen=True, slots=True)
 class BodyState:
-    """A body in a state: the phase word if stated (with its role), and a link."""
+    """A body in a state: the phase word if stated (with its role), and a link.
+
+    Where both inputs and results state a phase, ``phase`` is that of the inputs; ``claimed_phase`` is always that
+    of the results. ``same_as`` is written out: ``records/R/states/S/B``.
+    """
 
     state: str
     body: str
@@ -91,14 +96,22 @@ class BodyState:
     phase: str | None = None
     phase_role: Role | None = None
     same_as: str | None = None
+    claimed_phase: str | None = None
 
 
 @dataclass(frozen=True, slots=True)
 class PathSpec:
-    """One path of one body in one process; parameters are statements at ``processes/P/path/...``."""
+    """One path of one body in one process.
+
+    Its parameters are statements at ``pointer/NAME``, where ``pointer`` is ``processes/P/path`` in a record of one
+    body and ``processes/P/bodies/B/path`` in others; those of the i-th of its ``points`` (from 0) are at
+    ``pointer/points/i/pressure`` and ``pointer/points/i/volume``.
+    """
 
     kind: str
     place: Place
+    pointer: str = ""
+    points: int = 0
 
 
 @dataclass(frozen=True, slots=True)
@@ -151,11 +164,12 @@ class SequenceOfProcesses:
 
 @dataclass(frozen=True, slots=True)
 class Assumption:
-    """A declared assumption."""
+    """A declared assumption; ``word`` is its entry of the vocabulary, None where it is not one."""
 
     id: str
     text: str
     place: Place
+    word: str | None = None
 
 
 @dataclass(frozen=True, slots=True)

@@ -1,0 +1,193 @@
+"""Reading the quantities of a record: from the text to a statement, or to a problem at its place."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+from typing import Final
+
+from checker.package.dimensions import as_total, is_rate_of, wrong_unit
+from checker.package.layout import LEVEL_WORDS, belongs
+from checker.package.nearest import nearest, perhaps, shortened, without_value
+from checker.package.notebook import Notebook
+from checker.problems import Place
+from checker.quantity import dimensions as dim
+from checker.quantity import parse_quantity
+from checker.quantity.types import Quantity, QuantityError
+from checker.submission import Role, Statement
+from checker.vocabulary import TERMS, Level, Term, canonical
+
+_WORK_ITEM: Final = frozenset({"energy", "mean_power"})
+"""Names of a work transfer that follow its direction, or the work convention."""
+
+
+@dataclass(frozen=True, slots=True)
+class Spot:
+    """Where a mapping of names stands, and how its signs and rates are read.
+
+    Attributes
+    ----------
+    level : Level
+        Level of the vocabulary.
+    prefix : str
+        Pointer of what the quantities belong to, such as ``states/hot/nitrogen``.
+    place : Place
+        Place of the part that holds ``inputs`` and ``results``, from the record.
+    names : tuple of str
+        Whole-word names that may stand there; all of the level if empty.
+    duration : Quantity or None
+        What makes a rate a total.
+    work : bool
+        A work transfer.
+    direction : str or None
+        Its direction, if stated.
+    """
+
+    level: Level
+    prefix: str
+    place: Place
+    names: tuple[str, ...] = ()
+    duration: Quantity | None = None
+    work: bool = False
+    direction: str | None = None
+
+
+@dataclass(frozen=True, slots=True)
+class WordStated:
+    """A word stated among quantities, such as a phase."""
+
+    text: str
+    place: Place
+
+
+@dataclass(frozen=True, slots=True)
+class Desk:
+    """What reading the quantities of one record needs.
+
+    ``atmosphere`` is the absolute pressure of the surroundings [Pa], ``work_sign`` +1 for work positive out.
+    """
+
+    notebook: Notebook
+    atmosphere: float | None
+    work_sign: int
+
+    def take(
+        self, spot: Spot, role: Role, mapping: Mapping[str, object], key: Place
+    ) -> dict[str, WordStated]:
+        """State every quantity of a mapping under ``key``; return the words that stand among them."""
+        allowed = spot.names or tuple(TERMS[spot.level])
+        seen: dict[str, str] = {}
+        words: dict[str, WordStated] = {}
+        for written, text in mapping.items():
+            name, place = canonical(spot.level, written), (*spot.place, *key, written)
+            if name not in allowed:
+                self.unknown(spot, written, text, place)
+            elif name in seen:
+                self._repeated(spot, seen[name], written, name, place)
+            elif text is not None:
+                seen[name] = written
+                term = TERMS[spot.level][name]
+                if term.text and isinstance(text, str):
+                    words[name] = WordStated(text, place)
+                else:
+                    self.state(spot, role, term, text, place)
+        return words
+
+    def take_both(self, spot: Spot, inputs: Mapping[str, object], results: Mapping[str, object]) -> None:
+        """State the inputs and the results of a part."""
+        self.take(spot, Role.INPUT, inputs, ("inputs",))
+        self.take(spot, Role.RESULT, results, ("results",))
+
+    def state(self, spot: Spot, role: Role, term: Term, text: object, place: Place) -> None:
+        """State one quantity, or note why it cannot be used."""
+        pointer = f"{spot.prefix}/{term.name}"
+        read = self.read(text, term, place, pointer, spot.duration)
+        if read is None:
+            return
+        quantity, usable = read
+        if spot.direction and term.name in _WORK_ITEM and quantity.value < 0.0:
+            self.notebook.say(
+                "direction-and-sign",
+                place,
+                f"`{shortened(quantity.text)}` is negative, and the direction `{spot.direction}` is stated as well.",
+                "State the direction with a positive number, or the sign without a direction.",
+                quantity=pointer,
+            )
+        sign = self._sign(spot, term)
+        whole = (*self.notebook.root, *place)
+        self.notebook.statements.append(Statement(pointer, role, term, quantity, sign, whole, usable))
+
+    def read(
+        self, text: object, term: Term, place: Place, pointer: str, duration: Quantity | None = None
+    ) -> tuple[Quantity, bool] | None:
+        """Return a quantity and whether its unit is right; None where the text cannot be read."""
+        say = self.notebook.say
+        if not isinstance(text, str):
+            shape = "a list" if isinstance(text, list | tuple) else "a mapping"
+            message = f"`{term.name}` is one text, such as {term.unit and '12 '}{term.unit}, and not {shape}."
+            say("type-wrong", place, message, "Write number and unit as one text.", quantity=pointer)
+            return None
+        try:
+            quantity = parse_quantity(
+                text, expected=term.dimension, scale=term.scale, atmosphere=self.atmosphere
+            )
+        except QuantityError as error:
+            suggestion = f"Perhaps `{error.suggestion}`?" if error.suggestion else ""
+            message = f"`{shortened(text, 40)}`: {error.message}."
+            say(error.kind, place, message, suggestion, quantity=pointer, offset=error.offset)
+            return None
+        if duration is not None and is_rate_of(quantity.dimension, term.dimension):
+            quantity = as_total(quantity, duration)
+        for note in quantity.notes:
+            say("notation-read-as", place, f"{note}.", quantity=pointer)
+        wrong = wrong_unit(quantity, term)
+        if wrong is not None:
+            at = (
+                len(text) - len(quantity.unit.text)
+                if quantity.unit.text and text.endswith(quantity.unit.text)
+                else 0
+            )
+            say(wrong.kind, place, wrong.message, wrong.suggestion, quantity=pointer, offset=at)
+        return quantity, wrong is None
+
+    def duration(self, *mappings: Mapping[str, object]) -> Quantity | None:
+        """Return the duration that the first of some inputs states, where it can be read."""
+        text = next((m["duration"] for m in mappings if m.get("duration") is not None), None)
+        try:
+            quantity = parse_quantity(text, expected=dim.TIME) if isinstance(text, str) else None
+        except QuantityError:
+            return None
+        usable = quantity is not None and quantity.dimension == dim.TIME and quantity.value > 0.0
+        return quantity if usable else None
+
+    def _sign(self, spot: Spot, term: Term) -> int:
+        """Return −1 where the originator's sign is the opposite of the program's."""
+        if spot.work and term.name in _WORK_ITEM:
+            return {"in": -1, "out": 1}.get(spot.direction or "", self.work_sign)
+        return self.work_sign if term.work_sign else 1
+
+    def unknown(self, spot: Spot, written: str, value: object, place: Place) -> None:
+        """Note a name that may not stand at a spot."""
+        part, allowed = LEVEL_WORDS[spot.level], spot.names or tuple(TERMS[spot.level])
+        elsewhere = belongs(written, but=spot.level) if len(written) > 1 else ""
+        suggestion = elsewhere or perhaps(nearest(written, allowed)) or belongs(written, but=spot.level)
+        if value is None and not suggestion:
+            suggestion = without_value(written)
+        self.notebook.say(
+            "name-unknown",
+            place,
+            f"`{shortened(written, 40)}` is not a quantity that {part} may state here.",
+            suggestion or f"Known here: {', '.join(allowed)}.",
+            at_key=True,
+            quantity=f"{spot.prefix}/{shortened(written, 40)}",
+        )
+
+    def _repeated(self, spot: Spot, first: str, written: str, name: str, place: Place) -> None:
+        self.notebook.say(
+            "name-repeated",
+            place,
+            f"`{first}` and `{written}` both state the {name.replace('_', ' ')}; only `{first}` was read.",
+            "Keep one of the two.",
+            at_key=True,
+            quantity=f"{spot.prefix}/{name}",
+        )

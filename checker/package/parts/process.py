@@ -1,0 +1,117 @@
+"""A process: from one state to another, with its transfers, its path and its totals."""
+
+from __future__ import annotations
+
+from typing import Annotated, Final
+
+from pydantic import Field, model_validator
+from pydantic_core import PydanticCustomError
+
+from checker.package.parts.base import (
+    Flag,
+    Identifier,
+    Many,
+    Names,
+    OneQuantity,
+    Part,
+    Quantities,
+    Text,
+    Word,
+)
+from checker.package.parts.path import Path
+from checker.package.parts.state import EQUILIBRIUM_MEANING, Equilibrium
+from checker.package.words import DIRECTIONS, SYSTEM
+from checker.vocabulary import WORK_KINDS, Level
+
+ONLY_HEAT: Final = ("boundary_temperature", "reservoir_temperature")
+"""Names of the level *transfer* that say nothing about work."""
+
+ProcessNames = Annotated[Quantities, Names(Level.PROCESS)]
+HeatNames = Annotated[Quantities, Names(Level.TRANSFER)]
+WorkNames = Annotated[Quantities, Names(Level.TRANSFER, without=ONLY_HEAT)]
+TotalVolumeNames = Annotated[Quantities, Names(Level.BODY, only=("volume",))]
+WorkKind = Annotated[str, Word(WORK_KINDS, "a kind of work")]
+Direction = Annotated[str | None, Word(DIRECTIONS, "a direction")]
+
+
+class HeatTransfer(Part):
+    """A heat transfer, positive into the system."""
+
+    id: Identifier = Field(description="Identifier of the transfer.")
+    title: Text = Field(default="", description="Free text.")
+    body: Text | None = Field(None, description="The body that the heat enters or leaves.")
+    from_: Text | None = Field(None, alias="from", description="Heat between bodies: the body it leaves.")
+    to: Text | None = Field(None, description="Heat between bodies: the body it enters.")
+    boundary_temperature: Annotated[object, OneQuantity(Level.TRANSFER, ONLY_HEAT[0], (SYSTEM,))] = Field(
+        None, description="Temperature where the heat crosses; `system` follows the system."
+    )
+    reservoir_temperature: Annotated[object, OneQuantity(Level.TRANSFER, ONLY_HEAT[1])] = Field(
+        None, description="Temperature of what the heat comes from or goes to."
+    )
+    inputs: HeatNames = Field({}, description="What the originator started from.")
+    results: HeatNames = Field({}, description="What the originator claims.")
+
+
+class WorkTransfer(Part):
+    """A work transfer; its sign follows the work convention unless `direction` is given."""
+
+    id: Identifier = Field(description="Identifier of the transfer.")
+    title: Text = Field(default="", description="Free text.")
+    kind: WorkKind = Field(description="Kind of work.")
+    direction: Direction = Field(
+        None, description="In or out of the system; then the number is positive, whatever the convention."
+    )
+    body: Text | None = Field(None, description="The body that the work meets.")
+    inputs: WorkNames = Field({}, description="What the originator started from.")
+    results: WorkNames = Field({}, description="What the originator claims.")
+
+
+class Share(Part):
+    """One body's share in a process."""
+
+    inputs: ProcessNames = Field({}, description="What the originator started from.")
+    results: ProcessNames = Field({}, description="What the originator claims.")
+
+
+class TotalVolume(Part):
+    """Bodies that share a fixed total volume."""
+
+    bodies: Many[Text] = Field(min_length=2, description="The bodies.")
+    inputs: TotalVolumeNames = Field({}, description="The total volume, if it is given.")
+
+
+class Process(Part):
+    """A process of a record."""
+
+    id: Identifier = Field(description="Identifier of the process.")
+    title: Text = Field(default="", description="Free text.")
+    from_: Text = Field(alias="from", description="The state in which it begins.")
+    to: Text = Field(description="The state in which it ends.")
+    path: Path | None = Field(
+        None, description="The path: a word, a word with parameters, a list, or one for each body."
+    )
+    heat_transfers: Many[HeatTransfer] | None = Field(
+        None, description="All heat transfers; [] means none, a missing key means not stated."
+    )
+    work_transfers: Many[WorkTransfer] | None = Field(
+        None, description="All work transfers; [] means none, a missing key means not stated."
+    )
+    inputs: ProcessNames = Field({}, description="What the originator started from.")
+    results: ProcessNames = Field({}, description="What the originator claims.")
+    bodies: dict[Identifier, Share] = Field({}, description="Shares of single bodies.")
+    equilibrium: Many[Equilibrium] = Field(
+        (), description=f"At the end of the process. {EQUILIBRIUM_MEANING}"
+    )
+    total_volume: TotalVolume | None = Field(None, description="Bodies in a fixed total volume.")
+    insulated: Flag = Field(False, description="No heat crosses the boundary of the whole system.")
+
+    @model_validator(mode="before")
+    @classmethod
+    def without_nothing(cls, data: object) -> object:
+        """Refuse transfers without a value, which could mean none or not stated; leave out other empty keys."""
+        for key in ("heat_transfers", "work_transfers"):
+            if isinstance(data, dict) and data.get(key, ()) is None:
+                advice = "Write [] for none; leave the key out if nothing is stated about it."
+                context = {"key": key, "suggestion": advice}
+                raise PydanticCustomError("type-wrong", "`{key}` has no value.", context)
+        return super().without_nothing(data)

@@ -1,0 +1,42 @@
+"""JSON Schema of quantities, from the vocabulary: meaning, units and an example for every name."""
+
+from __future__ import annotations
+
+from typing import Any
+
+from checker.package.examples import example_of, units_of
+from checker.package.words import PHASE_SYNONYMS, PHASES
+from checker.quantity import dimensions as dim
+from checker.vocabulary import SYNONYMS, TERMS, Level, Term
+
+
+def term_schema(term: Term) -> dict[str, Any]:
+    """Return the schema of one quantity: text with a unit, or a plain number where it has none."""
+    if term.text:
+        return {
+            "type": "string",
+            "enum": [*PHASES, *PHASE_SYNONYMS],
+            "description": term.meaning.capitalize() + ".",
+        }
+    pure = term.dimension == dim.NONE
+    return {
+        "type": ["number", "string"] if pure else "string",
+        "description": f"{term.meaning.capitalize()} [{units_of(term)}].",
+        "examples": [example_of(term)],
+    }
+
+
+def names_schema(level: Level, names: tuple[str, ...]) -> dict[str, Any]:
+    """Return the closed schema of an ``inputs`` or ``results`` mapping, symbols included."""
+    properties = {name: term_schema(TERMS[level][name]) for name in names}
+    for symbol, name in SYNONYMS.get(level, {}).items():
+        if name in properties:
+            properties[symbol] = {**properties[name], "description": f"Short for {name}."}
+    return {"type": "object", "properties": properties, "additionalProperties": False}
+
+
+def quantity_schema(level: Level, name: str, words: tuple[str, ...] = ()) -> dict[str, Any]:
+    """Return the schema of a field that holds one quantity, or one of a few words in its place."""
+    schema = term_schema(TERMS[level][name])
+    schema["examples"] = [*schema["examples"], *words]
+    return schema
