@@ -70,9 +70,8 @@ def _row(
         key = canonical(Level.STATE, written)
         term = TERMS[Level.STATE].get(key)
         if term is None or term.text:
-            desk.unknown(
-                Spot(Level.STATE, f"bodies/{name}/table/{number}", place), written, (*place, written)
-            )
+            spot = Spot(Level.STATE, f"bodies/{name}/table/{number}", place)
+            desk.unknown(spot, written, text, (*place, written))
         elif text is not None:
             read = desk.read(text, term, (*place, written), f"bodies/{name}/table/{number}/{key}")
             if read is not None and read[1]:

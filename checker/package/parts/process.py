@@ -17,6 +17,7 @@ from checker.package.parts.base import (
     Quantities,
     Text,
     Word,
+    stated,
 )
 from checker.package.parts.path import Path
 from checker.package.parts.state import EQUILIBRIUM_MEANING, Equilibrium
@@ -114,4 +115,4 @@ class Process(Part):
                 advice = "Write [] for none; leave the key out if nothing is stated about it."
                 context = {"key": key, "suggestion": advice}
                 raise PydanticCustomError("type-wrong", "`{key}` has no value.", context)
-        return super().without_nothing(data)
+        return stated(cls, data)
