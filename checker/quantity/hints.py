@@ -56,6 +56,7 @@ def _last_digits(match: re.Match[str]) -> str:
 
 
 def _without_separators(match: re.Match[str]) -> str:
+    """Return the digits without what separates their groups."""
     return re.sub(f"[{_SEPARATORS}]", "", match[1]) + match[2]
 
 
@@ -136,4 +137,5 @@ def explain(text: str) -> QuantityError | None:
 
 
 def _ascii(sign: str) -> str:
+    """Return the ASCII digit of a decimal digit of any script, and every other sign as it is."""
     return str(unicodedata.decimal(sign, sign))

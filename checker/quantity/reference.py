@@ -56,6 +56,7 @@ def amount_of(
 
 
 def _missing(message: str, offset: int) -> QuantityError:
+    """Return the error for missing conditions, with an example."""
     return QuantityError("reference-conditions-missing", f"{message}; write for example {_EXAMPLE}", offset)
 
 

@@ -19,6 +19,7 @@ class Refusal:
 
 
 def _unless_mega(text: str, meant: str) -> Refusal:
+    """Refuse a milli that would be a mega with a capital letter."""
     return Refusal(
         AMBIGUOUS, f"{text} is a thousandth and {meant} a million: a factor of 10⁹ hangs on one letter", meant
     )
@@ -31,6 +32,7 @@ def _letter(text: str, is_unit_of: str, meant: str) -> Refusal:
 
 
 def _of_a_turn(text: str) -> Refusal:
+    """Refuse an angle or a speed of rotation: rpm has two sizes as 1/s."""
     return Refusal(UNKNOWN, f"{text}: angles and speeds of rotation are not part of a record")
 
 
