@@ -95,7 +95,7 @@ def not_recomputed(case: Case) -> Yielded:
         also = tuple(c.statement.pointer for c in group[1:])
         yield Raised(
             f"{group[0].statement.quantity.text} could not be recomputed: {reason}.",
-            compared=group[0],
+            statement=group[0].statement,
             theme=group[0].statement.term.theme,
             spoils=also,
             suggestion="State what is missing, or show the calculation that leads to it.",

@@ -88,8 +88,7 @@ def _is_compared(statement: Statement, sheet: Sheet) -> bool:
     if statement.role is Role.RESULT:
         return True
     key = sheet.key(statement.pointer)
-    step = sheet.made_by.get(key)
-    return step is not None and f"given/{key}" not in step.parents
+    return key in sheet.made_by and f"given/{key}" not in sheet.ancestors(key)
 
 
 def _compare(
@@ -153,11 +152,13 @@ def _judged(bare: Compared, references: References, broken: bool) -> Compared:
         return replace(bare, outcome=Outcome.WRONG, reason="it does not exist in this state")
     deviation = bare.stated - value
     bare = replace(bare, deviation=deviation)
-    limit = ILL_CONDITIONED * references.reference(bare.key, value)
-    if (broken or bare.digit_move > limit) and bare.digit_move > bare.tolerance:
-        return replace(bare, reason="the last digits of the inputs move it too far to be judged")
     if abs(deviation) <= bare.tolerance:
         return replace(bare, outcome=Outcome.AGREES)
+    limit = ILL_CONDITIONED * references.reference(bare.key, value)
+    if broken or bare.digit_move > limit:
+        return replace(
+            bare, reason="the last digits of the inputs move it too far for its deviation to be judged"
+        )
     return replace(
         bare,
         outcome=Outcome.WRONG,

@@ -346,6 +346,13 @@ def power_step(output: str, energy: str, duration: str, title: str) -> Step:
     return Step(title, (output,), (energy, duration), _power, "P = E/t", "{0}/{1}")
 
 
+def mean_power_step(output: str, energy: str, duration: str, title: str) -> Step:
+    """Return the magnitude of a process's mean power, |energy|/duration. [W]"""
+    return Step(
+        title, (output,), (energy, duration), lambda e, t: _power(abs(e), t), "P = |E|/t", "|{0}|/{1}"
+    )
+
+
 def _power(energy: float, duration: float) -> tuple[float]:
     if duration <= 0.0:
         raise NotEvaluable("a duration must be positive")

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections import defaultdict
-from collections.abc import Iterable, Iterator, Mapping, Sequence
+from collections.abc import Iterable, Iterator, Mapping
 from dataclasses import dataclass
 from typing import Final
 
@@ -12,11 +12,12 @@ from checker.sheet.bodies import body_steps, dead_state_steps
 from checker.sheet.context import ProcessContext
 from checker.sheet.datum import Offset, declared_offset
 from checker.sheet.endstates import Neighbour, curve_steps, path_clues
-from checker.sheet.keys import body_key, clue, given, plain, process_key, state_key, term_for
-from checker.sheet.leaves import Leaves, collect, same_quantities
+from checker.sheet.keys import body_key, clue, given, plain, state_key, term_for
+from checker.sheet.leaves import Leaves, collect
 from checker.sheet.models import BodyModel, body_model
 from checker.sheet.planner import explain, plan
 from checker.sheet.processes import process_steps
+from checker.sheet.same import SameQuantity, same_quantities
 from checker.sheet.states import CALORIC, SYMBOLS, Clue, StatePlan, clue_steps
 from checker.sheet.step import Sheet, Step
 from checker.sheet.transfers import assumed_candidates
@@ -50,7 +51,7 @@ def build_sheet(record: Record) -> RecordPlan:
     }
     leaves = collect(record, models, offsets, same)
     contexts = tuple(
-        ProcessContext(record, process, models, lambda p: same.get(p, p), leaves.given, leaves.stated)
+        ProcessContext(record, process, models, same.key, leaves.given, leaves.stated)
         for process in record.processes
     )
     builder = _Builder(record, models, substances, leaves, contexts)
@@ -84,7 +85,7 @@ class _Builder:
                     self.neighbours[ends[1], body].append(Neighbour(ctx, body, *ends))
                     self.neighbours[ends[0], body].append(Neighbour(ctx, body, ends[1], ends[0]))
 
-    def sheet(self, same: Mapping[str, str]) -> Sheet:
+    def sheet(self, same: SameQuantity) -> Sheet:
         """Return the planned sheet."""
         states = [self._state_plan(state, body) for state, body in self._body_states()]
         for body in self.record.bodies:
@@ -189,13 +190,13 @@ class _Builder:
         for ctx in self.contexts:
             yield from assumed_candidates(ctx, known)
 
-    def _missing(self, known: set[str], same: Mapping[str, str]) -> dict[str, str]:
+    def _missing(self, known: set[str], same: SameQuantity) -> dict[str, str]:
         """Return what is missing for every stated quantity and every balance that could not be planned."""
         makers: dict[str, list[Step]] = defaultdict(list)
         for step in self.candidates:
             for output in step.outputs:
                 makers[output].append(step)
-        wanted = {same.get(s.pointer, s.pointer) for s in self.record.statements}
+        wanted = {same.key(s.pointer) for s in self.record.statements}
         for ctx in self.contexts:
             wanted.update(ctx.key(name) for name in balances.MAIN)
         wanted.update(state_key(s, b, "temperature") for s, b in self._body_states())
@@ -249,11 +250,3 @@ def _words(pointer: str) -> str:
     term = term_for(pointer)
     name = (term.name if term else parts[-1]).replace("_", " ")
     return f"{name} of {'/'.join(parts[1:-1])}" if len(parts) > 2 else name
-
-
-def stated_order(record: Record, same: Mapping[str, str]) -> Sequence[str]:
-    """Return the keys of stated quantities in document order, each once."""
-    return tuple(dict.fromkeys(same.get(s.pointer, s.pointer) for s in record.statements))
-
-
-__all__ = ["RecordPlan", "build_sheet", "process_key", "stated_order"]

@@ -61,6 +61,25 @@ class ProcessContext:
         """Say whether the originator started from this quantity or claims it."""
         return key in self.stated_keys
 
+    def item_base(self, kind: str, item: str) -> str:
+        """Return the pointer of a transfer; ``kind`` is ``heat`` or ``work``."""
+        return f"processes/{self.process.id}/{kind}_transfers/{item}"
+
+    def duration_of(self, base: str) -> str:
+        """Return the key of a transfer's duration: its own where stated, else that of the process."""
+        own = f"{base}/duration"
+        return given(own) if self.is_given(own) else self.key("duration")
+
+    def has_power(self, base: str) -> bool:
+        """Say whether a transfer is given as a mean power over a given duration."""
+        lasts = self.is_given(f"{base}/duration") or self.is_given(self.key("duration"))
+        return lasts and self.is_given(f"{base}/mean_power")
+
+    def is_supplied(self, kind: str, item: str) -> bool:
+        """Say whether the energy of a transfer follows from inputs, as energy or as power over a time."""
+        energy = self.heat_item(item) if kind == "heat" else self.work_item(item)
+        return self.is_given(energy) or self.has_power(self.item_base(kind, item))
+
     @property
     def bodies(self) -> tuple[str, ...]:
         """Bodies that take part: those in both end states, in a fixed order."""
@@ -84,8 +103,7 @@ class ProcessContext:
     @property
     def unknown_heats(self) -> int:
         """Return how many heat transfers are listed without an input."""
-        items = self.process.heat_transfers or ()
-        return sum(1 for item in items if not self.is_given(self.heat_item(item.id)))
+        return sum(1 for item in self.process.heat_transfers or () if not self.is_supplied("heat", item.id))
 
     @property
     def heat_known_without_balance(self) -> bool:
@@ -100,7 +118,7 @@ class ProcessContext:
         kinds = {
             self.key(f"{item.kind}_work")
             for item in self.process.work_transfers or ()
-            if not self.is_given(self.work_item(item.id)) and item.kind != "boundary"
+            if not self.is_supplied("work", item.id) and item.kind != "boundary"
         }
         return next(iter(kinds)) if len(kinds) == 1 else None
 

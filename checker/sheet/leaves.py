@@ -1,4 +1,4 @@
-"""The leaves of a sheet: inputs in SI, model factors, links to other records, and which pointers are one quantity."""
+"""The leaves of a sheet: inputs in SI, model factors, links to other records."""
 
 from __future__ import annotations
 
@@ -7,10 +7,11 @@ from dataclasses import dataclass
 
 from checker.outcomes import NotEvaluable
 from checker.sheet.datum import Offset
-from checker.sheet.keys import body_key, given, process_key, share_key, state_key
+from checker.sheet.keys import body_key, given, state_key
 from checker.sheet.models import BodyModel, factor_key
+from checker.sheet.same import SameQuantity
 from checker.sheet.step import Link
-from checker.submission import Process, Record, Role
+from checker.submission import Record, Role
 
 LINKED = ("temperature", "specific_volume")
 """What a linked state takes over; these two fix a state of any model."""
@@ -27,43 +28,11 @@ class Leaves:
     links: tuple[Link, ...]
 
 
-def same_quantities(record: Record) -> dict[str, str]:
-    """Return pointer → pointer of the one quantity that both name.
-
-    In a record of one body, the body's share is the total; a heat transfer (or a work transfer of its kind)
-    that stands alone is the total of its kind.
-    """
-    same: dict[str, str] = {}
-    single = len(record.bodies) == 1
-    for process in record.processes:
-        _same_items(process, same)
-        if not single:
-            continue
-        (body,) = record.bodies
-        own, shared = share_key(process.id, body, ""), process_key(process.id, "")
-        for statement in record.statements:
-            if statement.pointer.startswith(own):
-                pointer = shared + statement.pointer.removeprefix(own)
-                same[statement.pointer] = same.get(pointer, pointer)
-    return same
-
-
-def _same_items(process: Process, same: dict[str, str]) -> None:
-    heats = process.heat_transfers or ()
-    base = f"processes/{process.id}"
-    if len(heats) == 1:
-        same[f"{base}/heat_transfers/{heats[0].id}/energy"] = process_key(process.id, "heat")
-    for kind in ("boundary", "shaft", "electrical"):
-        items = [item for item in process.work_transfers or () if item.kind == kind]
-        if len(items) == 1:
-            same[f"{base}/work_transfers/{items[0].id}/energy"] = process_key(process.id, f"{kind}_work")
-
-
 def collect(
     record: Record,
     models: Mapping[str, BodyModel],
     offsets: Mapping[str, Offset | None],
-    same: Mapping[str, str],
+    same: SameQuantity,
 ) -> Leaves:
     """Return the leaves of a record.
 
@@ -74,7 +43,7 @@ def collect(
     unusable: dict[str, str] = {}
     stated: set[str] = set()
     for statement in record.statements:
-        key = same.get(statement.pointer, statement.pointer)
+        key = same.key(statement.pointer)
         if not statement.usable:
             unusable[key] = f"{statement.quantity.text} cannot be used for it"
             continue

@@ -204,10 +204,12 @@ def _rates(ctx: ProcessContext) -> Iterator[Step]:
         for item in items or ():
             base = f"processes/{p}/{kind}_transfers/{item.id}"
             energy = ctx.heat_item(item.id) if kind == "heat" else ctx.work_item(item.id)
-            yield balances.power_step(f"{base}/mean_power", energy, duration, f"Mean power of {item.id}, {p}")
+            yield balances.power_step(
+                f"{base}/mean_power", energy, ctx.duration_of(base), f"Mean power of {item.id}, {p}"
+            )
     source = ctx.power_source()
     if source is not None:
-        yield balances.power_step(process_key(p, "mean_power"), source, duration, f"Mean power, {p}")
+        yield balances.mean_power_step(process_key(p, "mean_power"), source, duration, f"Mean power, {p}")
         power = ctx.key("mean_power")
         if ctx.is_given(power):
             yield Step(f"Duration, {p}", (duration,), (source, given(power)), _duration, "t = E/P", "{0}/{1}")

@@ -10,6 +10,7 @@ from collections.abc import Callable, Iterable, Mapping
 from dataclasses import dataclass, field
 
 from checker.outcomes import NotEvaluable
+from checker.sheet.same import SameQuantity
 
 Value = float | str | None
 Found = Value | NotEvaluable
@@ -73,8 +74,8 @@ class Sheet:
         In an order in which parents come first.
     missing : mapping
         Key of a quantity without a step → what is missing for it.
-    same : mapping
-        Pointer → the pointer of the one quantity that it also names.
+    same : SameQuantity
+        Which pointers name one quantity.
     links : tuple of Link
         Leaves taken from other records.
     """
@@ -83,13 +84,13 @@ class Sheet:
     leaves: Mapping[str, float]
     steps: tuple[Step, ...]
     missing: Mapping[str, str]
-    same: Mapping[str, str]
+    same: SameQuantity
     links: tuple[Link, ...] = ()
     made_by: Mapping[str, Step] = field(default_factory=dict)
 
     def key(self, pointer: str) -> str:
         """Return the key under which a quantity is calculated."""
-        return self.same.get(pointer, pointer)
+        return self.same.key(pointer)
 
     def parents_of(self, key: str) -> tuple[str, ...]:
         """Return the keys from which a key is calculated (none for a leaf)."""

@@ -23,14 +23,15 @@ def heat_candidates(ctx: ProcessContext) -> Iterator[Step]:
     yield from _given(ctx, heat, f"Heat, {p}", "Q given")
     for item, key in zip(items or (), keys, strict=True):
         if key != heat:
-            yield from _given(ctx, key, f"Heat transfer {item.id}, {p}", "Q_k given", rate_of=item.id)
+            yield from _given(ctx, key, f"Heat transfer {item.id}, {p}", "Q_k given")
+        yield from _from_power(ctx, "heat", item.id, key)
     if ctx.no_heat:
         yield constant(heat, f"Heat, {p}", f"Q = 0 ({ctx.no_heat})")
     if items == ():
         yield constant(heat, f"Heat, {p}", "Q = 0 (no heat transfer listed)")
     if len(keys) > 1:
-        yield Step(f"Heat, {p}", (heat,), tuple(keys), total, "Q = ΣQ_k", sum_text(len(keys)))
         yield from _unknown_item(ctx, keys)
+        yield Step(f"Heat, {p}", (heat,), tuple(keys), total, "Q = ΣQ_k", sum_text(len(keys)))
     if ctx.unknown_heats <= 1 or len(keys) > 1:
         yield Step(
             f"Heat from the balance, {p}",
@@ -47,7 +48,10 @@ def heat_candidates(ctx: ProcessContext) -> Iterator[Step]:
 
 def _unknown_item(ctx: ProcessContext, keys: list[str]) -> Iterator[Step]:
     """Yield the one heat transfer that nobody gave, from the balance less the others."""
-    unknown = [key for key in keys if not ctx.is_given(key)]
+    supplied = {
+        ctx.heat_item(i.id) for i in ctx.process.heat_transfers or () if ctx.is_supplied("heat", i.id)
+    }
+    unknown = [key for key in keys if key not in supplied]
     if len(unknown) != 1:
         return
     others = tuple(key for key in keys if key != unknown[0])
@@ -76,10 +80,21 @@ def _unknown_item(ctx: ProcessContext, keys: list[str]) -> Iterator[Step]:
     )
 
 
-def _given(ctx: ProcessContext, key: str, title: str, formula: str, rate_of: str = "") -> Iterator[Step]:
-    del rate_of
+def _given(ctx: ProcessContext, key: str, title: str, formula: str) -> Iterator[Step]:
     if ctx.is_given(key):
         yield same_value(key, given(key), title, formula)
+
+
+def _from_power(ctx: ProcessContext, kind: str, item: str, key: str) -> Iterator[Step]:
+    """Yield energy = mean power × duration of a transfer that is given as a power."""
+    base = ctx.item_base(kind, item)
+    if ctx.has_power(base):
+        parents = (given(f"{base}/mean_power"), ctx.duration_of(base))
+        yield Step(f"Energy of {item}, {ctx.process.id}", (key,), parents, _product, "E = P·t", "{0}·{1}")
+
+
+def _product(a: float, b: float) -> tuple[float]:
+    return (a * b,)
 
 
 def work_candidates(ctx: ProcessContext) -> Iterator[Step]:
@@ -122,6 +137,9 @@ def _kind_candidates(ctx: ProcessContext, kind: str, key: str) -> Iterator[Step]
     for item in keys:
         if item != key:
             yield from _given(ctx, item, f"Work transfer {item.split('/')[-2]}, {p}", "W_k given")
+    for listed in items or ():
+        if listed.kind == kind:
+            yield from _from_power(ctx, "work", listed.id, ctx.work_item(listed.id))
     if kind == "boundary":
         if (step := ctx.boundary_work_step()) is not None:
             yield step
@@ -129,7 +147,8 @@ def _kind_candidates(ctx: ProcessContext, kind: str, key: str) -> Iterator[Step]
         yield constant(key, f"{name}, {p}", f"W = 0 (no {kind} work listed)")
     if len(keys) > 1:
         yield Step(f"{name}, {p}", (key,), tuple(keys), total, "W = ΣW_k", sum_text(len(keys)))
-        unknown = [item for item in keys if not ctx.is_given(item)]
+        supplied = {ctx.work_item(i.id) for i in items or () if ctx.is_supplied("work", i.id)}
+        unknown = [item for item in keys if item not in supplied]
         if len(unknown) == 1:
             others = tuple(item for item in keys if item != unknown[0])
             yield Step(
