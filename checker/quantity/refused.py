@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from types import MappingProxyType
 from typing import Final
 
 UNKNOWN: Final = "unit-unknown"
@@ -25,10 +26,9 @@ def _unless_mega(text: str, meant: str) -> Refusal:
     )
 
 
-def _letter(text: str, is_unit_of: str, meant: str) -> Refusal:
-    return Refusal(
-        UNKNOWN, f"{text} is the symbol of {is_unit_of}; the temperature is written {meant}", meant
-    )
+def _letter(text: str, symbol_of: str, meant: str) -> Refusal:
+    """Refuse a temperature without its degree sign."""
+    return Refusal(UNKNOWN, f"{text} is the symbol of {symbol_of}; the temperature is written {meant}", meant)
 
 
 def _of_a_turn(text: str) -> Refusal:
@@ -36,7 +36,7 @@ def _of_a_turn(text: str) -> Refusal:
     return Refusal(UNKNOWN, f"{text}: angles and speeds of rotation are not part of a record")
 
 
-REFUSED: Final[dict[str, Refusal]] = {
+_BY_NAME: Final[dict[str, Refusal]] = {
     "C": _letter("C", "the coulomb", "°C"),
     "F": _letter("F", "the farad", "°F"),
     "R": _letter("R", "the gas constant", "°R"),
@@ -68,14 +68,11 @@ REFUSED: Final[dict[str, Refusal]] = {
     "vac": Refusal(UNKNOWN, "a vacuum is written as a negative gauge pressure or as an absolute pressure"),
     "°": _of_a_turn("°"),
 } | {text: _of_a_turn(text) for text in ("deg", "rad", "rev", "rpm", "rps", "Hz")}
-"""By name."""
 
-REFUSED.update(
-    {
-        other: REFUSED[text]
-        for other, text in {
-            "tons": "ton", "HP": "hp", "CV": "PS", "MBtu": "MBTU", "Mbtu": "MBTU", "MBH": "MBTU",
-            "gallon": "gal", "gallons": "gal", "vacuum": "vac",
-        }.items()
-    }
-)  # fmt: skip
+_ALSO: Final = {
+    "tons": "ton", "HP": "hp", "CV": "PS", "MBtu": "MBTU", "Mbtu": "MBTU", "MBH": "MBTU", "gallon": "gal",
+    "gallons": "gal", "vacuum": "vac",
+}  # fmt: skip
+
+REFUSED: Final = MappingProxyType(_BY_NAME | {other: _BY_NAME[text] for other, text in _ALSO.items()})
+"""Every refused name."""
