@@ -109,3 +109,11 @@ class Substance(Protocol):
 
     def saturation(self, known: dict[str, float]) -> tuple[PropertyState, PropertyState]:
         """Return (saturated liquid, saturated vapour) at a temperature or a pressure. Raises NotEvaluable."""
+
+    def crosses_saturation(
+        self, temperature: float, half_temperature: float, pressure: float, half_pressure: float
+    ) -> bool:
+        """Return whether T ± half a digit [K] and p ± half a digit [Pa] reach both sides of the saturation line.
+
+        False where the model has no phases.
+        """

@@ -1,0 +1,178 @@
+"""From a body's words and constants to a substance."""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Mapping
+from functools import lru_cache
+from typing import Final
+
+from checker.outcomes import NotEvaluable
+from checker.substances.constant_heat import ConstantHeatCondensed, ConstantHeatGas
+from checker.substances.ideal_gas import IdealGas
+from checker.substances.interface import Substance
+from checker.substances.names import fluid_of, knows_fluid
+from checker.substances.perturbed import PerturbedSubstance
+from checker.substances.real_fluid import IndustrialWater, RealFluid
+
+MOLAR_GAS_CONSTANT: Final = 8.314462618
+"""[J/(mol·K)] CODATA 2018, exact by the SI."""
+_INDUSTRIAL: Final = "industrial"
+_REFERENCE: Final = "reference"
+_WATER: Final = "Water"
+_CONTRADICTION: Final = 0.02
+_LATER: Final = {
+    "tabulated": "tabulated properties are not recomputed yet",
+    "phase change": "melting and freezing are not recomputed yet",
+}
+
+
+def make_substance(
+    substance: str,
+    model: str,
+    constants: Mapping[str, float],
+    *,
+    property_source: str = _REFERENCE,
+    density_factor: float = 1.0,
+    caloric_factor: float = 1.0,
+) -> Substance:
+    """Return a substance with a model.
+
+    Parameters
+    ----------
+    substance : str
+        A fluid of the table, or any name where the constants define the model.
+    model : str
+        Model word of the record format.
+    constants : mapping of str to float
+        Stated constants of the body by their names in the vocabulary: specific_heat,
+        specific_heat_at_constant_volume, specific_heat_at_constant_pressure, gas_constant [J/(kg·K)], molar_mass
+        [kg/mol], density [kg/m³] or specific_volume [m³/kg].
+    property_source : str
+        ``reference``, or ``industrial`` for water by IAPWS-IF97.
+    density_factor, caloric_factor : float
+        Factors on density, and on energies and entropies, that carry the uncertainty of the model. [1]
+
+    Raises
+    ------
+    NotEvaluable
+        The fluid or the model is not known, or constants are missing or contradict each other.
+    """
+    bare = _bare(substance, model, constants, property_source)
+    if density_factor == 1.0 and caloric_factor == 1.0:
+        return bare
+    for factor in (density_factor, caloric_factor):
+        if not (math.isfinite(factor) and factor > 0.0):
+            raise NotEvaluable("a factor on a property must be positive", "missing")
+    return PerturbedSubstance(bare, density_factor, caloric_factor)
+
+
+def _bare(substance: str, model: str, constants: Mapping[str, float], property_source: str) -> Substance:
+    if model == "constant specific heat":
+        return constant_heat(substance, constants)
+    if model in _LATER:
+        raise NotEvaluable(_LATER[model], "not-supported")
+    if model == "real fluid":
+        return _real(substance, property_source)
+    if model == "ideal gas":
+        return _ideal(substance)
+    raise NotEvaluable(f"no model is called {model[:40]!r}", "not-supported")
+
+
+@lru_cache(maxsize=256)
+def _real(substance: str, property_source: str) -> Substance:
+    fluid = fluid_of(substance)
+    if property_source == _REFERENCE:
+        return RealFluid(fluid)
+    if property_source != _INDUSTRIAL:
+        raise NotEvaluable(f"no property source is called {property_source[:40]!r}", "not-supported")
+    if fluid.library != _WATER:
+        raise NotEvaluable(
+            f"the industrial formulation is one for water, not for {fluid.name}", "not-supported"
+        )
+    return IndustrialWater(fluid)
+
+
+@lru_cache(maxsize=256)
+def _ideal(substance: str) -> Substance:
+    return IdealGas(fluid_of(substance))
+
+
+def constant_heat(substance: str, constants: Mapping[str, float]) -> Substance:
+    """Return a gas, liquid or solid with a constant specific heat.
+
+    ``specific_heat`` makes a liquid or solid; cp or cv make a gas (of which two of cp, cv and R are needed, R also
+    from a molar mass, stated or of the fluid), cp with a density but no cv and no R a liquid.
+
+    Raises
+    ------
+    NotEvaluable
+        Constants are missing or contradict each other.
+    """
+    stated = {name: _positive(name, value) for name, value in constants.items()}
+    heat = stated.get("specific_heat")
+    if heat is None and _is_condensed(stated):
+        heat = stated["specific_heat_at_constant_pressure"]
+    if heat is not None:
+        return ConstantHeatCondensed(substance, heat, _volume(stated), _molar_mass(substance, stated))
+    return _gas(substance, stated)
+
+
+def _is_condensed(stated: Mapping[str, float]) -> bool:
+    gas = {"specific_heat_at_constant_volume", "gas_constant", "molar_mass"}
+    return (
+        "specific_heat_at_constant_pressure" in stated
+        and bool({"density", "specific_volume"} & set(stated))
+        and not gas & set(stated)
+    )
+
+
+def _positive(name: str, value: float) -> float:
+    if not (math.isfinite(value) and value > 0.0):
+        raise NotEvaluable(f"the {name.replace('_', ' ')} must be positive, not {value:.6g}", "no-solution")
+    return float(value)
+
+
+def _volume(stated: Mapping[str, float]) -> float | None:
+    if "density" in stated:
+        return 1.0 / stated["density"]
+    return stated.get("specific_volume")
+
+
+def _molar_mass(substance: str, stated: Mapping[str, float]) -> float | None:
+    if "molar_mass" in stated:
+        return stated["molar_mass"]
+    return fluid_of(substance).molar_mass if knows_fluid(substance) else None
+
+
+def _gas(substance: str, stated: Mapping[str, float]) -> ConstantHeatGas:
+    cv = stated.get("specific_heat_at_constant_volume")
+    cp = stated.get("specific_heat_at_constant_pressure")
+    molar_mass = _molar_mass(substance, stated)
+    gas_constant = stated.get("gas_constant")
+    if gas_constant is None and cv is not None and cp is not None:
+        gas_constant = cp - cv
+    if gas_constant is None and molar_mass is not None:
+        gas_constant = MOLAR_GAS_CONSTANT / molar_mass
+    if gas_constant is None or (cv is None and cp is None):
+        raise NotEvaluable(
+            f"{substance[:40]} with a constant specific heat needs its specific heat: c of a liquid or solid; two of "
+            "c_p, c_v and R (or one and the molar mass) of a gas",
+            "not-supported",
+        )
+    return _consistent(substance, cv, cp, gas_constant, molar_mass)
+
+
+def _consistent(
+    substance: str, cv: float | None, cp: float | None, gas_constant: float, molar_mass: float | None
+) -> ConstantHeatGas:
+    """Return the gas by cv and R; refuse where cp, cv and R contradict each other beyond their digits."""
+    heat = cv if cv is not None else (cp or 0.0) - gas_constant
+    if heat <= 0.0 or gas_constant <= 0.0:
+        raise NotEvaluable(f"c_p of {substance[:40]} must be larger than c_v and than R", "no-solution")
+    if cp is not None and abs(cp - heat - gas_constant) > _CONTRADICTION * gas_constant:
+        raise NotEvaluable(
+            f"c_p − c_v = {cp - heat:.6g} J/(kg·K) of {substance[:40]} contradicts R = {gas_constant:.6g} J/(kg·K)",
+            "no-solution",
+        )
+    return ConstantHeatGas(substance, heat, gas_constant, molar_mass)
