@@ -33,8 +33,8 @@ class Spot:
         Pointer of what the quantities belong to, such as ``states/hot/nitrogen``.
     place : Place
         Place of the part that holds ``inputs`` and ``results``, from the record.
-    names : tuple of str
-        Whole-word names that may stand there; all of the level if empty.
+    names : tuple of str or None
+        Whole-word names that may stand there; None: all of the level.
     duration : Quantity or None
         What makes a rate a total.
     work : bool
@@ -46,10 +46,15 @@ class Spot:
     level: Level
     prefix: str
     place: Place
-    names: tuple[str, ...] = ()
+    names: tuple[str, ...] | None = None
     duration: Quantity | None = None
     work: bool = False
     direction: str | None = None
+
+    @property
+    def allowed(self) -> tuple[str, ...]:
+        """The whole-word names that may stand there."""
+        return tuple(TERMS[self.level]) if self.names is None else self.names
 
 
 @dataclass(frozen=True, slots=True)
@@ -75,7 +80,7 @@ class Desk:
         self, spot: Spot, role: Role, mapping: Mapping[str, object], key: Place
     ) -> dict[str, WordStated]:
         """State every quantity of a mapping under ``key``; return the words that stand among them."""
-        allowed = spot.names or tuple(TERMS[spot.level])
+        allowed = spot.allowed
         seen: dict[str, str] = {}
         words: dict[str, WordStated] = {}
         for written, text in mapping.items():
@@ -168,7 +173,7 @@ class Desk:
 
     def unknown(self, spot: Spot, written: str, value: object, place: Place) -> None:
         """Note a name that may not stand at a spot."""
-        part, allowed = LEVEL_WORDS[spot.level], spot.names or tuple(TERMS[spot.level])
+        part, allowed = LEVEL_WORDS[spot.level], spot.allowed
         elsewhere = belongs(written, but=spot.level) if len(written) > 1 else ""
         suggestion = elsewhere or perhaps(nearest(written, allowed)) or belongs(written, but=spot.level)
         if value is None and not suggestion:
@@ -177,7 +182,7 @@ class Desk:
             "name-unknown",
             place,
             f"`{shortened(written, 40)}` is not a quantity that {part} may state here.",
-            suggestion or f"Known here: {', '.join(allowed)}.",
+            suggestion or f"Known here: {', '.join(allowed) or 'none'}.",
             at_key=True,
             quantity=f"{spot.prefix}/{shortened(written, 40)}",
         )

@@ -62,7 +62,8 @@ def fitted(
         try:
             return model.model_validate(tree)
         except ValidationError as error:
-            misfits = [_misfit(model, tree, detail, sparable) for detail in error.errors(include_url=False)]
+            details = _telling(error.errors(include_url=False))
+            misfits = [_misfit(model, tree, detail, sparable) for detail in details]
         for misfit in misfits:
             notebook.say(misfit.kind, misfit.place, misfit.message, misfit.suggestion, at_key=misfit.at_key,
                          fatal=misfit.spare is None)  # fmt: skip
@@ -71,6 +72,13 @@ def fitted(
         for misfit in misfits:
             _leave_out(tree, misfit.spare or ())
     return None
+
+
+def _telling(details: list[ErrorDetails]) -> list[ErrorDetails]:
+    """Return the errors without those that a list is too short only because its items are wrong."""
+    too_short = [detail["loc"] for detail in details if detail["type"] == "too_short"]
+    idle = {loc for loc in too_short if any(d["loc"] != loc and d["loc"][: len(loc)] == loc for d in details)}
+    return [d for d in details if not (d["type"] == "too_short" and d["loc"] in idle)] if idle else details
 
 
 def _misfit(

@@ -71,7 +71,7 @@ def _nearest(word: str, known: tuple[str, ...]) -> tuple[str, ...]:
         return (meant,)
     from difflib import get_close_matches  # only where something is misspelt
 
-    close = get_close_matches(wanted, folded, n=2, cutoff=0.78)
+    close = get_close_matches(wanted, folded, n=2, cutoff=0.72)
     longer = [
         name for name in folded if len(wanted) >= 3 and (name.startswith(wanted) or wanted.startswith(name))
     ]

@@ -105,7 +105,7 @@ def read_sources(desk: Desk, record: RecordPart, find: Finder) -> dict[str, str]
 
 def note_lost(desk: Desk, pointer: str, lost: Lost, place: Place, at_key: bool = False) -> None:
     """Note a pointer that leads nowhere, at the part where it goes astray."""
-    known = perhaps(nearest(lost.part, lost.known))
+    known = perhaps(nearest(lost.part, lost.known) or (lost.known if len(lost.known) == 1 else ()))
     some = ", ".join(lost.known[:12])
     desk.notebook.say(
         "reference-unknown",

@@ -122,8 +122,12 @@ class Word:
 
 @dataclass(frozen=True, slots=True)
 class Names:
-    """Marks a mapping from names of the vocabulary to quantities: all of a level, some, or all but some."""
+    """Marks a mapping from names of the vocabulary to quantities: all of a level, some, or all but some.
 
+    ``label`` is the name of its definition in the schema.
+    """
+
+    label: str
     level: Level
     only: tuple[str, ...] = ()
     without: tuple[str, ...] = ()
@@ -137,7 +141,7 @@ class Names:
         """Return the schema of the mapping, from the vocabulary."""
         from checker.package.quantity_schema import names_schema
 
-        return names_schema(self.level, self.names)
+        return names_schema(self.level, self.names, self.label)
 
 
 @dataclass(frozen=True, slots=True)

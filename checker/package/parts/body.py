@@ -10,8 +10,8 @@ from checker.package.parts.base import Many, Names, OneQuantity, Part, Quantitie
 from checker.package.words import COMPOSITION_BASES, DATUM_NAMES, PROPERTY_SOURCES
 from checker.vocabulary import MODELS, SYNONYMS, Level, canonical
 
-BodyNames = Annotated[Quantities, Names(Level.BODY)]
-TableRow = Annotated[Quantities, Names(Level.STATE, without=("phase",))]
+BodyNames = Annotated[Quantities, Names("BodyQuantities", Level.BODY)]
+TableRow = Annotated[Quantities, Names("TableRow", Level.STATE, without=("phase",))]
 Model = Annotated[str, Word(MODELS, "a model")]
 _DATUM_SYMBOLS = tuple(s for s, name in SYNONYMS[Level.STATE].items() if name in DATUM_NAMES)
 DatumName = Annotated[str, Word((*DATUM_NAMES, *_DATUM_SYMBOLS), "a property with a zero point")]

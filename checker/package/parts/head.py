@@ -9,7 +9,7 @@ from pydantic import Field
 from checker.package.parts.base import Names, Part, Quantities, Text, Word
 from checker.vocabulary import WORK_CONVENTIONS, Level
 
-Surroundings = Annotated[Quantities, Names(Level.SURROUNDINGS)]
+Surroundings = Annotated[Quantities, Names("Surroundings", Level.SURROUNDINGS)]
 WorkConvention = Annotated[str | None, Word(WORK_CONVENTIONS, "a work convention")]
 
 

@@ -47,7 +47,7 @@ class PathSpec(Part):
         None, description="Volume when the spring is reached."
     )
     points: Many[PathPoint] = Field((), description="Points of the line in the p–V diagram.")
-    results: Annotated[Quantities, Names(Level.PATH, without=POINT_NAMES)] = Field(
+    results: Annotated[Quantities, Names("PathResults", Level.PATH, without=POINT_NAMES)] = Field(
         {}, description="Parameters that are claimed, such as the exponent."
     )
 

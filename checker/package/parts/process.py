@@ -27,10 +27,10 @@ from checker.vocabulary import WORK_KINDS, Level
 ONLY_HEAT: Final = ("boundary_temperature", "reservoir_temperature")
 """Names of the level *transfer* that say nothing about work."""
 
-ProcessNames = Annotated[Quantities, Names(Level.PROCESS)]
-HeatNames = Annotated[Quantities, Names(Level.TRANSFER)]
-WorkNames = Annotated[Quantities, Names(Level.TRANSFER, without=ONLY_HEAT)]
-TotalVolumeNames = Annotated[Quantities, Names(Level.BODY, only=("volume",))]
+ProcessNames = Annotated[Quantities, Names("ProcessQuantities", Level.PROCESS)]
+HeatNames = Annotated[Quantities, Names("HeatTransferQuantities", Level.TRANSFER)]
+WorkNames = Annotated[Quantities, Names("WorkTransferQuantities", Level.TRANSFER, without=ONLY_HEAT)]
+TotalVolumeNames = Annotated[Quantities, Names("TotalVolumeQuantities", Level.BODY, only=("volume",))]
 WorkKind = Annotated[str, Word(WORK_KINDS, "a kind of work")]
 Direction = Annotated[str | None, Word(DIRECTIONS, "a direction")]
 

@@ -14,9 +14,9 @@ from checker.package.parts.state import State
 from checker.package.words import CLAIMS, PURPOSES
 from checker.vocabulary import Level
 
-Totals = Annotated[Quantities, Names(Level.CYCLE)]
-SequenceNames = Annotated[Quantities, Names(Level.SEQUENCE)]
-AssumptionNames = Annotated[Quantities, Names(Level.ASSUMPTION)]
+Totals = Annotated[Quantities, Names("CycleQuantities", Level.CYCLE)]
+SequenceNames = Annotated[Quantities, Names("SequenceQuantities", Level.SEQUENCE)]
+AssumptionNames = Annotated[Quantities, Names("AssumptionQuantities", Level.ASSUMPTION)]
 LimitValue = Annotated[object, WithJsonSchema({"type": ["string", "number"], "examples": ["200 bar"]})]
 Claim = Annotated[str | None, Word(CLAIMS, "a claim")]
 Purpose = Annotated[str | None, Word(PURPOSES, "a purpose")]
@@ -75,5 +75,5 @@ class Record(Part):
 class Package(Part):
     """A calculation package for review: a header and records of closed systems."""
 
-    package: Head = Field(default=Head(), description="Header of the package.")
+    package: Head = Field(description="Header of the package.")
     records: Many[Record] = Field(min_length=1, description="The records.")

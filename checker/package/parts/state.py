@@ -10,7 +10,7 @@ from checker.package.parts.base import Identifier, Many, Names, Part, Quantities
 from checker.package.words import EQUILIBRIA
 from checker.vocabulary import Level
 
-StateNames = Annotated[Quantities, Names(Level.STATE)]
+StateNames = Annotated[Quantities, Names("StateQuantities", Level.STATE)]
 Equilibrium = Annotated[str, Word(EQUILIBRIA, "a kind of equilibrium")]
 EQUILIBRIUM_MEANING = "What is the same in all bodies: [temperature] or [temperature, pressure]."
 
