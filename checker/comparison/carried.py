@@ -7,20 +7,27 @@ with one of the state's clues, since a person who misread one property looks the
 from __future__ import annotations
 
 from collections import defaultdict
-from collections.abc import Iterator, Mapping
-from dataclasses import dataclass, field
+from collections.abc import Iterator, Mapping, Sequence
+from dataclasses import dataclass, field, replace
 
 from checker.comparison.datums import NO_SHIFT, Shift
 from checker.outcomes import NotEvaluable
-from checker.sheet.build import RecordPlan
-from checker.sheet.keys import STATE_OUTPUTS, plain
-from checker.sheet.models import outputs_of
-from checker.sheet.states import SYMBOLS
-from checker.sheet.step import Found, Step, Values, evaluate, reevaluate
-from checker.submission import Record, Role
+from checker.sheet.build import RecordPlan, build_sheet
+from checker.sheet.step import Found, Values, evaluate, reevaluate
+from checker.submission import Record, Role, Statement
 
+DIRECT = ("temperature", "pressure", "specific_volume", "quality")
+"""Stated properties from which a person would look others up."""
 MAX_VARIANTS = 12
 """Most alternative readings of wrong states that are carried (bounded work)."""
+
+
+@dataclass(frozen=True, slots=True)
+class Variant:
+    """Carried values that start from a wrong stated property of a state; they speak only for what lies below it."""
+
+    state: str
+    values: Values
 
 
 @dataclass(frozen=True, slots=True)
@@ -28,7 +35,7 @@ class Carried:
     """The carried values, their alternatives, and how far the stated digits of the parents move them."""
 
     values: Values
-    variants: tuple[Values, ...] = ()
+    variants: tuple[Variant, ...] = ()
     spreads: Mapping[str, float] = field(default_factory=dict)
 
     def value(self, key: str) -> Found:
@@ -39,9 +46,13 @@ class Carried:
         """Return how far the digits of the stated parents move the carried value."""
         return self.spreads.get(key, 0.0)
 
-    def agrees(self, key: str, stated: float, tolerance: float) -> bool | None:
-        """Say whether the originator's own numbers lead to the stated one; None where that is not evaluable."""
-        found = [v for values in (self.values, *self.variants) if isinstance(v := values.get(key), float)]
+    def agrees(self, key: str, above: frozenset[str], stated: float, tolerance: float) -> bool | None:
+        """Say whether the originator's own numbers lead to the stated one; None where that is not evaluable.
+
+        ``above`` holds the ancestors of the key.
+        """
+        sources = [self.values, *(variant.values for variant in self.variants if variant.state in above)]
+        found = [value for values in sources if isinstance(value := values.get(key), float)]
         if not found:
             return None
         return any(abs(stated - value) <= tolerance for value in found)
@@ -65,11 +76,8 @@ def carry(
             before = values.get(name)
             if isinstance(value, float) and isinstance(before, float):
                 spreads[name] += abs(value - before)
-    variants = []
-    for alternative in _variants(plan, independent, substitutes, widths):
-        both = {**values, **reevaluate(sheet.steps, values, alternative, substitutes)}
-        variants.append(both)
-    return Carried(values, tuple(variants), dict(spreads))
+    variants = tuple(_variants(record, leaves, independent, substitutes, widths))
+    return Carried(values, variants, dict(spreads))
 
 
 def _substitutes(
@@ -90,42 +98,44 @@ def _substitutes(
 
 
 def _variants(
-    plan: RecordPlan, independent: Values, stated: Mapping[str, float], widths: Mapping[str, float]
-) -> Iterator[dict[str, float]]:
-    """Yield hidden properties of states as carried from a stated property that is off."""
-    count = 0
-    for step in plan.sheet.steps:
-        if len(step.outputs) != len(STATE_OUTPUTS):
-            continue
-        for key in step.outputs:
-            value = independent.get(key)
-            if key not in stated or not isinstance(value, float) or key.rsplit("/", 1)[-1] not in SYMBOLS:
-                continue
-            if abs(stated[key] - value) <= 2.0 * widths[key]:
-                continue
-            for found in _reread(plan, step, key, stated, independent):
-                if count == MAX_VARIANTS:
-                    return
-                count += 1
-                yield found
+    record: Record,
+    leaves: Mapping[str, float],
+    independent: Values,
+    stated: Mapping[str, float],
+    widths: Mapping[str, float],
+) -> Iterator[Variant]:
+    """Yield carried evaluations in which a wrong stated property of a state takes the place of one of its inputs."""
+    for count, (state, changed) in enumerate(_reread_records(record, independent, stated, widths)):
+        if count == MAX_VARIANTS:
+            return
+        other = build_sheet(changed)
+        linked = {link.key: leaves[link.key] for link in other.sheet.links if link.key in leaves}
+        known = {key: value for key, value in stated.items() if key not in other.leaves.given}
+        yield Variant(state, evaluate(other.sheet.steps, {**other.leaves.values, **linked}, known))
 
 
-def _reread(
-    plan: RecordPlan, step: Step, wrong: str, stated: Mapping[str, float], independent: Values
-) -> Iterator[dict[str, float]]:
-    """Yield a state's unstated properties from the wrong stated one with each of the state's clues."""
-    _, _, body, name = wrong.split("/")
-    substance = plan.substances.get(body)
-    if substance is None:
-        return
-    for parent in step.parents:
-        other = plain(parent).rsplit("/", 1)[-1]
-        value = independent.get(parent)
-        if other == name or other not in SYMBOLS or not isinstance(value, float):
+def _reread_records(
+    record: Record, independent: Values, stated: Mapping[str, float], widths: Mapping[str, float]
+) -> Iterator[tuple[str, Record]]:
+    """Yield a state's key and the record with its wrong stated property as input, instead of each of its inputs."""
+    for wrong in record.statements:
+        parts = wrong.pointer.split("/")
+        value = independent.get(wrong.pointer)
+        if wrong.role is not Role.RESULT or wrong.pointer not in stated or not isinstance(value, float):
             continue
-        try:
-            found = substance.state({name: stated[wrong], other: value})
-        except NotEvaluable:
+        if parts[0] != "states" or parts[-1] not in DIRECT:
             continue
-        values = dict(zip(step.outputs, outputs_of(found), strict=True))
-        yield {k: v for k, v in values.items() if isinstance(v, float) and k not in stated}
+        if abs(stated[wrong.pointer] - value) <= 2.0 * widths[wrong.pointer]:
+            continue
+        base = wrong.pointer.removesuffix(parts[-1])
+        inputs = [s for s in record.statements if s.role is Role.INPUT and s.pointer.startswith(base)]
+        instead: Sequence[Statement | None] = inputs or [None]
+        for replaced in instead:
+            yield f"{base}temperature", _swapped(record, wrong, replaced)
+
+
+def _swapped(record: Record, wrong: Statement, replaced: Statement | None) -> Record:
+    statements = tuple(
+        replace(s, role=Role.INPUT) if s is wrong else s for s in record.statements if s is not replaced
+    )
+    return replace(record, statements=statements)

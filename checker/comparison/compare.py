@@ -19,6 +19,10 @@ from checker.submission import Record, Role, Statement
 ILL_CONDITIONED = 0.10
 """Largest part of its reference quantity that open input digits may move a result (design, section 6)."""
 
+CLEAR_OF_DIGITS = 3.0
+"""A deviation this many times the move of the inputs' last digits cannot be their doing: the move is a
+root-sum-square, and three times it covers the worst case of nine inputs that all err one way (chosen)."""
+
 
 @dataclass(frozen=True, slots=True)
 class Compared:
@@ -155,7 +159,8 @@ def _judged(bare: Compared, references: References, broken: bool) -> Compared:
     if abs(deviation) <= bare.tolerance:
         return replace(bare, outcome=Outcome.AGREES)
     limit = ILL_CONDITIONED * references.reference(bare.key, value)
-    if broken or bare.digit_move > limit:
+    hidden = abs(deviation) <= bare.tolerance + CLEAR_OF_DIGITS * bare.digit_move
+    if broken or (bare.digit_move > limit and hidden):
         return replace(
             bare, reason="the last digits of the inputs move it too far for its deviation to be judged"
         )
@@ -170,8 +175,9 @@ def _with_standing(c: Compared, sheet: Sheet, carried: Carried, wrong: set[str])
     """Return the comparison with where its deviation comes from: the four cases of section 5."""
     if c.outcome is Outcome.NOT_EVALUABLE:
         return c
-    ancestors = sorted(sheet.ancestors(c.key) & wrong)
-    near = carried.agrees(c.key, c.stated, c.carried_tolerance)
+    above = sheet.ancestors(c.key)
+    ancestors = sorted(above & wrong)
+    near = carried.agrees(c.key, above, c.stated, c.carried_tolerance)
     if c.outcome is Outcome.AGREES:
         cancels = near is False and bool(ancestors)
         return replace(

@@ -122,6 +122,15 @@ class ProcessContext:
         }
         return next(iter(kinds)) if len(kinds) == 1 else None
 
+    @property
+    def claimed_work_kinds(self) -> frozenset[str]:
+        """Return the totals of those kinds of work that are listed or claimed without an input."""
+        items = self.process.work_transfers or ()
+        listed = {self.key(f"{i.kind}_work") for i in items if not self.is_supplied("work", i.id)}
+        named = {self.key(f"{kind}_work") for kind in ("boundary", "shaft", "electrical")}
+        claimed = {key for key in named if self.is_stated(key) and not self.is_given(key)}
+        return frozenset(listed | claimed)
+
     def path_key(self, body: str, name: str) -> str:
         """Return the key of a path parameter of a body, shared or its own."""
         own = self.same(f"processes/{self.process.id}/bodies/{body}/path/{name}")

@@ -104,6 +104,8 @@ def work_candidates(ctx: ProcessContext) -> Iterator[Step]:
         yield from _kind_candidates(ctx, kind, ctx.key(name))
     yield from _given(ctx, work, f"Work, {p}", "W given")
     kinds = tuple(ctx.key(name) for name in KINDS.values())
+    if ctx.heat_known_without_balance:
+        yield from _kind_from_balance(ctx)
     yield Step(f"Work, {p}", (work,), kinds, total, "W = W_b + W_sh + W_el", sum_text(3))
     if ctx.heat_known_without_balance:
         yield Step(
@@ -118,13 +120,34 @@ def work_candidates(ctx: ProcessContext) -> Iterator[Step]:
         if ctx.unknown_work_kind in (None, kind):
             others = tuple(other for other in kinds if other != kind)
             yield Step(
-                f"{kind.rsplit('/', 1)[-1].replace('_', ' ').capitalize()} from the total, {p}",
+                f"{_spoken(kind)} from the total, {p}",
                 (kind,),
                 (work, *others),
                 first_less_rest,
                 "W_kind = W − W_others",
                 less_text(3),
             )
+
+
+def _kind_from_balance(ctx: ProcessContext) -> Iterator[Step]:
+    """Yield the one kind of work that is listed or claimed without an input, from the balance less the others."""
+    kinds = tuple(ctx.key(name) for name in KINDS.values())
+    for kind in kinds:
+        if kind not in ctx.claimed_work_kinds:
+            continue
+        others = tuple(other for other in kinds if other != kind)
+        yield Step(
+            f"{_spoken(kind)} from the balance, {ctx.process.id}",
+            (kind,),
+            (ctx.key("heat"), ctx.key("energy_change"), *others),
+            first_less_rest,
+            "W_kind = Q − ΔE − W_others",
+            less_text(4),
+        )
+
+
+def _spoken(kind: str) -> str:
+    return kind.rsplit("/", 1)[-1].replace("_", " ").capitalize()
 
 
 def _kind_candidates(ctx: ProcessContext, kind: str, key: str) -> Iterator[Step]:
