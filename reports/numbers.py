@@ -55,10 +55,28 @@ def difference_unit(unit: str) -> str:
     return _DIFFERENCE_UNITS.get(bare, bare)
 
 
-def difference(value: float | None, of: Amount | None, sign: bool = True) -> str:
-    """Return a difference in the unit of an amount, such as ``+0.4 K`` beside ``60 °C``."""
+def deviation(value: float | None, tolerance: float | None, of: Amount | None) -> str:
+    """Return a deviation to the digits that matter beside its tolerance, in the unit of a difference."""
     if value is None or not math.isfinite(value):
         return MISSING
-    number = signed(value) if sign else rounded(value)
-    unit = difference_unit(of.unit) if of else ""
-    return f"{number} {unit}".rstrip()
+    return _with_unit(_to_the_digits_of(value, tolerance), of)
+
+
+def tolerance(value: float | None, of: Amount | None) -> str:
+    """Return a tolerance with two digits, in the unit of a difference."""
+    if value is None or not math.isfinite(value):
+        return MISSING
+    return _with_unit(rounded(value, 2), of)
+
+
+def _with_unit(number: str, of: Amount | None) -> str:
+    return f"{number} {difference_unit(of.unit) if of else ''}".rstrip()
+
+
+def _to_the_digits_of(value: float, tolerance: float | None) -> str:
+    """Return a signed number rounded to the second digit of its tolerance (GUM, JCGM 100:2008, 7.2.6)."""
+    if tolerance is None or not 1e-4 <= tolerance < 1e5 or abs(value) >= 1e6:
+        return signed(value)
+    decimals = max(0, 1 - math.floor(math.log10(tolerance)))
+    text = f"{value:+.{decimals}f}".replace("-", "−")
+    return text if any(digit in text for digit in "123456789") else "0"

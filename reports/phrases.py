@@ -6,7 +6,8 @@ from collections.abc import Iterable
 from typing import Final
 
 from checker.findings import Cause, Checked, Finding, Grade, Location, Outcome, RecordReview, Verdict
-from reports.numbers import MISSING, difference, rounded, shown
+from reports import numbers
+from reports.numbers import MISSING, rounded, shown
 
 VERDICT_MEANS: Final = {
     Verdict.ACCEPT: "Every stated result was recomputed and agrees.",
@@ -14,7 +15,7 @@ VERDICT_MEANS: Final = {
     Verdict.HOLD: "Answers are needed before this can be accepted.",
     Verdict.REVISE: "At least one stated result or statement is wrong and must be corrected.",
 }
-_PLURALS: Final = {Grade.DISCREPANCY: "discrepancies", Grade.QUERY: "queries", Grade.REMARK: "remarks"}
+PLURALS: Final = {Grade.DISCREPANCY: "discrepancies", Grade.QUERY: "queries", Grade.REMARK: "remarks"}
 
 
 def counted(number: int, singular: str, plural: str) -> str:
@@ -25,7 +26,7 @@ def counted(number: int, singular: str, plural: str) -> str:
 def grade_counts(findings: Iterable[Finding]) -> str:
     """Return how many findings there are of each grade, in one phrase."""
     grades = [finding.grade for finding in findings]
-    return ", ".join(counted(grades.count(grade), grade.value, _PLURALS[grade]) for grade in Grade)
+    return ", ".join(counted(grades.count(grade), grade.value, PLURALS[grade]) for grade in Grade)
 
 
 def held(record: RecordReview) -> tuple[Checked, ...]:
@@ -70,8 +71,8 @@ def cause(item: Cause, finding: Finding) -> str:
 
 def deviation(finding: Finding) -> str:
     """Return the deviation with its tolerance, or an empty text."""
-    text = difference(finding.deviation, finding.stated)
+    text = numbers.deviation(finding.deviation, finding.tolerance, finding.stated)
     if text == MISSING:
         return ""
-    tolerance = difference(finding.tolerance, finding.stated, sign=False)
+    tolerance = numbers.tolerance(finding.tolerance, finding.stated)
     return text if tolerance == MISSING else f"{text}; tolerance {tolerance}"

@@ -3,8 +3,6 @@
 The numbers come from the reference equations of the two fluids, rounded to four digits.
 """
 
-# ruff: noqa: E501 - tables of data read better with their rows unbroken
-
 from __future__ import annotations
 
 from checker.findings import Curve, Diagram, Marker

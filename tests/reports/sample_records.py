@@ -1,7 +1,5 @@
 """Sample records for the tests of the reports: a gas bottle, a steam cylinder and a brake disc."""
 
-# ruff: noqa: E501 - tables of data read better with their rows unbroken
-
 from __future__ import annotations
 
 import re
@@ -87,7 +85,7 @@ BOTTLE = RecordReview(
         checked(f"{P}heat_transfers/sunlit-wall/energy", "E_k", "422 kJ", "300.6 kJ", "422.0 kJ", 121.4, 2.1,
                 Outcome.WRONG, Standing.INHERITED),
         checked(f"{P}entropy_change", "ΔS", "0.969 kJ/K", "0.9692 kJ/K", "0.9690 kJ/K", -0.0002, 0.0055),
-        checked(f"{P}entropy_generation", "S_gen", "-0.261 kJ/K", "0.0934 kJ/K", "-0.2608 kJ/K", -0.3544, 0.0055,
+        checked(f"{P}entropy_generation", "S_gen", "-0.261 kJ/K", "0.0934 kJ/K", "−0.2608 kJ/K", -0.3544, 0.0055,
                 Outcome.WRONG, Standing.INHERITED),
     ),
     not_checked=(
@@ -148,7 +146,7 @@ BOTTLE = RecordReview(
             value(f"{P}heat_transfers/sunlit-wall/energy", "Q", "300.6 kJ", "422.0 kJ", "422 kJ"),
         )),
         SheetLine("Entropy generation", "S_gen = ΔS − Σ Q_k/T_b,k", "0.9692 kJ/K − 300.6 kJ / 343.15 K", (
-            value(f"{P}entropy_generation", "S_gen", "0.0934 kJ/K", "-0.2608 kJ/K", "-0.261 kJ/K"),
+            value(f"{P}entropy_generation", "S_gen", "0.0934 kJ/K", "−0.2608 kJ/K", "-0.261 kJ/K"),
         )),
     ),
     diagrams=bottle_diagrams(),
@@ -168,7 +166,7 @@ CYLINDER = RecordReview(
                 0.0104, Outcome.WRONG, Standing.ORIGIN),
         checked(f"{C}entropy_transfer", "ΣQ/T_b", "2.65 kJ/K", "1.343 kJ/K", "1.343 kJ/K", 1.307, 0.014,
                 Outcome.WRONG, Standing.ORIGIN),
-        checked(f"{C}entropy_generation", "S_gen", "-0.78 kJ/K", "0.527 kJ/K", "-0.780 kJ/K", -1.307, 0.014,
+        checked(f"{C}entropy_generation", "S_gen", "-0.78 kJ/K", "0.527 kJ/K", "−0.780 kJ/K", -1.307, 0.014,
                 Outcome.WRONG, Standing.INHERITED),
         checked(f"{C}exergy_destruction", "X_d", "157 kJ", None, None, None, None, Outcome.NOT_EVALUABLE,
                 Standing.NOT_EVALUABLE, "the pressure of the surroundings is not stated"),
@@ -238,7 +236,7 @@ DISC = RecordReview(
     ledgers=(
         Ledger("stop", "energy", "kJ", (
             term("internal energy of disc", "ΔU", "change", 1, "867 kJ", "867.1 kJ"),
-            term("friction work", "W_sh", "transfer", -1, "-867 kJ", "-867.1 kJ"),
+            term("friction work", "W_sh", "transfer", -1, "-867 kJ", "−867.1 kJ"),
         ), 0.0, 0.0, True, True),
     ),
     sheet=(

@@ -7,6 +7,7 @@ from enum import Enum
 from types import UnionType
 from typing import Any, Union, get_args, get_origin, get_type_hints
 
+from hypothesis import HealthCheck, Phase, settings
 from hypothesis import strategies as st
 
 from checker.findings import Location, Review
@@ -25,6 +26,14 @@ LEAVES: dict[Any, st.SearchStrategy[Any]] = {
     type(None): st.none(),
     Location: st.builds(Location, TEXTS, st.integers(1, 9999), st.integers(1, 999), TEXTS),
 }
+
+
+NO_SHRINKING = settings(
+    max_examples=40,
+    deadline=None,
+    suppress_health_check=list(HealthCheck),
+    phases=[Phase.explicit, Phase.reuse, Phase.generate],  # shrinking a whole review takes minutes
+)
 
 
 def reviews() -> st.SearchStrategy[Review]:

@@ -8,13 +8,13 @@ from io import BytesIO
 
 import jsonschema
 import pytest
-from hypothesis import HealthCheck, given, settings
+from hypothesis import given
 
 from checker.findings import Review
 from reports.json_report import write_json
 from reports.review_schema import review_schema
 from tests.reports.sample import ACCEPT, EMPTY, FINDINGS, REVISE, large
-from tests.reports.strategies import reviews
+from tests.reports.strategies import NO_SHRINKING, reviews
 
 VALIDATOR = jsonschema.Draft202012Validator(review_schema())
 
@@ -113,7 +113,7 @@ def test_ends_with_a_newline_and_is_the_same_each_time() -> None:
     assert written(REVISE).endswith(b"}\n")
 
 
-@settings(max_examples=40, deadline=None, suppress_health_check=list(HealthCheck))
+@NO_SHRINKING
 @given(reviews())
 def test_any_review_is_valid(review: Review) -> None:
     """Whatever a review holds, it is written and valid."""

@@ -9,7 +9,7 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from checker.findings import Amount
-from reports.numbers import MISSING, difference, difference_unit, rounded, shown, signed
+from reports.numbers import MISSING, deviation, difference_unit, rounded, shown, signed, tolerance
 
 
 @pytest.mark.parametrize(
@@ -82,6 +82,31 @@ def test_a_difference_has_the_unit_of_a_difference(unit: str, of_difference: str
 
 def test_a_difference_that_is_not_there_is_a_dash() -> None:
     """No value and no finite value print alike, as missing."""
-    assert difference(None, None) == difference(math.nan, None) == MISSING
-    assert difference(-0.4, Amount(60.0, "°C", "60 °C")) == "−0.400 K"
-    assert difference(0.4, None, sign=False) == "0.400"
+    assert deviation(None, 1.0, None) == deviation(math.nan, 1.0, None) == MISSING
+    assert tolerance(None, None) == tolerance(math.inf, None) == MISSING
+
+
+@pytest.mark.parametrize(
+    ("value", "tolerated", "printed"),
+    [
+        (121.4, 2.1, "+121.4"),
+        (-0.0002, 0.0055, "−0.0002"),
+        (0.00001, 0.0055, "0"),
+        (-63.24, 42.0, "−63"),
+        (-0.4, None, "−0.400"),
+        (0.0123456, 1e-9, "+0.0123"),
+        (5e8, 2.0, "+5.00×10⁸"),
+        (0.0, 2.0, "0"),
+    ],
+)
+def test_a_deviation_ends_where_its_tolerance_does(
+    value: float, tolerated: float | None, printed: str
+) -> None:
+    """A deviation is rounded to the second digit of its tolerance, to three digits where there is none."""
+    assert deviation(value, tolerated, None) == printed
+
+
+def test_a_deviation_has_the_unit_of_a_difference() -> None:
+    """Deviation and tolerance beside a temperature in °C are in K."""
+    beside = Amount(60.0, "°C", "60 °C")
+    assert (deviation(-0.4, 0.3, beside), tolerance(0.345, beside)) == ("−0.40 K", "0.34 K")

@@ -5,13 +5,13 @@ from __future__ import annotations
 from dataclasses import replace
 
 import pytest
-from hypothesis import HealthCheck, given, settings
+from hypothesis import given
 
 from checker.findings import Finding, Grade, Outcome, Review, Standing, Verdict
 from reports.order import grouped
 from tests.reports.sample import ACCEPT, EMPTY, REVISE
 from tests.reports.sample_records import BOTTLE, DISC, QUENCH, corrected_bottle
-from tests.reports.strategies import reviews
+from tests.reports.strategies import NO_SHRINKING, reviews
 
 
 def test_the_package_comes_first_then_the_records_in_their_order() -> None:
@@ -45,7 +45,7 @@ def test_a_finding_on_an_unknown_record_is_not_lost() -> None:
     assert [c.finding for c in first.comments] == [stray]
 
 
-@settings(max_examples=50, deadline=None, suppress_health_check=list(HealthCheck))
+@NO_SHRINKING
 @given(reviews())
 def test_every_finding_has_one_number(review: Review) -> None:
     """Whatever a review holds, each finding appears once, numbered without a gap."""

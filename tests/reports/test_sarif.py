@@ -9,13 +9,13 @@ from io import BytesIO
 from typing import Any
 
 import pytest
-from hypothesis import HealthCheck, given, settings
+from hypothesis import given
 from pydantic_sarif.model import StaticAnalysisResultsFormatSarifVersion210JsonSchema as SarifLog
 
 from checker.findings import Location, Review
 from reports.sarif import write_sarif
 from tests.reports.sample import ACCEPT, EMPTY, FINDINGS, REVISE, large
-from tests.reports.strategies import reviews
+from tests.reports.strategies import NO_SHRINKING, reviews
 
 
 def written(review: Review) -> dict[str, Any]:
@@ -115,7 +115,7 @@ def test_messages_are_neutral() -> None:
     assert not any("\x1b" in message for message in messages)
 
 
-@settings(max_examples=30, deadline=None, suppress_health_check=list(HealthCheck))
+@NO_SHRINKING
 @given(reviews())
 def test_any_review_follows_the_published_schema(review: Review) -> None:
     """Whatever a review holds, its log is valid."""

@@ -1,0 +1,58 @@
+"""One record: verdict, findings, states, balances, diagrams, what was checked, and the calculation sheet."""
+
+from __future__ import annotations
+
+from typing import Any
+
+from reportlab.lib.units import mm
+from reportlab.platypus import CondPageBreak, PageBreak
+
+from checker.findings import RecordReview, Review
+from reports.order import Group
+from reports.pdf.checks import account, checked_table
+from reports.pdf.diagrams import diagram_rows
+from reports.pdf.findings import finding_blocks
+from reports.pdf.keys import part_key, record_key
+from reports.pdf.ledgers import ledger_blocks
+from reports.pdf.sheet import calculation_sheet
+from reports.pdf.states import state_table
+from reports.pdf.styles import BODY, HEADING, SUBHEADING
+from reports.pdf.text import Heading, bold, paragraph
+from reports.phrases import grade_counts
+
+_ROOM_FOR_A_START = 36 * mm
+
+
+def record_section(review: Review, record: RecordReview, group: Group, number: int) -> list[Any]:
+    """Return the pages of one record."""
+    findings = [comment.finding for comment in group.comments]
+    verdict = review.verdict_of(record).value
+    head = [
+        PageBreak(),
+        Heading(HEADING, f"{record.id}: {record.title}"[:200], record_key(number), 0),
+        paragraph(BODY, "Verdict on this record: ", bold(verdict), f". {_capital(grade_counts(findings))}."),
+    ]
+    if not record.readable:
+        head.append(paragraph(BODY, "This record could not be read: nothing in it was checked."))
+    parts = [
+        _part(number, "findings", "Findings", finding_blocks(group.comments)),
+        _part(number, "states", "States", [state_table(record)]),
+        _part(number, "balances", "Balances", ledger_blocks(record.ledgers)),
+        _part(number, "diagrams", "Diagrams", diagram_rows(record.diagrams)),
+        _part(number, "checked", "Results held against the recomputation", [checked_table(record)]),
+        _part(number, "account", "Not checked, assumed, models", account(record) if record.readable else []),
+        _part(number, "sheet", "Alternate calculation sheet", [calculation_sheet(record)]),
+    ]
+    return head + [flowable for part in parts for flowable in part]
+
+
+def _part(number: int, name: str, title: str, content: list[Any]) -> list[Any]:
+    """Return a part with its heading, or nothing where it has no content."""
+    filled = [flowable for flowable in content if flowable is not None]
+    if not filled:
+        return []
+    return [CondPageBreak(_ROOM_FOR_A_START), Heading(SUBHEADING, title, part_key(number, name), 1), *filled]
+
+
+def _capital(text: str) -> str:
+    return text[:1].upper() + text[1:]
