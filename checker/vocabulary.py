@@ -386,7 +386,12 @@ TERMS: Final[dict[Level, dict[str, Term]]] = {
 }
 
 SYNONYMS: Final[dict[Level, dict[str, str]]] = {
-    Level.BODY: {"m": "mass", "V": "volume"},
+    Level.BODY: {
+        "m": "mass",
+        "V": "volume",
+        "cp": "specific_heat_at_constant_pressure",
+        "cv": "specific_heat_at_constant_volume",
+    },
     Level.STATE: {
         "T": "temperature",
         "p": "pressure",

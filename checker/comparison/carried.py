@@ -117,7 +117,10 @@ def _variants(
 def _reread_records(
     record: Record, independent: Values, stated: Mapping[str, float], widths: Mapping[str, float]
 ) -> Iterator[tuple[str, Record]]:
-    """Yield a state's key and the record with its wrong stated property as input, instead of each of its inputs."""
+    """Yield a state's key and the record with its wrong stated property as input.
+
+    It takes the place of each of the state's inputs in turn, and then of what the path would have said.
+    """
     for wrong in record.statements:
         parts = wrong.pointer.split("/")
         value = independent.get(wrong.pointer)
@@ -129,7 +132,7 @@ def _reread_records(
             continue
         base = wrong.pointer.removesuffix(parts[-1])
         inputs = [s for s in record.statements if s.role is Role.INPUT and s.pointer.startswith(base)]
-        instead: Sequence[Statement | None] = inputs or [None]
+        instead: Sequence[Statement | None] = [*inputs, None]
         for replaced in instead:
             yield f"{base}temperature", _swapped(record, wrong, replaced)
 

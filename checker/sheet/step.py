@@ -19,9 +19,9 @@ Function = Callable[..., tuple[Value, ...]]
 _NO_LINK = NotEvaluable("the linked record gives no value for it", "missing")
 
 
-@dataclass(frozen=True, slots=True)
+@dataclass(frozen=True, slots=True, eq=False)
 class Step:
-    """One step of a sheet.
+    """One step of a sheet; two steps are the same only if they are one object.
 
     Attributes
     ----------
