@@ -1,19 +1,12 @@
 """Tolerance, digits, standing: stated values against the alternate calculation."""
 
-import importlib.util
 import math
-from pathlib import Path
 
 import pytest
 
 from checker.basis import Basis
 from checker.findings import Outcome, Standing
-
-spec = importlib.util.spec_from_file_location("cases", Path(__file__).parents[1] / "cases.py")
-assert spec is not None
-assert spec.loader is not None
-made = importlib.util.module_from_spec(spec)
-spec.loader.exec_module(made)
+from tests.checker.cases import case, compared, gas_bottle
 
 Q = "processes/warming/heat"
 DU = "processes/warming/internal_energy_change"
@@ -24,14 +17,14 @@ GENERATED = 0.1 * 3.116 * math.log(400 / 300) - 31.16 / 450
 
 def test_the_right_value_agrees_and_holds():
     """ΔU = m c_v ΔT = 31.16 kJ."""
-    c = made.compared(made.case(made.gas_bottle({"internal_energy_change": "31.16 kJ"})), DU)
+    c = compared(case(gas_bottle({"internal_energy_change": "31.16 kJ"})), DU)
     assert (c.outcome, c.standing) == (Outcome.AGREES, Standing.HOLDS)
     assert c.independent == pytest.approx(31160.0, rel=1e-12)
 
 
 def test_tolerance_is_the_allowance_plus_the_expanded_half_width():
     """0.5 % of the largest term, plus 2·0.005/√3 kJ from the two stated decimals; constants add nothing."""
-    c = made.compared(made.case(made.gas_bottle({"internal_energy_change": "31.16 kJ"})), DU)
+    c = compared(case(gas_bottle({"internal_energy_change": "31.16 kJ"})), DU)
     assert c.tolerance == pytest.approx(0.005 * 31160.0 + 2.0 * 5.0 / math.sqrt(3.0), rel=1e-9)
 
 
@@ -46,20 +39,19 @@ def test_tolerance_is_the_allowance_plus_the_expanded_half_width():
 )
 def test_the_edge_of_the_tolerance_is_where_it_is_said_to_be(text, outcome):
     """Just inside agrees, just outside is wrong, on both sides."""
-    assert made.compared(made.case(made.gas_bottle({"internal_energy_change": text})), DU).outcome is outcome
+    assert compared(case(gas_bottle({"internal_energy_change": text})), DU).outcome is outcome
 
 
 def test_a_result_of_two_digits_is_not_accused():
     """31 kJ is right: its half-width of 0.5 kJ covers 31.16 kJ."""
-    c = made.compared(made.case(made.gas_bottle({"internal_energy_change": "31 kJ"})), DU)
+    c = compared(case(gas_bottle({"internal_energy_change": "31 kJ"})), DU)
     assert c.outcome is Outcome.AGREES
 
 
 def test_zeros_that_end_an_integer_leave_digits_open():
     """31 320 J may mean ±0.5 J or ±5 J, 31 320. J only ±0.5 J: the deviation of 160 J is open for the first only."""
     closed, open_digits = (
-        made.compared(made.case(made.gas_bottle({"internal_energy_change": text})), DU)
-        for text in ("31320. J", "31320 J")
+        compared(case(gas_bottle({"internal_energy_change": text})), DU) for text in ("31320. J", "31320 J")
     )
     assert closed.tolerance < 160.0
     assert closed.open_tolerance == closed.tolerance
@@ -69,29 +61,29 @@ def test_zeros_that_end_an_integer_leave_digits_open():
 def test_a_wrong_heat_is_the_origin_and_what_follows_is_inherited():
     """Q stated as 33.16 kJ: S_gen made from it is inherited, not another origin."""
     wrong = 0.1 * 3.116 * math.log(400 / 300) - 33.16 / 450
-    found = made.case(made.gas_bottle({"heat": "33.16 kJ", "entropy_generation": f"{wrong:.5f} kJ/K"}))
-    assert made.compared(found, Q).standing is Standing.ORIGIN
-    assert made.compared(found, SGEN).standing is Standing.INHERITED
-    assert Q in made.compared(found, SGEN).inherits_from
+    found = case(gas_bottle({"heat": "33.16 kJ", "entropy_generation": f"{wrong:.5f} kJ/K"}))
+    assert compared(found, Q).standing is Standing.ORIGIN
+    assert compared(found, SGEN).standing is Standing.INHERITED
+    assert Q in compared(found, SGEN).inherits_from
 
 
 def test_two_errors_on_one_chain_are_two_origins():
     """A wrong S_gen that does not follow from the wrong Q starts by itself."""
-    found = made.case(made.gas_bottle({"heat": "33.16 kJ", "entropy_generation": "0.0500 kJ/K"}))
-    assert made.compared(found, Q).standing is Standing.ORIGIN
-    assert made.compared(found, SGEN).standing is Standing.ORIGIN
+    found = case(gas_bottle({"heat": "33.16 kJ", "entropy_generation": "0.0500 kJ/K"}))
+    assert compared(found, Q).standing is Standing.ORIGIN
+    assert compared(found, SGEN).standing is Standing.ORIGIN
 
 
 def test_a_right_result_from_wrong_numbers_is_seen():
     """S_gen right although Q and ΔS are stated wrong."""
-    found = made.case(made.gas_bottle({"heat": "35.16 kJ", "entropy_generation": f"{GENERATED:.5f} kJ/K"}))
-    assert made.compared(found, SGEN).standing is Standing.ERRORS_CANCEL
+    found = case(gas_bottle({"heat": "35.16 kJ", "entropy_generation": f"{GENERATED:.5f} kJ/K"}))
+    assert compared(found, SGEN).standing is Standing.ERRORS_CANCEL
 
 
 def test_rounding_of_right_parents_is_not_called_cancelling():
     """S_gen right to five digits beside Q and ΔS of three digits raises nothing."""
-    found = made.case(
-        made.gas_bottle(
+    found = case(
+        gas_bottle(
             {
                 "heat": "31.2 kJ",
                 "entropy_change": "0.0896 kJ/K",
@@ -106,34 +98,34 @@ def test_a_wrong_state_property_explains_what_was_made_from_it():
     """The hot pressure read as 7 bar and V, s looked up from it with T: one origin."""
     r, t = 2077.0, 400.0
     volume = 0.1 * r * t / 7e5
-    found = made.case(made.gas_bottle(hot={"pressure": "7.000 bar", "volume": f"{volume * 1e3:.2f} L"}))
-    assert made.compared(found, "states/hot/gas/pressure").standing is Standing.ORIGIN
-    assert made.compared(found, "states/hot/gas/volume").standing is Standing.INHERITED
+    found = case(gas_bottle(hot={"pressure": "7.000 bar", "volume": f"{volume * 1e3:.2f} L"}))
+    assert compared(found, "states/hot/gas/pressure").standing is Standing.ORIGIN
+    assert compared(found, "states/hot/gas/volume").standing is Standing.INHERITED
 
 
 def test_a_surplus_input_is_compared():
     """A third property among the inputs must agree with the two that are used."""
-    record = made.gas_bottle()
+    record = gas_bottle()
     record["states"]["cold"]["gas"]["inputs"]["specific_volume"] = "1.300 m³/kg"
-    c = made.compared(made.case(record), "states/cold/gas/specific_volume")
+    c = compared(case(record), "states/cold/gas/specific_volume")
     assert c.outcome is Outcome.WRONG
     assert c.independent == pytest.approx(2077.0 * 300.0 / 5e5)
 
 
 def test_without_a_boundary_temperature_the_generation_is_not_evaluable_and_names_it():
     """What is missing is said; it never becomes agreement."""
-    record = made.gas_bottle({"entropy_generation": "0.020 kJ/K"})
+    record = gas_bottle({"entropy_generation": "0.020 kJ/K"})
     del record["processes"][0]["heat_transfers"][0]["boundary_temperature"]
-    c = made.compared(made.case(record), SGEN)
+    c = compared(case(record), SGEN)
     assert c.outcome is Outcome.NOT_EVALUABLE
     assert "boundary temperature" in c.reason
 
 
 def test_rounded_inputs_widen_the_tolerance_where_the_basis_says_so():
     """input_digits: rounded carries half a unit of every last digit into U."""
-    record = made.gas_bottle({"internal_energy_change": "31.16 kJ"})
-    exact = made.compared(made.case(record), DU)
-    rounded = made.compared(made.case(record, basis=Basis(input_digits="rounded")), DU)
+    record = gas_bottle({"internal_energy_change": "31.16 kJ"})
+    exact = compared(case(record), DU)
+    rounded = compared(case(record, basis=Basis(input_digits="rounded")), DU)
     # The two temperatures move ΔU by m·c_v·0.05 K each, the mass by 0.00005 kg, c_v by 0.0005 kJ/(kg·K).
     moves = [311.6 * 0.05, 311.6 * 0.05, 311600 * 0.00005, 0.1 * 100.0 * 0.5]
     carried = 2.0 * math.sqrt(sum(m * m for m in moves) / 3.0)
@@ -144,10 +136,10 @@ def test_rounded_inputs_widen_the_tolerance_where_the_basis_says_so():
 
 def test_a_stated_plus_minus_widens_the_tolerance():
     """± on an input is a half-width unless the basis says standard uncertainty."""
-    record = made.gas_bottle({"internal_energy_change": "31.16 kJ"})
+    record = gas_bottle({"internal_energy_change": "31.16 kJ"})
     record["states"]["hot"]["gas"]["inputs"]["temperature"] = "400.0 ± 2.0 K"
-    half = made.compared(made.case(record), DU)
-    standard = made.compared(made.case(record, basis=Basis(plus_minus="standard uncertainty")), DU)
+    half = compared(case(record), DU)
+    standard = compared(case(record, basis=Basis(plus_minus="standard uncertainty")), DU)
     stated = 2.0 * 5.0 / math.sqrt(3.0)
     assert half.tolerance == pytest.approx(155.8 + math.hypot(stated, 2 * 623.2 / math.sqrt(3.0)), rel=1e-6)
     assert standard.tolerance == pytest.approx(155.8 + math.hypot(stated, 2 * 623.2), rel=1e-6)
@@ -155,18 +147,18 @@ def test_a_stated_plus_minus_widens_the_tolerance():
 
 def test_a_deviation_that_the_inputs_last_digit_explains_is_marked():
     """With T stated as 400 K (±0.5 K) a ΔU off by 0.2 kJ is a question, not an accusation."""
-    record = made.gas_bottle({"internal_energy_change": "31.36 kJ"})
+    record = gas_bottle({"internal_energy_change": "31.36 kJ"})
     record["states"]["hot"]["gas"]["inputs"]["temperature"] = "400 K"
-    c = made.compared(made.case(record), DU)
+    c = compared(case(record), DU)
     assert c.outcome is Outcome.WRONG
     assert c.explained_by_digits
 
 
 def test_positive_in_flips_work_and_nothing_else():
     """Work done on the gas is positive where the package says positive in."""
-    record = made.gas_bottle({"shaft_work": "10.00 kJ", "heat": "21.16 kJ"})
+    record = gas_bottle({"shaft_work": "10.00 kJ", "heat": "21.16 kJ"})
     record["processes"][0]["work_transfers"] = [
         {"id": "fan", "kind": "shaft", "inputs": {"energy": "10.00 kJ"}}
     ]
-    found = made.case(record, conventions={"work": "positive in"})
+    found = case(record, conventions={"work": "positive in"})
     assert {c.outcome for c in found.compared} == {Outcome.AGREES}

@@ -82,7 +82,7 @@ def test_a_known_fluid_lends_its_molar_mass() -> None:
 
 
 def test_contradicting_constants_are_refused() -> None:
-    """cp − cv far from R, and cp below cv, make no substance."""
+    """Constants with cp − cv far from R, or with cp below cv, make no substance."""
     for constants in (
         {CP: 1005.0, CV: 718.0, "gas_constant": 310.0},
         {CP: 700.0, CV: 718.0},
