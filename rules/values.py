@@ -4,20 +4,27 @@ from __future__ import annotations
 
 from collections import defaultdict
 from collections.abc import Iterator
+from typing import Final
 
 from checker.case import Case, Raised, Yielded
 from checker.comparison.compare import Compared
-from checker.findings import Outcome, Standing
+from checker.facts.gaps import unexplained
+from checker.facts.mass import contradicts_mass
+from checker.facts.twins import is_incompressible
+from checker.facts.use import untraceable
+from checker.findings import Grade, Outcome, Standing
 from checker.submission import Role
+from rules.rule import Rule, Scope
 
 
 def disagrees(case: Case) -> Yielded:
     """Yield one finding per origin, with everything that it spoiled."""
     for group in _origins(case):
-        first = group[0]
-        if first.explained_by_digits or first.statement.role is Role.INPUT:
+        firm = [c for c in group if not c.explained_by_digits]
+        if not firm:
             continue
-        others = tuple(c.statement.pointer for c in group[1:])
+        first = firm[0]
+        others = tuple(c.statement.pointer for c in group if c is not first)
         spoiled = tuple(dict.fromkeys((*others, *_spoiled_by(case, group))))
         yield Raised(
             _message(case, first),
@@ -33,14 +40,14 @@ def digits_explain(case: Case) -> Yielded:
     """Yield origins that open digits alone would explain."""
     for group in _origins(case):
         first = group[0]
-        if not first.explained_by_digits or first.statement.role is Role.INPUT:
+        if not all(c.explained_by_digits for c in group):
             continue
         yield Raised(
             f"{_message(case, first)} The digits that the inputs or the stated number leave open would explain it.",
             compared=first,
             theme=first.statement.term.theme,
             origin=True,
-            spoils=tuple(_spoiled_by(case, group)),
+            spoils=(*(c.statement.pointer for c in group[1:]), *_spoiled_by(case, group)),
             suggestion="State the inputs with the digits that were used, or correct the result.",
         )
 
@@ -48,7 +55,8 @@ def digits_explain(case: Case) -> Yielded:
 def surplus_input(case: Case) -> Yielded:
     """Yield inputs that are not needed and contradict the others."""
     for c in case.compared:
-        if c.statement.role is Role.INPUT and c.outcome is Outcome.WRONG:
+        volume = contradicts_mass(case, c.statement.pointer)
+        if c.statement.role is Role.INPUT and c.outcome is Outcome.WRONG and not volume:
             yield Raised(
                 f"{c.statement.quantity.text} is more than is needed to find this quantity, and the other inputs "
                 f"give {_recomputed(case, c)}.",
@@ -86,10 +94,10 @@ def errors_cancel(case: Case) -> Yielded:
 
 
 def not_recomputed(case: Case) -> Yielded:
-    """Yield results without an independent value, one finding per reason."""
+    """Yield results without an independent value, one finding per reason that no other rule reports."""
     by_reason: dict[str, list[Compared]] = defaultdict(list)
-    for c in case.compared:
-        if c.outcome is Outcome.NOT_EVALUABLE and c.statement.role is Role.RESULT:
+    for c in unexplained(case):
+        if not untraceable(case, c.statement.pointer):
             by_reason[c.reason].append(c)
     for reason, group in by_reason.items():
         also = tuple(c.statement.pointer for c in group[1:])
@@ -103,13 +111,20 @@ def not_recomputed(case: Case) -> Yielded:
 
 
 def _origins(case: Case) -> Iterator[list[Compared]]:
-    """Yield groups of deviations that start in one step, in document order."""
+    """Yield groups of wrong results that start in one step, in document order."""
     groups: dict[object, list[Compared]] = {}
     for c in case.compared:
-        if c.standing in (Standing.ORIGIN, Standing.ORIGIN_UNKNOWN) and c.outcome is Outcome.WRONG:
+        starts = c.standing in (Standing.ORIGIN, Standing.ORIGIN_UNKNOWN) and c.outcome is Outcome.WRONG
+        if starts and c.statement.role is Role.RESULT and not _asks_for_pressure(case, c):
             step = case.plan.sheet.made_by.get(c.key)
             groups.setdefault(step.outputs if step else c.key, []).append(c)
     yield from groups.values()
+
+
+def _asks_for_pressure(case: Case, c: Compared) -> bool:
+    """Say whether a pressure is claimed of a model that has none: another rule says so in its own words."""
+    parts = c.statement.pointer.split("/")
+    return c.independent is None and parts[-1] == "pressure" and is_incompressible(case, parts[2])
 
 
 def _spoiled_by(case: Case, group: list[Compared]) -> Iterator[str]:
@@ -143,3 +158,62 @@ def _suggestion(c: Compared, spoiled: tuple[str, ...]) -> str:
         return "Correct this result." if c.deviation is not None else ""
     count = len(spoiled)
     return f"Correct this result and the {count} that follow{'s' if count == 1 else ''} from it."
+
+
+RULES: Final[tuple[Rule, ...]] = (
+    Rule(
+        "value-disagrees",
+        disagrees,
+        Scope.RECORD,
+        "state",
+        Grade.DISCREPANCY,
+        "A stated result is not what its inputs give.",
+        "Whoever uses the number would use a wrong one, and everything made from it is wrong as well.",
+        basis="energy and entropy balances of a closed system; tolerance by GUM (JCGM 100:2008)",
+    ),
+    Rule(
+        "digits-explain",
+        digits_explain,
+        Scope.RECORD,
+        "state",
+        Grade.QUERY,
+        "A stated result is off, but digits that were left open would explain it.",
+        "It cannot be told whether the result is wrong or the inputs were written with too few digits.",
+    ),
+    Rule(
+        "surplus-input-disagrees",
+        surplus_input,
+        Scope.RECORD,
+        "state",
+        Grade.DISCREPANCY,
+        "An input that is not needed contradicts the others.",
+        "Two descriptions of one thing cannot both be right, and the result depends on which was used.",
+    ),
+    Rule(
+        "rounded-early",
+        rounded_early,
+        Scope.RECORD,
+        "bookkeeping",
+        Grade.QUERY,
+        "A result follows from rounded intermediate numbers and misses the right value.",
+        "Rounding before a difference is taken can move it by more than the allowance.",
+    ),
+    Rule(
+        "errors-cancel",
+        errors_cancel,
+        Scope.RECORD,
+        "bookkeeping",
+        Grade.QUERY,
+        "A right result stands on wrong numbers.",
+        "It has another source than the calculation shows, or two errors cancel here and not elsewhere.",
+    ),
+    Rule(
+        "result-not-recomputed",
+        not_recomputed,
+        Scope.RECORD,
+        "bookkeeping",
+        Grade.QUERY,
+        "A stated result could not be recomputed from the inputs.",
+        "A result that nobody could check must not look checked.",
+    ),
+)

@@ -1,0 +1,183 @@
+"""How far an idealised model of a body is from the substance that it stands for."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+from typing import Final
+
+from checker.case import Case
+from checker.facts.balance import energy_allowance
+from checker.facts.twins import (
+    CONSTANT,
+    IDEAL,
+    REAL,
+    blocked_in_pressure,
+    compressibility,
+    energy_difference,
+    is_condensed,
+    is_gas,
+    twin,
+)
+from checker.submission import Role
+from checker.substances.factory import MOLAR_GAS_CONSTANT
+from checker.substances.interface import Substance
+from checker.vocabulary import Allowance
+
+NEAR_TEMPERATURE: Final = 0.02
+NEAR_PRESSURE: Final = 0.10
+
+
+@dataclass(frozen=True, slots=True)
+class GasCheck:
+    """A gas held against its real fluid in one state; Z None where the real fluid does not tell."""
+
+    factor: float | None
+    condensed: bool
+
+
+def gas_check(case: Case, state: str, body: str) -> GasCheck | None:
+    """Return how real a gas is in a state; None without the state or without an equation of the real fluid."""
+    temperature, pressure = (case.value(f"states/{state}/{body}/{n}") for n in ("temperature", "pressure"))
+    real = twin(case.record.bodies[body].substance, REAL)
+    if real is None or temperature is None or pressure is None:
+        return None
+    if is_condensed(real, temperature, pressure):
+        return GasCheck(None, True)
+    return GasCheck(compressibility(real, temperature, pressure), False)
+
+
+def own_compressibility(case: Case, state: str, body: str) -> float | None:
+    """Return Z = p·v/(R·T) of a real fluid in a state."""
+    names = ("temperature", "pressure", "specific_volume")
+    temperature, pressure, volume = (case.value(f"states/{state}/{body}/{name}") for name in names)
+    substance = case.plan.substances.get(body)
+    if substance is None or substance.gas_constant is None or not temperature or not pressure or not volume:
+        return None
+    return pressure * volume / (substance.gas_constant * temperature)
+
+
+@dataclass(frozen=True, slots=True)
+class HeatCheck:
+    """ΔU with a constant specific heat and with one that follows the temperature; SI."""
+
+    constant: float
+    better: float
+    allowed: float
+    model: str
+
+
+def heat_check(case: Case, process: str, body: str) -> HeatCheck | None:
+    """Return both changes of internal energy of a body; None where the substance has no better model."""
+    ctx, better = case.context(process), better_heat(case, body)
+    if ctx is None or better is None:
+        return None
+    change, mass = case.value(ctx.share(body, "internal_energy_change")), case.value(f"bodies/{body}/mass")
+    ends = (ctx.process.from_state, ctx.process.to_state)
+    first, last = (case.value(f"states/{state}/{body}/temperature") for state in ends)
+    if change is None or mass is None or first is None or last is None:
+        return None
+    found = energy_difference(better, first, last)
+    if found is None:
+        return None
+    return HeatCheck(change, mass * found, energy_allowance(case, process), better.model)
+
+
+def better_heat(case: Case, body: str) -> Substance | None:
+    """Return the model with which a constant specific heat is compared: ideal gas, or the real liquid."""
+    substance = case.record.bodies[body].substance
+    return twin(substance, IDEAL if is_gas(case, body) else REAL)
+
+
+def has_constant_heat(case: Case, body: str) -> bool:
+    """Say whether a body is calculated with a constant specific heat."""
+    own = case.plan.substances.get(body)
+    return own is not None and own.model == CONSTANT
+
+
+def near_critical(case: Case, state: str, body: str) -> bool:
+    """Say whether a state of a real fluid is so close to its critical point that properties are uncertain."""
+    substance = case.plan.substances.get(body)
+    temperature, pressure = (case.value(f"states/{state}/{body}/{n}") for n in ("temperature", "pressure"))
+    if substance is None or substance.critical_point is None or substance.model != REAL:
+        return False
+    if temperature is None or pressure is None:
+        return False
+    point = substance.critical_point
+    close = abs(temperature / point[0] - 1.0) <= NEAR_TEMPERATURE
+    return close and abs(pressure / point[1] - 1.0) <= NEAR_PRESSURE
+
+
+@dataclass(frozen=True, slots=True)
+class ConstantCheck:
+    """A stated constant of a body beside the value that another source gives. [SI]"""
+
+    pointer: str
+    expected: float
+    source: str
+
+
+def constants_of_substance(case: Case, body: str) -> tuple[ConstantCheck, ...]:
+    """Return what the named fluid's own constants are, for those among the inputs."""
+    known = twin(case.record.bodies[body].substance, IDEAL)
+    if known is None or known.molar_mass is None or known.gas_constant is None:
+        return ()
+    pairs = (("molar_mass", known.molar_mass), ("gas_constant", known.gas_constant))
+    return tuple(
+        ConstantCheck(f"bodies/{body}/{name}", value, known.name)
+        for name, value in pairs
+        if case.record.stated(f"bodies/{body}/{name}", Role.INPUT)
+    )
+
+
+def gas_constants(case: Case, body: str) -> tuple[ConstantCheck, ...]:
+    """Return what the other stated constants of a gas give for its gas constant: cp − cv and R_u/M."""
+    names = (
+        "gas_constant",
+        "molar_mass",
+        "specific_heat_at_constant_pressure",
+        "specific_heat_at_constant_volume",
+    )
+    own, molar, cp, cv = (case.given(f"bodies/{body}/{name}") for name in names)
+    expected: list[tuple[float, str]] = []
+    if cp is not None and cv is not None:
+        expected.append((cp - cv, "c_p − c_v"))
+    if molar:
+        expected.append((MOLAR_GAS_CONSTANT / molar, "R/M"))
+    if own is not None:
+        expected.insert(0, (own, "the stated gas constant"))
+    return tuple(ConstantCheck(f"bodies/{body}", value, source) for value, source in expected)
+
+
+def digits_of_constants(case: Case, body: str) -> float:
+    """Return how far the last digits of the stated constants move a gas constant. [J/(kg·K)]"""
+    moved = 0.0
+    for name in ("gas_constant", "specific_heat_at_constant_pressure", "specific_heat_at_constant_volume"):
+        moved += sum(s.quantity.half_width for s in case.record.stated(f"bodies/{body}/{name}", Role.INPUT))
+    for s in case.record.stated(f"bodies/{body}/molar_mass", Role.INPUT):
+        moved += MOLAR_GAS_CONSTANT / s.value**2 * s.quantity.half_width if s.value else 0.0
+    return moved
+
+
+@dataclass(frozen=True, slots=True)
+class BlockedIn:
+    """A liquid that warms in a closed volume: end state, warming [K], pressure of the real fluid there [Pa]."""
+
+    state: str
+    warming: float
+    pressure: float
+
+
+def blocked_in(case: Case, process: str, body: str) -> BlockedIn | None:
+    """Return what warming a full liquid would do by its real equation; None where it cools or is not known.
+
+    The liquid starts at the atmospheric pressure, or just above its own vapour pressure where that is higher.
+    """
+    ctx, real = case.context(process), twin(case.record.bodies[body].substance, REAL)
+    if ctx is None or real is None:
+        return None
+    ends = (ctx.process.from_state, ctx.process.to_state)
+    first, last = (case.value(f"states/{state}/{body}/temperature") for state in ends)
+    if first is None or last is None or last - first <= case.basis.allowances[Allowance.TEMPERATURE]:
+        return None
+    pressure = blocked_in_pressure(real, first, last)
+    return None if pressure is None else BlockedIn(ends[1], last - first, pressure)

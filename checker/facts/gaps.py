@@ -1,0 +1,161 @@
+"""What stands between the inputs of a record and its results: each gap once, with the results that it costs."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from dataclasses import dataclass
+
+from checker.case import Case
+from checker.comparison.compare import Compared
+from checker.facts.state_gaps import state_gaps
+from checker.facts.twins import CONSTANT, IDEAL, REAL
+from checker.findings import Outcome
+from checker.outcomes import NotEvaluable
+from checker.problems import Place
+from checker.submission import Body, Process, Role
+from checker.substances import knows_fluid
+
+
+@dataclass(frozen=True, slots=True)
+class Gap:
+    """A reason why results have no independent value.
+
+    Attributes
+    ----------
+    rule : str
+        Name of the rule that reports it.
+    pointer : str
+        What it concerns.
+    place : Place
+        Where in the document.
+    reason : str
+        In words.
+    marks : tuple of str
+        Parts of the reason of a result that is lost by it.
+    within : str
+        Pointer prefix of the process or sequence that alone is concerned, or an empty text.
+    """
+
+    rule: str
+    pointer: str
+    place: Place
+    reason: str
+    marks: tuple[str, ...]
+    within: str = ""
+
+    def costs(self, c: Compared) -> bool:
+        """Say whether a result is lost by this gap."""
+        pointer = c.statement.pointer
+        elsewhere = self.within and pointer.startswith(("processes/", "sequences/"))
+        if elsewhere and not pointer.startswith(self.within):
+            return False
+        return any(mark in c.reason for mark in self.marks)
+
+
+def gaps(case: Case) -> tuple[Gap, ...]:
+    """Return every gap of a record, in a fixed order."""
+    return (
+        *_models(case),
+        *(Gap(g.rule, g.pointer, g.place, g.reason, g.marks) for g in state_gaps(case)),
+        *_sequences(case),
+        *(gap for process in case.record.processes for gap in _process(case, process)),
+        *_surroundings(case),
+    )
+
+
+def gaps_of(case: Case, rule: str) -> Iterator[tuple[Gap, tuple[str, ...]]]:
+    """Yield the gaps that a rule reports, with the pointers of the stated results that each costs."""
+    for gap in gaps(case):
+        if gap.rule == rule:
+            yield gap, tuple(c.statement.pointer for c in lost(case) if gap.costs(c))
+
+
+def lost(case: Case) -> Iterator[Compared]:
+    """Yield the stated results without an independent value."""
+    for c in case.compared:
+        if c.outcome is Outcome.NOT_EVALUABLE and c.statement.role is Role.RESULT:
+            yield c
+
+
+def unexplained(case: Case) -> Iterator[Compared]:
+    """Yield the results without an independent value that no gap explains."""
+    known = gaps(case)
+    return (c for c in lost(case) if not any(gap.costs(c) for gap in known))
+
+
+def _models(case: Case) -> Iterator[Gap]:
+    for name, body in case.record.bodies.items():
+        if name in case.plan.substances:
+            continue
+        try:
+            model = case.plan.models[name]
+            model.substance((*model.nominal, 1.0, 1.0))
+        except NotEvaluable as outcome:
+            rule, reason = _rule_of_model(body, outcome), outcome.reason
+            yield Gap(rule, f"bodies/{name}", body.place, reason, (reason,))
+
+
+def _rule_of_model(body: Body, outcome: NotEvaluable) -> str:
+    """Return which rule says that a body has no model that can be used."""
+    if body.composition is None and body.model == CONSTANT:
+        if outcome.kind != "no-solution":
+            return "constants-missing"
+        return "value-not-positive" if "must be positive" in outcome.reason else "constants-contradict"
+    unknown = body.model in (REAL, IDEAL) and not knows_fluid(body.substance)
+    return "substance-unknown" if body.composition is None and unknown else "model-not-recomputed"
+
+
+def _sequences(case: Case) -> Iterator[Gap]:
+    for sequence in case.record.sequences:
+        base = f"sequences/{sequence.id}"
+        inputs = [
+            s for s in case.record.statements if s.pointer.startswith(f"{base}/") and s.role is Role.INPUT
+        ]
+        if inputs:
+            names = ", ".join(s.term.name.replace("_", " ") for s in inputs)
+            reason = f"a balance over several processes that starts from {names} is not part of this version"
+            yield Gap("sequence-not-recomputed", base, sequence.place, reason, ("",), f"{base}/")
+
+
+def _process(case: Case, process: Process) -> Iterator[Gap]:
+    ctx = case.context(process.id)
+    base = f"processes/{process.id}"
+    if ctx is not None and len(ctx.bodies) > 1:
+        reason = f"the balance of {', '.join(ctx.bodies)} together is not part of this version"
+        mark = "several bodies: closing their balance"
+        yield Gap("several-bodies-not-closed", base, process.place, reason, (mark,), f"{base}/")
+        return
+    if process.heat_transfers is None:
+        mark = f"heat transfers of {process.id} is not stated"
+        reason = "no heat transfers are listed, so the entropy that goes with heat is not known"
+        yield Gap("heat-transfers-not-stated", base, process.place, reason, (mark,), f"{base}/")
+    for item in process.heat_transfers or ():
+        own = f"{base}/heat_transfers/{item.id}"
+        if not item.at_system and case.given(f"{own}/boundary_temperature") is None:
+            mark = f"boundary temperature of {process.id}/heat_transfers/{item.id} is not stated"
+            reason = f"the temperature at which the heat of {item.id} crosses the boundary is not stated"
+            yield Gap("boundary-temperature-missing", own, item.place, reason, (mark,), f"{base}/")
+        mark = f"the reservoir of heat transfer {item.id} is not stated"
+        reason = f"{mark}, and the surroundings cannot be it at this boundary temperature"
+        yield Gap("reservoir-not-stated", own, item.place, reason, (mark,), f"{base}/")
+    yield from _unknowns(case, process)
+
+
+def _unknowns(case: Case, process: Process) -> Iterator[Gap]:
+    """Yield the heat transfers of a process of which more than one is unknown."""
+    ctx = case.context(process.id)
+    if ctx is None or ctx.unknown_heats < 2:
+        return
+    unknown = [i.id for i in process.heat_transfers or () if not ctx.is_supplied("heat", i.id)]
+    base = f"processes/{process.id}"
+    marks = tuple(f"energy of {process.id}/heat_transfers/{name} is not stated" for name in unknown)
+    reason = f"{len(unknown)} heat transfers are unknown ({', '.join(unknown)}), and one balance closes one unknown"
+    yield Gap("too-many-unknowns", base, process.place, reason, marks, f"{base}/")
+
+
+def _surroundings(case: Case) -> Iterator[Gap]:
+    for name, words in (("temperature", "temperature T₀"), ("pressure", "pressure p₀")):
+        if case.given(f"surroundings/{name}") is None:
+            mark = f"{name} of the surroundings is not stated"
+            reason = f"the {words} of the surroundings is not stated"
+            yield Gap("surroundings-not-stated", f"surroundings/{name}", case.record.place, reason, (mark,))

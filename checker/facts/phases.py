@@ -1,0 +1,101 @@
+"""Which phases a state may be said to have, within the allowance of its temperature and quality."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+from typing import Final
+
+from checker.case import Case
+from checker.outcomes import NotEvaluable
+from checker.problems import Place
+from checker.submission import Role
+from checker.substances.interface import Phase, Substance
+from checker.vocabulary import Allowance
+
+DENSE: Final = (Phase.SUBCOOLED_LIQUID, Phase.SUPERCRITICAL)
+HOT: Final = (Phase.SUPERHEATED_VAPOUR, Phase.SUPERCRITICAL)
+
+
+@dataclass(frozen=True, slots=True)
+class PhaseClaim:
+    """A phase word as stated."""
+
+    phase: Phase
+    place: Place
+
+
+def claims_of(case: Case, state: str, body: str) -> tuple[PhaseClaim, ...]:
+    """Return the phases stated for a body in a state, input and result."""
+    found = case.record.body_states.get((state, body))
+    if found is None:
+        return ()
+    claims = []
+    if found.phase is not None and found.phase_role is Role.INPUT:
+        claims.append(PhaseClaim(Phase(found.phase), (*found.place, "inputs", "phase")))
+    if found.claimed_phase is not None:
+        claims.append(PhaseClaim(Phase(found.claimed_phase), (*found.place, "results", "phase")))
+    return tuple(claims)
+
+
+def possible_phases(case: Case, state: str, body: str) -> tuple[Phase, ...] | None:
+    """Return the phase of a state first, then others that cannot be told from it; None without phases.
+
+    Above the critical temperature or the critical pressure alone, usage differs: there both words are accepted.
+    """
+    word = case.word(f"states/{state}/{body}/phase")
+    temperature, pressure = (case.value(f"states/{state}/{body}/{n}") for n in ("temperature", "pressure"))
+    substance = case.plan.substances.get(body)
+    if word is None or substance is None or temperature is None or pressure is None:
+        return None
+    own = Phase(word)
+    quality = case.value(f"states/{state}/{body}/quality")
+    slack = case.basis.allowances
+    others = (
+        *_around_critical(substance, temperature, pressure),
+        *_by_quality(quality, slack[Allowance.FRACTION]),
+        *(
+            _by_temperature(substance, temperature, pressure, slack[Allowance.TEMPERATURE])
+            if quality is None
+            else ()
+        ),
+    )
+    return tuple(dict.fromkeys((own, *others)))
+
+
+def _around_critical(substance: Substance, temperature: float, pressure: float) -> tuple[Phase, ...]:
+    point = substance.critical_point
+    if point is None:
+        return ()
+    hot, dense = temperature >= point[0], pressure >= point[1]
+    if hot and not dense:
+        return HOT
+    return DENSE if dense and not hot else ()
+
+
+def _by_quality(quality: float | None, slack: float) -> tuple[Phase, ...]:
+    """Return the saturated phases that a quality close to 0 or 1 cannot be told from."""
+    if quality is None:
+        return ()
+    ends = ((0.0, Phase.SATURATED_LIQUID), (1.0, Phase.SATURATED_VAPOUR))
+    near = [phase for end, phase in ends if abs(quality - end) <= slack]
+    beyond = {
+        Phase.SATURATED_LIQUID: Phase.SUBCOOLED_LIQUID,
+        Phase.SATURATED_VAPOUR: Phase.SUPERHEATED_VAPOUR,
+    }
+    return (*near, *(beyond[phase] for phase in near), Phase.WET_VAPOUR) if near else ()
+
+
+def _by_temperature(
+    substance: Substance, temperature: float, pressure: float, slack: float
+) -> tuple[Phase, ...]:
+    """Return the phases on both sides of a saturation line that is closer than the allowance."""
+    try:
+        liquid, vapour = substance.saturation({"pressure": pressure})
+    except NotEvaluable:
+        return ()
+    found: list[Phase] = []
+    if abs(temperature - liquid.temperature) <= slack:
+        found += [Phase.SATURATED_LIQUID, Phase.SUBCOOLED_LIQUID]
+    if abs(temperature - vapour.temperature) <= slack:
+        found += [Phase.SATURATED_VAPOUR, Phase.SUPERHEATED_VAPOUR]
+    return tuple(found)

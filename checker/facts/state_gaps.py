@@ -1,0 +1,100 @@
+"""States that could not be found, and why; states that depend on one another count as one gap."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from dataclasses import dataclass, replace
+from typing import Final
+
+from checker.case import Case
+from checker.outcomes import NotEvaluable
+from checker.problems import Place
+from checker.submission import BodyState, Role
+from checker.substances.interface import Phase
+
+RULE_OF_KIND: Final = {
+    "outside-range": "outside-range",
+    "several-roots": "several-states-possible",
+    "no-solution": "state-impossible",
+    "ill-conditioned": "state-undetermined",
+    "near-saturation": "near-saturation",
+}
+"""Kind of outcome → the rule that reports it; any other: the state is undetermined."""
+TWO_PHASE: Final = "two-phase-from-temperature-and-pressure"
+REACHES_ACROSS: Final = "reach across the saturation line"
+URGENCY: Final = (
+    TWO_PHASE,
+    "near-saturation",
+    "outside-range",
+    "state-impossible",
+    "several-states-possible",
+)
+"""Which of several dependent states is reported: the first reason that more inputs would not cure."""
+
+
+@dataclass(frozen=True, slots=True)
+class StateGap:
+    """A body in a state without independent properties."""
+
+    rule: str
+    state: str
+    body: str
+    place: Place
+    reason: str
+    marks: tuple[str, ...]
+
+    @property
+    def pointer(self) -> str:
+        """Pointer of the body in the state."""
+        return f"states/{self.state}/{self.body}"
+
+
+def state_gaps(case: Case) -> tuple[StateGap, ...]:
+    """Return one gap for each group of states that depend on one another."""
+    groups: list[list[StateGap]] = []
+    for gap in _single(case):
+        linked = [group for group in groups if any(_connected(case, gap, other) for other in group)]
+        merged = [gap, *(other for group in linked for other in group)]
+        groups = [group for group in groups if group not in linked] + [merged]
+    order = [f"states/{state}/{body}" for state, body in case.record.body_states]
+    return tuple(_lead(group, order) for group in groups)
+
+
+def _lead(group: list[StateGap], order: list[str]) -> StateGap:
+    def rank(gap: StateGap) -> tuple[int, int]:
+        urgency = URGENCY.index(gap.rule) if gap.rule in URGENCY else len(URGENCY)
+        return urgency, order.index(gap.pointer)
+
+    first, *rest = sorted(group, key=rank)
+    if not rest:
+        return first
+    others = ", ".join(gap.state for gap in rest)
+    marks = tuple(mark for gap in (first, *rest) for mark in gap.marks)
+    return replace(first, reason=f"{first.reason}; with it state {others} stays open", marks=marks)
+
+
+def _connected(case: Case, one: StateGap, other: StateGap) -> bool:
+    ends = {one.state, other.state}
+    return one.body == other.body and any({p.from_state, p.to_state} == ends for p in case.record.processes)
+
+
+def _single(case: Case) -> Iterator[StateGap]:
+    for (state, body), found in case.record.body_states.items():
+        pointer = f"states/{state}/{body}/temperature"
+        if body not in case.plan.substances or case.value(pointer) is not None:
+            continue
+        failure, reason = case.failure(pointer), case.why_not(pointer)
+        rule = _rule(case, found, failure, reason)
+        yield StateGap(rule, state, body, found.place, reason, (reason,))
+
+
+def _rule(case: Case, found: BodyState, failure: NotEvaluable | None, reason: str) -> str:
+    near = REACHES_ACROSS in reason or (failure is not None and failure.kind == "near-saturation")
+    if near:
+        return TWO_PHASE if _claims_two_phases(case, found) else "near-saturation"
+    return RULE_OF_KIND.get(failure.kind, "state-undetermined") if failure else "state-undetermined"
+
+
+def _claims_two_phases(case: Case, found: BodyState) -> bool:
+    quality = case.stated(f"states/{found.state}/{found.body}/quality", Role.RESULT)
+    return found.claimed_phase == Phase.WET_VAPOUR or any(0.0 < s.value < 1.0 for s in quality)

@@ -1,0 +1,73 @@
+"""Which inputs a record uses, and which of its results follow from any."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from typing import Final
+
+from checker.case import Case
+from checker.facts.twins import IDEAL, REAL
+from checker.sheet.keys import given
+from checker.sheet.models import CONSTANTS
+from checker.submission import Role, Statement
+
+NOT_IN_FORMULAS: Final = (
+    "heat_transfer_coefficient",
+    "thermal_conductivity",
+    "characteristic_length",
+    "duration",
+    "velocity",
+    "elevation",
+)
+"""Inputs that serve a check, a rate or one end of a motion, and need not enter a formula."""
+
+
+def unused_inputs(case: Case) -> Iterator[Statement]:
+    """Yield inputs from which nothing was calculated and which nothing was compared with."""
+    used = {parent for step in case.plan.sheet.steps for parent in step.parents}
+    compared = {c.key for c in case.compared}
+    for s in inputs(case):
+        key = case.key(s.pointer)
+        idle = given(key) not in used and key not in compared and s.term.name not in NOT_IN_FORMULAS
+        if (idle and key not in case.plan.sheet.missing) or _has_own_constant(case, s):
+            yield s
+
+
+def inputs(case: Case) -> Iterator[Statement]:
+    """Yield the inputs of a record that belong to it alone."""
+    for s in case.record.statements:
+        elsewhere = s.pointer.startswith(("surroundings/", "assumptions/"))
+        if s.role is Role.INPUT and s.usable and not elsewhere:
+            yield s
+
+
+def _has_own_constant(case: Case, s: Statement) -> bool:
+    """Say whether an input is a constant that the model of its body takes from its own equation."""
+    parts = s.pointer.split("/")
+    if parts[0] != "bodies" or parts[2] not in CONSTANTS:
+        return False
+    own = case.plan.substances.get(parts[1])
+    return own is not None and own.model in (REAL, IDEAL)
+
+
+def without_source(case: Case) -> tuple[Statement, ...]:
+    """Return the inputs without a source, in a record that gives sources for others."""
+    sources = {case.key(pointer) for pointer in case.record.sources}
+    if not sources:
+        return ()
+    return tuple(s for s in inputs(case) if case.key(s.pointer) not in sources and not _zero(s))
+
+
+def _zero(s: Statement) -> bool:
+    return s.quantity.value == 0.0 or s.term.name == "duration"
+
+
+def untraceable(case: Case, pointer: str) -> bool:
+    """Say whether no formula of the review leads to a quantity, whatever else were stated."""
+    name = pointer.rsplit("/", 1)[-1].replace("_", " ")
+    reason = case.why_not(pointer)
+    return (
+        reason == "it follows from no input"
+        or reason.startswith(f"{name} of ")
+        or reason == f"{name} is not stated"
+    )

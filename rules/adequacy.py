@@ -1,0 +1,327 @@
+"""Model adequacy: whether the model that the originator chose describes the substance where it is used."""
+
+from __future__ import annotations
+
+from collections.abc import Callable
+from itertools import pairwise
+from typing import Final
+
+from checker.case import Case, Raised, Unchecked, Yielded
+from checker.facts import adequacy
+from checker.facts.gaps import gaps_of
+from checker.facts.paths import followers
+from checker.facts.twins import is_gas, is_incompressible
+from checker.findings import Grade
+from checker.submission import Role
+from checker.vocabulary import Allowance
+from rules.rule import Rule, Scope
+from rules.state import report_gaps
+
+FAR: Final = 10.0
+"""So many allowances away, a gas is no ideal gas and the model must be changed (chosen)."""
+OWN_EQUATION: Final = "equation of state of the named fluid, as printed with the models of the record"
+
+
+def gas_state(case: Case, item: str) -> bool:
+    """Say whether a state belongs to a body that is modelled as an ideal gas."""
+    return is_gas(case, item.split("/")[1])
+
+
+def too_dense(case: Case, item: str) -> Yielded:
+    """Yield states of an ideal gas in which the real fluid's compressibility factor is not 1."""
+    state, body = item.split("/")
+    check = adequacy.gas_check(case, state, body)
+    if check is None:
+        yield _no_twin(case, item, body)
+    elif check.factor is not None:
+        off, allowed = abs(check.factor - 1.0), case.basis.allowances[Allowance.VALUE]
+        if off > allowed:
+            yield Raised(
+                f"{case.record.bodies[body].substance} has a compressibility factor of {check.factor:.4f} in state "
+                f"{state}; as an ideal gas its pressure, volume or mass is off by {100 * off:.1f} %.",
+                quantity=f"states/{item}",
+                place=case.record.body_states[state, body].place,
+                grade=Grade.DISCREPANCY if off > FAR * allowed else None,
+                suggestion="Use the model `real fluid`, or show that the results do not need this accuracy.",
+            )
+    elif not check.condensed:
+        yield Unchecked(f"ideal-gas-too-dense: states/{item}", "the real fluid has no value there")
+
+
+def condenses(case: Case, item: str) -> Yielded:
+    """Yield states of an ideal gas in which the real fluid is liquid."""
+    state, body = item.split("/")
+    check = adequacy.gas_check(case, state, body)
+    if check is None:
+        yield _no_twin(case, item, body)
+    elif check.condensed:
+        yield Raised(
+            f"{case.record.bodies[body].substance} is liquid at the temperature and pressure of state {state}, and is "
+            f"calculated as an ideal gas.",
+            quantity=f"states/{item}",
+            place=case.record.body_states[state, body].place,
+            suggestion="Use the model `real fluid`.",
+        )
+
+
+def _no_twin(case: Case, item: str, body: str) -> Unchecked:
+    name = case.record.bodies[body].substance
+    return Unchecked(
+        f"ideal gas: states/{item}", f"no equation of state is known for {name}, or the state is not"
+    )
+
+
+def constant_heat_process(case: Case, process: str) -> bool:
+    """Say whether a body of a process is calculated with a constant specific heat and has a better model."""
+    ctx = case.context(process)
+    return ctx is not None and any(
+        adequacy.has_constant_heat(case, body) and adequacy.better_heat(case, body) for body in ctx.bodies
+    )
+
+
+def heat_not_constant(case: Case, process: str) -> Yielded:
+    """Yield processes whose ΔU changes by more than the allowance when c follows the temperature."""
+    ctx = case.context(process)
+    assert ctx is not None
+    for body in ctx.bodies:
+        if not adequacy.has_constant_heat(case, body):
+            continue
+        check = adequacy.heat_check(case, process, body)
+        if check is None:
+            yield Unchecked(
+                f"specific heat of {body}, {process}", "its temperatures are not those of one phase"
+            )
+        elif abs(check.constant - check.better) > check.allowed:
+            pointer = f"processes/{process}/internal_energy_change"
+            values = [case.show(pointer, value) for value in (check.constant, check.better)]
+            yield Raised(
+                f"ΔU of {body} is {values[0]} with the constant specific heat and {values[1]} with that of "
+                f"{case.record.bodies[body].substance} ({check.model}) over the temperatures of the process.",
+                quantity=pointer,
+                place=case.record.bodies[body].place,
+                suggestion="Use a mean value for this span, or the model `ideal gas` or `real fluid`.",
+            )
+
+
+def constants_unlike(case: Case, body: str) -> Yielded:
+    """Yield stated constants that are not those of the named fluid."""
+    for check in adequacy.constants_of_substance(case, body):
+        for s in case.stated(check.pointer, Role.INPUT):
+            allowed = case.basis.allowances[Allowance.VALUE] * check.expected + s.quantity.half_width
+            if abs(s.value - check.expected) > allowed:
+                yield Raised(
+                    f"{s.term.name.replace('_', ' ')}: {s.quantity.text} is stated, and that of {check.source} is "
+                    f"{case.show(check.pointer, check.expected)}.",
+                    statement=s,
+                    suggestion="Check that the constant belongs to this substance.",
+                )
+
+
+def constants_contradict(case: Case, body: str) -> Yielded:
+    """Yield c_p, c_v, R and M of a gas of which one contradicts the others."""
+    for gap, costs in gaps_of(case, "constants-contradict"):
+        if gap.pointer == f"bodies/{body}":
+            yield _contradiction(case, body, f"{gap.reason[:1].upper()}{gap.reason[1:]}.", costs)
+            return
+    found = adequacy.gas_constants(case, body)
+    for first, other in pairwise(found):
+        allowed = case.basis.allowances[Allowance.VALUE] * abs(first.expected)
+        if abs(other.expected - first.expected) > allowed + adequacy.digits_of_constants(case, body):
+            pointer = f"bodies/{body}/gas_constant"
+            values = [case.show(pointer, check.expected) for check in (first, other)]
+            yield _contradiction(
+                case, body, f"{first.source} gives R = {values[0]}, and {other.source} gives {values[1]}."
+            )
+
+
+def _contradiction(case: Case, body: str, message: str, spoils: tuple[str, ...] = ()) -> Raised:
+    return Raised(
+        message,
+        quantity=f"bodies/{body}",
+        place=case.record.bodies[body].place,
+        spoils=spoils,
+        suggestion="Two of c_p, c_v and R define the gas: keep those and correct or drop the rest.",
+    )
+
+
+def asked_for_pressure(case: Case, item: str) -> Yielded:
+    """Yield a pressure claimed of a model that has none."""
+    pointer = f"states/{item}/pressure"
+    for s in case.stated(pointer, Role.RESULT):
+        if case.value(pointer) is None and case.failure(pointer) is None:
+            yield Raised(
+                f"pressure: {s.quantity.text} is claimed, and a liquid or solid of constant volume has the pressure "
+                f"that is put on it: the model cannot give one.",
+                statement=s,
+                suggestion="State the pressure as an input, or use the model `real fluid`.",
+            )
+
+
+def incompressible_state(case: Case, item: str) -> bool:
+    """Say whether a state belongs to a body without a pressure of its own."""
+    return is_incompressible(case, item.split("/")[1])
+
+
+def liquid_full(case: Case, process: str) -> Yielded:
+    """Yield liquids of constant volume that are heated in a vessel of constant volume."""
+    for body in followers(case, process, "constant volume"):
+        found = adequacy.blocked_in(case, process, body) if is_incompressible(case, body) else None
+        if found is not None:
+            pointer = f"states/{found.state}/{body}/pressure"
+            yield Raised(
+                f"{body} is warmed by {found.warming:.4g} K in a closed volume. Its model leaves the pressure out; "
+                f"{case.record.bodies[body].substance} itself would go to {case.show(pointer, found.pressure)}.",
+                quantity=f"processes/{process}",
+                place=next(p.place for p in case.record.processes if p.id == process),
+                suggestion="Use the model `real fluid`, or show the gas cushion or relief that takes the expansion.",
+            )
+
+
+def near_critical(case: Case, item: str) -> Yielded:
+    """Yield states close to the critical point."""
+    state, body = item.split("/")
+    if adequacy.near_critical(case, state, body):
+        yield Raised(
+            f"State {state} of {body} is close to the critical point, where density and specific heat react to the "
+            f"smallest change of temperature or pressure.",
+            quantity=f"states/{item}",
+            place=case.record.body_states[state, body].place,
+            suggestion="Show how much the result moves with temperature and pressure.",
+        )
+
+
+def on_process(kind: str) -> Callable[[Case, str], bool]:
+    """Return whether a process has a body on a path of this kind."""
+    return lambda case, process: bool(followers(case, process, kind))
+
+
+RULES: Final[tuple[Rule, ...]] = (
+    Rule(
+        "substance-unknown",
+        report_gaps(
+            "substance-unknown", "Use a name of the table, or state the constants of a simpler model."
+        ),
+        Scope.RECORD,
+        "model adequacy",
+        Grade.QUERY,
+        "A substance is not one whose properties are known.",
+        "Nothing of the body can be recomputed.",
+    ),
+    Rule(
+        "constants-missing",
+        report_gaps("constants-missing", "State the specific heat among the inputs of the body."),
+        Scope.RECORD,
+        "model adequacy",
+        Grade.QUERY,
+        "A model with constant specific heat has no constants to work with.",
+        "Nothing of the body can be recomputed; the review takes no constants of its own.",
+    ),
+    Rule(
+        "model-not-recomputed",
+        report_gaps(
+            "model-not-recomputed", "Have these results checked by hand, or describe the body otherwise."
+        ),
+        Scope.RECORD,
+        "model adequacy",
+        Grade.QUERY,
+        "A body has a model that this version does not recompute.",
+        "Its results are listed as not checked, so that nobody takes them for checked.",
+    ),
+    Rule(
+        "outside-range",
+        report_gaps("outside-range", "Use a model that holds there, and show its source."),
+        Scope.RECORD,
+        "model adequacy",
+        Grade.QUERY,
+        "A state lies outside the range of its equation of state.",
+        "An equation of state extrapolates without a warning, and its published uncertainty ends with its range.",
+        OWN_EQUATION,
+    ),
+    Rule(
+        "near-critical",
+        near_critical,
+        Scope.STATE,
+        "model adequacy",
+        Grade.REMARK,
+        "A state is close to the critical point.",
+        "Published uncertainties do not hold there, and the last digits of the inputs move the results.",
+        OWN_EQUATION,
+        needs=("temperature",),
+    ),
+    Rule(
+        "ideal-gas-too-dense",
+        too_dense,
+        Scope.STATE,
+        "model adequacy",
+        Grade.QUERY,
+        "A gas is calculated as ideal where its compressibility factor is off by more than the allowance.",
+        "Pressure, volume or mass are off by as much, and no result of the record shows it.",
+        OWN_EQUATION,
+        needs=("temperature", "pressure"),
+        when=gas_state,
+    ),
+    Rule(
+        "ideal-gas-condenses",
+        condenses,
+        Scope.STATE,
+        "model adequacy",
+        Grade.DISCREPANCY,
+        "A gas is calculated as ideal where the substance is liquid.",
+        "The energy of condensation is missing, which is larger than anything else in the balance.",
+        OWN_EQUATION,
+        needs=("temperature", "pressure"),
+        when=gas_state,
+    ),
+    Rule(
+        "constant-specific-heat-over-wide-span",
+        heat_not_constant,
+        Scope.PROCESS,
+        "model adequacy",
+        Grade.QUERY,
+        "The change of internal energy moves by more than the allowance when the specific heat follows temperature.",
+        "The record agrees with its own constant and not with the substance.",
+        OWN_EQUATION,
+        when=constant_heat_process,
+    ),
+    Rule(
+        "constants-unlike-substance",
+        constants_unlike,
+        Scope.BODY,
+        "model adequacy",
+        Grade.QUERY,
+        "A stated gas constant or molar mass is not that of the named substance.",
+        "A constant of another gas goes into the mass and into every energy.",
+        OWN_EQUATION,
+    ),
+    Rule(
+        "constants-contradict",
+        constants_contradict,
+        Scope.BODY,
+        "model adequacy",
+        Grade.DISCREPANCY,
+        "c_p, c_v, gas constant and molar mass of a gas contradict each other.",
+        "Results depend on which of them was used where.",
+        "c_p − c_v = R of an ideal gas; R from CODATA 2018",
+    ),
+    Rule(
+        "incompressible-asked-for-pressure",
+        asked_for_pressure,
+        Scope.STATE,
+        "model adequacy",
+        Grade.DISCREPANCY,
+        "A pressure is claimed as a result of a model of constant volume.",
+        "Such a model has no pressure of its own; the number comes from somewhere else.",
+        when=incompressible_state,
+    ),
+    Rule(
+        "liquid-full-at-constant-volume",
+        liquid_full,
+        Scope.PROCESS,
+        "model adequacy",
+        Grade.QUERY,
+        "A liquid of constant volume is warmed in a closed volume.",
+        "A blocked-in liquid builds up some bar for every kelvin; the model cannot show it.",
+        "thermal expansion of blocked-in liquids, API Standard 521 (from memory)",
+        when=on_process("constant volume"),
+    ),
+)

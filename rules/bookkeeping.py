@@ -1,0 +1,235 @@
+"""Bookkeeping: whether a record can be followed, identified and signed."""
+
+from __future__ import annotations
+
+from collections import defaultdict
+from typing import Final
+
+from checker.case import Case, Raised, Yielded
+from checker.facts.gaps import unexplained
+from checker.facts.stated import is_wrong
+from checker.facts.use import inputs, untraceable, unused_inputs, without_source
+from checker.findings import Grade, Outcome
+from checker.submission import Role, Statement, Submission
+from rules.rule import Rule, Scope
+from rules.state import report_gaps
+
+COARSE: Final = 2.0
+"""Stated digits whose half-width is more than this many allowances check nothing (chosen)."""
+INDEPENDENT: Final = (
+    "ISO 9001:2015, 8.3.4 (design verification), read as: by someone else than the originator"
+)
+
+
+def not_identified(submission: Submission) -> Yielded:
+    """Yield a package without number or revision."""
+    lacking = [name for name in ("number", "revision") if not getattr(submission.head, name)]
+    if lacking:
+        yield Raised(
+            f"The package has no {' and no '.join(lacking)}.",
+            quantity="package",
+            place=("package",),
+            suggestion="State them in the header, so that a review can be filed with what it reviewed.",
+        )
+
+
+def checks_itself(submission: Submission) -> Yielded:
+    """Yield a package whose originator is to check it."""
+    head = submission.head
+    if head.originator and " ".join(head.originator.casefold().split()) == " ".join(
+        head.checker.casefold().split()
+    ):
+        yield Raised(
+            f"Originator and checker are the same: {head.originator}.",
+            quantity="package",
+            place=("package", "checker"),
+            suggestion="Name somebody else as the checker.",
+        )
+
+
+def without_result(case: Case) -> Yielded:
+    """Yield records that claim nothing."""
+    claims = any(s.role is Role.RESULT for s in case.record.statements)
+    words = any(found.claimed_phase for found in case.record.body_states.values())
+    if not claims and not words:
+        yield Raised(
+            "The record claims no result, so there is nothing to check.",
+            quantity=f"records/{case.record.id}",
+            place=case.record.place,
+            suggestion="State the results that the next calculation uses, under `results`.",
+        )
+
+
+def not_traceable(case: Case) -> Yielded:
+    """Yield results to which no formula of the review leads."""
+    for c in unexplained(case):
+        if untraceable(case, c.statement.pointer):
+            yield Raised(
+                f"{c.statement.term.name.replace('_', ' ')}: {c.statement.quantity.text} is stated as a result, and no "
+                f"formula leads to it from the inputs of this record.",
+                compared=c,
+                suggestion="State it as an input with its source, or show what it follows from.",
+            )
+
+
+def stated_twice(case: Case) -> Yielded:
+    """Yield quantities that are stated in two places with different values."""
+    by_key: dict[tuple[str, Role], list[Statement]] = defaultdict(list)
+    for s in case.record.statements:
+        if s.usable:
+            by_key[case.key(s.pointer), s.role].append(s)
+    for statements in by_key.values():
+        first = statements[0]
+        for other in statements[1:]:
+            apart = abs(other.value - first.value)
+            slack = other.quantity.half_width + first.quantity.half_width
+            if apart > slack * (1.0 + 1e-9) and not is_wrong(case, first.pointer):
+                yield Raised(
+                    f"{first.quantity.text} ({first.pointer}) and {other.quantity.text} ({other.pointer}) are stated "
+                    f"for one quantity.",
+                    statement=other,
+                    suggestion="Keep one of the two, or correct the one that is wrong.",
+                )
+
+
+def input_unused(case: Case) -> Yielded:
+    """Yield inputs that have no part in any result."""
+    for s in unused_inputs(case):
+        yield Raised(
+            f"{s.term.name.replace('_', ' ')}: {s.quantity.text} is an input, and no result depends on it.",
+            statement=s,
+            suggestion="Drop it, or correct the model or the name if it was meant to count.",
+        )
+
+
+def source_missing(case: Case) -> Yielded:
+    """Yield, once per record, the inputs without a source where others have one."""
+    lacking = without_source(case)
+    if lacking:
+        names = ", ".join(s.pointer for s in lacking[:6]) + (", …" if len(lacking) > 6 else "")
+        yield Raised(
+            f"The record gives sources for its inputs, and none for {names}.",
+            statement=lacking[0],
+            suggestion="Add the sources, or say that the value is chosen.",
+        )
+
+
+def too_few_digits(case: Case) -> Yielded:
+    """Yield results that agree, written so coarsely that agreement says little."""
+    for c in case.compared:
+        half_width = c.statement.quantity.half_width
+        written_out = c.statement.quantity.value != 0.0
+        if c.outcome is Outcome.AGREES and written_out and half_width > COARSE * c.allowance * (1.0 + 1e-9):
+            digit = case.show_difference(c.statement.pointer, 2.0 * half_width)
+            allowed = case.show_difference(c.statement.pointer, c.allowance)
+            yield Raised(
+                f"{c.statement.quantity.text} is written to the next {digit}, and {allowed} is tolerated: that it "
+                f"agrees says little.",
+                statement=c.statement,
+                suggestion="State one or two more digits.",
+            )
+
+
+def has_inputs(case: Case, _: str) -> bool:
+    """Say whether a record starts from anything."""
+    return any(True for _ in inputs(case))
+
+
+RULES: Final[tuple[Rule, ...]] = (
+    Rule(
+        "package-not-identified",
+        not_identified,
+        Scope.PACKAGE,
+        "bookkeeping",
+        Grade.QUERY,
+        "A package has no number or no revision.",
+        "A review is of one revision of one document; without them nobody can say of which.",
+        "ISO 9001:2015, 7.5.2 (identification of documented information)",
+    ),
+    Rule(
+        "checker-is-originator",
+        checks_itself,
+        Scope.PACKAGE,
+        "bookkeeping",
+        Grade.QUERY,
+        "The originator of a package is named as its checker.",
+        "A calculation is checked by somebody who did not make it.",
+        INDEPENDENT,
+    ),
+    Rule(
+        "record-without-result",
+        without_result,
+        Scope.RECORD,
+        "bookkeeping",
+        Grade.QUERY,
+        "A record claims no result.",
+        "A record in which nothing can be wrong would be accepted without a check.",
+    ),
+    Rule(
+        "result-not-traceable",
+        not_traceable,
+        Scope.RECORD,
+        "bookkeeping",
+        Grade.QUERY,
+        "A result follows from nothing in the record.",
+        "Nobody can repeat it, now or after the next change.",
+    ),
+    Rule(
+        "stated-twice",
+        stated_twice,
+        Scope.RECORD,
+        "bookkeeping",
+        Grade.DISCREPANCY,
+        "One quantity is stated in two places with different values.",
+        "It depends on the reader which of them goes into the next calculation.",
+    ),
+    Rule(
+        "input-unused",
+        input_unused,
+        Scope.RECORD,
+        "bookkeeping",
+        Grade.REMARK,
+        "An input has no part in any result.",
+        "The originator may think that it counts.",
+        when=has_inputs,
+    ),
+    Rule(
+        "source-missing",
+        source_missing,
+        Scope.RECORD,
+        "bookkeeping",
+        Grade.REMARK,
+        "A record gives sources for some inputs and not for all.",
+        "An input without a source cannot be checked against anything.",
+        "ISO 9001:2015, 8.3.3 (design inputs)",
+        when=has_inputs,
+    ),
+    Rule(
+        "too-few-digits",
+        too_few_digits,
+        Scope.RECORD,
+        "bookkeeping",
+        Grade.REMARK,
+        "A result is written with so few digits that its agreement says little.",
+        "A wrong value would round to the same text.",
+        "half-width of the last digit, GUM (JCGM 100:2008), 4.3.7",
+    ),
+    Rule(
+        "several-bodies-not-closed",
+        report_gaps("several-bodies-not-closed", "Have the balance of this process checked by hand."),
+        Scope.RECORD,
+        "bookkeeping",
+        Grade.QUERY,
+        "A process has several bodies, whose common balance this version does not recompute.",
+        "What is not recomputed is said to be so, never passed over.",
+    ),
+    Rule(
+        "sequence-not-recomputed",
+        report_gaps("sequence-not-recomputed", "Have the balance of this sequence checked by hand."),
+        Scope.RECORD,
+        "bookkeeping",
+        Grade.QUERY,
+        "A balance over several processes starts from inputs of its own, which this version does not recompute.",
+        "What is not recomputed is said to be so, never passed over.",
+    ),
+)

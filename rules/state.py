@@ -1,0 +1,158 @@
+"""States: whether the inputs fix them, and whether the claimed phase is theirs."""
+
+from __future__ import annotations
+
+from collections.abc import Callable
+from typing import Final
+
+from checker.case import Case, Raised, Unchecked, Yielded
+from checker.facts.gaps import gaps_of
+from checker.facts.phases import claims_of, possible_phases
+from checker.facts.stated import is_wrong
+from checker.findings import Grade
+from rules.rule import Rule, RuleFunction, Scope
+
+PHASE_RULE: Final = (
+    "IAPWS R6-95(2018), IAPWS R7-97(2012): saturation line and regions of water; alike for other fluids"
+)
+
+
+def report_gaps(rule: str, suggestion: str) -> RuleFunction:
+    """Return the rule that reports the gaps of its name, each with the results that it costs.
+
+    ``suggestion`` says what the originator can do.
+    """
+
+    def gap_found(case: Case) -> Yielded:
+        for gap, costs in gaps_of(case, rule):
+            yield Raised(
+                f"{gap.reason[:1].upper()}{gap.reason[1:]}.",
+                quantity=gap.pointer,
+                place=gap.place,
+                spoils=costs,
+                suggestion=suggestion,
+            )
+
+    return gap_found
+
+
+def report_costly_gaps(rule: str, suggestion: str) -> RuleFunction:
+    """Return the rule that reports the gaps of its name that cost a stated result."""
+    every: Callable[[Case], Yielded] = report_gaps(rule, suggestion)
+
+    def costly_gap_found(case: Case) -> Yielded:
+        return (found for found in every(case) if isinstance(found, Unchecked) or found.spoils)
+
+    return costly_gap_found
+
+
+def phase_disagrees(case: Case, item: str) -> Yielded:
+    """Yield a stated phase that the state does not have, within the allowance of its temperature or quality."""
+    state, body = item.split("/")
+    for claim in claims_of(case, state, body):
+        possible = possible_phases(case, state, body)
+        if possible is None:
+            yield Unchecked(f"phase of {item}", "the model has no phases, or the state is not known")
+        elif claim.phase not in possible:
+            yield Raised(
+                f"phase: {claim.phase} is stated; recomputed it is {possible[0]}.",
+                quantity=f"states/{item}/phase",
+                place=claim.place,
+                suggestion="Take the properties from the region in which the state lies.",
+            )
+
+
+def has_phase_claim(case: Case, item: str) -> bool:
+    """Say whether a phase is stated for a body in a state."""
+    state, body = item.split("/")
+    return bool(claims_of(case, state, body))
+
+
+def quality_outside_range(case: Case, item: str) -> Yielded:
+    """Yield a quality below 0 or above 1."""
+    pointer = f"states/{item}/quality"
+    for s in case.stated(pointer):
+        if not 0.0 <= s.value <= 1.0 and not is_wrong(case, pointer):
+            yield Raised(
+                f"quality: {s.quantity.text} is not between 0 and 1.",
+                statement=s,
+                suggestion="Superheated vapour and subcooled liquid have no quality: state two other properties.",
+            )
+
+
+RULES: Final[tuple[Rule, ...]] = (
+    Rule(
+        "state-undetermined",
+        report_gaps(
+            "state-undetermined", "State one more independent property, or the path that leads there."
+        ),
+        Scope.RECORD,
+        "state",
+        Grade.QUERY,
+        "The inputs do not fix a state.",
+        "Two independent properties fix a state of a fixed mass of a pure substance; with fewer, any result "
+        "follows from something that is not shown.",
+        "state postulate of a simple compressible substance",
+    ),
+    Rule(
+        "state-impossible",
+        report_gaps("state-impossible", "Check number and unit of both properties."),
+        Scope.RECORD,
+        "state",
+        Grade.QUERY,
+        "No state of the substance has the stated properties.",
+        "At least one of the two is not that of this substance.",
+    ),
+    Rule(
+        "several-states-possible",
+        report_gaps("several-states-possible", "State the phase, or a property that tells the states apart."),
+        Scope.RECORD,
+        "state",
+        Grade.QUERY,
+        "More than one state has the stated properties.",
+        "The review lists them all and takes none: only the originator knows which was meant.",
+    ),
+    Rule(
+        "near-saturation",
+        report_gaps("near-saturation", "State phase, quality, specific volume or internal energy."),
+        Scope.RECORD,
+        "state",
+        Grade.QUERY,
+        "Temperature and pressure, with their digits, reach across the saturation line.",
+        "Liquid and vapour at one temperature and pressure differ by the whole energy of evaporation.",
+        PHASE_RULE,
+    ),
+    Rule(
+        "two-phase-from-temperature-and-pressure",
+        report_gaps(
+            "two-phase-from-temperature-and-pressure",
+            "Move the quality (or v or u) to the inputs; temperature and pressure are one property here.",
+        ),
+        Scope.RECORD,
+        "state",
+        Grade.QUERY,
+        "A wet vapour is claimed from temperature and pressure alone.",
+        "In the two-phase region pressure follows from temperature, so the quality comes from somewhere else.",
+        "phase rule: a pure substance in two phases has one free intensive property",
+    ),
+    Rule(
+        "phase-disagrees",
+        phase_disagrees,
+        Scope.STATE,
+        "state",
+        Grade.DISCREPANCY,
+        "The stated phase is not the one that the state has.",
+        "Properties were read from the wrong region, or the inputs are not those of the state that was meant.",
+        PHASE_RULE,
+        when=has_phase_claim,
+    ),
+    Rule(
+        "quality-outside-range",
+        quality_outside_range,
+        Scope.STATE,
+        "state",
+        Grade.DISCREPANCY,
+        "A quality is below 0 or above 1.",
+        "A quality computed outside 0 to 1 says that the state is not wet; properties formed with it are wrong.",
+    ),
+)
