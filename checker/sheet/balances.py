@@ -21,8 +21,8 @@ STANDARD_GRAVITY: Final = 9.80665
 
 
 def total(*values: float) -> tuple[float]:
-    """Return the sum."""
-    return (sum(values),)
+    """Return the sum (of nothing: zero)."""
+    return (sum(values, 0.0),)
 
 
 def zero() -> tuple[float]:
@@ -168,58 +168,44 @@ def item_entropy_step(process: Process, item: str, energy: str) -> Step:
     )
 
 
-def item_entropy_at_system_step(process: Process, item: str, energy: str, body: str) -> Step:
-    """Return ∫δQ/T where heat crosses at the system's own, constant temperature.
+def item_entropy_at_system_step(
+    process: Process, item: str, energy: str, body: str, quasi_static: bool
+) -> Step:
+    """Return ∫δQ/T where heat crosses at the system's own temperature.
 
-    Where the temperature changes the integral equals ΔS, if this is the only transfer besides quasi-static
-    boundary work; the caller offers that step first.
+    It equals ΔS where this is the only transfer besides quasi-static boundary work (``quasi_static``), and Q/T
+    where the temperature does not change; else it depends on when how much heat crosses, which nobody states.
     """
     base = f"processes/{process.id}/heat_transfers/{item}"
     ends = (
         state_key(process.from_state, body, "temperature"),
         state_key(process.to_state, body, "temperature"),
     )
-
-    def at_system(heat: float, first: float, last: float) -> tuple[float]:
-        if heat == 0.0:
-            return (0.0,)
-        if abs(first - last) > 1e-6 * first:
-            raise NotEvaluable(
-                "the system's temperature changes, and how the heat is spread over it is not stated"
-            )
-        return (heat / first,)
-
+    alone = ("entropy_change", "shaft_work", "electrical_work") if quasi_static else ()
     return Step(
         f"Entropy with heat transfer {item}, {process.id}",
         (f"{base}/item_entropy",),
-        (energy, *ends),
-        at_system,
-        "∫δQ/T = Q_k/T, T constant",
-        "{0}/{1}",
+        (energy, *ends, *(process_key(process.id, name) for name in alone)),
+        _at_system,
+        "∫δQ/T = ΔS (heat at the system's temperature, quasi-static; Q_k/T with other work, T constant)"
+        if quasi_static
+        else "∫δQ/T = Q_k/T, T constant",
+        "" if quasi_static else "{0}/{1}",
     )
 
 
-def item_entropy_internally_reversible_step(process: Process, item: str) -> Step:
-    """Return ∫δQ/T = ΔS: one heat transfer at the system's temperature and quasi-static boundary work only."""
-    base = f"processes/{process.id}/heat_transfers/{item}"
-    return Step(
-        f"Entropy with heat transfer {item}, {process.id}",
-        (f"{base}/item_entropy",),
-        (
-            process_key(process.id, "entropy_change"),
-            process_key(process.id, "shaft_work"),
-            process_key(process.id, "electrical_work"),
-        ),
-        _only_if_no_other_work,
-        "∫δQ/T = ΔS (heat at the system's temperature, quasi-static, no other work)",
-        "{0}",
-    )
-
-
-def _only_if_no_other_work(change: float, shaft: float, electrical: float) -> tuple[float]:
-    if shaft != 0.0 or electrical != 0.0:
-        raise NotEvaluable("with other work the heat's share at each temperature of the system is not stated")
-    return (change,)
+def _at_system(
+    heat: float, first: float, last: float, change: float | None = None, *other_works: float
+) -> tuple[float]:
+    if change is not None and not any(other_works):
+        return (change,)
+    if heat == 0.0:
+        return (0.0,)
+    if abs(first - last) > 1e-6 * first:
+        raise NotEvaluable(
+            "the system's temperature changes, and how the heat is spread over it is not stated"
+        )
+    return (heat / first,)
 
 
 def _per_temperature(heat: float, temperature: float) -> tuple[float]:
@@ -301,8 +287,27 @@ def entropy_steps(process: Process, items: Sequence[str]) -> Iterator[Step]:
         )
 
 
+def exergy_change_step(process: Process) -> Step:
+    """Return ΔX = ΔE + p₀·ΔV − T₀·ΔS, which needs the end states and the surroundings only."""
+    p = process.id
+    return Step(
+        f"Exergy change, {p}",
+        (process_key(p, "exergy_change"),),
+        (
+            process_key(p, "energy_change"),
+            given("surroundings/pressure"),
+            process_key(p, "volume_change"),
+            given("surroundings/temperature"),
+            process_key(p, "entropy_change"),
+        ),
+        lambda e, p0, dv, t0, ds: (e + p0 * dv - t0 * ds,),
+        "ΔX = ΔE + p₀·ΔV − T₀·ΔS",
+        "{0} + {1}·{2} − {3}·{4}",
+    )
+
+
 def exergy_steps(process: Process, items: Sequence[tuple[str, str]], generation: str) -> Iterator[Step]:
-    """Yield exergy change, transfer and destruction.
+    """Yield exergy transfer and destruction.
 
     ``items`` pairs the energy and the entropy key of each heat transfer; ``generation`` names the entropy
     generation that the destruction belongs to.
@@ -310,14 +315,6 @@ def exergy_steps(process: Process, items: Sequence[tuple[str, str]], generation:
     p = process.id
     ambient, atmosphere = given("surroundings/temperature"), given("surroundings/pressure")
     volume = process_key(p, "volume_change")
-    yield Step(
-        f"Exergy change, {p}",
-        (process_key(p, "exergy_change"),),
-        (process_key(p, "energy_change"), atmosphere, volume, ambient, process_key(p, "entropy_change")),
-        lambda e, p0, dv, t0, ds: (e + p0 * dv - t0 * ds,),
-        "ΔX = ΔE + p₀·ΔV − T₀·ΔS",
-        "{0} + {1}·{2} − {3}·{4}",
-    )
     yield Step(
         f"Exergy transfer, {p}",
         (process_key(p, "exergy_transfer"),),

@@ -51,14 +51,14 @@ def cycle_steps(record: Record, contexts: Sequence[ProcessContext]) -> Iterator[
         "Heat supplied",
         ("results/heat_supplied",),
         heats,
-        lambda *q: (sum(x for x in q if x > 0.0),),
+        lambda *q: (sum((x for x in q if x > 0.0), 0.0),),
         "Q_in = ΣQ_k, Q_k > 0",
     )
     yield Step(
         "Heat rejected",
         ("results/heat_rejected",),
         heats,
-        lambda *q: (-sum(x for x in q if x < 0.0),),
+        lambda *q: (sum((-x for x in q if x < 0.0), 0.0),),
         "Q_out = −ΣQ_k, Q_k < 0",
     )
     yield Step(

@@ -65,6 +65,7 @@ def _body_changes(ctx: ProcessContext, body: str, substance: Substance | None) -
 
 
 def _single_body_steps(ctx: ProcessContext, body: str) -> Iterator[Step]:
+    yield balances.exergy_change_step(ctx.process)
     yield from _exponent_steps(ctx, body)
     yield from heat_candidates(ctx)
     yield from work_candidates(ctx)
@@ -179,9 +180,8 @@ def _item_entropy(ctx: ProcessContext, body: str, item: HeatTransfer) -> Iterato
         quasi_static = any(path.quasi_static for path in ctx.paths_of(body)) or ctx.boundary_work_is_zero(
             body
         )
-        if quasi_static and len(process.heat_transfers or ()) == 1:
-            yield balances.item_entropy_internally_reversible_step(process, item.id)
-        yield balances.item_entropy_at_system_step(process, item.id, energy, body)
+        alone = quasi_static and len(process.heat_transfers or ()) == 1
+        yield balances.item_entropy_at_system_step(process, item.id, energy, body, alone)
         boundary: tuple[str, ...] = ends
     else:
         yield balances.item_entropy_step(process, item.id, energy)
