@@ -51,13 +51,17 @@ _ADVICE: Final[tuple[tuple[str, str], ...]] = (
 
 
 class _Token(NamedTuple):
+    """A token with its kind and where it stands."""
+
     kind: str
     text: str
     start: int
     end: int
 
 
-class _Broken(Exception):  # noqa: N818 - ends reading; carries the problem
+class _Broken(Exception):  # noqa: N818 - an outcome of reading
+    """Ends reading; carries the problem."""
+
     def __init__(self, problem: Problem) -> None:
         super().__init__(problem.message)
         self.problem = problem
@@ -98,6 +102,7 @@ class _Reader:
             self._take(token)
 
     def _token(self, at: int) -> _Token:
+        """Return the token at an offset, or raise where there is none."""
         match = _TOKEN.match(self.text, at)
         if match is not None and match.lastgroup is not None:
             return _Token(match.lastgroup, match[match.lastgroup], match.start(match.lastgroup), match.end())
@@ -121,6 +126,7 @@ class _Reader:
             raise self._broken(token.start)
 
     def _bracket(self, token: _Token) -> None:
+        """Open or close a mapping or a list."""
         opens = token.text in "{["
         if opens and self.expected in _VALUES:
             self.open.append(token.text)
@@ -139,6 +145,7 @@ class _Reader:
         return bool(self.open) and self.open[-1] == kind and self.expected in (first, _NEXT)
 
     def _mark(self, token: _Token) -> None:
+        """Take a colon or a comma."""
         if token.text == ":" and self.expected is _COLON:
             self.expected = _VALUE
         elif token.text == "," and self.expected is _NEXT:
@@ -147,9 +154,11 @@ class _Reader:
             raise self._broken(token.start)
 
     def _after_value(self) -> None:
+        """Expect what may follow a value."""
         self.expected = _NEXT if self.open else _END
 
     def _scalar(self, token: _Token) -> None:
+        """Hand a text, number or word on as it is written."""
         position = self.lines.position(token.start)
         text = token.text
         if token.kind == "string":

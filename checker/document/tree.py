@@ -62,11 +62,6 @@ class TreeBuilder:
         self._count = 0
 
     @property
-    def depth(self) -> int:
-        """How many mappings and lists are open, those left out included."""
-        return len(self._stack) + self._skipped
-
-    @property
     def place(self) -> Place:
         """Where the next value will stand; where a key comes next, the mapping itself."""
         return tuple(frame.part for frame in self._stack if not frame.wants_key)
@@ -147,6 +142,7 @@ class TreeBuilder:
             self._deliver(None)
 
     def _counted(self) -> None:
+        """Count a key or value; end the walk over a file with too many."""
         self._count += 1
         if self._count > MAX_NODES:
             raise GivenUp(f"The file has more than {MAX_NODES} keys and values.")
@@ -209,6 +205,7 @@ class TreeBuilder:
         )
 
     def _add(self, problem: Problem) -> None:
+        """Keep a problem; end the walk over a file with too many."""
         if len(self.problems) >= MAX_PROBLEMS:
             raise GivenUp(f"The file has more than {MAX_PROBLEMS} repeated keys, aliases and the like.")
         self.problems.append(problem)

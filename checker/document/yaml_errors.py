@@ -83,11 +83,13 @@ def explain(error: yaml.YAMLError, text: str) -> Problem:
 
 
 def _line(text: str, number: int) -> str:
+    """Return one line of a text, counted from 0."""
     lines = text.splitlines()
     return lines[number] if number < len(lines) else ""
 
 
 def _problem(message: str, suggestion: str, mark: yaml.Mark | None, kind: str = "syntax-broken") -> Problem:
+    """Return a fatal problem at a mark of the parser."""
     where = Position(1, 1) if mark is None else Position(mark.line + 1, mark.column + 1)
     return Problem(kind, (), message, line=where.line, column=where.column, suggestion=suggestion,
                    fatal=True)  # fmt: skip

@@ -75,11 +75,13 @@ def _node(event: yaml.NodeEvent, builder: TreeBuilder) -> None:
 
 
 def _position(event: yaml.Event) -> Position:
+    """Return where an event starts, from 1."""
     mark = event.start_mark
     return Position(1, 1) if mark is None else Position(mark.line + 1, mark.column + 1)
 
 
 def _second_document(position: Position) -> Problem:
+    """Return the problem of a file that goes on after its document."""
     return Problem(
         "syntax-broken",
         (),

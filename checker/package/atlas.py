@@ -40,7 +40,8 @@ def atlas_of(record: Record) -> Branch:
     bodies = tuple(record.bodies)
     return {
         "bodies": dict.fromkeys(bodies, TERMS[Level.BODY]),
-        "states": {s: dict.fromkeys(state.bodies, TERMS[Level.STATE]) for s, state in record.states.items()},
+        # A body that a state does not mention is there all the same, with nothing stated about it.
+        "states": {state: dict.fromkeys(bodies, TERMS[Level.STATE]) for state in record.states},
         "processes": {process.id: _of_process(process, bodies) for process in record.processes},
         "sequences": {sequence.id: TERMS[Level.SEQUENCE] for sequence in record.sequences},
         "assumptions": {a.id: TERMS[Level.ASSUMPTION] for a in record.assumptions if a is not None},

@@ -7,62 +7,20 @@ from dataclasses import dataclass
 from typing import Final
 
 from checker.package.dimensions import as_total, is_rate_of, wrong_unit
-from checker.package.layout import LEVEL_WORDS, belongs
-from checker.package.nearest import nearest, perhaps, shortened, without_value
+from checker.package.examples import example_of
+from checker.package.layout import LEVEL_WORDS
+from checker.package.nearest import shortened
 from checker.package.notebook import Notebook
+from checker.package.spot import Spot, WordStated
 from checker.problems import Place
 from checker.quantity import dimensions as dim
 from checker.quantity import parse_quantity
 from checker.quantity.types import Quantity, QuantityError
 from checker.submission import Role, Statement
-from checker.vocabulary import TERMS, Level, Term, canonical
+from checker.vocabulary import TERMS, Term, canonical
 
 _WORK_ITEM: Final = frozenset({"energy", "mean_power"})
 """Names of a work transfer that follow its direction, or the work convention."""
-
-
-@dataclass(frozen=True, slots=True)
-class Spot:
-    """Where a mapping of names stands, and how its signs and rates are read.
-
-    Attributes
-    ----------
-    level : Level
-        Level of the vocabulary.
-    prefix : str
-        Pointer of what the quantities belong to, such as ``states/hot/nitrogen``.
-    place : Place
-        Place of the part that holds ``inputs`` and ``results``, from the record.
-    names : tuple of str or None
-        Whole-word names that may stand there; None: all of the level.
-    duration : Quantity or None
-        What makes a rate a total.
-    work : bool
-        A work transfer.
-    direction : str or None
-        Its direction, if stated.
-    """
-
-    level: Level
-    prefix: str
-    place: Place
-    names: tuple[str, ...] | None = None
-    duration: Quantity | None = None
-    work: bool = False
-    direction: str | None = None
-
-    @property
-    def allowed(self) -> tuple[str, ...]:
-        """The whole-word names that may stand there."""
-        return tuple(TERMS[self.level]) if self.names is None else self.names
-
-
-@dataclass(frozen=True, slots=True)
-class WordStated:
-    """A word stated among quantities, such as a phase."""
-
-    text: str
-    place: Place
 
 
 @dataclass(frozen=True, slots=True)
@@ -127,19 +85,8 @@ class Desk:
     ) -> tuple[Quantity, bool] | None:
         """Return a quantity and whether its unit is right; None where the text cannot be read."""
         say = self.notebook.say
-        if not isinstance(text, str):
-            shape = "a list" if isinstance(text, list | tuple) else "a mapping"
-            message = f"`{term.name}` is one text, such as {term.unit and '12 '}{term.unit}, and not {shape}."
-            say("type-wrong", place, message, "Write number and unit as one text.", quantity=pointer)
-            return None
-        try:
-            quantity = parse_quantity(
-                text, expected=term.dimension, scale=term.scale, atmosphere=self.atmosphere
-            )
-        except QuantityError as error:
-            suggestion = f"Perhaps `{error.suggestion}`?" if error.suggestion else ""
-            message = f"`{shortened(text, 40)}`: {error.message}."
-            say(error.kind, place, message, suggestion, quantity=pointer, offset=error.offset)
+        quantity = self._parsed(text, term, place, pointer)
+        if quantity is None:
             return None
         if duration is not None and is_rate_of(quantity.dimension, term.dimension):
             quantity = as_total(quantity, duration)
@@ -147,13 +94,26 @@ class Desk:
             say("notation-read-as", place, f"{note}.", quantity=pointer)
         wrong = wrong_unit(quantity, term)
         if wrong is not None:
-            at = (
-                len(text) - len(quantity.unit.text)
-                if quantity.unit.text and text.endswith(quantity.unit.text)
-                else 0
-            )
-            say(wrong.kind, place, wrong.message, wrong.suggestion, quantity=pointer, offset=at)
+            at = quantity.text.rfind(quantity.unit.text)
+            say(wrong.kind, place, wrong.message, wrong.suggestion, quantity=pointer, offset=max(0, at))
         return quantity, wrong is None
+
+    def _parsed(self, text: object, term: Term, place: Place, pointer: str) -> Quantity | None:
+        """Return the quantity that a text is, of whatever kind; None where it is none."""
+        say = self.notebook.say
+        if not isinstance(text, str):
+            shape = "a list" if isinstance(text, list | tuple) else "a mapping"
+            message = f"`{term.name}` is one text, such as {example_of(term)}, and not {shape}."
+            say("type-wrong", place, message, "Write number and unit as one text.", quantity=pointer)
+            return None
+        expected, scale = term.dimension, term.scale
+        try:
+            return parse_quantity(text, expected=expected, scale=scale, atmosphere=self.atmosphere)
+        except QuantityError as error:
+            suggestion = f"Perhaps `{error.suggestion}`?" if error.suggestion else ""
+            message = f"`{shortened(text, 40)}`: {error.message}."
+            say(error.kind, place, message, suggestion, quantity=pointer, offset=error.offset)
+            return None
 
     def duration(self, *mappings: Mapping[str, object]) -> Quantity | None:
         """Return the duration that the first of some inputs states, where it can be read."""
@@ -173,21 +133,17 @@ class Desk:
 
     def unknown(self, spot: Spot, written: str, value: object, place: Place) -> None:
         """Note a name that may not stand at a spot."""
-        part, allowed = LEVEL_WORDS[spot.level], spot.allowed
-        elsewhere = belongs(written, but=spot.level) if len(written) > 1 else ""
-        suggestion = elsewhere or perhaps(nearest(written, allowed)) or belongs(written, but=spot.level)
-        if value is None and not suggestion:
-            suggestion = without_value(written)
         self.notebook.say(
             "name-unknown",
             place,
-            f"`{shortened(written, 40)}` is not a quantity that {part} may state here.",
-            suggestion or f"Known here: {', '.join(allowed) or 'none'}.",
+            f"`{shortened(written, 40)}` is not a quantity that {LEVEL_WORDS[spot.level]} may state here.",
+            lambda: spot.meant(written, value),
             at_key=True,
             quantity=f"{spot.prefix}/{shortened(written, 40)}",
         )
 
     def _repeated(self, spot: Spot, first: str, written: str, name: str, place: Place) -> None:
+        """Note a name that stands twice in one mapping, once as its symbol."""
         self.notebook.say(
             "name-repeated",
             place,

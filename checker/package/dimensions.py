@@ -6,6 +6,7 @@ from dataclasses import dataclass, replace
 from typing import Final
 
 from checker.package.examples import example_of, units_of
+from checker.package.nearest import shortened
 from checker.quantity import dimensions as dim
 from checker.quantity.dimensions import Dimension
 from checker.quantity.types import Quantity
@@ -16,6 +17,26 @@ _SPECIFIC: Final = (dim.SPECIFIC_ENERGY, dim.SPECIFIC_ENTROPY, dim.SPECIFIC_VOLU
 _MOLAR: Final = (dim.MOLAR_ENERGY, dim.MOLAR_ENTROPY, dim.MOLAR_VOLUME)
 _TIMED: Final = (dim.ENERGY, dim.ENTROPY, dim.SPECIFIC_ENERGY, dim.SPECIFIC_ENTROPY)
 """Quantities of which a rate is something that people write in their place."""
+
+_WORDS: Final[dict[str, tuple[str, str]]] = {
+    "rate-for-total": (
+        "`{text}` is a rate ({unit}), and {name} is a total.",
+        "State the total, {example}, or give the `duration` under `inputs`.",
+    ),
+    "specific-for-total": (
+        "`{text}` is per unit {per} ({unit}), and {name} is that of the whole body.",
+        "Multiply by the {per} and state the total, {example}.",
+    ),
+    "total-for-specific": (
+        "`{text}` is a total ({unit}), and {name} is per unit mass.",
+        "Divide by the mass and state it per kilogram, {example}.",
+    ),
+    "dimension-wrong": (
+        "`{text}` has the unit of another kind of quantity ({unit}); {name} is stated in {units}.",
+        "Write it {example}.",
+    ),
+}
+"""Kind → message and suggestion."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -33,6 +54,7 @@ def is_rate_of(got: Dimension, expected: Dimension) -> bool:
 
 
 def _per_time(dimension: Dimension) -> Dimension:
+    """Return the dimension of a rate."""
     length, mass, time, temperature, amount = dimension
     return (length, mass, time - 1, temperature, amount)
 
@@ -67,35 +89,30 @@ def wrong_unit(quantity: Quantity, term: Term) -> WrongUnit | None:
     got, expected = quantity.dimension, term.dimension
     if got == expected:
         return None
-    text, unit = quantity.text.strip(), quantity.unit.text or "no unit"
-    example = f"such as {example_of(term)}"
+    kind = _kind_of(got, expected)
+    message, suggestion = _WORDS[kind]
+    words = {
+        "text": shortened(quantity.text, 40),
+        "unit": quantity.unit.text or "no unit",
+        "name": term.name,
+        "units": units_of(term),
+        "example": f"such as {example_of(term)}",
+        "per": "amount" if got in _MOLAR else "mass",
+    }
+    advice = _instead(got, expected) if kind == "dimension-wrong" else ""
+    return WrongUnit(kind, message.format(**words), advice or suggestion.format(**words))
+
+
+def _kind_of(got: Dimension, expected: Dimension) -> str:
+    """Return the kind of problem that one dimension in the place of another is."""
     if is_rate_of(got, expected):
-        return WrongUnit(
-            "rate-for-total",
-            f"`{text}` is a rate ({unit}), and {term.name} is a total.",
-            f"State the total, {example}, or give the `duration` under `inputs`.",
-        )
-    if expected in _EXTENSIVE and got in (
-        _SPECIFIC[_EXTENSIVE.index(expected)],
-        _MOLAR[_EXTENSIVE.index(expected)],
-    ):
-        per = "mass" if got in _SPECIFIC else "amount"
-        return WrongUnit(
-            "specific-for-total",
-            f"`{text}` is per unit {per} ({unit}), and {term.name} is that of the whole body.",
-            f"Multiply by the {per} and state the total, {example}.",
-        )
+        return "rate-for-total"
+    if expected in _EXTENSIVE:
+        at = _EXTENSIVE.index(expected)
+        return "specific-for-total" if got in (_SPECIFIC[at], _MOLAR[at]) else "dimension-wrong"
     if expected in _SPECIFIC and got == _EXTENSIVE[_SPECIFIC.index(expected)]:
-        return WrongUnit(
-            "total-for-specific",
-            f"`{text}` is a total ({unit}), and {term.name} is per unit mass.",
-            f"Divide by the mass and state it per kilogram, {example}.",
-        )
-    return WrongUnit(
-        "dimension-wrong",
-        f"`{text}` has the unit of another kind of quantity ({unit}); {term.name} is stated in {units_of(term)}.",
-        _instead(got, expected) or f"Write it {example}.",
-    )
+        return "total-for-specific"
+    return "dimension-wrong"
 
 
 def _instead(got: Dimension, expected: Dimension) -> str:

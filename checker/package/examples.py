@@ -36,6 +36,7 @@ _TEMPERATURE: Final = ("°C, K, °F, °R", "15 °C")
 
 
 def _entry(term: Term) -> tuple[str, str]:
+    """Return units and an example for a term."""
     if term.dimension == dim.TEMPERATURE:
         return _DIFFERENCE if term.scale is Scale.TEMPERATURE_DIFFERENCE else _TEMPERATURE
     return _BY_DIMENSION.get(term.dimension, (term.unit, f"1 {term.unit}"))

@@ -12,7 +12,7 @@ from pydantic_core import ErrorDetails
 from checker.package.kinds import KINDS
 from checker.package.layout import article, belongs, field_of, keys_of, part_class
 from checker.package.nearest import nearest, perhaps, shortened, without_value
-from checker.package.notebook import Notebook
+from checker.package.notebook import MAX_PROBLEMS, Notebook
 from checker.package.parts.base import Part
 from checker.problems import Place
 from checker.vocabulary import TERMS
@@ -63,11 +63,13 @@ def fitted(
             return model.model_validate(tree)
         except ValidationError as error:
             details = _telling(error.errors(include_url=False))
-            misfits = [_misfit(model, tree, detail, sparable) for detail in details]
+            misfits = [_misfit(model, tree, detail, sparable) for detail in details[:MAX_PROBLEMS]]
+        notebook.untold += max(0, len(details) - MAX_PROBLEMS)
         for misfit in misfits:
             notebook.say(misfit.kind, misfit.place, misfit.message, misfit.suggestion, at_key=misfit.at_key,
                          fatal=misfit.spare is None)  # fmt: skip
-        if any(misfit.spare is None for misfit in misfits):
+        if len(details) > MAX_PROBLEMS or any(misfit.spare is None for misfit in misfits):
+            notebook.fatal = True
             return None
         for misfit in misfits:
             _leave_out(tree, misfit.spare or ())
@@ -76,9 +78,8 @@ def fitted(
 
 def _telling(details: list[ErrorDetails]) -> list[ErrorDetails]:
     """Return the errors without those that a list is too short only because its items are wrong."""
-    too_short = [detail["loc"] for detail in details if detail["type"] == "too_short"]
-    idle = {loc for loc in too_short if any(d["loc"] != loc and d["loc"][: len(loc)] == loc for d in details)}
-    return [d for d in details if not (d["type"] == "too_short" and d["loc"] in idle)] if idle else details
+    parents = {detail["loc"][:depth] for detail in details for depth in range(len(detail["loc"]))}
+    return [detail for detail in details if detail["type"] != "too_short" or detail["loc"] not in parents]
 
 
 def _misfit(
@@ -98,7 +99,8 @@ def _misfit(
         place = (*place, context["key"]) if "key" in context else place
         return _Misfit(kind, place, detail["msg"], context.get("suggestion", ""), at_key, sparable(place))
     if kind == "too_short":
-        message = f"`{_name(model, place)}` needs at least {context.get('min_length', 1)} entries."
+        least = context.get("min_length", 1)
+        message = f"`{_name(model, place)}` needs at least {least} {'entry' if least == 1 else 'entries'}."
         return _Misfit("part-missing", place, message, "", False, sparable(place))
     wanted = next((words for start, words in _SHAPES if kind.startswith(start)), "something else")
     message = f"`{_name(model, place)}` should be {wanted}, and is {_shape_of(detail['input'])}."
@@ -165,6 +167,7 @@ def _name(model: type[Part], place: Place) -> str:
 
 
 def _shape_of(value: object) -> str:
+    """Return in words what stands where something else belongs."""
     if isinstance(value, dict):
         return "a mapping"
     if isinstance(value, list | tuple):

@@ -49,6 +49,7 @@ def _part_in(annotation: object) -> type[Part] | None:
 
 
 def _is_dict(annotation: object) -> bool:
+    """Whether a field is a mapping by identifier."""
     return typing.get_origin(annotation) is dict
 
 

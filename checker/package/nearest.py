@@ -63,6 +63,7 @@ def nearest(word: str, known: Iterable[str]) -> tuple[str, ...]:
 
 @lru_cache(maxsize=1024)
 def _nearest(word: str, known: tuple[str, ...]) -> tuple[str, ...]:
+    """Return the known words nearest to a word of ordinary length."""
     folded = {_folded(candidate): candidate for candidate in known}
     wanted = _folded(word)
     if wanted in folded:

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Callable
 from dataclasses import dataclass, field
 from typing import Final
 
@@ -44,14 +45,18 @@ class Notebook:
         kind: str,
         place: Place,
         message: str,
-        suggestion: str = "",
+        suggestion: str | Callable[[], str] = "",
         *,
         at_key: bool = False,
         quantity: str | None = None,
         fatal: bool = False,
         offset: int = 0,
     ) -> None:
-        """Note a problem. ``offset`` counts in the text of the value; quotes before it are added here."""
+        """Note a problem.
+
+        A suggestion that takes a search may be a function: it is called only for problems that are told.
+        ``offset`` counts in the text of the value; quotes before it are added here.
+        """
         self.fatal = self.fatal or fatal
         whole = (*self.root, *place)
         if whole in self.damaged and not at_key:
@@ -71,7 +76,7 @@ class Notebook:
                 record=self.record,
                 quantity=quantity or (pointer_of(self.document, whole) or None),
                 stated=None if text is None else shortened(text),
-                suggestion=suggestion,
+                suggestion=suggestion if isinstance(suggestion, str) else suggestion(),
                 fatal=fatal,
                 offset=offset + quoted if offset else 0,
             )

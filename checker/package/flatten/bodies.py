@@ -4,9 +4,10 @@ from __future__ import annotations
 
 from collections.abc import Mapping
 
-from checker.package.desk import Desk, Spot
+from checker.package.desk import Desk
 from checker.package.parts.body import Body as BodyPart
 from checker.package.parts.body import Datum as DatumPart
+from checker.package.spot import Spot
 from checker.problems import Place
 from checker.quantity.types import Quantity
 from checker.submission import Body, Datum

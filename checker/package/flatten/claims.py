@@ -6,11 +6,12 @@ from collections.abc import Callable
 
 from checker.package.assumptions import known_assumption
 from checker.package.atlas import Found, Lost
-from checker.package.desk import Desk, Spot
+from checker.package.desk import Desk
 from checker.package.flatten.references import refer, unique
 from checker.package.nearest import nearest, perhaps, shortened
 from checker.package.parts.record import Limit as LimitPart
 from checker.package.parts.record import Record as RecordPart
+from checker.package.spot import Spot
 from checker.problems import Place
 from checker.quantity.types import Quantity
 from checker.submission import Assumption, Limit, Role, SequenceOfProcesses
@@ -105,13 +106,18 @@ def read_sources(desk: Desk, record: RecordPart, find: Finder) -> dict[str, str]
 
 def note_lost(desk: Desk, pointer: str, lost: Lost, place: Place, at_key: bool = False) -> None:
     """Note a pointer that leads nowhere, at the part where it goes astray."""
-    known = perhaps(nearest(lost.part, lost.known) or (lost.known if len(lost.known) == 1 else ()))
-    some = ", ".join(lost.known[:12])
     desk.notebook.say(
         "reference-unknown",
         place,
         f"`{shortened(pointer)}` points at nothing: there is no `{shortened(lost.part, 40)}` here.",
-        known or (f"Known here: {some}." if some else "The pointer ends before this part."),
+        lambda: _instead(lost),
         at_key=at_key,
         offset=lost.offset,
     )
+
+
+def _instead(lost: Lost) -> str:
+    """Return what a pointer could have meant where it goes astray."""
+    words = nearest(lost.part, lost.known) or (lost.known if len(lost.known) == 1 else ())
+    some = ", ".join(lost.known[:12])
+    return perhaps(words) or (f"Known here: {some}." if some else "The pointer ends before this part.")

@@ -9,10 +9,11 @@ from __future__ import annotations
 
 from collections.abc import Iterator, Mapping
 
-from checker.package.desk import Desk, Spot
+from checker.package.desk import Desk
 from checker.package.flatten.references import refer
 from checker.package.parts.path import PARAMETERS, POINT_NAMES
 from checker.package.parts.path import PathSpec as PathPart
+from checker.package.spot import Spot
 from checker.problems import Place
 from checker.submission import PathSpec, Role
 from checker.vocabulary import TERMS, Level
@@ -82,6 +83,7 @@ def _state_parameters(desk: Desk, path: PathPart, place: Place, prefix: str) -> 
 
 
 def _state_points(desk: Desk, path: PathPart, place: Place, prefix: str) -> None:
+    """State the points of a line."""
     for index, point in enumerate(path.points):
         where: Place = (*place, "points", index)
         spot = Spot(Level.PATH, f"{prefix}/points/{index}", where)

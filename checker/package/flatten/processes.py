@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 
-from checker.package.desk import Desk, Spot
+from checker.package.desk import Desk
 from checker.package.flatten.paths import read_paths
 from checker.package.flatten.references import refer, unique
 from checker.package.parts.process import ONLY_HEAT
@@ -12,6 +12,7 @@ from checker.package.parts.process import HeatTransfer as HeatPart
 from checker.package.parts.process import Process as ProcessPart
 from checker.package.parts.process import WorkTransfer as WorkPart
 from checker.package.parts.record import Record as RecordPart
+from checker.package.spot import Spot
 from checker.package.words import SYSTEM
 from checker.problems import Place
 from checker.submission import HeatTransfer, Process, Role, WorkTransfer
@@ -29,18 +30,11 @@ def read_processes(desk: Desk, record: RecordPart) -> tuple[Process, ...]:
 
 
 def _process(desk: Desk, record: RecordPart, part: ProcessPart, place: Place) -> Process:
+    """State the quantities of one process."""
     for key, state in (("from", part.from_), ("to", part.to)):
         refer(desk.notebook, "state", state, record.states, (*place, key))
-    bodies, prefix = tuple(record.bodies), f"processes/{part.id}"
-    spot = Spot(Level.PROCESS, prefix, place, duration=desk.duration(part.inputs))
-    paths = read_paths(desk, part.id, part.path, bodies, (*place, "path"))
-    heats = works = None
-    if part.heat_transfers is not None:
-        unique(desk.notebook, "heat transfer", _identifiers(part.heat_transfers, (*place, "heat_transfers")))
-        heats = tuple(_heat(desk, part, n, bodies, place) for n in range(len(part.heat_transfers)))
-    if part.work_transfers is not None:
-        unique(desk.notebook, "work transfer", _identifiers(part.work_transfers, (*place, "work_transfers")))
-        works = tuple(_work(desk, part, n, bodies, place) for n in range(len(part.work_transfers)))
+    bodies = tuple(record.bodies)
+    spot = Spot(Level.PROCESS, f"processes/{part.id}", place, duration=desk.duration(part.inputs))
     desk.take_both(spot, part.inputs, part.results)
     _shares(desk, part, bodies, spot)
     return Process(
@@ -48,9 +42,9 @@ def _process(desk: Desk, record: RecordPart, part: ProcessPart, place: Place) ->
         from_state=part.from_,
         to_state=part.to,
         place=(*desk.notebook.root, *place),
-        paths=paths,
-        heat_transfers=heats,
-        work_transfers=works,
+        paths=read_paths(desk, part.id, part.path, bodies, (*place, "path")),
+        heat_transfers=_heats(desk, part, bodies, place),
+        work_transfers=_works(desk, part, bodies, place),
         equilibrium=part.equilibrium,
         total_volume=_total_volume(desk, part, bodies, (*place, "total_volume")),
         insulated=part.insulated,
@@ -58,7 +52,28 @@ def _process(desk: Desk, record: RecordPart, part: ProcessPart, place: Place) ->
 
 
 def _identifiers(items: Sequence[HeatPart | WorkPart], place: Place) -> list[tuple[str, Place]]:
+    """Return the identifiers of transfers with their places."""
     return [(item.id, (*place, n, "id")) for n, item in enumerate(items)]
+
+
+def _heats(
+    desk: Desk, part: ProcessPart, bodies: tuple[str, ...], place: Place
+) -> tuple[HeatTransfer, ...] | None:
+    """Return the heat transfers; None where nothing is stated about them."""
+    if part.heat_transfers is None:
+        return None
+    unique(desk.notebook, "heat transfer", _identifiers(part.heat_transfers, (*place, "heat_transfers")))
+    return tuple(_heat(desk, part, n, bodies, place) for n in range(len(part.heat_transfers)))
+
+
+def _works(
+    desk: Desk, part: ProcessPart, bodies: tuple[str, ...], place: Place
+) -> tuple[WorkTransfer, ...] | None:
+    """Return the work transfers; None where nothing is stated about them."""
+    if part.work_transfers is None:
+        return None
+    unique(desk.notebook, "work transfer", _identifiers(part.work_transfers, (*place, "work_transfers")))
+    return tuple(_work(desk, part, n, bodies, place) for n in range(len(part.work_transfers)))
 
 
 def _heat(

@@ -39,32 +39,24 @@ def read_record(
     convention = part.conventions.work or head.work_convention
     desk = Desk(notebook, atmosphere_of(surroundings), -1 if convention == "positive in" else 1)
     notebook.statements.extend(statement for statement in surroundings.values() if statement is not None)
-    bodies = {name: read_body(desk, name, body) for name, body in part.bodies.items()}
-    body_states = read_states(desk, part)
-    processes = read_processes(desk, part)
-    sequences = read_sequences(desk, part)
     read_totals(desk, part)
-    assumptions = read_assumptions(desk, part)
-    limits = read_limits(desk, part, find)
     return Record(
         id=part.id,
         title=part.title,
         place=notebook.root,
-        bodies=bodies,
+        bodies={name: read_body(desk, name, body) for name, body in part.bodies.items()},
         states=tuple(part.states),
-        body_states=body_states,
-        processes=processes,
-        sequences=sequences,
-        assumptions=assumptions,
-        limits=limits,
+        body_states=read_states(desk, part),
+        processes=read_processes(desk, part),
+        sequences=read_sequences(desk, part),
+        assumptions=read_assumptions(desk, part),
+        limits=read_limits(desk, part, find),
         sources=read_sources(desk, part, find),
-        statements=_in_document_order(notebook),
+        statements=_in_document_order(notebook),  # after all that adds to them
         problems=(),
         work_convention=convention,
         purpose=part.purpose,
-        state_equilibrium={
-            name: state.equilibrium for name, state in part.states.items() if state.equilibrium
-        },
+        state_equilibrium={name: s.equilibrium for name, s in part.states.items() if s.equilibrium},
     )
 
 

@@ -20,7 +20,7 @@ def refer(
         "reference-unknown",
         place,
         f"The {what} `{shortened(name, 40)}` does not exist in this record. It has: {listed}.",
-        perhaps(nearest(name, known)),
+        lambda: perhaps(nearest(name, known)),
         at_key=at_key,
         fatal=True,
     )

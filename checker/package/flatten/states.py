@@ -2,11 +2,12 @@
 
 from __future__ import annotations
 
-from checker.package.desk import Desk, Spot, WordStated
+from checker.package.desk import Desk
 from checker.package.flatten.references import refer
 from checker.package.nearest import nearest, perhaps, shortened
 from checker.package.parts.record import Record as RecordPart
 from checker.package.parts.state import BodyState as BodyStatePart
+from checker.package.spot import Spot, WordStated
 from checker.package.words import PHASE_SYNONYMS, PHASES
 from checker.problems import Place
 from checker.submission import BodyState, Role
@@ -54,7 +55,9 @@ def _phase(desk: Desk, stated: WordStated | None, pointer: str) -> str | None:
         "word-unknown",
         stated.place,
         f"`{shortened(stated.text, 40)}` is not a phase: {', '.join(PHASES)}.",
-        perhaps(PHASE_SYNONYMS.get(name, name) for name in nearest(word, (*PHASES, *PHASE_SYNONYMS))[:1]),
+        lambda: perhaps(
+            PHASE_SYNONYMS.get(name, name) for name in nearest(word, (*PHASES, *PHASE_SYNONYMS))[:1]
+        ),
         quantity=f"{pointer}/phase",
     )
     return None

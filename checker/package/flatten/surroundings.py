@@ -4,8 +4,9 @@ from __future__ import annotations
 
 from collections.abc import Mapping
 
-from checker.package.desk import Desk, Spot
+from checker.package.desk import Desk
 from checker.package.notebook import Notebook
+from checker.package.spot import Spot
 from checker.problems import Place
 from checker.submission import Role, Statement
 from checker.vocabulary import Level, canonical

@@ -66,6 +66,7 @@ def proposed_identifier(text: str) -> str:
 
 
 def _identifier(text: str) -> str:
+    """Refuse a text that is no identifier."""
     if is_identifier(text):
         return text
     raise PydanticCustomError(
@@ -76,6 +77,7 @@ def _identifier(text: str) -> str:
 
 
 def _truth(value: object) -> object:
+    """Return the truth value that a text writes out."""
     if isinstance(value, str) and value in TRUTHS:
         return TRUTHS[value]
     raise PydanticCustomError(

@@ -185,3 +185,74 @@ def test_a_list_of_rubbish_ends_early(read: Read, bottle: str) -> None:
     assert len(result.submission.unreadable) == 3000
     assert len(result.submission.problems) < 1100
     assert any("were not read" in problem.message for problem in result.submission.problems)
+
+
+@pytest.mark.parametrize(
+    ("quantity", "pointer"),
+    [
+        ("records/second/states/b/air/temperature", "records/second/states/b/air/temperature"),
+        ("records/bottle/processes/warming/heat", "records/bottle/processes/warming/heat"),
+        ("processes/warming/path/nitrogen/exponent", "processes/warming/path/exponent"),
+    ],
+)
+def test_limits_across_records(read: Read, bottle: str, quantity: str, pointer: str) -> None:
+    """A limit may be on a quantity of another record; its unit is that quantity's."""
+    value = {"temperature": "350 K", "heat": "5 MJ", "exponent": "2"}[pointer.rsplit("/", 1)[-1]]
+    result = read(
+        ("states/hot/nitrogen/pressure, at_most: 200 bar", f"{quantity}, at_most: {value}"),
+        of=bottle + SECOND,
+    )
+    assert result.problems == ()
+    (limit,) = result.submission.records[0].limits
+    assert (limit.quantity, limit.at_most.text) == (pointer, value)
+
+
+@pytest.mark.parametrize(
+    "pointer", ["records/second/states/z/air/temperature", "records/third/results/net_work", "records/"]
+)
+def test_limits_on_nothing_in_other_records(read: Read, bottle: str, pointer: str) -> None:
+    """A pointer into another record goes astray at the same part as one inside the record."""
+    result = read(("states/hot/nitrogen/pressure", pointer), of=bottle + SECOND)
+    (problem,) = result.problems
+    assert (problem.kind, problem.fatal) == ("reference-unknown", False)
+    assert problem.offset == len("records/second/states/" if "second" in pointer else "records/")
+    assert result.submission.records[0].limits == ()
+
+
+def test_a_limit_with_one_readable_side_is_kept(read: Read) -> None:
+    """A limit is held against the side that can be read; without one it is left out."""
+    both = read(("at_most: 200 bar", "at_most: 200 bar, at_least: low"))
+    assert [problem.kind for problem in both.problems] == ["quantity-unreadable"]
+    assert both.record.limits[0].at_least is None
+    none = read(("at_most: 200 bar", "at_most: 200 K"))
+    assert [problem.kind for problem in none.problems] == ["dimension-wrong"]
+    assert none.record.limits == ()
+
+
+def test_problems_of_the_file_outside_the_records(read: Read) -> None:
+    """A repeated key in the header is the package's, and does not keep it from being reviewed."""
+    result = read(("  number: TC-1\n", "  number: TC-1\n  number: *x\n  title: *y\n"))
+    kinds = {(problem.kind, problem.record, problem.fatal) for problem in result.submission.problems}
+    assert kinds == {("key-repeated", None, False), ("alias-used", None, False)}
+    assert len(result.submission.records) == 1
+
+
+@pytest.mark.parametrize(
+    "state", ["", "{}", "{equilibrium: }", "{nitrogen: }", "{nitrogen: {inputs: , results: }}"]
+)
+def test_a_state_to_be_found(read: Read, state: str) -> None:
+    """A state about which nothing is stated is an end state to be found."""
+    result = read(
+        ("hot: {nitrogen: {inputs: {temperature: 60 °C}, results: {pressure: 181 bar}}}", f"hot: {state}")
+    )
+    assert result.problems == ()
+    assert result.record.states == ("cold", "hot")
+    assert (("hot", "nitrogen") in result.record.body_states) == ("nitrogen" in state)
+
+
+def test_work_meets_a_body(read: Read) -> None:
+    """A work transfer may name the body that it meets, which must exist."""
+    right = read(("id: fan, kind: shaft", "id: fan, body: nitrogen, kind: shaft"))
+    assert right.record.processes[0].work_transfers[0].body == "nitrogen"
+    wrong = read(("id: fan, kind: shaft", "id: fan, body: air, kind: shaft"))
+    assert [problem.kind for problem in wrong.problems] == ["reference-unknown"]
