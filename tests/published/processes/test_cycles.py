@@ -13,7 +13,6 @@ from math import log
 from typing import Final
 
 import pytest
-from pytest import approx
 
 from tests.published.processes.calculation import Calculated, calculate, matter, process
 
@@ -153,11 +152,13 @@ def run(cycle: Cycle, backwards: bool = False, **members: str) -> Calculated:
 def test_thermal_efficiency_is_the_closed_form(cycle: Cycle) -> None:
     """Net work per heat supplied equals the closed form, and net work equals net heat."""
     found = run(cycle)
-    assert found.value("results/thermal_efficiency") == approx(cycle.efficiency, rel=1e-8)
+    assert found.value("results/thermal_efficiency") == pytest.approx(cycle.efficiency, rel=1e-8)
     supplied = found.value("results/heat_supplied")
-    assert found.value("results/net_work") == approx(cycle.efficiency * supplied, rel=1e-8)
-    assert found.value("results/net_heat") == approx(found.value("results/net_work"), rel=1e-8)
-    assert found.value("results/heat_rejected") == approx((1.0 - cycle.efficiency) * supplied, rel=1e-8)
+    assert found.value("results/net_work") == pytest.approx(cycle.efficiency * supplied, rel=1e-8)
+    assert found.value("results/net_heat") == pytest.approx(found.value("results/net_work"), rel=1e-8)
+    assert found.value("results/heat_rejected") == pytest.approx(
+        (1.0 - cycle.efficiency) * supplied, rel=1e-8
+    )
 
 
 @pytest.mark.parametrize("cycle", CYCLES, ids=name_of)
@@ -166,7 +167,7 @@ def test_nothing_of_a_state_remains_after_a_cycle(cycle: Cycle, property_: str) 
     """ΔU, ΔS and ΔV of the processes sum to zero around every cycle."""
     found = run(cycle)
     changes = [found.process(property_, f"p{i}") for i in range(len(cycle.paths))]
-    assert sum(changes) == approx(0.0, abs=1e-8 * max(map(abs, changes)))
+    assert sum(changes) == pytest.approx(0.0, abs=1e-8 * max(map(abs, changes)))
 
 
 @pytest.mark.parametrize(("purpose", "useful"), [("cooling", T1), ("heating", 350.0)])
@@ -174,5 +175,5 @@ def test_a_reversed_carnot_cycle_has_the_carnot_coefficient(purpose: str, useful
     """COP = T_c/(T_h − T_c) for cooling, T_h/(T_h − T_c) for heating."""
     found = run(carnot(350.0, 2.5), backwards=True, purpose=purpose)
     expected = useful / (350.0 - T1)
-    assert found.value("results/coefficient_of_performance") == approx(expected, rel=1e-8)
+    assert found.value("results/coefficient_of_performance") == pytest.approx(expected, rel=1e-8)
     assert found.value("results/net_work") < 0.0

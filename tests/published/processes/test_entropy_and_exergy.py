@@ -10,7 +10,6 @@ import math
 from typing import Any, Final
 
 import pytest
-from pytest import approx
 from scipy.integrate import quad
 
 from tests.published.processes.calculation import Calculated, heat, matter, one_change, work
@@ -40,11 +39,13 @@ def test_a_block_in_its_surroundings(t1: float, t2: float) -> None:
     """ΔS = m·c·ln(T₂/T₁), Q = m·c·ΔT crosses at T₀, and S_gen = ΔS − Q/T₀ for every way towards T₀ and away."""
     found = block(t1, t2, heat(boundary_temperature=T0))
     warmth, change = MASS * CAPACITY * (t2 - t1), MASS * CAPACITY * math.log(t2 / t1)
-    assert found.process("heat") == approx(warmth, rel=1e-12)
-    assert found.process("entropy_change") == approx(change, rel=1e-12)
-    assert found.process("entropy_generation") == approx(change - warmth / T0, rel=1e-10)
-    assert found.process("entropy_generation_with_surroundings") == approx(change - warmth / T0, rel=1e-10)
-    assert found.process("exergy_destruction") == approx(T0 * change - warmth, rel=1e-10)
+    assert found.process("heat") == pytest.approx(warmth, rel=1e-12)
+    assert found.process("entropy_change") == pytest.approx(change, rel=1e-12)
+    assert found.process("entropy_generation") == pytest.approx(change - warmth / T0, rel=1e-10)
+    assert found.process("entropy_generation_with_surroundings") == pytest.approx(
+        change - warmth / T0, rel=1e-10
+    )
+    assert found.process("exergy_destruction") == pytest.approx(T0 * change - warmth, rel=1e-10)
     # Cooling by itself below the surroundings is what the second law forbids.
     assert (found.process("entropy_generation") < 0.0) == (t1 == T0)
 
@@ -57,12 +58,12 @@ def test_several_walls_share_the_heat() -> None:
     found = block(t1, t2, oven, loss)
     rest = MASS * CAPACITY * (t2 - t1) - given
     change = MASS * CAPACITY * math.log(t2 / t1)
-    assert found.value("processes/change/heat_transfers/wall/energy") == approx(rest, rel=1e-12)
-    assert found.process("entropy_transfer") == approx(rest / 500.0 + given / 330.0, rel=1e-12)
+    assert found.value("processes/change/heat_transfers/wall/energy") == pytest.approx(rest, rel=1e-12)
+    assert found.process("entropy_transfer") == pytest.approx(rest / 500.0 + given / 330.0, rel=1e-12)
     generated = change - rest / 500.0 - given / 330.0
-    assert found.process("entropy_generation") == approx(generated, rel=1e-10)
+    assert found.process("entropy_generation") == pytest.approx(generated, rel=1e-10)
     total = change - rest / 560.0 - given / T0
-    assert found.process("entropy_generation_with_surroundings") == approx(total, rel=1e-10)
+    assert found.process("entropy_generation_with_surroundings") == pytest.approx(total, rel=1e-10)
 
 
 def test_heat_at_the_temperature_of_the_system_is_the_log_mean_integral() -> None:
@@ -74,10 +75,12 @@ def test_heat_at_the_temperature_of_the_system_is_the_log_mean_integral() -> Non
     wall = {"id": "wall", "boundary_temperature": "system", "inputs": {}}
     found = block(t1, t2, wall)
     log_mean = (t2 - t1) / math.log(t2 / t1)
-    assert found.process("entropy_transfer") == approx(MASS * CAPACITY * (t2 - t1) / log_mean, rel=1e-10)
+    assert found.process("entropy_transfer") == pytest.approx(
+        MASS * CAPACITY * (t2 - t1) / log_mean, rel=1e-10
+    )
     numerical, _ = quad(lambda t: MASS * CAPACITY / t, t1, t2, epsabs=0.0, epsrel=1e-12)
-    assert found.process("entropy_transfer") == approx(numerical, rel=1e-10)
-    assert found.process("entropy_generation") == approx(0.0, abs=1e-9)
+    assert found.process("entropy_transfer") == pytest.approx(numerical, rel=1e-10)
+    assert found.process("entropy_generation") == pytest.approx(0.0, abs=1e-9)
 
 
 def test_heat_through_a_stirred_body_leaves_only_what_the_stirrer_generates() -> None:
@@ -85,15 +88,15 @@ def test_heat_through_a_stirred_body_leaves_only_what_the_stirrer_generates() ->
     stirred = 80.0e3
     wall = {"id": "wall", "boundary_temperature": "system", "inputs": {}}
     found = block(350.0, 350.0, wall, work_transfers=[work("shaft", -stirred)])
-    assert found.process("heat") == approx(-stirred, rel=1e-12)
-    assert found.process("entropy_generation") == approx(stirred / 350.0, rel=1e-10)
-    assert found.process("entropy_generation_with_surroundings") == approx(stirred / T0, rel=1e-10)
+    assert found.process("heat") == pytest.approx(-stirred, rel=1e-12)
+    assert found.process("entropy_generation") == pytest.approx(stirred / 350.0, rel=1e-10)
+    assert found.process("entropy_generation_with_surroundings") == pytest.approx(stirred / T0, rel=1e-10)
 
 
 @pytest.mark.parametrize("temperature", [200.0, T0, 900.0])
 @pytest.mark.parametrize("pressure", [0.3e5, P0, 40.0e5])
 def test_closed_exergy_of_a_gas(temperature: float, pressure: float) -> None:
-    """x = c_v·(T − T₀) + p₀·(v − v₀) − T₀·[c_p·ln(T/T₀) − R·ln(p/p₀)], never below zero, zero at T₀ and p₀."""
+    """Exergy is c_v·(T − T₀) + p₀·(v − v₀) − T₀·[c_p·ln(T/T₀) − R·ln(p/p₀)], never below zero, zero at T₀ and p₀."""
     found = one_change(
         GAS,
         {"temperature": temperature, "pressure": pressure},
@@ -103,9 +106,9 @@ def test_closed_exergy_of_a_gas(temperature: float, pressure: float) -> None:
     v, v0 = R * temperature / pressure, R * T0 / P0
     entropy = (CV + R) * math.log(temperature / T0) - R * math.log(pressure / P0)
     exergy = CV * (temperature - T0) + P0 * (v - v0) - T0 * entropy
-    assert found.state("specific_exergy", "first") == approx(exergy, rel=1e-9, abs=1e-6)
-    assert found.state("exergy", "first") == approx(1.5 * exergy, rel=1e-9, abs=1e-6)
-    assert found.process("exergy_change") == approx(-1.5 * exergy, rel=1e-9, abs=1e-6)
+    assert found.state("specific_exergy", "first") == pytest.approx(exergy, rel=1e-9, abs=1e-6)
+    assert found.state("exergy", "first") == pytest.approx(1.5 * exergy, rel=1e-9, abs=1e-6)
+    assert found.process("exergy_change") == pytest.approx(-1.5 * exergy, rel=1e-9, abs=1e-6)
     assert exergy >= -1e-9
 
 
@@ -122,11 +125,11 @@ def test_exergy_of_heat_less_useful_work_is_changed_or_destroyed() -> None:
     warmth, done, dv = m * (CV + R) * (t2 - t1), m * R * (t2 - t1), m * R * (t2 - t1) / p
     entropy = m * (CV + R) * math.log(t2 / t1)
     transferred = (1.0 - T0 / hot) * warmth - (done - P0 * dv)
-    assert found.process("exergy_transfer") == approx(transferred, rel=1e-9)
-    assert found.process("exergy_destruction") == approx(T0 * (entropy - warmth / hot), rel=1e-9)
+    assert found.process("exergy_transfer") == pytest.approx(transferred, rel=1e-9)
+    assert found.process("exergy_destruction") == pytest.approx(T0 * (entropy - warmth / hot), rel=1e-9)
     change = m * CV * (t2 - t1) + P0 * dv - T0 * entropy
-    assert found.process("exergy_change") == approx(change, rel=1e-9)
-    assert transferred - T0 * (entropy - warmth / hot) == approx(change, rel=1e-9)
+    assert found.process("exergy_change") == pytest.approx(change, rel=1e-9)
+    assert transferred - T0 * (entropy - warmth / hot) == pytest.approx(change, rel=1e-9)
 
 
 def test_speed_and_height_are_exergy_as_they_are_energy() -> None:
@@ -136,8 +139,8 @@ def test_speed_and_height_are_exergy_as_they_are_energy() -> None:
         {"temperature": T0, "velocity": 30.0, "elevation": 12.0},
         {"temperature": T0, "velocity": 0.0, "elevation": 0.0},
     )
-    assert found.state("specific_exergy", "first") == approx(450.0 + 9.80665 * 12.0, rel=1e-12)
-    assert found.process("exergy_change") == approx(-MASS * (450.0 + 9.80665 * 12.0), rel=1e-12)
+    assert found.state("specific_exergy", "first") == pytest.approx(450.0 + 9.80665 * 12.0, rel=1e-12)
+    assert found.process("exergy_change") == pytest.approx(-MASS * (450.0 + 9.80665 * 12.0), rel=1e-12)
 
 
 def test_a_process_without_heat_has_no_entropy_transfer_and_supplies_nothing() -> None:
@@ -145,8 +148,10 @@ def test_a_process_without_heat_has_no_entropy_transfer_and_supplies_nothing() -
     found = one_change(
         BLOCK, {"temperature": 300.0}, {}, heat_transfers=[], work_transfers=[work("electrical", -6.0e3)]
     )
-    assert found.state("temperature") == approx(301.0, rel=1e-12)
+    assert found.state("temperature") == pytest.approx(301.0, rel=1e-12)
     assert found.process("entropy_transfer") == 0.0
     assert found.value("results/heat_supplied") == 0.0
     assert found.value("results/heat_rejected") == 0.0
-    assert found.process("entropy_generation") == approx(MASS * CAPACITY * math.log(301.0 / 300.0), rel=1e-10)
+    assert found.process("entropy_generation") == pytest.approx(
+        MASS * CAPACITY * math.log(301.0 / 300.0), rel=1e-10
+    )

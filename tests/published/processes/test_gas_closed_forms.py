@@ -10,7 +10,6 @@ import math
 from typing import Any, Final
 
 import pytest
-from pytest import approx
 
 from tests.published.processes.calculation import Calculated, heat, matter, one_change, path
 
@@ -67,12 +66,12 @@ def test_isothermal_work_is_the_logarithm_of_the_volume_ratio(
         "work": {"heat_transfers": open_heat(), "inputs": {"boundary_work": f"{work!r} J"}},
     }.get(by, {"heat_transfers": open_heat()})
     found = change(gas, last, "isothermal", **members)
-    assert found.state("specific_volume") == approx(v1 * ratio, rel=1e-9)
-    assert found.state("temperature") == approx(T1, rel=1e-12)
-    assert found.process("boundary_work") == approx(work, rel=1e-9)
-    assert found.process("heat") == approx(work, rel=1e-9)
-    assert found.process("entropy_change") == approx(MASS * constant * math.log(ratio), rel=1e-9)
-    assert found.process("internal_energy_change") == approx(0.0, abs=1e-7)
+    assert found.state("specific_volume") == pytest.approx(v1 * ratio, rel=1e-9)
+    assert found.state("temperature") == pytest.approx(T1, rel=1e-12)
+    assert found.process("boundary_work") == pytest.approx(work, rel=1e-9)
+    assert found.process("heat") == pytest.approx(work, rel=1e-9)
+    assert found.process("entropy_change") == pytest.approx(MASS * constant * math.log(ratio), rel=1e-9)
+    assert found.process("internal_energy_change") == pytest.approx(0.0, abs=1e-7)
 
 
 POLYTROPIC: Final = [
@@ -88,7 +87,7 @@ POLYTROPIC: Final = [
 def test_polytropic_end_state_work_heat_and_entropy(
     gas: tuple[float, float], exponent: float, by: str
 ) -> None:
-    """T₂ = T₁·(v₁/v₂)^(n−1); W = m·R·(T₂−T₁)/(1−n), a logarithm for n = 1; Q and ΔS by the specific heat of the path."""
+    """T₂ = T₁·(v₁/v₂)^(n−1); W = m·R·(T₂−T₁)/(1−n), a logarithm for n = 1; Q and ΔS follow."""
     cv, constant = gas
     v1, ratio = constant * T1 / P1, 0.6
     t2, p2 = T1 * ratio ** (1.0 - exponent), P1 * ratio**-exponent
@@ -110,21 +109,21 @@ def test_polytropic_end_state_work_heat_and_entropy(
     if by == "work":
         members["inputs"] = {"boundary_work": f"{work!r} J"}
     found = change(gas, last, path("polytropic", exponent=exponent), **members)
-    assert found.state("temperature") == approx(t2, rel=1e-7)
-    assert found.state("pressure") == approx(p2, rel=1e-7)
-    assert found.process("boundary_work") == approx(work, rel=1e-7)
-    assert found.process("heat") == approx(warmth, rel=1e-6)
+    assert found.state("temperature") == pytest.approx(t2, rel=1e-7)
+    assert found.state("pressure") == pytest.approx(p2, rel=1e-7)
+    assert found.process("boundary_work") == pytest.approx(work, rel=1e-7)
+    assert found.process("heat") == pytest.approx(warmth, rel=1e-6)
     entropy = MASS * (cv * math.log(t2 / T1) + constant * math.log(ratio))
-    assert found.process("entropy_change") == approx(entropy, rel=1e-6)
+    assert found.process("entropy_change") == pytest.approx(entropy, rel=1e-6)
 
 
 @pytest.mark.parametrize("exponent", [0.4, 1.0, 1.31])
 def test_the_exponent_follows_from_the_end_states(gas: tuple[float, float], exponent: float) -> None:
-    """n = ln(p₂/p₁)/ln(v₁/v₂) where both ends are given and the exponent is not."""
+    """Without an input n = ln(p₂/p₁)/ln(v₁/v₂) follows from the ends."""
     v1 = gas[1] * T1 / P1
     last = {"pressure": P1 * 3.0**exponent, "specific_volume": v1 / 3.0}
     found = change(gas, last, {"kind": "polytropic"}, heat_transfers=open_heat())
-    assert found.value("processes/change/path/exponent") == approx(exponent, rel=1e-9)
+    assert found.value("processes/change/path/exponent") == pytest.approx(exponent, rel=1e-9)
 
 
 @pytest.mark.parametrize("ratio", [0.1, 0.7, 4.0])
@@ -142,11 +141,11 @@ def test_isentropic_end_state_and_work(gas: tuple[float, float], ratio: float, b
     }.get(by, {})
     given = {"inputs": {"boundary_work": f"{work!r} J"}} if by == "work" else {}
     found = change(gas, last, "isentropic", heat_transfers=[], **given)
-    assert found.state("temperature") == approx(t2, rel=1e-7)
-    assert found.state("pressure") == approx(p2, rel=1e-6)
-    assert found.process("work") == approx(work, rel=1e-7)
+    assert found.state("temperature") == pytest.approx(t2, rel=1e-7)
+    assert found.state("pressure") == pytest.approx(p2, rel=1e-6)
+    assert found.process("work") == pytest.approx(work, rel=1e-7)
     assert found.process("heat") == 0.0
-    assert found.process("entropy_generation") == approx(0.0, abs=1e-6 * MASS * cv)
+    assert found.process("entropy_generation") == pytest.approx(0.0, abs=1e-6 * MASS * cv)
 
 
 @pytest.mark.parametrize("by", ["temperature", "specific_volume", "heat", "work"])
@@ -165,12 +164,14 @@ def test_heating_at_constant_pressure(gas: tuple[float, float], ratio: float, by
     if by == "work":
         members["inputs"] = {"boundary_work": f"{work!r} J"}
     found = change(gas, last, "constant pressure", **members)
-    assert found.state("temperature") == approx(t2, rel=1e-9)
-    assert found.process("heat") == approx(warmth, rel=1e-9)
-    assert found.process("boundary_work") == approx(work, rel=1e-9)
-    assert found.process("enthalpy_change") == approx(warmth, rel=1e-9)
-    assert found.process("entropy_change") == approx(MASS * (cv + constant) * math.log(ratio), rel=1e-9)
-    assert found.process("entropy_transfer") == approx(warmth / 900.0, rel=1e-9)
+    assert found.state("temperature") == pytest.approx(t2, rel=1e-9)
+    assert found.process("heat") == pytest.approx(warmth, rel=1e-9)
+    assert found.process("boundary_work") == pytest.approx(work, rel=1e-9)
+    assert found.process("enthalpy_change") == pytest.approx(warmth, rel=1e-9)
+    assert found.process("entropy_change") == pytest.approx(
+        MASS * (cv + constant) * math.log(ratio), rel=1e-9
+    )
+    assert found.process("entropy_transfer") == pytest.approx(warmth / 900.0, rel=1e-9)
 
 
 @pytest.mark.parametrize("by", ["temperature", "pressure", "heat"])
@@ -183,11 +184,11 @@ def test_heating_at_constant_volume(gas: tuple[float, float], ratio: float, by: 
     last = {"temperature": {"temperature": t2}, "pressure": {"pressure": P1 * ratio}}.get(by, {})
     given = {"energy": warmth} if by == "heat" else {}
     found = change(gas, last, "constant volume", heat_transfers=open_heat(**given))
-    assert found.state("temperature") == approx(t2, rel=1e-9)
-    assert found.state("pressure") == approx(P1 * ratio, rel=1e-9)
-    assert found.process("heat") == approx(warmth, rel=1e-9)
+    assert found.state("temperature") == pytest.approx(t2, rel=1e-9)
+    assert found.state("pressure") == pytest.approx(P1 * ratio, rel=1e-9)
+    assert found.process("heat") == pytest.approx(warmth, rel=1e-9)
     assert found.process("work") == 0.0
-    assert found.process("entropy_change") == approx(MASS * cv * math.log(ratio), rel=1e-9)
+    assert found.process("entropy_change") == pytest.approx(MASS * cv * math.log(ratio), rel=1e-9)
 
 
 @pytest.mark.parametrize(("kind", "ratio"), [("constant volume", 0.4), ("constant pressure", 0.4)])
@@ -204,4 +205,4 @@ def test_the_first_state_is_found_from_the_last(gas: tuple[float, float], kind: 
         gas_constant=constant,
     )
     found = one_change(body, {}, FIRST, path=kind, heat_transfers=open_heat(energy=warmth))
-    assert found.state("temperature", "first") == approx(T1 * ratio, rel=1e-9)
+    assert found.state("temperature", "first") == pytest.approx(T1 * ratio, rel=1e-9)

@@ -10,7 +10,6 @@ import math
 from typing import Any, Final
 
 import pytest
-from pytest import approx
 
 from tests.published.processes.calculation import (
     Calculated,
@@ -49,10 +48,10 @@ def change(last: dict[str, float], **members: Any) -> Calculated:
 def test_free_expansion_generates_the_entropy_of_the_volume_ratio(ratio: float) -> None:
     """Into a vacuum an ideal gas keeps its temperature, and S_gen = m·R·ln(V₂/V₁)."""
     found = change({"specific_volume": V1 * ratio}, path="free expansion", heat_transfers=[])
-    assert found.state("temperature") == approx(T1, rel=1e-12)
+    assert found.state("temperature") == pytest.approx(T1, rel=1e-12)
     assert found.process("work") == 0.0
-    assert found.process("entropy_generation") == approx(MASS * R * math.log(ratio), rel=1e-9)
-    assert found.process("exergy_destruction") == approx(298.15 * MASS * R * math.log(ratio), rel=1e-9)
+    assert found.process("entropy_generation") == pytest.approx(MASS * R * math.log(ratio), rel=1e-9)
+    assert found.process("exergy_destruction") == pytest.approx(298.15 * MASS * R * math.log(ratio), rel=1e-9)
 
 
 @pytest.mark.parametrize("external", [1.0e5, 3.0e5, 11.0e5])
@@ -61,10 +60,10 @@ def test_adiabatic_change_against_an_outside_pressure_until_it_is_balanced(exter
     kinds = ["adiabatic", path("against constant external pressure", external_pressure=external)]
     found = change({"pressure": external}, path=kinds)
     t2 = T1 * (CV + R * external / P1) / (CV + R)
-    assert found.state("temperature") == approx(t2, rel=1e-8)
-    assert found.process("work") == approx(MASS * CV * (T1 - t2), rel=1e-7)
+    assert found.state("temperature") == pytest.approx(t2, rel=1e-8)
+    assert found.process("work") == pytest.approx(MASS * CV * (T1 - t2), rel=1e-7)
     generated = MASS * ((CV + R) * math.log(t2 / T1) - R * math.log(external / P1))
-    assert found.process("entropy_generation") == approx(generated, rel=1e-6)
+    assert found.process("entropy_generation") == pytest.approx(generated, rel=1e-6)
     assert generated > 0.0
 
 
@@ -76,8 +75,8 @@ def test_change_against_an_outside_pressure_up_to_a_stop(ratio: float) -> None:
     walls = [heat(boundary_temperature=280.0, energy=warmth)]
     found = change({"specific_volume": V1 * ratio}, path=kind, heat_transfers=walls)
     t2 = T1 + (warmth / MASS - external * V1 * (ratio - 1.0)) / CV
-    assert found.state("temperature") == approx(t2, rel=1e-9)
-    assert found.process("boundary_work") == approx(MASS * external * V1 * (ratio - 1.0), rel=1e-9)
+    assert found.state("temperature") == pytest.approx(t2, rel=1e-9)
+    assert found.process("boundary_work") == pytest.approx(MASS * external * V1 * (ratio - 1.0), rel=1e-9)
 
 
 @pytest.mark.parametrize(("kind", "capacity"), [("constant volume", CV), ("constant pressure", CV + R)])
@@ -85,8 +84,8 @@ def test_adiabatic_stirring_warms_by_its_work(kind: str, capacity: float) -> Non
     """T₂ = T₁ + |W_sh|/(m·c) at constant volume with c_v, at constant pressure with c_p; all of ΔS is generated."""
     found = change({}, path=["adiabatic", kind], heat_transfers=[], work_transfers=[work("shaft", -42.0e3)])
     t2 = T1 + 42.0e3 / (MASS * capacity)
-    assert found.state("temperature") == approx(t2, rel=1e-9)
-    assert found.process("entropy_generation") == approx(MASS * capacity * math.log(t2 / T1), rel=1e-9)
+    assert found.state("temperature") == pytest.approx(t2, rel=1e-9)
+    assert found.process("entropy_generation") == pytest.approx(MASS * capacity * math.log(t2 / T1), rel=1e-9)
 
 
 def test_adiabatic_end_state_with_given_work() -> None:
@@ -94,9 +93,9 @@ def test_adiabatic_end_state_with_given_work() -> None:
     delivered, p2 = 55.0e3, 2.0e5
     found = change({"pressure": p2}, path="adiabatic", inputs={"work": f"{delivered!r} J"})
     t2 = T1 - delivered / (MASS * CV)
-    assert found.state("temperature") == approx(t2, rel=1e-9)
+    assert found.state("temperature") == pytest.approx(t2, rel=1e-9)
     generated = MASS * ((CV + R) * math.log(t2 / T1) - R * math.log(p2 / P1))
-    assert found.process("entropy_generation") == approx(generated, rel=1e-9)
+    assert found.process("entropy_generation") == pytest.approx(generated, rel=1e-9)
 
 
 def spring(given_by: str, ratio: float) -> tuple[dict[str, Any], float]:
@@ -123,10 +122,10 @@ def test_spring_loaded_piston(given_by: str, by: str, ratio: float) -> None:
     last = {"specific_volume": {"specific_volume": v2}, "pressure": {"pressure": p2}}.get(by, {})
     given = {"energy": warmth} if by == "heat" else {}
     found = change(last, path=kind, heat_transfers=[heat(boundary_temperature=4000.0, **given)])
-    assert found.state("pressure") == approx(p2, rel=1e-7)
-    assert found.state("temperature") == approx(t2, rel=1e-7)
-    assert found.process("boundary_work") == approx(done, rel=1e-7)
-    assert found.process("heat") == approx(warmth, rel=1e-7)
+    assert found.state("pressure") == pytest.approx(p2, rel=1e-7)
+    assert found.state("temperature") == pytest.approx(t2, rel=1e-7)
+    assert found.process("boundary_work") == pytest.approx(done, rel=1e-7)
+    assert found.process("heat") == pytest.approx(warmth, rel=1e-7)
 
 
 def test_a_braked_body_keeps_its_energy_as_internal_energy() -> None:
@@ -136,11 +135,13 @@ def test_a_braked_body_keeps_its_energy_as_internal_energy() -> None:
     first = {"temperature": t1, "velocity": speed, "elevation": height}
     found = one_change(body, first, {"velocity": 0.0, "elevation": 0.0}, heat_transfers=[])
     t2 = t1 + (0.5 * speed**2 + GRAVITY * height) / capacity
-    assert found.state("temperature") == approx(t2, rel=1e-12)
-    assert found.process("kinetic_energy_change") == approx(-0.5 * mass * speed**2, rel=1e-12)
-    assert found.process("potential_energy_change") == approx(-mass * GRAVITY * height, rel=1e-12)
-    assert found.process("energy_change") == approx(0.0, abs=1e-7)
-    assert found.process("entropy_generation") == approx(mass * capacity * math.log(t2 / t1), rel=1e-10)
+    assert found.state("temperature") == pytest.approx(t2, rel=1e-12)
+    assert found.process("kinetic_energy_change") == pytest.approx(-0.5 * mass * speed**2, rel=1e-12)
+    assert found.process("potential_energy_change") == pytest.approx(-mass * GRAVITY * height, rel=1e-12)
+    assert found.process("energy_change") == pytest.approx(0.0, abs=1e-7)
+    assert found.process("entropy_generation") == pytest.approx(
+        mass * capacity * math.log(t2 / t1), rel=1e-10
+    )
 
 
 def test_a_falling_body_without_friction_reaches_the_speed_of_its_height() -> None:
@@ -155,5 +156,5 @@ def test_a_falling_body_without_friction_reaches_the_speed_of_its_height() -> No
         "processes": [drop],
     }
     found = calculated(record)
-    assert found.state("velocity") == approx(math.sqrt(2.0 * GRAVITY * 25.0), rel=1e-12)
-    assert found.process("kinetic_energy_change") == approx(3.0 * GRAVITY * 25.0, rel=1e-12)
+    assert found.state("velocity") == pytest.approx(math.sqrt(2.0 * GRAVITY * 25.0), rel=1e-12)
+    assert found.process("kinetic_energy_change") == pytest.approx(3.0 * GRAVITY * 25.0, rel=1e-12)
