@@ -155,4 +155,4 @@ def _stated_markers(case: Case, kind: str, body: str, states: dict[str, Property
             c.stated if c is not None else getattr(state, axis)
             for c, axis in zip(found, (x_name, y_name), strict=True)
         ]
-        yield Marker(f"{name} as stated", "stated", *_axes(kind, values[0], values[1]))
+        yield Marker(name, "stated", *_axes(kind, values[0], values[1]))

@@ -161,7 +161,7 @@ def _cell(case: Case, pointer: str, name: str, compared: dict[str, Compared]) ->
 def _sheet_lines(case: Case) -> Iterator[SheetLine]:
     stated = {case.key(s.pointer): s for s in reversed(case.record.statements) if s.usable}
     for step in case.plan.sheet.steps:
-        if step.title.startswith(HIDDEN_STEPS) or not step.title:
+        if step.trivial or step.title.startswith(HIDDEN_STEPS):
             continue
         outputs = tuple(_sheet_value(case, key, stated) for key in step.outputs)
         yield SheetLine(

@@ -13,7 +13,7 @@ from typing import Final
 
 from checker.outcomes import NotEvaluable
 from checker.sheet.keys import body_key, given, process_key, state_key
-from checker.sheet.step import Function, Step
+from checker.sheet.step import Step
 from checker.submission import Process
 
 STANDARD_GRAVITY: Final = 9.80665
@@ -362,9 +362,12 @@ def constant(output: str, title: str, formula: str, assumes: str = "") -> Step:
 
 
 def same_value(output: str, source: str, title: str, formula: str) -> Step:
-    """Return a step that takes a value over."""
-    same: Function = lambda value: (value,)  # noqa: E731 - a name gives nothing here
-    return Step(title, (output,), (source,), same, formula, "{0}")
+    """Return a step that takes an input over."""
+    return Step(title, (output,), (source,), _same, formula, "{0}", trivial=True)
+
+
+def _same(value: float) -> tuple[float]:
+    return (value,)
 
 
 def entropy_steps_without_transfer(process: str) -> Iterator[Step]:
@@ -386,9 +389,13 @@ def entropy_steps_without_transfer(process: str) -> Iterator[Step]:
 MAIN: Final = (
     "heat",
     "work",
+    "boundary_work",
     "energy_change",
     "entropy_change",
     "entropy_transfer",
     "entropy_generation",
+    "entropy_generation_with_surroundings",
+    "energy_residual",
+    "work_residual",
 )
 """What every review of a process should be able to say; what is missing for it is always named."""

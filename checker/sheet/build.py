@@ -15,7 +15,7 @@ from checker.sheet.endstates import Neighbour, curve_steps, path_clues
 from checker.sheet.keys import body_key, clue, given, plain, state_key, term_for
 from checker.sheet.leaves import Leaves, collect
 from checker.sheet.models import BodyModel, body_model
-from checker.sheet.planner import explain, plan
+from checker.sheet.planner import explain, plan, prune
 from checker.sheet.processes import process_steps
 from checker.sheet.same import SameQuantity, same_quantities
 from checker.sheet.states import CALORIC, SYMBOLS, Clue, StatePlan, clue_steps
@@ -97,8 +97,9 @@ class _Builder:
         self.candidates.extend(cycles.sequence_steps(self.record, self.contexts))
         leaf_keys = {*self.leaves.values, *(link.key for link in self.leaves.links)}
         steps = plan(leaf_keys, self.candidates, states, self._searches, self._assumed)
+        known = {*leaf_keys, *(output for step in steps for output in step.outputs)}
+        steps = prune(steps, self._wanted(same))
         made = {output: step for step in steps for output in step.outputs}
-        known = {*leaf_keys, *made}
         return Sheet(
             self.record.id,
             self.leaves.values,
@@ -190,17 +191,24 @@ class _Builder:
         for ctx in self.contexts:
             yield from assumed_candidates(ctx, known)
 
+    def _wanted(self, same: SameQuantity) -> set[str]:
+        """Return the keys that a review needs: all that is stated or limited, the states, the main balances."""
+        wanted = {same.key(s.pointer) for s in self.record.statements}
+        wanted.update(same.key(limit.quantity) for limit in self.record.limits)
+        for ctx in self.contexts:
+            wanted.update(ctx.key(name) for name in balances.MAIN)
+        wanted.update(state_key(s, b, "temperature") for s, b in self._body_states())
+        wanted.update(body_key(body, "mass") for body in self.record.bodies)
+        return wanted
+
     def _missing(self, known: set[str], same: SameQuantity) -> dict[str, str]:
         """Return what is missing for every stated quantity and every balance that could not be planned."""
         makers: dict[str, list[Step]] = defaultdict(list)
         for step in self.candidates:
             for output in step.outputs:
                 makers[output].append(step)
-        wanted = {same.key(s.pointer) for s in self.record.statements}
-        for ctx in self.contexts:
-            wanted.update(ctx.key(name) for name in balances.MAIN)
-        wanted.update(state_key(s, b, "temperature") for s, b in self._body_states())
-        return {key: explain(key, known, makers, self._say) for key in sorted(wanted) if key not in known}
+        unknown = sorted(self._wanted(same) - known)
+        return {key: explain(key, known, makers, self._say) for key in unknown}
 
     def _say(self, key: str) -> str:
         """Say in words what is missing where no formula leads further."""

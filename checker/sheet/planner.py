@@ -75,6 +75,17 @@ def _one(known: set[str], steps: list[Step], offered: Iterable[Step]) -> bool:
     return False
 
 
+def prune(steps: Sequence[Step], wanted: Iterable[str]) -> list[Step]:
+    """Return the steps that lead to what is wanted, in their order."""
+    needed = set(wanted)
+    kept: list[Step] = []
+    for step in reversed(steps):
+        if not needed.isdisjoint(step.outputs):
+            kept.append(step)
+            needed.update(step.parents)
+    return kept[::-1]
+
+
 def explain(
     key: str, known: set[str], makers: Mapping[str, Sequence[Step]], say: Callable[[str], str]
 ) -> str:

@@ -39,6 +39,8 @@ class Step:
         What the review itself assumed in this step, or empty.
     takes_none : bool
         The function accepts a parent that the model does not have (a solid without a density).
+    trivial : bool
+        It only takes an input over and need not be printed.
     """
 
     title: str
@@ -49,6 +51,7 @@ class Step:
     substitution: str = ""
     assumes: str = ""
     takes_none: bool = False
+    trivial: bool = False
 
 
 @dataclass(frozen=True, slots=True)

@@ -10,7 +10,6 @@ from __future__ import annotations
 import math
 import threading
 from dataclasses import dataclass
-from importlib import metadata
 from typing import Any, Final
 
 from checker.outcomes import NotEvaluable
@@ -33,6 +32,8 @@ INDUSTRIAL: Final = "IF97"
 LIQUID: Final = "liquid"
 GAS: Final = "gas"
 
+LOWEST_PRESSURE: Final = 1e-3
+"""[Pa] Below, the library's saturation is noise for some fluids, and nobody signs for less."""
 _LIBRARY: Final = "CoolProp"
 _REPRODUCED: Final = 1e-6
 _VANISHING_DENSITY: Final = 1e-6  # mol/m³: the ideal part is exact, so any small density does
@@ -114,7 +115,8 @@ class Library:
         curve = self.melting_temperature if melts else None
         ends = [curve(pressure) for pressure in _LINE_OF_FALLING_ICE] if curve else []
         falls = len(ends) == 2 and ends[0] is not None and ends[1] is not None and ends[1] < ends[0]
-        return Limits(cold, state.Tmax(), state.pmax(), state.p(), melting=curve, ice_floats=falls)
+        ends_at = (state.Tmax(), state.pmax(), state.p(), LOWEST_PRESSURE)
+        return Limits(cold, *ends_at, melting=curve, ice_floats=falls)
 
     def melting_temperature(self, pressure: float) -> float | None:
         """Return the melting temperature [K] at a pressure [Pa], None where the curve does not reach it."""
@@ -262,6 +264,8 @@ def library_of(backend: str, fluid: str) -> Library:
 
 def property_library_version() -> str:
     """Return name and version of the property library, without loading it."""
+    from importlib import metadata  # costs more than everything else here, and only reports ask
+
     try:
         return f"{_LIBRARY} {metadata.version(_LIBRARY)}"
     except metadata.PackageNotFoundError:

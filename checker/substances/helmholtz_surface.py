@@ -5,8 +5,8 @@ from __future__ import annotations
 from typing import Final
 
 from checker.outcomes import NotEvaluable
-from checker.substances.coolprop import LIQUID, TRUSTED
-from checker.substances.library_surface import LOWEST_PRESSURE, LibrarySurface, two_phase_mixture
+from checker.substances.coolprop import LIQUID, LOWEST_PRESSURE, TRUSTED
+from checker.substances.library_surface import LibrarySurface, two_phase_mixture
 from checker.substances.properties import (
     ENERGY,
     ENTROPY,
@@ -23,8 +23,9 @@ _VAPOUR_STEPS: Final = 32
 _ISOCHORE_STEPS: Final = 40
 _LINE_STEPS: Final = 64
 _DENSER: Final = 1.04
-_FIRST_STEPS: Final = (1.0, 1.0005, 1.003, 1.015)
-_MOST_STEPS: Final = 120
+_FINELY_DENSER: Final = 1.01  # beside the coldest isotherm a line may pass through all of its liquid in 2 %
+_MOST_STEPS: Final = 250
+_ABOVE_VACUUM: Final = 1.01
 _THIN: Final = 0.05  # of the critical density
 _ON_THE_DOME: Final = 1e-6
 _CONFIRMED: Final = 1e-3
@@ -99,20 +100,18 @@ class HelmholtzSurface(LibrarySurface):
         if limits.ice_floats and temperature < limits.lowest(0.0):
             return self._below_freezing(temperature)
         limits.refuse_temperature(temperature, limits.triple_pressure, self.name)
-        thinnest = self._thinnest(temperature)
         dome = self.dome(TEMPERATURE, temperature)
+        thinnest = self._thinnest(temperature)
         if dome is None:
             knee = _THIN / self.constants.critical[2]
-            grid = (*geometric(thinnest, knee, _VAPOUR_STEPS), *self._denser(temperature, knee))
+            grid = (*geometric(thinnest, knee, _VAPOUR_STEPS), *self._denser(temperature, knee, _DENSER))
             return (self._over_density(temperature, increasing(grid)),)
         liquid, vapour = (1.0 / point.specific_volume for point in dome)
-        last = (vapour / step for step in _FIRST_STEPS)
-        thin = increasing((*geometric(min(thinnest, 0.1 * vapour), vapour, _VAPOUR_STEPS), *last))
-        return (
-            self._over_density(temperature, thin),
-            *self.between(TEMPERATURE, temperature),
-            self._over_density(temperature, self._denser(temperature, liquid)),
-        )
+        branches = [*self.between(TEMPERATURE, temperature)]
+        if thinnest < vapour:
+            branches.append(self._over_density(temperature, geometric(thinnest, vapour, _VAPOUR_STEPS)))
+        branches.append(self._over_density(temperature, self._denser(temperature, liquid, _DENSER)))
+        return tuple(branches)
 
     def _below_freezing(self, temperature: float) -> Curve:
         """Return the isotherm of water under pressure below its triple point's temperature."""
@@ -128,19 +127,24 @@ class HelmholtzSurface(LibrarySurface):
         pair = (TEMPERATURE, VOLUME)
         return Branch(densities, lambda rho: self._of(pair, temperature, 1.0 / rho), flat=True)
 
-    def _denser(self, temperature: float, density: float) -> tuple[float, ...]:
-        """Return densities from this one to just beyond the highest pressure or the melting line."""
-        found = [density * step for step in _FIRST_STEPS]
+    def _denser(self, temperature: float, density: float, ratio: float) -> tuple[float, ...]:
+        """Return densities from this one to just beyond the highest pressure or the melting line.
+
+        At the start there may be next to no pressure: what ends the row is a state that is missing after others.
+        """
+        found, entered = [density], False
         for _ in range(_MOST_STEPS):
-            found.append(found[-1] * _DENSER)
+            found.append(found[-1] * ratio)
             try:
                 self.library.point((TEMPERATURE, VOLUME), temperature, 1.0 / found[-1])
+                entered = True
             except NotEvaluable:
-                break
+                if entered:
+                    break
         return tuple(found)
 
     def _thinnest(self, temperature: float) -> float:
-        return LOWEST_PRESSURE / (self.constants.gas_constant * temperature)
+        return _ABOVE_VACUUM * LOWEST_PRESSURE / (self.constants.gas_constant * temperature)
 
     def isochore(self, volume: float) -> Curve:
         """Return the curve of constant specific volume [m³/kg] over temperature."""
@@ -166,6 +170,6 @@ class HelmholtzSurface(LibrarySurface):
         limits = self.constants.limits
         critical = 1.0 / self.constants.critical[2]
         thin = geometric(self._thinnest(limits.temperature_max), critical, _LINE_STEPS)
-        dense = self._denser(limits.floor(limits.pressure_max), critical)
+        dense = self._denser(limits.floor(limits.pressure_max), critical, _FINELY_DENSER)
         kinks = (1.0 / point.specific_volume for point in self.saturated_with(name, value))
         return increasing((*thin, *dense, *kinks))

@@ -10,8 +10,6 @@ from checker.substances.matching import matches, residual_along
 from checker.substances.properties import PRESSURE, QUALITY, TEMPERATURE, Pair, Point
 from checker.substances.surface import Branch, Curve, crowded, even, increasing
 
-LOWEST_PRESSURE: Final = 1e-3
-"""[Pa] At least this far down vapours are searched; nobody signs for less."""
 _LIQUID_STEPS: Final = 16
 _VAPOUR_STEPS: Final = 32
 _DOME_STEPS: Final = 40
@@ -47,10 +45,17 @@ class LibrarySurface:
         return self.constants.critical[0]
 
     def at(self, temperature: float, pressure: float, side: str | None = None) -> Point:
-        """Return the state of one phase at temperature [K] and pressure [Pa]."""
-        return self.library.point(
-            (TEMPERATURE, PRESSURE), temperature, pressure, side if self.sides else None
-        )
+        """Return the state of one phase at temperature [K] and pressure [Pa].
+
+        Saying the side of the saturation line helps the library close to it, and here and there stops it elsewhere.
+        """
+        pair = (TEMPERATURE, PRESSURE)
+        if side is not None and self.sides:
+            try:
+                return self.library.point(pair, temperature, pressure, side)
+            except NotEvaluable:
+                pass
+        return self.library.point(pair, temperature, pressure)
 
     def saturated(self, name: str, value: float) -> tuple[Point, Point]:
         """Return saturated liquid and vapour at a temperature or pressure.

@@ -7,7 +7,6 @@ from __future__ import annotations
 
 import re
 from functools import lru_cache
-from importlib import resources
 from typing import Final, NamedTuple
 
 from checker.outcomes import NotEvaluable
@@ -43,6 +42,8 @@ class Fluid(NamedTuple):
 
 
 def _rows(file: str) -> list[list[str]]:
+    from importlib import resources
+
     text = resources.files(__package__).joinpath(file).read_text(encoding="utf-8")
     lines = (line for line in text.splitlines() if line and not line.startswith("#"))
     return [[cell.strip() for cell in line.split("|")] for line in lines]

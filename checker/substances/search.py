@@ -18,6 +18,7 @@ _ITERATIONS: Final = 120
 _EDGE_STEPS: Final = 30
 _GOLDEN: Final = 0.5 * (3.0 - math.sqrt(5.0))
 _GOLDEN_STEPS: Final = 60
+_PROBES: Final = (1e-4, 1e-2, 0.2)
 _PRECISION: Final = 4.0e-16
 _VANISHING: Final = 1.0e-14
 
@@ -75,11 +76,24 @@ def roots(function: Function, parameters: Sequence[float], tolerance: float) -> 
         A residual this small at an end of a run or at an extremum counts as a root; the residual is scaled to 1.
     """
     found = []
-    for samples in _unbroken(function, parameters):
+    for run in _unbroken(function, parameters):
+        samples = _with_probes(function, run)
         found += [x for x, fx in (samples[0], samples[-1]) if abs(fx) <= tolerance]
         found += [bracketed_root(function, *pair) for pair in _changes(samples)]
         found += _at_extrema(function, samples, tolerance)
     return sorted(x for x in found if not math.isnan(x))
+
+
+def _with_probes(function: Function, run: Sequence[_Sample]) -> list[_Sample]:
+    """Return a run with samples close to its ends, where an extremum would hide in the first or last step."""
+    if len(run) < 2:
+        return list(run)
+    (first, second), (before, last) = run[:2], run[-2:]
+    probes = [first[0] + share * (second[0] - first[0]) for share in _PROBES]
+    probes += [last[0] + share * (before[0] - last[0]) for share in _PROBES]
+    samples = {x: function(x) for x in probes}
+    samples.update(run)
+    return sorted((x, fx) for x, fx in samples.items() if not math.isnan(fx))
 
 
 def _changes(samples: Sequence[_Sample]) -> Iterator[tuple[_Sample, _Sample]]:

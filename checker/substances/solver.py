@@ -33,7 +33,13 @@ _ROUTES: Final[tuple[tuple[str, Callable[[Surface], Callable[[float], Curve]]], 
     (ENERGY, lambda surface: surface.isenergetic),
 )
 """Along which curve to search: the first property of this table that is known is held constant."""
-_ONE_PHASE_OR_GIVEN: Final = {(TEMPERATURE, PRESSURE), (TEMPERATURE, QUALITY), (PRESSURE, QUALITY)}
+_SETTLED: Final = {
+    (TEMPERATURE, PRESSURE),
+    (TEMPERATURE, VOLUME),
+    (TEMPERATURE, QUALITY),
+    (PRESSURE, QUALITY),
+}
+"""Pairs of which the library's word is final: the equation's own variables, and what phase equilibrium gives."""
 
 
 def solve(surface: Surface, known: Known) -> list[Point]:
@@ -44,19 +50,23 @@ def solve(surface: Surface, known: Known) -> list[Point]:
     NotEvaluable
         No state in the range of the equation, or the pair does not fix one well enough.
     """
+    refusal: NotEvaluable | None = None
     try:
         point = surface.direct(known)
         if point is not None:
             return [point]
-    except NotEvaluable as refusal:
-        # Close to the critical point the library sometimes misses a root that is there: search for it.
-        if known.pair in _ONE_PHASE_OR_GIVEN or refusal.kind != "no-solution":
+    except NotEvaluable as caught:
+        if known.pair in _SETTLED or caught.kind == "not-supported":
             raise
+        # Here and there the library misses a root that is there, or finds one outside the range: search.
+        refusal = caught
     held, curve_of = next((name, route) for name, route in _ROUTES if name in known.pair)
     curve = curve_of(surface)(known.value(held))
     sought = known.other(held)
     found = chain.from_iterable(_on_branch(surface, b, sought, known.value(sought)) for b in curve)
     points = _distinct(found, surface.reproduces)
+    if not points and refusal is not None and refusal.kind == "outside-range":
+        raise refusal
     if not points:
         raise NotEvaluable(f"no state of {surface.name} within the range of its equation has {known}")
     return points
