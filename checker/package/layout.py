@@ -65,6 +65,8 @@ def field_of(part: type[Part], key: str) -> FieldInfo | None:
 
 def article(part: type[Part]) -> str:
     """Return what a part is called, with its article."""
+    if part.called:
+        return part.called
     words = "".join(f" {c.lower()}" if c.isupper() else c for c in part.__name__).strip()
     return f"{'an' if words[0] in 'aeiou' else 'a'} {words}"
 

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import re
 from dataclasses import dataclass
-from typing import Annotated, Any, Final, TypeVar
+from typing import Annotated, Any, ClassVar, Final, TypeVar
 
 from pydantic import (
     AfterValidator,
@@ -31,7 +31,12 @@ T = TypeVar("T")
 
 
 class Part(BaseModel):
-    """A mapping of the format. A known key without a value counts as not written."""
+    """A mapping of the format. A known key without a value counts as not written.
+
+    ``called`` is what messages call it, with its article.
+    """
+
+    called: ClassVar[str] = ""
 
     model_config = ConfigDict(strict=True, extra="forbid", frozen=True, allow_inf_nan=False, defer_build=True)
 

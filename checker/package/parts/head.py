@@ -25,6 +25,8 @@ class Conventions(Part):
 class Head(Part):
     """Header of the package, printed on the cover of the review as written."""
 
+    called = "the header of a package"
+
     number: Text = Field(default="", description="Document number of the package.")
     title: Text = Field(default="", description="Title of the package.")
     revision: Text = Field(default="", description="Revision, as written: 01 stays 01.")

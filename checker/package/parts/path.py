@@ -16,6 +16,8 @@ POINT_NAMES: Final = ("pressure", "volume")
 class PathPoint(Part):
     """A point of a line in the p–V diagram."""
 
+    called = "a point of a path"
+
     pressure: Annotated[object, OneQuantity(Level.PATH, "pressure")] = Field(
         description="Pressure at this point."
     )
@@ -26,6 +28,8 @@ class PathPoint(Part):
 
 class PathSpec(Part):
     """A path with its parameters."""
+
+    called = "a path with parameters"
 
     kind: PathKind = Field(description="Which path.")
     exponent: Annotated[object, OneQuantity(Level.PATH, "exponent")] = Field(

@@ -70,6 +70,8 @@ class WorkTransfer(Part):
 class Share(Part):
     """One body's share in a process."""
 
+    called = "a body's share in a process"
+
     inputs: ProcessNames = Field({}, description="What the originator started from.")
     results: ProcessNames = Field({}, description="What the originator claims.")
 

@@ -25,6 +25,8 @@ Purpose = Annotated[str | None, Word(PURPOSES, "a purpose")]
 class ProcessSequence(Part):
     """A balance over several processes."""
 
+    called = "a sequence"
+
     id: Identifier = Field(description="Identifier of the sequence.")
     title: Text = Field(default="", description="Free text.")
     processes: Many[Text] = Field(min_length=1, description="Its processes, in order.")

@@ -18,6 +18,8 @@ EQUILIBRIUM_MEANING = "What is the same in all bodies: [temperature] or [tempera
 class BodyState(Part):
     """A body in a state."""
 
+    called = "a body in a state"
+
     inputs: StateNames = Field({}, description="Properties that the originator started from.")
     results: StateNames = Field({}, description="Properties that the originator claims.")
     same_as: Text | None = Field(

@@ -118,4 +118,4 @@ def test_a_point_without_its_volume(one_problem: OneProblem) -> None:
     """A point has both coordinates."""
     problem = one_problem((WORD, "path: {kind: pressure linear in volume, points: [«{pressure: 1 bar}]}"))
     assert problem.kind == "part-missing"
-    assert "`volume` is missing in a path point" in problem.message
+    assert "`volume` is missing in a point of a path" in problem.message
