@@ -12,6 +12,7 @@ from checker.document.yaml_errors import explain
 from checker.problems import Problem
 
 _LOADER: Final = getattr(yaml, "CSafeLoader", yaml.SafeLoader)
+_WITH_TAG: Final = (yaml.ScalarEvent, yaml.CollectionStartEvent)
 _NULLS: Final = frozenset({"", "~", "null", "Null", "NULL"})
 _ALIAS_ADVICE: Final = "Write the value out; quote a text that starts with & * or !."
 
@@ -60,7 +61,7 @@ def _node(event: yaml.NodeEvent, builder: TreeBuilder) -> None:
         builder.refuse(
             f"The anchor &{event.anchor} names a value for copying.", position, _ALIAS_ADVICE, lost=False
         )
-    if isinstance(event, yaml.ScalarEvent | yaml.CollectionStartEvent) and event.tag is not None:
+    if isinstance(event, _WITH_TAG) and event.tag is not None:
         builder.refuse(
             f"The tag {event.tag[:60]} asks for a type; every value is text here.",
             position,

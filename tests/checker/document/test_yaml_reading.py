@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import pytest
+import yaml
 
 from checker.document import Document, Mapping, Position, Scalar, plain_tree, read_document
 
@@ -146,3 +147,23 @@ def test_thousandfold_nesting_is_a_located_problem() -> None:
     """Nesting beyond what the parser takes is the same problem, for the whole file."""
     document = read("[" * 5000)
     assert [(p.kind, p.fatal) for p in document.problems] == [("nesting-too-deep", True)]
+
+
+@pytest.mark.parametrize(
+    "text",
+    [
+        "a: {b: 5 kJ, 'c': [1, 2]}\n# end\n",
+        "a:\n\tb: 1\n",
+        "title: Vessel: the second\n",
+        "a: {b: 1, c: 2\nd: 3\n",
+        "title: 'abc\nx: 1\n",
+        "a: &x 5\nb: *x\n",
+        "a: 1\n---\nb: 2\n",
+        "a: {b: 1, b: 2}\n",
+    ],
+)
+def test_without_the_compiled_parser_the_same_is_read(text: str, monkeypatch: pytest.MonkeyPatch) -> None:
+    """Where the parser's compiled part is not installed, tree and problems are the same."""
+    compiled = read(text)
+    monkeypatch.setattr("checker.document.yaml_reader._LOADER", yaml.SafeLoader)
+    assert read(text) == compiled

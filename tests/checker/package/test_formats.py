@@ -113,7 +113,7 @@ def test_reading_is_quick() -> None:
         start = time.perf_counter()
         read_package(data)
         times.append(time.perf_counter() - start)
-    assert min(times) < 0.1
+    assert min(times) < 0.2
 
 
 HOSTILE = {
