@@ -1,7 +1,8 @@
 """One record through the whole alternate calculation, from its bytes to its independent values.
 
 The checks of this folder write a package, read it as any package is read, and compare what the sheet makes of the
-inputs alone. Nothing is stated as a result, so no stated value can leak into what is checked.
+inputs alone. Every quantity that is asked for is also claimed, as 1 in SI: the alternate calculation works out what
+is claimed, and a claim that leaked into it would show at once.
 """
 
 from __future__ import annotations
@@ -47,6 +48,32 @@ def si(value: float, unit: str) -> str:
     return f"{value!r} {unit}".strip()
 
 
+CLAIMS_OF_A_STATE = (
+    "temperature",
+    "pressure",
+    "specific_volume",
+    "specific_internal_energy",
+    "specific_entropy",
+    "specific_exergy",
+)
+CLAIMS_OF_A_PROCESS = (
+    "heat",
+    "work",
+    "boundary_work",
+    "internal_energy_change",
+    "enthalpy_change",
+    "kinetic_energy_change",
+    "potential_energy_change",
+    "energy_change",
+    "entropy_change",
+    "entropy_transfer",
+    "entropy_generation",
+    "exergy_change",
+    "exergy_transfer",
+    "exergy_destruction",
+)
+CLAIMS_OF_A_CYCLE = ("net_work", "net_heat", "heat_supplied", "heat_rejected", "thermal_efficiency")
+
 UNITS: Mapping[str, str] = {
     "temperature": "K",
     "pressure": "Pa",
@@ -72,14 +99,20 @@ UNITS: Mapping[str, str] = {
     "piston_area": "m²",
     "pressure_at_contact": "Pa",
     "volume_at_contact": "m³",
-    "heat": "J",
-    "boundary_work": "J",
+    "specific_exergy": "J/kg",
+    "thermal_efficiency": "",
+    "coefficient_of_performance": "",
 }
+
+
+def unit_of(name: str) -> str:
+    """Return the SI unit of a quantity; what is not listed is an energy or an entropy."""
+    return UNITS.get(name, "J/K" if "entropy" in name else "J")
 
 
 def quantities(**values: float) -> dict[str, str]:
     """Return inputs in SI from plain numbers."""
-    return {name: si(value, UNITS[name]) for name, value in values.items()}
+    return {name: si(value, unit_of(name)) for name, value in values.items()}
 
 
 def matter(substance: str, model: str, **inputs: float) -> dict[str, Any]:
@@ -108,20 +141,38 @@ def process(first: str, last: str, name: str = "change", **members: Any) -> dict
     return {"id": name, "from": first, "to": last, **members}
 
 
+def _claiming(part: Mapping[str, Any], names: Sequence[str]) -> dict[str, Any]:
+    """Return a part of a record that also claims these quantities, as 1 in SI, where they are not inputs."""
+    claims = quantities(**{name: 1.0 for name in names if name not in part.get("inputs", {})})
+    return {**part, "results": {**claims, **part.get("results", {})}}
+
+
+def _process_claiming(part: Mapping[str, Any]) -> dict[str, Any]:
+    claiming = _claiming(part, CLAIMS_OF_A_PROCESS)
+    items = part.get("heat_transfers")
+    if items is not None and len(items) > 1:
+        claiming["heat_transfers"] = [_claiming(item, ("energy",)) for item in items]
+    return claiming
+
+
 def calculate(
     body: Mapping[str, Any],
     states: Mapping[str, Mapping[str, float]],
     processes: Sequence[Mapping[str, Any]],
     **members: Any,
 ) -> Calculated:
-    """Return the independent values of a record with one body."""
+    """Return the independent values of a record with one body; everything of interest is claimed as 1."""
+    known = {name: {"inputs": quantities(**found)} for name, found in states.items()}
     record = {
         "id": "case",
         "bodies": {"matter": body},
-        "states": {name: {"matter": {"inputs": quantities(**known)}} for name, known in states.items()},
-        "processes": list(processes),
+        "states": {name: {"matter": _claiming(part, CLAIMS_OF_A_STATE)} for name, part in known.items()},
+        "processes": [_process_claiming(part) for part in processes],
         **members,
     }
+    if len(processes) > 1:
+        useful = ("coefficient_of_performance",) if "purpose" in members else ()
+        record = _claiming(record, (*CLAIMS_OF_A_CYCLE, *useful))
     return calculated(record)
 
 
@@ -142,6 +193,6 @@ def one_change(
     last: Mapping[str, float],
     **members: Any,
 ) -> Calculated:
-    """Return the independent values of one process from a first to a last state; no heat or work unless given."""
+    """Return the independent values of one process from a first to a last state; no other work unless given."""
     members = {"work_transfers": [], **members}
     return calculate(body, {"first": first, "last": last}, [process("first", "last", **members)])

@@ -162,9 +162,9 @@ def test_thermal_efficiency_is_the_closed_form(cycle: Cycle) -> None:
 
 
 @pytest.mark.parametrize("cycle", CYCLES, ids=name_of)
-@pytest.mark.parametrize("property_", ["internal_energy_change", "entropy_change", "volume_change"])
+@pytest.mark.parametrize("property_", ["internal_energy_change", "enthalpy_change", "entropy_change"])
 def test_nothing_of_a_state_remains_after_a_cycle(cycle: Cycle, property_: str) -> None:
-    """ΔU, ΔS and ΔV of the processes sum to zero around every cycle."""
+    """ΔU, ΔH and ΔS of the processes sum to zero around every cycle."""
     found = run(cycle)
     changes = [found.process(property_, f"p{i}") for i in range(len(cycle.paths))]
     assert sum(changes) == pytest.approx(0.0, abs=1e-8 * max(map(abs, changes)))
@@ -177,3 +177,23 @@ def test_a_reversed_carnot_cycle_has_the_carnot_coefficient(purpose: str, useful
     expected = useful / (350.0 - T1)
     assert found.value("results/coefficient_of_performance") == pytest.approx(expected, rel=1e-8)
     assert found.value("results/net_work") < 0.0
+
+
+def test_a_cycle_without_heat_supplies_and_rejects_none() -> None:
+    """Compression and expansion along one adiabat supply and reject nothing: zero, which is a value to compare."""
+    states = {"s0": COLD, "s1": {"specific_volume": V1 / 5.0}}
+    back_and_forth = [
+        process("s0", "s1", name="in", path="isentropic", heat_transfers=[]),
+        process("s1", "s0", name="out", path="isentropic", heat_transfers=[]),
+    ]
+    body = matter(
+        "Works gas",
+        "constant specific heat",
+        mass=0.003,
+        specific_heat_at_constant_volume=CV,
+        gas_constant=R,
+    )
+    found = calculate(body, states, back_and_forth)
+    assert found.value("results/heat_supplied") == 0.0
+    assert found.value("results/heat_rejected") == 0.0
+    assert found.value("results/net_work") == pytest.approx(0.0, abs=1e-9)
