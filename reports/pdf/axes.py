@@ -10,6 +10,7 @@ from typing import Final
 
 _MARGIN: Final = 0.08  # of the span, beyond the outermost point
 _MANY: Final = 7
+_HAIR: Final = 1e-9  # of a step: an end that is a tick but for rounding has its tick
 _RAISED: Final = str.maketrans("-0123456789", "⁻⁰¹²³⁴⁵⁶⁷⁸⁹")
 
 
@@ -69,7 +70,7 @@ def extent(states: Iterable[float], everything: Iterable[float], log: bool) -> E
 def axis(shown: Extent, log: bool) -> Axis:
     """Return an axis with a margin on both sides, and of a span that is never zero."""
     low, high = shown.all
-    smallest = max(1e-3 if log else 1e-6 * max(abs(low), abs(high)), 1e-12)
+    smallest = 0.02 if log else max(0.02 * max(abs(low), abs(high)), 1e-6)
     if high - low < smallest:
         low, high = low - smallest / 2, high + smallest / 2
     margin = _MARGIN * (high - low)
@@ -84,7 +85,7 @@ def _linear_ticks(low: float, high: float) -> list[float]:
     rough = (high - low) / 5
     power = 10.0 ** math.floor(math.log10(rough))
     step = next(factor * power for factor in (1, 2, 5, 10) if factor * power >= rough * 0.999)
-    first, last = math.ceil(low / step), math.floor(high / step)
+    first, last = math.ceil(low / step - _HAIR), math.floor(high / step + _HAIR)
     return [number * step for number in range(first, last + 1)]
 
 
@@ -102,14 +103,19 @@ def _power_text(value: float, step: float = 0.0) -> str:
     del step  # neighbours on a logarithmic axis need no common number of decimals
     if 1e-4 <= value < 1e5:
         return f"{value:.6f}".rstrip("0").rstrip(".")
-    mantissa, power = f"{value:.0e}".split("e")
-    front = "" if mantissa == "1" else f"{mantissa}×"
-    return f"{front}10{str(int(power)).translate(_RAISED)}"
+    return _with_power(f"{value:.0e}")
 
 
 def _text(value: float, step: float) -> str:
     """Return a number with the decimals of the step between neighbours."""
     if value and not 1e-4 <= abs(value) < 1e6:
-        return f"{value:.3g}".replace("-", "−")
+        return _with_power(f"{value:.2e}")
     decimals = max(0, -math.floor(math.log10(step) + 1e-9))
     return f"{value:.{min(decimals, 8)}f}".replace("-", "−")
+
+
+def _with_power(text: str) -> str:
+    mantissa, power = text.split("e")
+    shown = mantissa.rstrip("0").rstrip(".") if "." in mantissa else mantissa
+    front = {"1": "", "-1": "−"}.get(shown, f"{shown.replace('-', '−')}×")
+    return f"{front}10{str(int(power)).translate(_RAISED)}"

@@ -8,13 +8,13 @@ from typing import Any, Final
 from reportlab.platypus import Table, TableStyle
 
 from checker.findings import Diagram
-from reports.pdf.fonts import BOLD, REGULAR, width
+from reports.pdf.fonts import BOLD, REGULAR
 from reports.pdf.labels import Box, around, place_labels
-from reports.pdf.picture import LETTERS, Element, Pen, Picture, Sign, Stroke, Words
+from reports.pdf.picture import LETTERS, Element, Pen, Picture, Sign, Stroke, Words, words_width
 from reports.pdf.plot import FRAME, WIDTH, Plot, plot, sampled
 from reports.pdf.styles import FAINT, MUTED, TEXT_WIDTH
 from reports.pdf.tables import TABLE_FONT
-from reports.pdf.text import fitting, flat
+from reports.pdf.text import fitting
 
 _TOP: Final = FRAME.top + 26
 _LEGEND_ROW: Final = 10.0
@@ -76,7 +76,7 @@ def _x_ticks(shown: Plot) -> Iterator[Element]:
     for place, text in shown.x.ticks():
         x = FRAME.left + place * (FRAME.right - FRAME.left)
         yield Stroke(((x, FRAME.bottom), (x, FRAME.top)), _FAINT_LINE)
-        half = width(flat(text), REGULAR, LETTERS) / 2
+        half = words_width(text) / 2
         if x - half >= free and x + half <= WIDTH:  # a text that would touch its neighbour is left out
             yield Words(x, FRAME.bottom - 10, text, 0.5)
             free = x + half + 3
@@ -97,8 +97,9 @@ def _labels(shown: Plot) -> Iterator[Element]:
     wanted = [
         (point, fitting(text, REGULAR, LETTERS, WIDTH / 2)) for point, text in shown.labels()[:_MOST_LABELS]
     ]
-    sizes = [(x, y, width(text, REGULAR, LETTERS)) for (x, y), text in wanted]
-    places = place_labels(sizes, LETTERS, _taken(shown), FRAME)
+    sizes = [(x, y, words_width(text)) for (x, y), text in wanted]
+    points = [point for _, point in shown.marks]
+    places = place_labels(sizes, LETTERS, points, _taken(shown), FRAME)
     for ((x, y), text), (box, far) in zip(wanted, places, strict=True):
         if far:
             edge = min(max(x, box.left), box.right), min(max(y, box.bottom), box.top)

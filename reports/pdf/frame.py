@@ -10,7 +10,7 @@ from reportlab.platypus import Flowable, Frame, PageTemplate
 from checker.findings import Review
 from reports.pdf.fonts import REGULAR, width
 from reports.pdf.styles import FOOTER, HAIRLINE, HEADER, LANDSCAPE, MARGIN, MUTED, PORTRAIT, RULE
-from reports.pdf.text import fitting
+from reports.pdf.text import fitting, flat
 
 _SIZE: Final = 8
 _TOTAL: Final = "number-of-pages"
@@ -60,7 +60,7 @@ def _header(canvas: Any, review: Review) -> None:
     right, top = canvas._pagesize[0] - MARGIN, canvas._pagesize[1] - 15 * mm
     name = f"{package.number or package.file}, revision {package.revision or 'not stated'}"
     _pen(canvas)
-    canvas.drawString(MARGIN, top, fitting(name, REGULAR, _SIZE, (right - MARGIN) * 0.6))
+    canvas.drawString(MARGIN, top, fitting(flat(name), REGULAR, _SIZE, (right - MARGIN) * 0.6))
     canvas.drawRightString(right, top, f"Review: {review.verdict.value}")
     canvas.line(MARGIN, top - 5, right, top - 5)
 

@@ -10,6 +10,11 @@ from typing import Final
 _DISTANCES: Final = (7.5, 13.0, 21.0, 32.0)
 _DIRECTIONS: Final = (45, 135, 315, 225, 0, 180, 90, 270)
 _POINT: Final = 1.0  # half the side of the box that a point of a curve occupies
+_COST_OF_DISTANCE: Final = 0.4  # in points of area for each point of distance
+_WEIGHT_OF_LABELS: Final = 6  # a label that covers a curve can be read, one that covers another cannot
+_COST_OF_DOUBT: Final = 60.0  # where the label is nearer to the point of another
+
+Point = tuple[float, float]
 
 
 @dataclass(frozen=True, slots=True)
@@ -27,6 +32,12 @@ class Box:
         high = min(self.top, other.top) - max(self.bottom, other.bottom)
         return wide * high if wide > 0 and high > 0 else 0.0
 
+    def distance(self, point: Point) -> float:
+        """Return how far a point is from the box."""
+        x = max(self.left - point[0], 0.0, point[0] - self.right)
+        y = max(self.bottom - point[1], 0.0, point[1] - self.top)
+        return math.hypot(x, y)
+
     def outside(self, frame: Box) -> float:
         """Return the area that lies outside a frame."""
         return (self.right - self.left) * (self.top - self.bottom) - self.overlap(frame)
@@ -38,7 +49,11 @@ def around(x: float, y: float, half: float = _POINT) -> Box:
 
 
 def place_labels(
-    wanted: Sequence[tuple[float, float, float]], height: float, taken: Iterable[Box], frame: Box
+    wanted: Sequence[tuple[float, float, float]],
+    height: float,
+    points: Sequence[tuple[float, float]],
+    taken: Iterable[Box],
+    frame: Box,
 ) -> tuple[tuple[Box, bool], ...]:
     """Return a box for each label, and whether it lies so far off that a line should lead to it.
 
@@ -48,8 +63,10 @@ def place_labels(
         The point that a label belongs to, and the width of its text [pt].
     height : float
         Height of a label [pt].
+    points : sequence of (float, float)
+        All points that have or could have a label; one stays away from the points of others.
     taken : iterable of Box
-        What is drawn already.
+        What else is drawn already.
     frame : Box
         Labels stay inside it if they can.
 
@@ -61,24 +78,29 @@ def place_labels(
     obstacles = list(taken)
     placed: list[tuple[Box, bool]] = []
     for x, y, width in wanted:
-        box, far = _best(x, y, width, height, obstacles, frame)
-        obstacles.append(box)
+        others = [point for point in points if math.dist(point, (x, y)) > 1]
+        box, far = _best((x, y), (width, height), obstacles, others, frame)
+        obstacles += [box] * _WEIGHT_OF_LABELS
         placed.append((box, far))
     return tuple(placed)
 
 
 def _best(
-    x: float, y: float, width: float, height: float, obstacles: Sequence[Box], frame: Box
+    point: Point, size: Point, obstacles: Sequence[Box], others: Sequence[Point], frame: Box
 ) -> tuple[Box, bool]:
-    best, least, far = around(x, y), math.inf, False
+    """Return the place that costs least: it covers little, is near, and is nearer to its own point than to others."""
+    reach = around(*point, _DISTANCES[-1] + size[0])
+    near = [box for box in obstacles if box.overlap(reach)]
+    best, least, far = around(*point), math.inf, False
     for distance in _DISTANCES:
+        if _COST_OF_DISTANCE * distance >= least:
+            break
         for direction in _DIRECTIONS:
-            box = _beside(x, y, width, height, distance, direction)
-            cost = 3 * box.outside(frame) + sum(map(box.overlap, obstacles))
+            box = _beside(*point, *size, distance, direction)
+            cost = _COST_OF_DISTANCE * distance + 3 * box.outside(frame) + sum(map(box.overlap, near))
+            cost += _COST_OF_DOUBT if any(box.distance(p) < box.distance(point) for p in others) else 0
             if cost < least:
                 best, least, far = box, cost, distance > _DISTANCES[1]
-            if not cost:
-                return best, far
     return best, far
 
 

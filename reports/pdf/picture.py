@@ -10,13 +10,15 @@ from reportlab.lib.colors import Color, white
 from reportlab.platypus import Flowable
 
 from reports.pdf.clipping import Point
-from reports.pdf.fonts import REGULAR
+from reports.pdf.fonts import REGULAR, width
 from reports.pdf.styles import INK
-from reports.pdf.text import flat
+from reports.pdf.text import in_heights, printable
 
 LETTERS: Final = 7.2
 """Size of all texts in pictures [pt]."""
 
+_RAISED_LETTERS: Final = 5.2
+_RISE: Final = 2.4
 _DOT: Final = 2.4
 _SQUARE: Final = 4.0
 
@@ -82,12 +84,21 @@ class Words:
     font: str = REGULAR
 
     def draw(self, canvas: Any) -> None:
-        """Draw it."""
-        shown = flat(self.text)
-        canvas.setFont(self.font, LETTERS)
+        """Draw it, raised signs raised."""
+        parts = in_heights(printable(self.text))
+        x = self.x - self.anchor * words_width(self.text, self.font)
         canvas.setFillColor(INK)
-        left = self.x - self.anchor * canvas.stringWidth(shown, self.font, LETTERS)
-        canvas.drawString(left, self.y, shown)
+        for part, raised in parts:
+            size, rise = (_RAISED_LETTERS, _RISE) if raised else (LETTERS, 0.0)
+            canvas.setFont(self.font, size)
+            canvas.drawString(x, self.y + rise, part)
+            x += width(part, self.font, size)
+
+
+def words_width(text: str, font: str = REGULAR) -> float:
+    """Return the width of a text as it is drawn [pt]."""
+    parts = in_heights(printable(text))
+    return sum(width(part, font, _RAISED_LETTERS if raised else LETTERS) for part, raised in parts)
 
 
 Element = Stroke | Sign | Words

@@ -61,9 +61,19 @@ def flat(text: str, limit: int = LIMIT) -> str:
     return printable(text, limit).replace("⁻", "−").replace("⁺", "+")
 
 
+def in_heights(text: str) -> list[tuple[str, bool]]:
+    """Return printable text in parts, each with whether it is to be raised."""
+    parts: list[tuple[str, bool]] = []
+    start = 0
+    for match in _RAISED.finditer(text):
+        parts += [(text[start : match.start()], False), (match[0].translate(_LOWERED_BY_RAISING), True)]
+        start = match.end()
+    return [part for part in (*parts, (text[start:], False)) if part[0]]
+
+
 def fitting(text: str, font: str, size: float, room: float) -> str:
-    """Return text for a place without markup, cut to fit a line of a width [pt]."""
-    shown = flat(text, 120)
+    """Return printable text cut to fit a line of a width [pt]."""
+    shown = printable(text, 120)
     while len(shown) > 1 and width(shown, font, size) > room:
         shown = shown[:-2] + "…"
     return shown

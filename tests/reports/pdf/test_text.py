@@ -2,15 +2,13 @@
 
 from __future__ import annotations
 
-from html import unescape
-
 import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
 from reports.pdf.fonts import REGULAR, width
 from reports.pdf.styles import CELL
-from reports.pdf.text import bold, cut, fitting, flat, formula, link, marked, paragraph, pointer, printable
+from reports.pdf.text import cut, fitting, flat, formula, marked, paragraph, pointer, printable
 
 
 @pytest.mark.parametrize(
@@ -59,15 +57,12 @@ def test_formulas_lower_their_indexes(text: str, markup: str) -> None:
     assert formula(text) == markup
 
 
-@given(st.text(st.characters()))
+@given(st.text(st.characters(exclude_characters="⁺⁻"), min_size=1))
 def test_nothing_of_others_is_obeyed(text: str) -> None:
-    """Any text makes a paragraph, and comes out of it as it was to be printed."""
-    made = paragraph(CELL, text, bold(text), link(text, "key"))
+    """Whatever is written, the paragraph says just that, in marks where it must."""
+    made = paragraph(CELL, text)
     made.wrap(400, 4000)
-    plain = printable(text).replace("⁻", "−").replace("⁺", "+")
-    shown = unescape(str(made.getPlainText(identify=True)))
-    assert shown.count("".join(plain.split())) >= 0  # the text came through without an exception
-    assert "\x1b" not in shown
+    assert made.getPlainText().split() == printable(text).split()
 
 
 @given(st.text(st.characters(), max_size=300), st.floats(5, 200))
@@ -93,4 +88,4 @@ def test_pointers_break_behind_slashes() -> None:
 
 def test_text_in_drawings_has_plain_signs() -> None:
     """Where there is no markup, a raised minus becomes a minus."""
-    assert flat("s [kJ·kg⁻¹]") == "s [kJ·kg−1]" or flat("s [kJ·kg⁻¹]") == "s [kJ·kg−¹]"
+    assert flat("s [kJ·kg⁻¹]") == "s [kJ·kg−¹]"
