@@ -15,6 +15,9 @@ from checker.package import submit
 HEAD: dict[str, Any] = {
     "number": "TC-1",
     "title": "Trial",
+    "revision": "0",
+    "date": "2026-03-14",
+    "originator": "Process group",
     "conventions": {"work": "positive out"},
     "surroundings": {"temperature": "20 °C", "pressure": "1.013 bar"},
 }
