@@ -51,11 +51,8 @@ def review_submission(
     locator = Locator(document)
     by_name = {rule.name: rule for rule in rulebook}
     findings: list[Finding] = []
-    problems = (
-        *document.problems,
-        *submission.problems,
-        *(p for r in submission.records for p in r.problems),
-    )
+    # Problems of the file's form are among these, those inside a record with its name.
+    problems = (*submission.problems, *(p for r in submission.records for p in r.problems))
     for problem in dict.fromkeys(problems):
         findings.append(finding_of_problem(problem, by_name, locator))
     findings.extend(_package_findings(submission, rulebook, locator))

@@ -296,7 +296,12 @@ TRANSFER: Final[tuple[Term, ...]] = (
 PATH: Final[tuple[Term, ...]] = (
     Term("exponent", "n", dim.NONE, "", "exponent of p·vⁿ = constant", theme="path"),
     replace(
-        PRESSURE, name="external_pressure", symbol="p_ext", meaning="constant pressure outside", theme="path"
+        PRESSURE,
+        name="external_pressure",
+        symbol="p_ext",
+        meaning="constant pressure outside",
+        theme="path",
+        positive=False,
     ),
     Term("stiffness", "k", dim.STIFFNESS, "kN/m", "stiffness of the spring", theme="path", positive=True),
     Term("piston_area", "A", dim.AREA, "m²", "area of the piston", theme="path", positive=True),

@@ -10,7 +10,7 @@ from checker.facts.gaps import unexplained
 from checker.facts.stated import is_wrong
 from checker.facts.use import inputs, untraceable, unused_inputs, without_source
 from checker.findings import Grade, Outcome
-from checker.submission import Role, Statement, Submission
+from checker.submission import PackageHead, Role, Statement, Submission
 from rules.rule import Rule, Scope
 from rules.state import report_gaps
 
@@ -22,9 +22,9 @@ INDEPENDENT: Final = (
 
 
 def not_identified(submission: Submission) -> Yielded:
-    """Yield a package without number or revision."""
+    """Yield a package whose header has no number or no revision; without any header reading says so."""
     lacking = [name for name in ("number", "revision") if not getattr(submission.head, name)]
-    if lacking:
+    if lacking and submission.head != PackageHead():
         yield Raised(
             f"The package has no {' and no '.join(lacking)}.",
             quantity="package",

@@ -18,6 +18,7 @@ COLDEST: Final = 1.0
 HOTTEST: Final = 3500.0
 AMBIENT: Final = (213.15, 333.15)
 ATMOSPHERES: Final = (45e3, 110e3)
+ROUNDING: Final = 1e-9
 _SI: Final = "SI Brochure, 9th ed. (BIPM, 2019)"
 
 
@@ -57,7 +58,7 @@ def surroundings_implausible(case: Case) -> Yielded:
         ("pressure", ATMOSPHERES, "an absolute atmospheric pressure"),
     ):
         for s in case.stated(f"surroundings/{name}"):
-            if not low <= s.value <= high:
+            if not low * (1.0 - ROUNDING) <= s.value <= high * (1.0 + ROUNDING):
                 yield Raised(
                     f"{s.quantity.text} is not {meant}; every gauge pressure and every exergy of the record uses it.",
                     statement=s,

@@ -7,7 +7,7 @@ from dataclasses import dataclass
 
 from checker.case import Case
 from checker.comparison.compare import Compared
-from checker.facts.state_gaps import state_gaps
+from checker.facts.state_gaps import is_refused, state_gaps
 from checker.facts.twins import CONSTANT, IDEAL, REAL
 from checker.findings import Outcome
 from checker.outcomes import NotEvaluable
@@ -56,6 +56,7 @@ def gaps(case: Case) -> tuple[Gap, ...]:
     """Return every gap of a record, in a fixed order."""
     return (
         *_models(case),
+        *_refused_inputs(case),
         *(Gap(g.rule, g.pointer, g.place, g.reason, g.marks) for g in state_gaps(case)),
         *_sequences(case),
         *(gap for process in case.record.processes for gap in _process(case, process)),
@@ -93,6 +94,14 @@ def _models(case: Case) -> Iterator[Gap]:
         except NotEvaluable as outcome:
             rule, reason = _rule_of_model(body, outcome), outcome.reason
             yield Gap(rule, f"bodies/{name}", body.place, reason, (reason,))
+
+
+def _refused_inputs(case: Case) -> Iterator[Gap]:
+    """Yield inputs that are never calculated with because they are zero or less."""
+    for s in case.record.statements:
+        if is_refused(s):
+            reason = f"{s.quantity.text} is not above zero"
+            yield Gap("value-not-positive", s.pointer, s.place, reason, (reason,))
 
 
 def _rule_of_model(body: Body, outcome: NotEvaluable) -> str:

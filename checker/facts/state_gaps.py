@@ -9,7 +9,7 @@ from typing import Final
 from checker.case import Case
 from checker.outcomes import NotEvaluable
 from checker.problems import Place
-from checker.submission import BodyState, Role
+from checker.submission import BodyState, Role, Statement
 from checker.substances.interface import Phase
 
 RULE_OF_KIND: Final = {
@@ -23,6 +23,7 @@ RULE_OF_KIND: Final = {
 TWO_PHASE: Final = "two-phase-from-temperature-and-pressure"
 REACHES_ACROSS: Final = "reach across the saturation line"
 URGENCY: Final = (
+    "value-not-positive",
     TWO_PHASE,
     "near-saturation",
     "outside-range",
@@ -89,10 +90,18 @@ def _single(case: Case) -> Iterator[StateGap]:
 
 
 def _rule(case: Case, found: BodyState, failure: NotEvaluable | None, reason: str) -> str:
+    base = f"states/{found.state}/{found.body}/"
+    if any(s.pointer.startswith(base) and is_refused(s) for s in case.record.statements):
+        return "value-not-positive"
     near = REACHES_ACROSS in reason or (failure is not None and failure.kind == "near-saturation")
     if near:
         return TWO_PHASE if _claims_two_phases(case, found) else "near-saturation"
     return RULE_OF_KIND.get(failure.kind, "state-undetermined") if failure else "state-undetermined"
+
+
+def is_refused(s: Statement) -> bool:
+    """Say whether an input is never calculated with because it is zero or less."""
+    return s.role is Role.INPUT and s.usable and s.term.positive and s.quantity.value <= 0.0
 
 
 def _claims_two_phases(case: Case, found: BodyState) -> bool:

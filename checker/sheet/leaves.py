@@ -47,6 +47,9 @@ def collect(
         if not statement.usable:
             unusable[key] = f"{statement.quantity.text} cannot be used for it"
             continue
+        if statement.term.positive and statement.quantity.value <= 0.0 and statement.role is Role.INPUT:
+            unusable[key] = f"{statement.quantity.text} is not above zero"
+            continue
         stated.add(key)
         if statement.role is not Role.INPUT or given(key) in values:
             continue

@@ -98,14 +98,18 @@ def explain(
         if wanted in seen:
             continue
         seen.add(wanted)
-        lacking = _least_lacking(wanted, known | seen, makers)
-        if lacking:
-            waiting.extend(lacking)
-        else:
+        lacking = _least_lacking(wanted, known, seen, makers)
+        if lacking is None:
             reasons[say(wanted)] = None
-    return "; ".join(reasons)
+        else:
+            waiting.extend(lacking)
+    return "; ".join(reasons) or say(key)
 
 
-def _least_lacking(key: str, known: set[str], makers: Mapping[str, Sequence[Step]]) -> list[str]:
+def _least_lacking(
+    key: str, known: set[str], seen: set[str], makers: Mapping[str, Sequence[Step]]
+) -> list[str] | None:
+    """Return what the formula that lacks least still lacks, what was asked before left out; None without one."""
     options = [[parent for parent in step.parents if parent not in known] for step in makers.get(key, ())]
-    return min((lacking for lacking in options if lacking), key=len, default=[])
+    left = [[parent for parent in lacking if parent not in seen] for lacking in options if lacking]
+    return min(left, key=len) if left else None
