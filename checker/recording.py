@@ -111,7 +111,11 @@ def _not_compared(case: Case) -> Iterator[NotChecked]:
 
 def _assumed(case: Case) -> Iterator[str]:
     """Yield what the review itself assumed, each once."""
-    yield from dict.fromkeys(step.assumes for step in case.plan.sheet.steps if step.assumes)
+    yield from dict.fromkeys(
+        step.assumes
+        for step in case.plan.sheet.steps
+        if step.assumes and case.failure(step.outputs[0]) is None
+    )
 
 
 def _models(case: Case) -> Iterator[str]:

@@ -6,6 +6,7 @@ from collections.abc import Iterable
 from dataclasses import dataclass, replace
 
 from checker.document.nodes import Document
+from checker.package.commas import rejoined
 from checker.package.form import fitted
 from checker.package.notebook import Notebook, pointer_of
 from checker.package.parts.base import is_identifier
@@ -59,7 +60,7 @@ def draft(document: Document, index: int, name: str, tree: object, problems: tup
     if any(problem.fatal for problem in problems):
         notebook.fatal = True
         return Draft(name, notebook, None)
-    part = fitted(RecordPart, tree, notebook, sparable)
+    part = fitted(RecordPart, rejoined(tree, notebook), notebook, sparable)
     if part is not None and part.id != name:
         notebook.say(
             "identifier-repeated",
