@@ -9,6 +9,7 @@ records:
   - id: a
     bodies: {{gas: {{substance: Nitrogen, model: real fluid, inputs: {{volume: 50 L}}}}}}
     states: {{one: {{gas: {{inputs: {{temperature: 15 °C, pressure: 2.0 bar}}}}}}}}
+    processes: []
     sources: {{{sources}}}
 """
 
@@ -35,5 +36,5 @@ def test_a_quoted_text_needs_no_note():
 
 def test_a_pointer_without_a_value_is_still_a_problem():
     """A key that is a pointer is no continuation."""
-    found = read("bodies/gas/volume: data sheet, states/one/gas/pressure:")
+    found = read("bodies/gas/volume: data sheet, states/one/gas/pressure")
     assert {p.kind for p in found.records[0].problems} == {"type-wrong"}
