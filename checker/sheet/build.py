@@ -19,7 +19,7 @@ from checker.sheet.planner import explain, plan, prune
 from checker.sheet.processes import process_steps
 from checker.sheet.same import SameQuantity, same_quantities
 from checker.sheet.states import CALORIC, SYMBOLS, Clue, StatePlan, clue_steps
-from checker.sheet.step import Sheet, Step
+from checker.sheet.step import Sheet, Step, above
 from checker.sheet.transfers import assumed_candidates
 from checker.submission import Record, Role
 from checker.substances.interface import Phase, Substance
@@ -98,7 +98,7 @@ class _Builder:
         leaf_keys = {*self.leaves.values, *(link.key for link in self.leaves.links)}
         steps = plan(leaf_keys, self.candidates, states, self._searches, self._assumed)
         known = {*leaf_keys, *(output for step in steps for output in step.outputs)}
-        steps = prune(steps, self._wanted(same))
+        steps = prune(steps, self._wanted(same, {output: step for step in steps for output in step.outputs}))
         made = {output: step for step in steps for output in step.outputs}
         return Sheet(
             self.record.id,
@@ -191,9 +191,14 @@ class _Builder:
         for ctx in self.contexts:
             yield from assumed_candidates(ctx, known)
 
-    def _wanted(self, same: SameQuantity) -> set[str]:
-        """Return the keys that a review needs: all that is stated or limited, the states, the main balances."""
-        wanted = {same.key(s.pointer) for s in self.record.statements}
+    def _wanted(self, same: SameQuantity, made: Mapping[str, Step]) -> set[str]:
+        """Return the keys that a review needs: all results and limits, surplus inputs, states, main balances.
+
+        An input is surplus where its quantity also follows without it.
+        """
+        wanted = {same.key(s.pointer) for s in self.record.statements if s.role is Role.RESULT}
+        inputs = {same.key(s.pointer) for s in self.record.statements if s.role is Role.INPUT} - wanted
+        wanted.update(key for key in inputs if key in made and given(key) not in above(key, made))
         wanted.update(same.key(limit.quantity) for limit in self.record.limits)
         for ctx in self.contexts:
             wanted.update(ctx.key(name) for name in balances.MAIN)
@@ -207,7 +212,7 @@ class _Builder:
         for step in self.candidates:
             for output in step.outputs:
                 makers[output].append(step)
-        unknown = sorted(self._wanted(same) - known)
+        unknown = sorted(self._wanted(same, {}) - known)
         return {key: explain(key, known, makers, self._say) for key in unknown}
 
     def _say(self, key: str) -> str:

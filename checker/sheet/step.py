@@ -95,22 +95,23 @@ class Sheet:
         """Return the key under which a quantity is calculated."""
         return self.same.key(pointer)
 
-    def parents_of(self, key: str) -> tuple[str, ...]:
-        """Return the keys from which a key is calculated (none for a leaf)."""
-        step = self.made_by.get(key)
-        return step.parents if step else ()
-
     def ancestors(self, key: str) -> frozenset[str]:
         """Return every key above ``key``, with all that the same steps yield (one state is one step)."""
-        found: set[str] = set()
-        waiting = list(self.parents_of(key))
-        while waiting:
-            parent = waiting.pop()
-            if parent not in found:
-                step = self.made_by.get(parent)
-                found.update(step.outputs if step else (parent,))
-                waiting.extend(step.parents if step else ())
-        return frozenset(found)
+        return above(key, self.made_by)
+
+
+def above(key: str, made_by: Mapping[str, Step]) -> frozenset[str]:
+    """Return every key above ``key`` in a set of steps, with all that the same steps yield."""
+    found: set[str] = set()
+    own = made_by.get(key)
+    waiting = list(own.parents if own else ())
+    while waiting:
+        parent = waiting.pop()
+        if parent not in found:
+            step = made_by.get(parent)
+            found.update(step.outputs if step else (parent,))
+            waiting.extend(step.parents if step else ())
+    return frozenset(found)
 
 
 def evaluate(
