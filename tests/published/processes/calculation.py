@@ -45,7 +45,7 @@ class Calculated:
 
 def si(value: float, unit: str) -> str:
     """Return a quantity text that carries every digit of a float."""
-    return f"{value!r} {unit}".strip()
+    return f"{float(value)!r} {unit}".strip()
 
 
 CLAIMS_OF_A_STATE = (
