@@ -46,16 +46,15 @@ class Carried:
         """Return how far the digits of the stated parents move the carried value."""
         return self.spreads.get(key, 0.0)
 
-    def agrees(self, key: str, above: frozenset[str], stated: float, tolerance: float) -> bool | None:
-        """Say whether the originator's own numbers lead to the stated one; None where that is not evaluable.
+    def nearest(self, key: str, above: frozenset[str], stated: float) -> Found:
+        """Return the carried value that comes nearest to the stated one.
 
-        ``above`` holds the ancestors of the key.
+        ``above`` holds the ancestors of the key: a variant counts only below its state. Of equally good values
+        the plain one is returned.
         """
         sources = [self.values, *(variant.values for variant in self.variants if variant.state in above)]
         found = [value for values in sources if isinstance(value := values.get(key), float)]
-        if not found:
-            return None
-        return any(abs(stated - value) <= tolerance for value in found)
+        return min(found, key=lambda value: abs(stated - value)) if found else self.value(key)
 
 
 def carry(

@@ -82,7 +82,21 @@ def compare_all(
         if statement.usable and not statement.term.text and _is_compared(statement, sheet)
     ]
     wrong = {c.key for c in found if c.outcome is Outcome.WRONG}
-    return tuple(_with_standing(c, sheet, carried, wrong) for c in found)
+    return _one_origin_per_step([_with_standing(c, sheet, carried, wrong) for c in found], sheet)
+
+
+def _one_origin_per_step(found: list[Compared], sheet: Sheet) -> tuple[Compared, ...]:
+    """Return the comparisons with one origin per step: evaluating a state is one step with several outputs."""
+    first: dict[object, str] = {}
+    result = []
+    for c in found:
+        if c.standing in (Standing.ORIGIN, Standing.ORIGIN_UNKNOWN):
+            step = sheet.made_by.get(c.key)
+            origin = first.setdefault(step.outputs if step else c.key, c.statement.pointer)
+            if origin != c.statement.pointer:
+                c = replace(c, standing=Standing.INHERITED, inherits_from=(sheet.key(origin),))
+        result.append(c)
+    return tuple(result)
 
 
 def _is_compared(statement: Statement, sheet: Sheet) -> bool:
@@ -177,7 +191,8 @@ def _with_standing(c: Compared, sheet: Sheet, carried: Carried, wrong: set[str])
         return c
     above = sheet.ancestors(c.key)
     ancestors = sorted(above & wrong)
-    near = carried.agrees(c.key, above, c.stated, c.carried_tolerance)
+    c = replace(c, carried=carried.nearest(c.key, above, c.stated))
+    near = abs(c.stated - c.carried) <= c.carried_tolerance if isinstance(c.carried, float) else None
     if c.outcome is Outcome.AGREES:
         cancels = near is False and bool(ancestors)
         return replace(
