@@ -6,7 +6,9 @@ at a time, and only where nothing stated tells it.
 
 from __future__ import annotations
 
+from collections import defaultdict
 from collections.abc import Callable, Iterable, Iterator, Mapping, Sequence
+from heapq import heappop, heappush
 
 from checker.sheet.states import StatePlan, best_pair, state_step
 from checker.sheet.step import Step
@@ -23,56 +25,79 @@ def plan(
     assumed: Assumed,
 ) -> list[Step]:
     """Return the steps in an order in which parents come first."""
-    known = set(leaves)
-    steps: list[Step] = []
-    waiting = list(candidates)
-    open_states = list(states)
+    planner = _Planner(candidates, states)
+    for leaf in leaves:
+        planner.learn(leaf)
     while True:
-        _settle(known, steps, waiting, open_states)
-        if _one(known, steps, (s for p in open_states for s in searches(p, known))):
+        planner.settle()
+        offered = (step for state in planner.open_states() for step in searches(state, planner.known))
+        if planner.take_first(offered) or planner.take_first(assumed(planner.known)):
             continue
-        if not _one(known, steps, assumed(known)):
-            return steps
+        return planner.steps
 
 
-def _settle(known: set[str], steps: list[Step], waiting: list[Step], states: list[StatePlan]) -> None:
-    """Take candidates and states until none applies any more."""
-    progress = True
-    while progress:
-        progress = False
-        for state in list(states):
-            if state.key in known:
-                states.remove(state)
-            elif (pair := best_pair(state, known)) is not None:
-                take(known, steps, state_step(state, pair))
-                states.remove(state)
-                progress = True
-        for step in list(waiting):
-            if not useful(step, known):
-                waiting.remove(step)
-            elif known.issuperset(step.parents):
-                take(known, steps, step)
-                waiting.remove(step)
-                progress = True
+class _Planner:
+    """Takes the first candidate that applies, by its place in the list; states before formulas.
 
+    Every candidate counts its unknown parents, so that a long chain costs no more than its length.
+    """
 
-def useful(step: Step, known: set[str]) -> bool:
-    """Say whether a step would yield something new."""
-    return step.outputs[0] not in known
+    def __init__(self, candidates: Sequence[Step], states: Sequence[StatePlan]) -> None:
+        self.known: set[str] = set()
+        self.steps: list[Step] = []
+        self._candidates, self._states = candidates, states
+        self._lacking = [len(set(step.parents)) for step in candidates]
+        self._users: dict[str, list[int]] = defaultdict(list)
+        self._clue_of: dict[str, list[int]] = defaultdict(list)
+        self._ready = [index for index, count in enumerate(self._lacking) if count == 0]
+        self._ready_states: list[int] = []
+        for index, step in enumerate(candidates):
+            for parent in set(step.parents):
+                self._users[parent].append(index)
+        for index, state in enumerate(states):
+            for key in {clue.key for clue in state.clues}:
+                self._clue_of[key].append(index)
 
+    def learn(self, key: str) -> None:
+        """Note that a key is known, and what can be tried because of it."""
+        if key in self.known:
+            return
+        self.known.add(key)
+        for index in self._users.get(key, ()):
+            self._lacking[index] -= 1
+            if self._lacking[index] == 0:
+                heappush(self._ready, index)
+        for index in self._clue_of.get(key, ()):
+            heappush(self._ready_states, index)
 
-def take(known: set[str], steps: list[Step], step: Step) -> None:
-    """Add a step to the sheet."""
-    steps.append(step)
-    known.update(step.outputs)
+    def settle(self) -> None:
+        """Take states and candidates until none applies any more."""
+        while self._ready_states or self._ready:
+            if self._ready_states:
+                state = self._states[heappop(self._ready_states)]
+                if state.key not in self.known and (pair := best_pair(state, self.known)) is not None:
+                    self._take(state_step(state, pair))
+                continue
+            step = self._candidates[heappop(self._ready)]
+            if step.outputs[0] not in self.known:
+                self._take(step)
 
+    def open_states(self) -> list[StatePlan]:
+        """Return the states that are not found yet."""
+        return [state for state in self._states if state.key not in self.known]
 
-def _one(known: set[str], steps: list[Step], offered: Iterable[Step]) -> bool:
-    for step in offered:
-        if useful(step, known) and known.issuperset(step.parents):
-            take(known, steps, step)
-            return True
-    return False
+    def take_first(self, offered: Iterable[Step]) -> bool:
+        """Take the first step offered that applies and yields something new."""
+        for step in offered:
+            if step.outputs[0] not in self.known and self.known.issuperset(step.parents):
+                self._take(step)
+                return True
+        return False
+
+    def _take(self, step: Step) -> None:
+        self.steps.append(step)
+        for output in step.outputs:
+            self.learn(output)
 
 
 def prune(steps: Sequence[Step], wanted: Iterable[str]) -> list[Step]:
