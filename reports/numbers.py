@@ -12,7 +12,7 @@ MISSING: Final = "–"
 """Printed where there is no amount."""
 
 _SUPERSCRIPTS: Final = str.maketrans("-0123456789", "⁻⁰¹²³⁴⁵⁶⁷⁸⁹")
-_BARE_NUMBER: Final = re.compile(r"[-+−]?[0-9][0-9.\s]*(?:[eE][-+]?[0-9]+)?")
+_BARE_NUMBER: Final = re.compile(r"[-+−]?[0-9][0-9.\s]*(?:[eE][-+−]?[0-9]+)?")
 _DIFFERENCE_UNITS: Final = {
     "°C": "K", "degC": "K", "°F": "°R", "degF": "°R",
     "barg": "bar", "bara": "bar", "psig": "psi", "psia": "psi",

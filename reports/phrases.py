@@ -45,6 +45,25 @@ def spoiled(record: RecordReview, findings: Iterable[Finding]) -> tuple[Checked,
     return tuple(c for c in record.checked if c.outcome is Outcome.WRONG and c.quantity not in reported)
 
 
+def common_rules(records: Iterable[RecordReview]) -> tuple[str, ...]:
+    """Return the rules that found nothing in any readable record, in the order of the first."""
+    held_by = [record.rules_held for record in records if record.readable]
+    first = held_by[0] if held_by else ()
+    return tuple(rule for rule in first if all(rule in others for others in held_by))
+
+
+def words_of(name: str) -> str:
+    """Return a name of the vocabulary in words: ``specific_volume`` as ``specific volume``."""
+    return name.replace("_", " ")
+
+
+def numbers_not_told(finding: Finding) -> str:
+    """Return stated and recomputed value in a sentence, unless the message tells them already."""
+    if not finding.stated or not finding.recomputed or finding.stated.text in finding.message:
+        return ""
+    return f"Stated {shown(finding.stated)}, recomputed {shown(finding.recomputed)}."
+
+
 def place(location: Location | None) -> str:
     """Return ``file:line:column``, which editors follow."""
     return f"{location.file}:{location.line}:{location.column}" if location else ""

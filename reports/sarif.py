@@ -14,6 +14,7 @@ from checker.findings import Checked, Finding, Grade, Location, NotChecked, Outc
 from reports.jsontext import finite, write_json_text
 from reports.numbers import shown
 from reports.order import grouped
+from reports.phrases import numbers_not_told
 from reports.plain import neutral
 
 Tree = dict[str, object]
@@ -144,12 +145,9 @@ def _rule(name: str, note: RuleNote | None) -> Tree:
 
 def _message(finding: Finding) -> str:
     """Return the message with its numbers, since a reader of results may see nothing else."""
-    numbers = ""
-    if finding.stated and finding.recomputed:
-        numbers = f" Stated {shown(finding.stated)}, recomputed {shown(finding.recomputed)}."
-    causes = "".join(f" Likely cause: {cause.statement}." for cause in finding.causes)
-    suggestion = f" {finding.suggestion}" if finding.suggestion else ""
-    return f"{finding.message}{numbers}{causes}{suggestion}"
+    causes = (f"Likely cause: {cause.statement}." for cause in finding.causes)
+    sentences = (finding.message, numbers_not_told(finding), *causes, finding.suggestion)
+    return " ".join(sentence for sentence in sentences if sentence)
 
 
 def _comparison(item: Checked) -> str:

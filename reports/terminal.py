@@ -6,12 +6,12 @@ of a finding starts with ``file:line:column``, which editors and terminals can f
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Iterator, Mapping
 from dataclasses import dataclass
 from textwrap import wrap
 from typing import BinaryIO, Final
 
-from checker.findings import Finding, Grade, RecordReview, Review
+from checker.findings import Checked, Finding, Grade, RecordReview, Review
 from reports.numbers import shown
 from reports.order import Comment, Group, grouped
 from reports.phrases import (
@@ -100,32 +100,27 @@ def _group(review: Review, group: Group, page: _Page) -> Iterator[str]:
     yield from page.strong(page.flow(capped(title, _LONGEST_TITLE), hang=2))
     if record:
         yield from page.flow(f"Verdict on this record: {review.verdict_of(record).value}.", 2, 2)
+    values = {item.quantity: item for item in record.checked} if record else {}
     for comment in group.comments:
         yield ""
-        yield from _comment(comment, page)
+        yield from _comment(comment, values, page)
     if record:
         yield ""
         yield from _consequences(record, group, page)
         yield from _account(record, page)
 
 
-def _consequences(record: RecordReview, group: Group, page: _Page) -> Iterator[str]:
-    for item in spoiled(record, (comment.finding for comment in group.comments)):
-        against = f"{shown(item.stated)}, recomputed {shown(item.recomputed)}"
-        yield from page.flow(f"Wrong as a consequence: {item.quantity} {against}.", 2, 4)
-
-
-def _comment(comment: Comment, page: _Page) -> Iterator[str]:
+def _comment(comment: Comment, values: Mapping[str, Checked], page: _Page) -> Iterator[str]:
     finding = comment.finding
     where = f"{place(finding.location)}: " if finding.location else ""
     head = f"{where}{finding.grade.value}, {finding.rule} (comment {comment.number})"
     yield from page.strong(page.flow(head, 2, 2), _COLOURS[finding.grade])
     yield from page.flow(finding.message, 4)
-    for label, text in _particulars(finding):
+    for label, text in _particulars(finding, values):
         yield from page.named(label, text)
 
 
-def _particulars(finding: Finding) -> Iterator[tuple[str, str]]:
+def _particulars(finding: Finding, values: Mapping[str, Checked]) -> Iterator[tuple[str, str]]:
     yield "quantity", _with_role(finding)
     yield "stated", shown(finding.stated) if finding.stated else ""
     yield "recomputed", shown(finding.recomputed) if finding.recomputed else ""
@@ -135,9 +130,24 @@ def _particulars(finding: Finding) -> Iterator[tuple[str, str]]:
     yield "origin", origin(finding)
     for item in finding.causes:
         yield "likely cause", cause(item, finding)
-    yield "spoils", ", ".join(finding.spoils)
+    for quantity in finding.spoils:
+        yield "spoils", _against(quantity, values.get(quantity))
     yield "suggestion", finding.suggestion
     yield "basis", finding.basis
+
+
+def _against(quantity: str, item: Checked | None) -> str:
+    values = f": {shown(item.stated)}, recomputed {shown(item.recomputed)}" if item else ""
+    return f"{quantity}{values}"
+
+
+def _consequences(record: RecordReview, group: Group, page: _Page) -> Iterator[str]:
+    """Yield what is wrong and was named by no finding of this record: its origin lies in another one."""
+    findings = [comment.finding for comment in group.comments]
+    named = {quantity for finding in findings for quantity in finding.spoils}
+    for item in spoiled(record, findings):
+        if item.quantity not in named:
+            yield from page.flow(f"Wrong as a consequence: {_against(item.quantity, item)}.", 2, 4)
 
 
 def _with_role(finding: Finding) -> str:
@@ -155,7 +165,7 @@ def _account(record: RecordReview, page: _Page) -> Iterator[str]:
         yield from page.flow(f"Checked and held ({len(good)}): {listed}.", 2, 4)
     if record.rules_held:
         rules = counted(len(record.rules_held), "rule", "rules")
-        yield from page.flow(f"Held against {rules} more, which found nothing.", 2, 4)
+        yield from page.flow(f"{rules} found nothing.", 2, 4)
     for item in not_recomputed(record):
         yield from page.flow(f"Not recomputed: {item.quantity} {shown(item.stated)}: {item.reason}.", 2, 4)
     for missing in record.not_checked:

@@ -13,6 +13,7 @@ from reports.pdf.styles import BODY, CELL, TEXT_WIDTH
 from reports.pdf.tables import Column, Row, fact_table, ruled_table
 from reports.pdf.text import Pointer, bold, marked, paragraph
 
+_NAMES: Final = 38 * mm
 _VALUE: Final = 23 * mm
 _QUANTITY: Final = TEXT_WIDTH - 5 * _VALUE - 19 * mm
 _COLUMNS: Final = (
@@ -49,8 +50,22 @@ def standing_word(item: Checked) -> str:
     return bold(item.standing.value) if item.outcome is Outcome.WRONG else item.standing.value
 
 
-def account(record: RecordReview) -> list[Any]:
-    """Return what was not checked, what was assumed, the models, and the rules that found nothing."""
+def account(record: RecordReview, common: Sequence[str]) -> Any:
+    """Return models, what was not checked, what was assumed and the rules that found nothing.
+
+    Parameters
+    ----------
+    record : RecordReview
+        The record; None is returned for an unreadable one.
+    common : sequence of str
+        Rules that found nothing in any record; the summary lists them, so they are not repeated here.
+
+    Returns
+    -------
+    flowable or None
+    """
+    if not record.readable:
+        return None
     rows: list[tuple[Any, Any]] = [("Model", model) for model in record.models]
     for item in record.checked:
         if item.outcome is Outcome.NOT_EVALUABLE:
@@ -58,11 +73,18 @@ def account(record: RecordReview) -> list[Any]:
     rows += [("Not checked", f"{item.what}. Missing: {item.missing}") for item in record.not_checked]
     rows += [("Assumed", text) for text in record.assumed]
     if record.rules_held:
-        rows.append(("Rules that found nothing", _listed(record.rules_held)))
+        rows.append(("Rules that found nothing", _rules(record.rules_held, common)))
     if not rows:
-        return [paragraph(BODY, "Nothing in this record was checked.")]
-    return [fact_table(rows, 38 * mm, TEXT_WIDTH - 38 * mm)]
+        return paragraph(BODY, "Nothing in this record was checked.")
+    return fact_table(rows, _NAMES, TEXT_WIDTH - _NAMES)
 
 
-def _listed(names: Sequence[str]) -> Any:
-    return paragraph(CELL, marked(", ".join(names), 1800))  # the whole rulebook may be here
+def _rules(names: Sequence[str], common: Sequence[str]) -> Any:
+    own = [name for name in names if name not in common]
+    shared = f"the {len(common)} listed in the summary" if common else ""
+    return rule_list("; ".join(part for part in (shared, ", ".join(own)) if part))
+
+
+def rule_list(text: str) -> Any:
+    """Return a list of rules as a paragraph; the whole rulebook may be in it."""
+    return paragraph(CELL, marked(text, 4000))

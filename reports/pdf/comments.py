@@ -9,12 +9,12 @@ from reportlab.lib.units import mm
 from reportlab.platypus import CondPageBreak, NextPageTemplate, PageBreak, Spacer
 
 from checker.findings import Finding, Review
-from reports.numbers import shown
 from reports.order import Comment
 from reports.pdf.keys import comment_key, finding_key
 from reports.pdf.styles import BODY, CELL, HEADING, MUTED_BODY, NOTE, SUBHEADING, WIDE_TEXT_WIDTH
 from reports.pdf.tables import PADDING, Column, Row, ruled_table
 from reports.pdf.text import Heading, Markup, anchor, bold, cut, line_break, link, marked, paragraph, pointer
+from reports.phrases import numbers_not_told
 
 _ROOM_TO_WRITE: Final = 15 * mm
 _PLACE: Final = 46 * mm
@@ -74,11 +74,7 @@ def _place(finding: Finding) -> Any:
 def _comment(finding: Finding) -> list[Any]:
     """Return the comment in short; its number leads to the whole."""
     sentences = [_lines(finding.message, 8)]
-    if finding.stated and finding.recomputed:
-        sentences.append(
-            _lines(f"Stated {shown(finding.stated)}, recomputed {shown(finding.recomputed)}.", 4)
-        )
-    sentences.append(_lines(finding.suggestion, 6))
+    sentences += [_lines(numbers_not_told(finding), 4), _lines(finding.suggestion, 6)]
     grade = bold(f"{finding.grade.value.capitalize()}: ")
     return [
         paragraph(CELL, grade, Markup(" ".join(marked(sentence) for sentence in sentences if sentence))),

@@ -28,14 +28,14 @@ _FAINT_LINE: Final = Pen(0.3, FAINT)
 _LEADER: Final = Pen(0.4, MUTED)
 
 
-def diagram_rows(diagrams: Sequence[Diagram]) -> list[Any]:
+def diagram_rows(diagrams: Sequence[Diagram]) -> list[list[Any]]:
     """Return the diagrams that have something to show, two beside each other."""
     pictures = [picture for picture in map(draw, diagrams) if picture is not None]
     rows = []
     for start in range(0, len(pictures), 2):
         pair = [*pictures[start : start + 2], ""][:2]
         style = [TABLE_FONT, ("LEFTPADDING", (0, 0), (-1, -1), 0), ("VALIGN", (0, 0), (-1, -1), "TOP")]
-        rows.append(Table([pair], [TEXT_WIDTH / 2] * 2, style=TableStyle(style)))
+        rows.append([Table([pair], [TEXT_WIDTH / 2] * 2, style=TableStyle(style))])
     return rows
 
 

@@ -19,6 +19,7 @@ from reports.pdf.records import record_section
 from reports.pdf.styles import BODY, CELL, HEADING, PORTRAIT
 from reports.pdf.summary import summary
 from reports.pdf.text import Heading, flat, paragraph
+from reports.phrases import common_rules
 from reports.plain import capped
 from reports.terminal import TextOptions, text_lines
 
@@ -39,15 +40,16 @@ def write_pdf(review: Review, stream: BinaryIO) -> None:
 
 def _story(review: Review) -> list[Any]:
     package, *records = grouped(review)
+    common = common_rules(review.records)
     story = [
         NextPageTemplate("portrait"),
         *cover(review),
         PageBreak(),
-        *summary(review, package),
+        *summary(review, package, common),
     ]
     for number, group in enumerate(records, 1):
         if group.record:
-            story += record_section(review, group.record, group, number)
+            story += record_section(review, group.record, group, number, common)
     comments = [comment for group in (package, *records) for comment in group.comments]
     return [*story, *comment_sheet(review, comments), NumberOfPages()]
 

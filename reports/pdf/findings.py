@@ -5,7 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterator, Sequence
 from typing import Any, Final
 
-from reportlab.platypus import KeepTogether, Spacer, Table, TableStyle
+from reportlab.platypus import Spacer, Table, TableStyle
 
 from checker.findings import Finding
 from reports.numbers import deviation, shown, tolerance
@@ -20,12 +20,9 @@ _FIFTH: Final = TEXT_WIDTH / 5
 _ACROSS: Final = TEXT_WIDTH - _FIFTH - 2 * PADDING
 
 
-def finding_blocks(comments: Sequence[Comment]) -> list[Any]:
-    """Return the blocks of findings, each kept on one page."""
-    blocks: list[Any] = []
-    for comment in comments:
-        blocks += [KeepTogether([_block(comment), Spacer(1, 7)])]
-    return blocks
+def finding_blocks(comments: Sequence[Comment]) -> list[list[Any]]:
+    """Return the blocks of findings; each is to be kept on one page."""
+    return [[_block(comment), Spacer(1, 7)] for comment in comments]
 
 
 def _block(comment: Comment) -> Any:

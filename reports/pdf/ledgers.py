@@ -7,7 +7,7 @@ from collections.abc import Callable, Sequence
 from typing import Any, Final
 
 from reportlab.lib.units import mm
-from reportlab.platypus import KeepTogether, Spacer
+from reportlab.platypus import Spacer
 
 from checker.findings import Amount, Ledger, LedgerLine
 from reports.numbers import MISSING, rounded, shown, signed
@@ -27,11 +27,9 @@ _SIDES: Final = (
 _NEGLIGIBLE: Final = 1e-9  # of the largest term: what remains there is the rounding of the machine
 
 
-def ledger_blocks(ledgers: Sequence[Ledger]) -> list[Any]:
-    """Return one block for each balance, kept on one page where it fits."""
-    return [
-        KeepTogether([paragraph(MINOR, _title(ledger)), _table(ledger), Spacer(1, 4)]) for ledger in ledgers
-    ]
+def ledger_blocks(ledgers: Sequence[Ledger]) -> list[list[Any]]:
+    """Return one block for each balance; each is to be kept on one page."""
+    return [[paragraph(MINOR, _title(ledger)), _table(ledger), Spacer(1, 4)] for ledger in ledgers]
 
 
 def _title(ledger: Ledger) -> str:
@@ -51,7 +49,8 @@ def _table(ledger: Ledger) -> Any:
         if lines:
             rows.append(Band(title))
             rows += [
-                [line.label, _symbol(line), shown(line.stated), shown(line.recomputed)] for line in lines
+                [Symbol(line.label), _symbol(line), shown(line.stated), shown(line.recomputed)]
+                for line in lines
             ]
         if len(lines) > 1:
             rows.append([bold("Sum"), "", *(_sum(lines, of, ledger.unit) for of in _BOTH)])

@@ -2,10 +2,11 @@
 
 from __future__ import annotations
 
-from typing import Any
+from collections.abc import Sequence
+from typing import Any, Final
 
 from reportlab.lib.units import mm
-from reportlab.platypus import CondPageBreak, PageBreak
+from reportlab.platypus import CondPageBreak, KeepTogether, PageBreak
 
 from checker.findings import RecordReview, Review
 from reports.order import Group
@@ -20,11 +21,13 @@ from reports.pdf.styles import BODY, HEADING, SUBHEADING
 from reports.pdf.text import Heading, bold, paragraph
 from reports.phrases import grade_counts
 
-_ROOM_FOR_A_START = 36 * mm
+_ROOM_FOR_A_START: Final = 36 * mm
 
 
-def record_section(review: Review, record: RecordReview, group: Group, number: int) -> list[Any]:
-    """Return the pages of one record."""
+def record_section(
+    review: Review, record: RecordReview, group: Group, number: int, common: Sequence[str]
+) -> list[Any]:
+    """Return the pages of one record; ``common`` are the rules that the summary lists for all."""
     findings = [comment.finding for comment in group.comments]
     verdict = review.verdict_of(record).value
     head = [
@@ -35,23 +38,30 @@ def record_section(review: Review, record: RecordReview, group: Group, number: i
     if not record.readable:
         head.append(paragraph(BODY, "This record could not be read: nothing in it was checked."))
     parts = [
-        _part(number, "findings", "Findings", finding_blocks(group.comments)),
-        _part(number, "states", "States", [state_table(record)]),
-        _part(number, "balances", "Balances", ledger_blocks(record.ledgers)),
-        _part(number, "diagrams", "Diagrams", diagram_rows(record.diagrams)),
-        _part(number, "checked", "Results held against the recomputation", [checked_table(record)]),
-        _part(number, "account", "Not checked, assumed, models", account(record) if record.readable else []),
-        _part(number, "sheet", "Alternate calculation sheet", [calculation_sheet(record)]),
+        _blocks(number, "findings", "Findings", finding_blocks(group.comments)),
+        _table(number, "states", "States", state_table(record)),
+        _blocks(number, "balances", "Balances", ledger_blocks(record.ledgers)),
+        _blocks(number, "diagrams", "Diagrams", diagram_rows(record.diagrams)),
+        _table(number, "checked", "Results held against the recomputation", checked_table(record)),
+        _table(number, "account", "Not checked, assumed, models", account(record, common)),
+        _table(number, "sheet", "Alternate calculation sheet", calculation_sheet(record)),
     ]
     return head + [flowable for part in parts for flowable in part]
 
 
-def _part(number: int, name: str, title: str, content: list[Any]) -> list[Any]:
-    """Return a part with its heading, or nothing where it has no content."""
-    filled = [flowable for flowable in content if flowable is not None]
-    if not filled:
+def _table(number: int, name: str, title: str, table: Any) -> list[Any]:
+    """Return a table with its heading; it may go on over pages."""
+    if table is None:
         return []
-    return [CondPageBreak(_ROOM_FOR_A_START), Heading(SUBHEADING, title, part_key(number, name), 1), *filled]
+    return [CondPageBreak(_ROOM_FOR_A_START), Heading(SUBHEADING, title, part_key(number, name), 1), table]
+
+
+def _blocks(number: int, name: str, title: str, blocks: Sequence[list[Any]]) -> list[Any]:
+    """Return blocks that stay on one page each, the heading with the first of them."""
+    if not blocks:
+        return []
+    heading = Heading(SUBHEADING, title, part_key(number, name), 1)
+    return [KeepTogether([heading, *blocks[0]]), *(KeepTogether(block) for block in blocks[1:])]
 
 
 def _capital(text: str) -> str:

@@ -11,17 +11,17 @@ from reports.numbers import shown
 from reports.pdf.checks import standing_word
 from reports.pdf.styles import CELL, TEXT_WIDTH
 from reports.pdf.tables import Band, Column, Row, ruled_table
-from reports.pdf.text import Pointer, Symbol, bold, formula, line_break, paragraph
+from reports.pdf.text import Symbol, bold, formula, line_break, paragraph
+from reports.phrases import words_of
 
-_VALUE: Final = 29 * mm
-_QUANTITY: Final = TEXT_WIDTH - 17 * mm - 3 * _VALUE - 19 * mm
+_VALUE: Final = 28 * mm
+_STANDING: Final = 19 * mm
 _COLUMNS: Final = (
-    Column("Step and outputs", _QUANTITY),
-    Column("", 17 * mm),
+    Column("Step", TEXT_WIDTH - 3 * _VALUE - _STANDING),
     Column("Independent", _VALUE, right=True),
     Column("Carried", _VALUE, right=True),
     Column("Stated", _VALUE, right=True),
-    Column("", 19 * mm, right=True),
+    Column("", _STANDING, right=True),
 )
 
 
@@ -30,28 +30,37 @@ def calculation_sheet(record: RecordReview) -> Any:
     checked = {item.quantity: item for item in record.checked}
     rows: list[Row] = []
     for number, line in enumerate(record.sheet, 1):
-        rows.append(Band(_step(number, line)))
-        rows += [_output(value, checked.get(value.quantity)) for value in line.outputs]
+        step = _step(number, line)
+        if len(line.outputs) == 1:  # the usual case: the step and its value in one row
+            rows.append([step, *_values(line.outputs[0], checked)])
+        else:
+            rows.append(Band(step))
+            rows += [[_name(value), *_values(value, checked)] for value in line.outputs]
     return ruled_table(_COLUMNS, rows) if rows else None
 
 
 def _step(number: int, line: SheetLine) -> Any:
     parts: list[str] = [bold(f"{number}  {line.title}")]
-    if line.formula:
-        parts += [line_break(), formula(line.formula)]
-    if line.substituted:
-        parts += [line_break(), formula(f"= {line.substituted}")]
+    told = not line.substituted or line.formula.endswith(f"= {line.substituted}")
+    worked = line.formula if told else f"{line.formula} = {line.substituted}"
+    if worked:
+        parts += [line_break(), formula(worked)]
     if line.note:
         parts += [line_break(), line.note]
     return paragraph(CELL, *parts)
 
 
-def _output(value: SheetValue, checked: Checked | None) -> list[Any]:
+def _name(value: SheetValue) -> Symbol:
+    """Return the last part of a pointer in words, with its symbol."""
+    name = words_of(value.quantity.rsplit("/", 1)[-1])
+    return Symbol(f"{name} {value.symbol}".rstrip())
+
+
+def _values(value: SheetValue, checked: dict[str, Checked]) -> list[Any]:
+    item = checked.get(value.quantity)
     return [
-        Pointer(value.quantity),
-        Symbol(value.symbol),
         shown(value.independent),
         shown(value.carried),
         shown(value.stated),
-        standing_word(checked) if checked else "",
+        standing_word(item) if item else "",
     ]

@@ -11,6 +11,7 @@ from reports.numbers import deviation, shown
 from reports.pdf.styles import CELL, TEXT_WIDTH
 from reports.pdf.tables import Band, Column, Row, ruled_table
 from reports.pdf.text import Symbol, bold, paragraph
+from reports.phrases import words_of
 
 _VALUE: Final = 32 * mm
 _COLUMNS: Final = (
@@ -38,7 +39,7 @@ def _title(row: StateRow) -> Any:
 def _row(cell: StateCell) -> list[Any]:
     return [
         Symbol(cell.symbol),
-        cell.name,
+        words_of(cell.name),
         shown(cell.stated),
         shown(cell.recomputed),
         deviation(cell.deviation, None, cell.stated),

@@ -2,12 +2,15 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from typing import Any, Final
 
 from reportlab.lib.units import mm
+from reportlab.platypus import KeepTogether
 
 from checker.findings import Grade, RecordReview, Review
 from reports.order import Group
+from reports.pdf.checks import rule_list
 from reports.pdf.findings import finding_blocks
 from reports.pdf.keys import record_key
 from reports.pdf.styles import BODY, CELL, HEADING, SUBHEADING, TEXT_WIDTH
@@ -27,8 +30,8 @@ _COLUMNS: Final = (
 )
 
 
-def summary(review: Review, package: Group) -> list[Any]:
-    """Return the table of records, and the findings on the package itself."""
+def summary(review: Review, package: Group, common: Sequence[str]) -> list[Any]:
+    """Return the table of records, the findings on the package itself, and the rules common to all records."""
     parts: list[Any] = [Heading(HEADING, "Summary of records", "summary", 0)]
     if review.records:
         rows = [_row(review, number, record) for number, record in enumerate(review.records, 1)]
@@ -36,8 +39,12 @@ def summary(review: Review, package: Group) -> list[Any]:
     else:
         parts.append(paragraph(BODY, "The package holds no record that could be reviewed."))
     if package.comments:
-        parts.append(Heading(SUBHEADING, "The package as a whole", "package", 1))
-        parts += finding_blocks(package.comments)
+        first, *others = finding_blocks(package.comments)
+        parts.append(KeepTogether([Heading(SUBHEADING, "The package as a whole", "package", 1), *first]))
+        parts += [KeepTogether(block) for block in others]
+    if common:
+        title = f"Rules that found nothing in any record ({len(common)})"
+        parts += [Heading(SUBHEADING, title, "rules", 1), rule_list(", ".join(common))]
     return parts
 
 

@@ -50,6 +50,8 @@ class Pointer(str):
 
 def printable(text: str, limit: int = LIMIT) -> str:
     """Return text in which every character can be printed, at most ``limit`` long; raised signs are kept."""
+    if text.isascii() and text.isprintable():
+        return capped(text, limit)
     known = glyphs()
     clean = neutral(text[: 4 * limit]).translate(_EQUAL)
     shown = "".join(c if ord(c) in known or c in "⁺⁻" else mark(c) for c in clean)
@@ -125,9 +127,9 @@ def line_break() -> Markup:
 
 
 def pointer(text: str, room: float, style: ParagraphStyle, most_lines: int = 8) -> Markup:
-    """Return a pointer broken behind its slashes where it is wider than ``room``."""
+    """Return a pointer broken behind its slashes, if need be behind its underscores, to fit ``room``."""
     lines = [""]
-    for part in re.findall(r"[^/]*/|[^/]+", cut(text, most_lines * room, style)):
+    for part in _breakable(cut(text, most_lines * room, style), room, style):
         if lines[-1] and width(lines[-1] + part, style.fontName, style.fontSize) > room:
             lines.append("")
         lines[-1] += part
@@ -154,6 +156,15 @@ class Heading(Paragraph):  # type: ignore[misc]
         self.canv.bookmarkHorizontal(key, 0, self.height + 6)
         self.canv.addOutlineEntry(title, key, level, closed=level == 0)
         super().draw()
+
+
+def _breakable(text: str, room: float, style: ParagraphStyle) -> list[str]:
+    """Return the parts of a pointer that stay together."""
+    parts: list[str] = []
+    for part in re.findall(r"[^/]*/|[^/]+", text):
+        fits = width(part, style.fontName, style.fontSize) <= room
+        parts += [part] if fits else re.findall(r"[^_]*_|[^_]+", part)
+    return parts
 
 
 def _raise(match: re.Match[str]) -> str:

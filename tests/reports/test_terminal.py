@@ -26,17 +26,15 @@ COMMENT = """\
     formula       ΔU = m·(u₂ − u₁)
     origin        here: with the originator's own earlier values this step gives 300.6 kJ
     likely cause  cp was used where cv belongs (gives 422.1 kJ)
-    spoils        processes/warming/heat_transfers/sunlit-wall/energy,
-                  processes/warming/entropy_generation
+    spoils        processes/warming/heat_transfers/sunlit-wall/energy: 422 kJ, recomputed 300.6 kJ
+    spoils        processes/warming/entropy_generation: -0.261 kJ/K, recomputed 0.0934 kJ/K
     suggestion    Use cv, or take u from the property tables, and revise what follows.
     basis         First law for a closed system at constant volume
 """
 ACCOUNT = """\
-  Wrong as a consequence: processes/warming/heat_transfers/sunlit-wall/energy 422 kJ, recomputed
-      300.6 kJ.
   Checked and held (3): bodies/nitrogen/mass 8.63 kg; states/hot/nitrogen/pressure 181 bar;
       processes/warming/entropy_change 0.969 kJ/K.
-  Held against 4 rules more, which found nothing.
+  4 rules found nothing.
   Not checked: generation with surroundings; missing: the reservoir_temperature of the heat transfer
       sunlit-wall.
   Assumed: velocity not stated: taken as zero in both states.
@@ -66,6 +64,15 @@ def test_closes_with_the_verdict() -> None:
         "Verdict: accept. Every stated result was recomputed and agrees. 2 records: no discrepancies, no\n"
         "  queries, no remarks; 8 results held, nothing left unchecked.\n"
     )
+
+
+def test_what_an_origin_elsewhere_spoiled_is_not_left_out() -> None:
+    """A wrong result that no finding of its record names is listed with its values."""
+    text = printed(replace(REVISE, findings=()))
+    expected = (
+        "Wrong as a consequence: processes/warming/internal_energy_change: 422 kJ, recomputed 300.6 kJ."
+    )
+    assert expected in " ".join(text.split())
 
 
 def test_says_what_could_not_be_read() -> None:

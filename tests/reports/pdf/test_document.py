@@ -16,7 +16,7 @@ from checker.findings import Grade, Review
 from reports.pdf import document
 from reports.pdf.document import write_pdf
 from tests.reports.sample import ACCEPT, EMPTY, FINDINGS, REVISE, large
-from tests.reports.sample_records import QUENCH
+from tests.reports.sample_records import BOTTLE, CYLINDER, QUENCH
 from tests.reports.strategies import NO_SHRINKING, reviews
 
 
@@ -200,6 +200,15 @@ def test_comment_sheet_has_a_row_for_each_finding(revise: PdfReader) -> None:
     assert sum(sheet.count(f"{grade.value.capitalize()}: ") for grade in Grade) == len(FINDINGS)
     assert "Grounds of these comments" in sheet
     assert "No process of a closed system destroys entropy." in sheet
+
+
+def test_rules_common_to_all_records_are_listed_once() -> None:
+    """The summary names them, and a record only those that are its own."""
+    reader = read(replace(REVISE, records=(BOTTLE, CYLINDER)))
+    assert "Rules that found nothing in any record (1) path-contradicts-states" in words(reader.pages[2])
+    text = all_words(reader)
+    assert "the 1 listed in the summary; mass-not-conserved, limit-exceeded, assumption-not-true" in text
+    assert "the 1 listed in the summary; energy-not-closed" in text
 
 
 def test_an_accepted_package_has_no_comments() -> None:

@@ -86,6 +86,12 @@ def test_pointers_break_behind_slashes() -> None:
     assert shown == "processes/warming/<br/>heat_transfers/sunlit-wall/<br/>energy"
 
 
+def test_a_part_that_is_too_long_breaks_behind_an_underscore() -> None:
+    """A name wider than the column is broken between its words, never within one."""
+    shown = pointer("processes/cooling/entropy_generation_with_surroundings", 110, CELL)
+    assert shown == "processes/cooling/entropy_<br/>generation_with_<br/>surroundings"
+
+
 def test_text_in_drawings_has_plain_signs() -> None:
     """Where there is no markup, a raised minus becomes a minus."""
     assert flat("s [kJ·kg⁻¹]") == "s [kJ·kg−¹]"
