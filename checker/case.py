@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Iterator, Mapping
 from dataclasses import dataclass
 
 from checker.basis import Basis
@@ -70,6 +70,7 @@ class Case:
     compared: tuple[Compared, ...]
     display: Display
     basis: Basis
+    by_key: Mapping[str, tuple[Statement, ...]]
 
     def key(self, pointer: str) -> str:
         """Return the key under which a quantity is calculated."""
@@ -123,12 +124,8 @@ class Case:
 
     def stated(self, pointer: str, role: Role | None = None) -> tuple[Statement, ...]:
         """Return the statements of a quantity, under any pointer that names it."""
-        key = self.key(pointer)
-        return tuple(
-            s
-            for s in self.record.statements
-            if s.usable and self.key(s.pointer) == key and role in (None, s.role)
-        )
+        found = self.by_key.get(self.key(pointer), ())
+        return found if role is None else tuple(s for s in found if s.role is role)
 
     def show(self, pointer: str, value: float) -> str:
         """Return a value as text in the originator's unit and sign."""

@@ -14,7 +14,7 @@ from checker.comparison.references import References
 from checker.display import display_of
 from checker.sheet.build import RecordPlan, build_sheet
 from checker.sheet.step import Values, evaluate
-from checker.submission import PackageHead, Record
+from checker.submission import PackageHead, Record, Statement
 
 
 def make_case(head: PackageHead, record: Record, basis: Basis, others: Mapping[str, Case]) -> Case:
@@ -30,7 +30,18 @@ def make_case(head: PackageHead, record: Record, basis: Basis, others: Mapping[s
     carried = carry(record, plan, carried_leaves, values, shifts)
     compared = compare_all(record, sheet, values, carried, moves, references, shifts, basis)
     display = display_of(record, sheet)
-    return Case(head, record, plan, values, carried, moves, references, compared, display, basis)
+    by_key = _by_key(plan, record)
+    return Case(head, record, plan, values, carried, moves, references, compared, display, basis, by_key)
+
+
+def _by_key(plan: RecordPlan, record: Record) -> dict[str, tuple[Statement, ...]]:
+    """Return the usable statements of every quantity, under the key that all its pointers share."""
+    found: dict[str, tuple[Statement, ...]] = {}
+    for statement in record.statements:
+        if statement.usable:
+            key = plan.sheet.key(statement.pointer)
+            found[key] = (*found.get(key, ()), statement)
+    return found
 
 
 def _linked(plan: RecordPlan, others: Mapping[str, Case], carried: bool) -> dict[str, float]:

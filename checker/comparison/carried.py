@@ -70,7 +70,7 @@ def carry(
     values = evaluate(sheet.steps, leaves, substitutes)
     spreads: dict[str, float] = defaultdict(float)
     for key, width in widths.items():
-        moved = reevaluate(sheet.steps, values, {key: substitutes[key] + width}, substitutes)
+        moved = reevaluate(sheet, values, {key: substitutes[key] + width}, substitutes)
         for name, value in moved.items():
             before = values.get(name)
             if isinstance(value, float) and isinstance(before, float):

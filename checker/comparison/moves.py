@@ -87,7 +87,7 @@ def _moved(sheet: Sheet, base: Values, key: str, size: float, broken: set[str] |
     if not isinstance(start, float) or size == 0.0:
         return {}
     found: dict[str, float] = {}
-    for name, value in reevaluate(sheet.steps, base, {key: start + size}).items():
+    for name, value in reevaluate(sheet, base, {key: start + size}).items():
         before = base[name]
         if not isinstance(before, float):
             continue

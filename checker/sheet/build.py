@@ -19,7 +19,7 @@ from checker.sheet.planner import explain, plan, prune
 from checker.sheet.processes import process_steps
 from checker.sheet.same import SameQuantity, same_quantities
 from checker.sheet.states import CALORIC, SYMBOLS, Clue, StatePlan, clue_steps
-from checker.sheet.step import Sheet, Step, above
+from checker.sheet.step import Sheet, Step, above, users_of
 from checker.sheet.transfers import assumed_candidates
 from checker.submission import Record, Role
 from checker.substances.interface import Phase, Substance
@@ -108,6 +108,7 @@ class _Builder:
             same,
             self.leaves.links,
             made,
+            users_of(steps),
         )
 
     def _body_states(self) -> Iterator[tuple[str, str]]:
@@ -262,4 +263,6 @@ def _words(pointer: str) -> str:
     parts = pointer.split("/")
     term = term_for(pointer)
     name = (term.name if term else parts[-1]).replace("_", " ")
+    if parts[0] == "surroundings":
+        return f"{name} of the surroundings"
     return f"{name} of {'/'.join(parts[1:-1])}" if len(parts) > 2 else name

@@ -6,8 +6,10 @@ A key is the pointer of a quantity; ``given/`` before it means the value that th
 
 from __future__ import annotations
 
-from collections.abc import Callable, Iterable, Mapping
+from collections import defaultdict
+from collections.abc import Callable, Iterable, Mapping, Sequence
 from dataclasses import dataclass, field
+from heapq import heappop, heappush
 
 from checker.outcomes import NotEvaluable
 from checker.sheet.same import SameQuantity
@@ -81,6 +83,8 @@ class Sheet:
         Which pointers name one quantity.
     links : tuple of Link
         Leaves taken from other records.
+    made_by, users : mapping
+        Key → the step that yields it, and the places of the steps that take it.
     """
 
     record: str
@@ -90,6 +94,7 @@ class Sheet:
     same: SameQuantity
     links: tuple[Link, ...] = ()
     made_by: Mapping[str, Step] = field(default_factory=dict)
+    users: Mapping[str, tuple[int, ...]] = field(default_factory=dict)
 
     def key(self, pointer: str) -> str:
         """Return the key under which a quantity is calculated."""
@@ -139,28 +144,39 @@ def evaluate(
     return values
 
 
+def users_of(steps: Sequence[Step]) -> dict[str, tuple[int, ...]]:
+    """Return key → places of the steps that take it."""
+    users: dict[str, list[int]] = defaultdict(list)
+    for index, step in enumerate(steps):
+        for parent in dict.fromkeys(step.parents):
+            users[parent].append(index)
+    return {key: tuple(found) for key, found in users.items()}
+
+
 def reevaluate(
-    steps: Iterable[Step],
-    base: Values,
-    moved: Mapping[str, float],
-    substitutes: Mapping[str, float] | None = None,
+    sheet: Sheet, base: Values, moved: Mapping[str, float], substitutes: Mapping[str, float] | None = None
 ) -> Values:
     """Return what changes when some leaves or substitutes move: only keys below them, by the same rules.
 
     Keys of ``moved`` that are calculated act as substitutes for their children.
     """
-    values = dict(base)
-    values.update(moved)
+    values = {**base, **moved}
     instead = {**(substitutes or {}), **moved}
-    changed = set(moved)
-    touched: set[str] = set()
-    for step in steps:
-        if changed.isdisjoint(step.parents):
-            continue
+    waiting = sorted({index for key in moved for index in sheet.users.get(key, ())})
+    queued = set(waiting)
+    touched: Values = {}
+    while waiting:
+        step = sheet.steps[heappop(waiting)]
         run_step(step, values, instead)
-        touched.update(step.outputs)
-        changed.update(key for key in step.outputs if key not in instead)
-    return {key: values[key] for key in touched}
+        for key in step.outputs:
+            touched[key] = values[key]
+            if key in instead:
+                continue
+            for index in sheet.users.get(key, ()):
+                if index not in queued:
+                    queued.add(index)
+                    heappush(waiting, index)
+    return touched
 
 
 def run_step(step: Step, values: Values, instead: Mapping[str, float]) -> None:

@@ -14,6 +14,9 @@ from checker.package.parts.state import State
 from checker.package.words import CLAIMS, PURPOSES
 from checker.vocabulary import Level
 
+MAX_PARTS = 200
+"""Most bodies, states or processes of one record; a record that needs more is several records."""
+
 Totals = Annotated[Quantities, Names("CycleQuantities", Level.CYCLE)]
 SequenceNames = Annotated[Quantities, Names("SequenceQuantities", Level.SEQUENCE)]
 AssumptionNames = Annotated[Quantities, Names("AssumptionQuantities", Level.ASSUMPTION)]
@@ -63,9 +66,13 @@ class Record(Part):
         default=Conventions(), description="Sign conventions, where they differ."
     )
     surroundings: Surroundings = Field({}, description="Surroundings, where they differ.")
-    bodies: dict[Identifier, Body] = Field(min_length=1, description="The bodies by identifier.")
-    states: dict[Identifier, State] = Field(min_length=1, description="The states by identifier.")
-    processes: Many[Process] = Field(description="The processes.")
+    bodies: dict[Identifier, Body] = Field(
+        min_length=1, max_length=MAX_PARTS, description="The bodies by identifier."
+    )
+    states: dict[Identifier, State] = Field(
+        min_length=1, max_length=MAX_PARTS, description="The states by identifier."
+    )
+    processes: Many[Process] = Field(max_length=MAX_PARTS, description="The processes.")
     sequences: Many[ProcessSequence] = Field((), description="Balances over several processes.")
     inputs: Totals = Field({}, description="Totals of the cycle that were given.")
     results: Totals = Field({}, description="Totals of the cycle that are claimed.")

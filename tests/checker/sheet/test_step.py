@@ -4,7 +4,7 @@ import pytest
 
 from checker.outcomes import NotEvaluable
 from checker.sheet.same import SameQuantity
-from checker.sheet.step import Sheet, Step, evaluate, reevaluate
+from checker.sheet.step import Sheet, Step, evaluate, reevaluate, users_of
 
 
 def step(output: str, parents: tuple[str, ...], function, **more) -> Step:
@@ -19,6 +19,7 @@ STEPS = (
     step("apart", ("given/y",), lambda y: -y),
 )
 LEAVES = {"given/x": 3.0, "given/y": 1.0}
+SHEET = Sheet("r", LEAVES, STEPS, {}, SameQuantity(), users=users_of(STEPS))
 
 
 def test_steps_follow_their_parents():
@@ -36,13 +37,13 @@ def test_a_substitute_feeds_the_children_and_the_own_value_stays():
 def test_moving_a_leaf_reevaluates_only_what_is_below_it():
     """A moved leaf changes its descendants and nothing else."""
     base = evaluate(STEPS, LEAVES)
-    assert reevaluate(STEPS, base, {"given/x": 4.0}) == {"double": 8.0, "square": 64.0, "sum": 72.0}
+    assert reevaluate(SHEET, base, {"given/x": 4.0}) == {"double": 8.0, "square": 64.0, "sum": 72.0}
 
 
 def test_a_substitute_stops_a_move():
     """In the carried evaluation a move reaches the next stated value and ends there."""
     carried = evaluate(STEPS, LEAVES, {"double": 5.0})
-    assert reevaluate(STEPS, carried, {"given/x": 4.0}, {"double": 5.0}) == {"double": 8.0}
+    assert reevaluate(SHEET, carried, {"given/x": 4.0}, {"double": 5.0}) == {"double": 8.0}
 
 
 def test_no_value_is_inherited_with_its_reason():
