@@ -22,7 +22,7 @@ from checker.findings import (
     reading_order,
 )
 from checker.locate import Locator, finding_of, finding_of_problem
-from checker.problems import Problem
+from checker.problems import Place, Problem
 from checker.recording import record_review
 from checker.submission import Record, Submission
 from checker.tool import tool_versions
@@ -180,10 +180,19 @@ def verdict_of(findings: Iterable[Finding], records: Sequence[RecordReview]) -> 
 
 
 def _in_document_order(submission: Submission, reviews: dict[str, RecordReview]) -> Iterator[RecordReview]:
-    for record in submission.records:
-        yield reviews[record.id]
+    """Yield the reviews, unreadable records included, in the order of the file."""
+    places: dict[str, int] = {record.id: _index(record.place) for record in submission.records}
+    for problem in submission.problems:
+        if problem.record in submission.unreadable:
+            places.setdefault(problem.record, _index(problem.place))
     for name in submission.unreadable:
-        yield RecordReview(name, "", readable=False)
+        reviews.setdefault(name, RecordReview(name, "", readable=False))
+    yield from sorted(reviews.values(), key=lambda review: places.get(review.id, len(places)))
+
+
+def _index(place: Place) -> int:
+    """Return the number of the record that a place belongs to."""
+    return next((part for part in place[:2] if isinstance(part, int)), 0)
 
 
 def _package_note(document: Document, submission: Submission) -> PackageNote:

@@ -102,6 +102,9 @@ def _misfit(
         least = context.get("min_length", 1)
         message = f"`{_name(model, place)}` needs at least {least} {'entry' if least == 1 else 'entries'}."
         return _Misfit("part-missing", place, message, "", False, sparable(place))
+    if kind == "too_long":
+        message = f"`{_name(model, place)}` has more than {context.get('max_length', 0)} entries."
+        return _Misfit("type-wrong", place, message, "Make several records of it.", at_key, sparable(place))
     wanted = next((words for start, words in _SHAPES if kind.startswith(start)), "something else")
     message = f"`{_name(model, place)}` should be {wanted}, and is {_shape_of(detail['input'])}."
     advice = without_value(_name(model, place)) if detail["input"] is None else _meaning(model, place)
