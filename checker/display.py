@@ -2,12 +2,14 @@
 
 from __future__ import annotations
 
+import re
 from collections.abc import Mapping
 from dataclasses import dataclass
+from typing import Final
 
 from checker.findings import Amount
 from checker.quantity import unit as unit_of
-from checker.quantity.types import Quantity
+from checker.quantity.types import Quantity, Scale
 from checker.sheet.keys import plain, term_for
 from checker.sheet.step import Sheet
 from checker.submission import Record
@@ -26,6 +28,10 @@ def format_number(value: float, digits: int = 5) -> str:
     else:
         text = f"{value:.{digits - 1}e}"
     return text.replace("-", "−")
+
+
+GAUGE_MARK: Final = re.compile(r"\s*\(g\)$|(?<=bar|psi)g$")
+"""The mark of a gauge pressure at the end of a unit text."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -47,6 +53,18 @@ class Display:
         sign = self.work_sign if term.work_sign else 1
         unit = unit_of(term.unit)
         return _amount((sign * value - unit.offset) / unit.factor, term.unit)
+
+    def absolute(self, key: str, value: float) -> Amount:
+        """Return a calculated value for use in a formula: temperatures in K, pressures absolute."""
+        amount = self.amount(key, value)
+        term = term_for(key)
+        if term is not None and term.scale is Scale.ABSOLUTE_TEMPERATURE:
+            return _amount(value, "K")
+        found = self.units.get(plain(key))
+        if found is not None and found[0].unit.gauge:
+            unit = found[0].unit
+            return _amount(value / unit.factor, GAUGE_MARK.sub("", unit.text))
+        return amount
 
     def difference(self, key: str, value: float) -> float:
         """Return a difference in the unit of a key, without offset."""

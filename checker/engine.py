@@ -22,7 +22,7 @@ from checker.findings import (
     reading_order,
 )
 from checker.locate import Locator, finding_of, finding_of_problem
-from checker.problems import Place, Problem
+from checker.problems import Place
 from checker.recording import record_review
 from checker.submission import Record, Submission
 from checker.tool import tool_versions
@@ -209,8 +209,3 @@ def _package_note(document: Document, submission: Submission) -> PackageNote:
         checker=head.checker,
         work_convention=head.work_convention or "not stated",
     )
-
-
-def unreadable_problems(problems: Iterable[Problem]) -> tuple[Problem, ...]:
-    """Return the problems that kept a record or the package from being reviewed."""
-    return tuple(problem for problem in problems if problem.fatal)

@@ -203,15 +203,18 @@ def _word(value: object) -> Amount | None:
 
 def _substituted(case: Case, step: Step) -> str:
     """Return the formula's right-hand side with numbers and units."""
+    # Inside a product only absolute temperatures and pressures are right; a state is looked up as it was given.
+    looked_up = step.substitution.startswith("f(")
+    shown = case.display.amount if looked_up else case.display.absolute
     parts = []
     for key in step.parents:
         value = case.values.get(key)
-        parts.append(as_text(case.display.amount(key, value)) if isinstance(value, float) else "…")
+        parts.append(as_text(shown(key, value)) if isinstance(value, float) else "…")
     if step.substitution:
         return step.substitution.format(*parts)
-    shown = [
+    listed = [
         f"{term.symbol} = {part}"
         for key, part in zip(step.parents, parts, strict=True)
         if (term := term_for(key)) is not None and not key.startswith("model/")
     ]
-    return ", ".join(shown)
+    return ", ".join(listed)
