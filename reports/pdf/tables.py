@@ -46,7 +46,7 @@ def ruled_table(
     style = list(_BASE)
     for row in rows:
         if isinstance(row, Band):
-            style += _band(len(data))
+            style += _band(len(data), last=row is rows[-1])
             data.append([_fit(row.content, None), *[""] * (len(columns) - 1)])
         else:
             data.append([_fit(cell, column) for cell, column in zip(row, columns, strict=True)])
@@ -79,8 +79,9 @@ _BASE: Final = (
 )
 
 
-def _band(row: int) -> list[tuple[Any, ...]]:
-    return [("SPAN", (0, row), (-1, row)), ("BACKGROUND", (0, row), (-1, row), SHADE)]
+def _band(row: int, last: bool) -> list[tuple[Any, ...]]:
+    style: list[tuple[Any, ...]] = [("SPAN", (0, row), (-1, row)), ("BACKGROUND", (0, row), (-1, row), SHADE)]
+    return style if last else [*style, ("NOSPLIT", (0, row), (-1, row + 1))]  # no band at the foot of a page
 
 
 def _heads(columns: Sequence[Column]) -> list[Cell]:
