@@ -104,7 +104,6 @@ def adiabatic_with_heat(case: Case, process: str) -> Yielded:
                 f"The process is {ctx.no_heat}, and {case.show(pointer, case.given(pointer) or 0.0)} of heat is an "
                 f"input of it.",
                 statement=next(iter(case.stated(pointer, Role.INPUT)), None),
-                quantity=pointer,
                 suggestion="Remove the heat, or declare the path that the body really follows.",
             )
 

@@ -62,6 +62,7 @@ def surplus_input(case: Case) -> Yielded:
                 f"give {_recomputed(case, c)}.",
                 compared=c,
                 theme=c.statement.term.theme,
+                grade=Grade.QUERY if c.explained_by_digits else None,
                 suggestion="Keep the inputs that define the case and correct or drop the other.",
             )
 

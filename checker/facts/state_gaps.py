@@ -24,6 +24,7 @@ TWO_PHASE: Final = "two-phase-from-temperature-and-pressure"
 REACHES_ACROSS: Final = "reach across the saturation line"
 URGENCY: Final = (
     "value-not-positive",
+    "quality-outside-range",
     TWO_PHASE,
     "near-saturation",
     "outside-range",
@@ -93,6 +94,9 @@ def _rule(case: Case, found: BodyState, failure: NotEvaluable | None, reason: st
     base = f"states/{found.state}/{found.body}/"
     if any(s.pointer.startswith(base) and is_refused(s) for s in case.record.statements):
         return "value-not-positive"
+    quality = case.given(f"{base}quality")
+    if quality is not None and not 0.0 <= quality <= 1.0:
+        return "quality-outside-range"
     near = REACHES_ACROSS in reason or (failure is not None and failure.kind == "near-saturation")
     if near:
         return TWO_PHASE if _claims_two_phases(case, found) else "near-saturation"

@@ -90,11 +90,17 @@ def energy_change(case: Case, process: str) -> Stated | None:
     summed = total(
         (
             one(case, f"{base}/internal_energy_change"),
-            one_or_nothing(case, f"{base}/kinetic_energy_change"),
-            one_or_nothing(case, f"{base}/potential_energy_change"),
+            _motion(case, f"{base}/kinetic_energy_change", "velocity"),
+            _motion(case, f"{base}/potential_energy_change", "elevation"),
         )
     )
     return one(case, f"{base}/energy_change") or summed
+
+
+def _motion(case: Case, pointer: str, cause: str) -> Stated | None:
+    """Return the stated kinetic or potential energy; nothing where no speed or height is stated anywhere."""
+    moves = any(s.pointer.startswith("states/") and s.term.name == cause for s in case.record.statements)
+    return one(case, pointer) or (None if moves else NOTHING)
 
 
 def is_wrong(case: Case, pointer: str) -> bool:

@@ -6,6 +6,8 @@ from collections.abc import Iterator
 from typing import Final
 
 from checker.case import Case
+from checker.facts.gaps import lost
+from checker.facts.state_gaps import state_gaps
 from checker.facts.twins import IDEAL, REAL
 from checker.sheet.keys import given
 from checker.sheet.models import CONSTANTS
@@ -18,25 +20,31 @@ NOT_IN_FORMULAS: Final = (
     "duration",
     "velocity",
     "elevation",
+    "boundary_temperature",
+    "reservoir_temperature",
 )
-"""Inputs that serve a check, a rate or one end of a motion, and need not enter a formula."""
+"""Inputs that serve a check, a rate, one end of a motion or an entropy, and need not enter a formula."""
 
 
 def unused_inputs(case: Case) -> Iterator[Statement]:
-    """Yield inputs from which nothing was calculated and which nothing was compared with."""
+    """Yield inputs from which nothing was calculated and which nothing was compared with.
+
+    Where a state or a result has no value nobody can say what an input would have led to.
+    """
+    complete = not case.plan.sheet.missing and not any(lost(case)) and not state_gaps(case)
     used = {parent for step in case.plan.sheet.steps for parent in step.parents}
     compared = {c.key for c in case.compared}
     for s in inputs(case):
         key = case.key(s.pointer)
         idle = given(key) not in used and key not in compared and s.term.name not in NOT_IN_FORMULAS
-        if (idle and key not in case.plan.sheet.missing) or _has_own_constant(case, s):
+        if (idle and complete) or _has_own_constant(case, s):
             yield s
 
 
 def inputs(case: Case) -> Iterator[Statement]:
-    """Yield the inputs of a record that belong to it alone."""
+    """Yield the inputs of a record that belong to it alone; parameters of a path are held against its ends."""
     for s in case.record.statements:
-        elsewhere = s.pointer.startswith(("surroundings/", "assumptions/"))
+        elsewhere = s.pointer.startswith(("surroundings/", "assumptions/")) or "/path/" in s.pointer
         if s.role is Role.INPUT and s.usable and not elsewhere:
             yield s
 

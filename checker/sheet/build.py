@@ -214,7 +214,7 @@ class _Builder:
             for output in step.outputs:
                 makers[output].append(step)
         unknown = sorted(self._wanted(same, {}) - known)
-        return {key: explain(key, known, makers, self._say) for key in unknown}
+        return explain(unknown, known, makers, self._say)
 
     def _say(self, key: str) -> str:
         """Say in words what is missing where no formula leads further."""

@@ -9,6 +9,7 @@ from __future__ import annotations
 from collections import defaultdict
 from collections.abc import Callable, Iterable, Iterator, Mapping, Sequence
 from heapq import heappop, heappush
+from typing import Final
 
 from checker.sheet.states import StatePlan, best_pair, state_step
 from checker.sheet.step import Step
@@ -111,10 +112,59 @@ def prune(steps: Sequence[Step], wanted: Iterable[str]) -> list[Step]:
     return kept[::-1]
 
 
+LAST_RESORT: Final = 1000.0
+PER_FORMULA: Final = 1e-3
+"""What a formula costs beside what it lacks, so that the cheapest way never leads round in a circle."""
+
+
 def explain(
-    key: str, known: set[str], makers: Mapping[str, Sequence[Step]], say: Callable[[str], str]
-) -> str:
-    """Return what is missing for a key, from the formulas that could have made it."""
+    keys: Iterable[str], known: set[str], makers: Mapping[str, Sequence[Step]], say: Callable[[str], str]
+) -> dict[str, str]:
+    """Return what is missing for each key: of the formulas that could have made it, the one that lacks least."""
+    wanted = tuple(keys)
+    lacking = _lacking(wanted, known, makers)
+    costs = _costs(lacking)
+    return {key: "; ".join(_reasons(key, lacking, costs, say)) or say(key) for key in wanted}
+
+
+def _lacking(
+    keys: Iterable[str], known: set[str], makers: Mapping[str, Sequence[Step]]
+) -> dict[str, list[list[str]]]:
+    """Return, for every key above some, what each of its formulas lacks; no formula: nothing can make it."""
+    found: dict[str, list[list[str]]] = {}
+    waiting = list(keys)
+    while waiting:
+        key = waiting.pop()
+        if key not in found:
+            options = ([p for p in step.parents if p not in known] for step in makers.get(key, ()))
+            found[key] = [option for option in options if option]
+            waiting.extend(parent for option in found[key] for parent in option)
+    return found
+
+
+def _costs(lacking: Mapping[str, Sequence[Sequence[str]]]) -> dict[str, float]:
+    """Return how many missing statements each key costs.
+
+    What no formula makes costs one; stating what formulas make is the last resort, where they only lead in circles.
+    """
+    costs = {key: LAST_RESORT if options else 1.0 for key, options in lacking.items()}
+    changed = True
+    while changed:
+        changed = False
+        for key, options in lacking.items():
+            cost = min((sum(costs[p] for p in option) + PER_FORMULA for option in options), default=1.0)
+            if cost < costs[key]:
+                costs[key], changed = cost, True
+    return costs
+
+
+def _reasons(
+    key: str,
+    lacking: Mapping[str, Sequence[Sequence[str]]],
+    costs: Mapping[str, float],
+    say: Callable[[str], str],
+) -> list[str]:
+    """Return in words what the cheapest way to a key lacks."""
     reasons: dict[str, None] = {}
     seen: set[str] = set()
     waiting = [key]
@@ -123,18 +173,9 @@ def explain(
         if wanted in seen:
             continue
         seen.add(wanted)
-        lacking = _least_lacking(wanted, known, seen, makers)
-        if lacking is None:
+        options = lacking[wanted]
+        if not options or (wanted != key and costs[wanted] >= LAST_RESORT):
             reasons[say(wanted)] = None
         else:
-            waiting.extend(lacking)
-    return "; ".join(reasons) or say(key)
-
-
-def _least_lacking(
-    key: str, known: set[str], seen: set[str], makers: Mapping[str, Sequence[Step]]
-) -> list[str] | None:
-    """Return what the formula that lacks least still lacks, what was asked before left out; None without one."""
-    options = [[parent for parent in step.parents if parent not in known] for step in makers.get(key, ())]
-    left = [[parent for parent in lacking if parent not in seen] for lacking in options if lacking]
-    return min(left, key=len) if left else None
+            waiting.extend(min(options, key=lambda option: sum(costs[p] for p in option)))
+    return list(reasons)
