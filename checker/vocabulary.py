@@ -6,79 +6,16 @@ ISO 80000-5:2019 (thermodynamics); the state symbols are accepted as synonyms of
 
 from __future__ import annotations
 
-from dataclasses import dataclass, replace
-from enum import StrEnum
+from dataclasses import replace
 from typing import Final
 
 from checker.quantity import dimensions as dim
-from checker.quantity.dimensions import Dimension
 from checker.quantity.types import Scale
 
-
-class Level(StrEnum):
-    """Where in a record a name may stand."""
-
-    BODY = "body"
-    STATE = "state"
-    PROCESS = "process"
-    TRANSFER = "transfer"
-    PATH = "path"
-    CYCLE = "cycle"
-    SEQUENCE = "sequence"
-    ASSUMPTION = "assumption"
-    SURROUNDINGS = "surroundings"
-
-
-class Allowance(StrEnum):
-    """Which default allowance of the review basis applies (design, section 6)."""
-
-    TEMPERATURE = "temperature"
-    FRACTION = "quality and efficiency"
-    PROPERTY_CHANGE = "specific energy, enthalpy and entropy"
-    ENERGY = "energy"
-    ENTROPY = "entropy"
-    VALUE = "value"
-
-
-@dataclass(frozen=True, slots=True)
-class Term:
-    """A name of the vocabulary.
-
-    Attributes
-    ----------
-    name, symbol : str
-        Whole words, and the symbol printed in formulas.
-    dimension : Dimension
-        Exponents of length, mass, time, temperature and amount.
-    unit : str
-        The unit in which the report prints a value for which nobody stated a unit.
-    scale : Scale
-        How a number with a unit is understood.
-    allowance : Allowance
-        Which default allowance applies.
-    theme : str
-        Theme of a finding about it: state, energy, entropy, exergy, path, bookkeeping.
-    text : bool
-        The value is a word, not a quantity (phase, purpose).
-    work_sign : bool
-        The work convention of the package applies.
-    positive : bool
-        Only positive values are meaningful.
-    meaning : str
-        One line for the schema and the guide.
-    """
-
-    name: str
-    symbol: str
-    dimension: Dimension
-    unit: str
-    meaning: str
-    scale: Scale = Scale.PLAIN
-    allowance: Allowance = Allowance.VALUE
-    theme: str = "state"
-    text: bool = False
-    work_sign: bool = False
-    positive: bool = False
+# What a term is comes with the terms.
+from checker.term import Allowance as Allowance
+from checker.term import Level as Level
+from checker.term import Term as Term
 
 
 def _energy(name: str, symbol: str, meaning: str, theme: str = "energy", work_sign: bool = False) -> Term:

@@ -6,7 +6,7 @@ import math
 from collections.abc import Iterator, Mapping
 
 from checker.outcomes import NotEvaluable
-from checker.sheet import balances
+from checker.sheet import balances, second_law
 from checker.sheet.context import ProcessContext
 from checker.sheet.keys import body_key, given, process_key, state_key
 from checker.sheet.step import Step
@@ -65,7 +65,7 @@ def _body_changes(ctx: ProcessContext, body: str, substance: Substance | None) -
 
 
 def _single_body_steps(ctx: ProcessContext, body: str) -> Iterator[Step]:
-    yield balances.exergy_change_step(ctx.process)
+    yield second_law.exergy_change_step(ctx.process)
     yield from _exponent_steps(ctx, body)
     yield from heat_candidates(ctx)
     yield from work_candidates(ctx)
@@ -152,10 +152,10 @@ def _entropy(ctx: ProcessContext, body: str) -> Iterator[Step]:
     for item in items or ():
         yield from _item_entropy(ctx, body, item)
     if items is not None or ctx.no_heat:
-        yield from balances.entropy_steps(process, [item.id for item in items or ()])
+        yield from second_law.entropy_steps(process, [item.id for item in items or ()])
         base = f"processes/{process.id}/heat_transfers"
         pairs = [(ctx.heat_item(item.id), f"{base}/{item.id}/item_entropy") for item in items or ()]
-        yield from balances.exergy_steps(process, pairs, _generation_for_exergy(ctx))
+        yield from second_law.exergy_steps(process, pairs, _generation_for_exergy(ctx))
     else:
         yield from _without_transfers(process.id)
 
@@ -164,7 +164,7 @@ def _without_transfers(p: str) -> Iterator[Step]:
     """Yield formulas that can never apply, so that the missing list of heat transfers is what gets named."""
     for name in ("entropy_transfer", "reservoir_entropy_transfer"):
         yield Step("", (process_key(p, name),), (f"processes/{p}/heat_transfers",), balances.total, "")
-    yield from balances.entropy_steps_without_transfer(p)
+    yield from second_law.entropy_steps_without_transfer(p)
 
 
 def _generation_for_exergy(ctx: ProcessContext) -> str:
@@ -181,13 +181,13 @@ def _item_entropy(ctx: ProcessContext, body: str, item: HeatTransfer) -> Iterato
             body
         )
         alone = quasi_static and len(process.heat_transfers or ()) == 1
-        yield balances.item_entropy_at_system_step(process, item.id, energy, body, alone)
+        yield second_law.item_entropy_at_system_step(process, item.id, energy, body, alone)
         boundary: tuple[str, ...] = ends
     else:
-        yield balances.item_entropy_step(process, item.id, energy)
+        yield second_law.item_entropy_step(process, item.id, energy)
         boundary = (given(f"{base}/boundary_temperature"),)
     stated = ctx.is_given(f"{base}/reservoir_temperature")
-    yield balances.reservoir_step(process, item.id, energy, boundary, stated)
+    yield second_law.reservoir_step(process, item.id, energy, boundary, stated)
     for name in ("boundary_temperature", "reservoir_temperature"):
         if ctx.is_given(f"{base}/{name}"):
             yield balances.same_value(
