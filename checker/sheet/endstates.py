@@ -14,6 +14,7 @@ from checker.sheet.context import ProcessContext
 from checker.sheet.keys import body_key, clue, given, state_key
 from checker.sheet.models import outputs_of
 from checker.sheet.paths import Parameters, Path
+from checker.sheet.on_path import positive_pressure, state_on
 from checker.sheet.search import around, between, find_state
 from checker.sheet.states import SYMBOLS, Clue, StatePlan
 from checker.sheet.step import Step, Value
@@ -132,10 +133,14 @@ def _enthalpy_clue(near: Neighbour) -> tuple[Clue, Step]:
 
 @dataclass(frozen=True, slots=True)
 class _Curve:
-    """A one-parameter family of end states, and the grid on which to scan it."""
+    """A one-parameter family of end states, and the grid on which to scan it.
+
+    ``outward``: the known state is in the middle of the grid and belongs to the family.
+    """
 
     state: Callable[[float], PropertyState]
     grid: tuple[float, ...]
+    outward: bool = False
 
 
 def curve_steps(near: Neighbour, plan: StatePlan, known: set[str]) -> Iterator[Step]:
@@ -209,7 +214,7 @@ def _on_curve_step(near: Neighbour, plan: StatePlan, path: Path, one: Clue) -> S
         parameters = assemble(*values[count + 1 : count + 1 + len(keys)])
         substance = plan.model.substance(values[count + 1 + len(keys) :])
         pressure = curve_of(through, parameters)
-        return outputs_of(_state_on(substance, pressure, through, one.name, values[count], plan))
+        return outputs_of(state_on(substance, pressure, through, one.name, values[count], plan.phase))
 
     symbol = SYMBOLS[one.name]
     return Step(
@@ -220,40 +225,6 @@ def _on_curve_step(near: Neighbour, plan: StatePlan, path: Path, one: Clue) -> S
         f"p = p(v) along the path, with {symbol}",
         f"{symbol} = {{{count}}}",
     )
-
-
-def _state_on(
-    substance: Substance,
-    pressure: Callable[[float], float],
-    through: PropertyState,
-    name: str,
-    value: float,
-    plan: StatePlan,
-) -> PropertyState:
-    def state(v: float) -> PropertyState:
-        return substance.state({"pressure": _positive(pressure(v)), "specific_volume": v})
-
-    if name == "specific_volume":
-        return state(value)
-    centre = through.specific_volume
-    if centre is None:
-        raise NotEvaluable("the model states no density", "missing")
-
-    def residual(found: PropertyState) -> float:
-        own: float | None = getattr(found, name)
-        if own is None:
-            raise NotEvaluable(f"{name} does not exist here")
-        return own - value
-
-    return find_state(
-        state, residual, around(centre), max(abs(value), 1.0), f"{SYMBOLS[name]} as given", plan.phase
-    )
-
-
-def _positive(pressure: float) -> float:
-    if pressure <= 0.0:
-        raise NotEvaluable("the path leads to a pressure below zero")
-    return pressure
 
 
 def _balance_steps(near: Neighbour, plan: StatePlan, path: Path, one: Clue | None) -> Iterator[Step]:
@@ -303,7 +274,9 @@ def _search_step(
             1e-9,
         )
         what = "the energy balance" if balance else "the boundary work"
-        return outputs_of(find_state(family.state, residual, family.grid, scale, what, plan.phase))
+        return outputs_of(
+            find_state(family.state, residual, family.grid, scale, what, plan.phase, family.outward)
+        )
 
     formula = "ΔU + W_b + W_sh + W_el + ΔKE + ΔPE = Q" if balance else "∫p dV = W_b"
     return Step(
@@ -337,8 +310,9 @@ def _family(
     if path.curve is not None and centre is not None:
         pressure = path.curve(known, parameters)
         return _Curve(
-            lambda v: substance.state({"pressure": _positive(pressure(v)), "specific_volume": v}),
+            lambda v: substance.state({"pressure": positive_pressure(pressure(v)), "specific_volume": v}),
             around(centre),
+            outward=True,
         )
     if one is None:
         raise NotEvaluable("one property of the state sought is missing", "missing")
@@ -349,7 +323,9 @@ def _family(
     if centre is None:
         raise NotEvaluable("the model states no density", "missing")
     fixed: Mapping[str, float] = {one.name: value}
-    return _Curve(lambda v: substance.state({**fixed, "specific_volume": v}), around(centre))
+    return _Curve(
+        lambda v: substance.state({**fixed, "specific_volume": v}), around(centre), one.name == path.holds
+    )
 
 
 def _by_temperature(substance: Substance, fixed: Mapping[str, float]) -> _Curve:

@@ -3,7 +3,7 @@
 import pytest
 
 from checker.outcomes import NotEvaluable
-from checker.sheet.search import around, between, find_state
+from checker.sheet.search import around, between, find_parameter, find_state
 from checker.substances.interface import Phase, PropertyState
 
 
@@ -74,3 +74,63 @@ def test_states_outside_the_model_are_stepped_over():
 def test_the_logarithmic_grid_contains_its_centre():
     """The known state itself is one of the scanned points."""
     assert 0.37 in around(0.37)
+
+
+def by_volume(v: float) -> PropertyState:
+    """Return a state whose specific volume is the curve's parameter."""
+    return PropertyState(300.0, 1e5, v, v, v, v)
+
+
+def test_on_a_path_the_first_root_of_each_side_counts():
+    """What lies behind a root on the same side is not reached; one root on each side remains undecided."""
+
+    def beyond(state: PropertyState) -> float:
+        return (state.specific_volume - 2.0) * (state.specific_volume - 5.0)
+
+    found = find_state(by_volume, beyond, around(1.0), 1.0, "the test", outward=True)
+    assert found.specific_volume == pytest.approx(2.0)
+
+    def both_ways(state: PropertyState) -> float:
+        return (state.specific_volume - 2.0) * (state.specific_volume - 0.3) * (state.specific_volume - 0.1)
+
+    with pytest.raises(NotEvaluable) as caught:
+        find_state(by_volume, both_ways, around(1.0), 1.0, "the test", outward=True)
+    assert [root.split("v = ")[1] for root in caught.value.roots] == ["0.3 m³/kg", "2 m³/kg"]
+
+
+def test_a_path_ends_where_the_model_ends():
+    """A root behind a gap in the model's range is out of the path's reach."""
+
+    def with_gap(v: float) -> PropertyState:
+        if 2.0 < v < 50.0:
+            raise NotEvaluable("outside")
+        return by_volume(v)
+
+    with pytest.raises(NotEvaluable, match="no state on the path"):
+        find_state(with_gap, lambda s: s.specific_volume - 100.0, around(1.0), 1.0, "the test", outward=True)
+    found = find_state(with_gap, lambda s: s.specific_volume - 100.0, around(1.0), 1.0, "the test")
+    assert found.specific_volume == pytest.approx(100.0)
+
+
+def test_a_root_between_the_last_point_and_the_edge_of_the_model_is_found():
+    """The scan goes close to the edge, where a liquid would take a pressure beyond the equation within one step."""
+
+    def ending(v: float) -> PropertyState:
+        if v < 0.95:
+            raise NotEvaluable("outside")
+        return by_volume(v)
+
+    found = find_state(
+        ending, lambda s: s.specific_volume - 0.951, around(1.0), 1.0, "the test", outward=True
+    )
+    assert found.specific_volume == pytest.approx(0.951)
+
+
+def test_a_parameter_is_found_without_states():
+    """Where the path alone fixes the place no state is evaluated; none and many are said."""
+    grid = around(1.0)
+    assert find_parameter(lambda v: v**2 - 9.0, grid, "the test") == pytest.approx(3.0)
+    with pytest.raises(NotEvaluable, match="no state on the path"):
+        find_parameter(lambda v: v + 1.0, grid, "the test")
+    with pytest.raises(NotEvaluable, match="more than one state"):
+        find_parameter(lambda v: 0.0, grid, "the test")
