@@ -13,8 +13,8 @@ from checker.outcomes import NotEvaluable
 from checker.sheet.context import ProcessContext
 from checker.sheet.keys import body_key, clue, given, state_key
 from checker.sheet.models import outputs_of
-from checker.sheet.paths import Parameters, Path
 from checker.sheet.on_path import positive_pressure, state_on
+from checker.sheet.paths import Parameters, Path
 from checker.sheet.search import around, between, find_state
 from checker.sheet.states import SYMBOLS, Clue, StatePlan
 from checker.sheet.step import Step, Value
