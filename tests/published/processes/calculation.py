@@ -110,9 +110,11 @@ def unit_of(name: str) -> str:
     return UNITS.get(name, "J/K" if "entropy" in name else "J")
 
 
-def quantities(**values: float) -> dict[str, str]:
-    """Return inputs in SI from plain numbers."""
-    return {name: si(value, unit_of(name)) for name, value in values.items()}
+def quantities(**values: float | str) -> dict[str, str]:
+    """Return inputs in SI from plain numbers; words stay as they are."""
+    return {
+        name: value if isinstance(value, str) else si(value, unit_of(name)) for name, value in values.items()
+    }
 
 
 def matter(substance: str, model: str, **inputs: float) -> dict[str, Any]:
@@ -157,7 +159,7 @@ def _process_claiming(part: Mapping[str, Any]) -> dict[str, Any]:
 
 def calculate(
     body: Mapping[str, Any],
-    states: Mapping[str, Mapping[str, float]],
+    states: Mapping[str, Mapping[str, float | str]],
     processes: Sequence[Mapping[str, Any]],
     **members: Any,
 ) -> Calculated:
@@ -189,8 +191,8 @@ def calculated(record: Mapping[str, Any]) -> Calculated:
 
 def one_change(
     body: Mapping[str, Any],
-    first: Mapping[str, float],
-    last: Mapping[str, float],
+    first: Mapping[str, float | str],
+    last: Mapping[str, float | str],
     **members: Any,
 ) -> Calculated:
     """Return the independent values of one process from a first to a last state; no other work unless given."""
