@@ -130,7 +130,7 @@ def constants_contradict(case: Case, body: str) -> Yielded:
             pointer = f"bodies/{body}/gas_constant"
             values = [case.show(pointer, check.expected) for check in (first, other)]
             yield _contradiction(
-                case, body, f"{first.source} gives R = {values[0]}, and {other.source} gives {values[1]}."
+                case, body, f"R = {values[0]} by {first.source}, and R = {values[1]} by {other.source}."
             )
 
 
@@ -169,8 +169,8 @@ def liquid_full(case: Case, process: str) -> Yielded:
         if found is not None:
             pointer = f"states/{found.state}/{body}/pressure"
             yield Raised(
-                f"{body} is warmed by {found.warming:.4g} K in a closed volume. Its model leaves the pressure out; "
-                f"{case.record.bodies[body].substance} itself would go to {case.show(pointer, found.pressure)}.",
+                f"The body {body} is warmed by {found.warming:.4g} K in a closed volume. Its model leaves the pressure "
+                f"out; {case.record.bodies[body].substance} itself would go to {case.show(pointer, found.pressure)}.",
                 quantity=f"processes/{process}",
                 place=next(p.place for p in case.record.processes if p.id == process),
                 suggestion="Use the model `real fluid`, or show the gas cushion or relief that takes the expansion.",

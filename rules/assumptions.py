@@ -134,7 +134,8 @@ def reversible_fails(case: Case, item: str) -> Yielded:
             yield _raised(
                 case,
                 item,
-                f"{process.id} is declared reversible, and its entropy generation is {case.show(pointer, found.size)}.",
+                f"Process {process.id} is declared reversible, and its entropy generation is "
+                f"{case.show(pointer, found.size)}.",
                 "Declare what drives the process, or correct the boundary temperature.",
                 found.grade,
             )
@@ -151,9 +152,8 @@ def _heat(case: Case, process: str) -> Deviation | None:
 
 def _heat_words(case: Case, process: Process, size: float) -> str:
     pointer = f"processes/{process.id}/heat"
-    return (
-        f"{process.id} is declared adiabatic, and {case.show(pointer, size)} of heat follows from its inputs."
-    )
+    heat = case.show(pointer, size)
+    return f"Process {process.id} is declared adiabatic, and {heat} of heat follows from its inputs."
 
 
 def losses_matter(case: Case, item: str) -> Yielded:
@@ -166,7 +166,8 @@ def losses_matter(case: Case, item: str) -> Yielded:
                 yield _raised(
                     case,
                     item,
-                    f"{c.item} of {process.id} carries {case.show(pointer, c.heat)} to the surroundings.",
+                    f"Heat transfer {c.item} of {process.id} carries {case.show(pointer, -c.heat)} to the "
+                    f"surroundings.",
                     "Drop the assumption, or name where this heat goes.",
                 )
 
@@ -179,7 +180,7 @@ def not_quasi_static(case: Case, item: str) -> Yielded:
             yield _raised(
                 case,
                 item,
-                f"{process.id} is declared quasi-static, and its path is: {sudden}.",
+                f"Process {process.id} is declared quasi-static, and its path is: {sudden}.",
                 "A boundary that meets another pressure than that of the system moves suddenly: drop one of the two.",
             )
         elif not assumptions.says_path(case, process.id):
@@ -211,7 +212,7 @@ def not_ideal(case: Case, item: str) -> Yielded:
             yield _raised(
                 case,
                 item,
-                f"{body} has a compressibility factor of {factor:.4f} in state {state}.",
+                f"In state {state} {body} has a compressibility factor of {factor:.4f}.",
                 "Drop the assumption; the model of the body is a real fluid in any case.",
             )
 

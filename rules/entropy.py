@@ -7,12 +7,13 @@ from typing import Final
 
 from checker.case import Case, Raised, Yielded
 from checker.facts import balance, boundaries, cycles, stated
+from checker.facts.deviation import Deviation
 from checker.facts.spans import Crossing
 from checker.findings import Grade, Standing
 from checker.problems import Place
 from checker.submission import Process
 from checker.vocabulary import Allowance
-from rules.rule import Rule, RuleFunction, Scope
+from rules.rule import Rule, Scope
 from rules.state import report_costly_gaps
 
 SECOND_LAW: Final = (
@@ -21,36 +22,45 @@ SECOND_LAW: Final = (
 CLAUSIUS: Final = "Clausius statement of the second law"
 
 
-def negative(name: str) -> RuleFunction:
-    """Return the rule for one of the two entropy generations."""
+def generation_negative(case: Case, process: str) -> Yielded:
+    """Yield an entropy generation of the system below zero, recomputed or stated."""
+    return _below_zero(case, process, "entropy_generation")
 
-    def below_zero(case: Case, process: str) -> Yielded:
-        pointer = f"processes/{process}/{name}"
-        found = balance.generation(case, process, name)
-        statements = case.stated(pointer)
-        if name.endswith("surroundings") and _is_reported(case, process):
-            return
-        if found is not None and found.below:
+
+def generation_with_surroundings_negative(case: Case, process: str) -> Yielded:
+    """Yield an entropy generation with the surroundings below zero that nothing else explains."""
+    if not _is_reported(case, process):
+        yield from _below_zero(case, process, "entropy_generation_with_surroundings")
+
+
+def _below_zero(case: Case, process: str, name: str) -> Yielded:
+    pointer = f"processes/{process}/{name}"
+    found = balance.generation(case, process, name)
+    if found is not None and found.below:
+        yield _impossible(case, process, pointer, found)
+        return
+    for s in case.stated(pointer):
+        if s.value < -s.quantity.half_width and _stands_alone(case, pointer):
             yield Raised(
-                f"The inputs give {name.replace('_', ' ')} of {case.show(pointer, found.size)}, below zero by more "
-                f"than its uncertainty.{_hint(case, process)}",
-                statement=statements[0] if statements else None,
-                quantity=pointer,
-                place=None if statements else _process(case, process).place,
-                recomputed=found.size,
-                grade=found.grade,
-                suggestion="Check the boundary temperatures, the sign of the heat and the states.",
+                f"{name.replace('_', ' ')}: {s.quantity.text} is stated, and entropy is not destroyed.",
+                statement=s,
+                suggestion="S_gen = ΔS − ΣQ/T_b: check the order of the difference and the sign of the heat.",
             )
-            return
-        for s in statements:
-            if s.value < -s.quantity.half_width and _stands_alone(case, pointer):
-                yield Raised(
-                    f"{name.replace('_', ' ')}: {s.quantity.text} is stated, and entropy is not destroyed.",
-                    statement=s,
-                    suggestion="S_gen = ΔS − ΣQ/T_b: check the order of the difference and the sign of the heat.",
-                )
 
-    return below_zero
+
+def _impossible(case: Case, process: str, pointer: str, found: Deviation) -> Raised:
+    statement = next(iter(case.stated(pointer)), None)
+    name = pointer.rsplit("/", 1)[-1].replace("_", " ")
+    return Raised(
+        f"The inputs give {name} of {case.show(pointer, found.size)}, below zero by more than its uncertainty."
+        f"{_hint(case, process)}",
+        statement=statement,
+        quantity=pointer,
+        place=None if statement else _process(case, process).place,
+        recomputed=found.size,
+        grade=found.grade,
+        suggestion="Check the boundary temperatures, the sign of the heat and the states.",
+    )
 
 
 def _is_reported(case: Case, process: str) -> bool:
@@ -186,7 +196,7 @@ def above_carnot(case: Case) -> Yielded:
 RULES: Final[tuple[Rule, ...]] = (
     Rule(
         "generation-negative",
-        negative("entropy_generation"),
+        generation_negative,
         Scope.PROCESS,
         "entropy",
         Grade.DISCREPANCY,
@@ -196,7 +206,7 @@ RULES: Final[tuple[Rule, ...]] = (
     ),
     Rule(
         "generation-with-surroundings-negative",
-        negative("entropy_generation_with_surroundings"),
+        generation_with_surroundings_negative,
         Scope.PROCESS,
         "entropy",
         Grade.DISCREPANCY,

@@ -126,7 +126,7 @@ def expansion_shrinks(case: Case, process: str) -> Yielded:
         change = paths.volume_change(case, process, body)
         if change is not None and change.below:
             yield Raised(
-                f"{body} expands freely, and its volume becomes smaller.",
+                f"The free expansion of {body} ends in a smaller volume.",
                 quantity=f"processes/{process}",
                 place=_place(case, process, body, "free expansion"),
                 grade=change.grade,
@@ -147,7 +147,8 @@ def moves_against_pressure(case: Case, process: str) -> Yielded:
             verb, than = ("expands", "above") if grows else ("is compressed", "below")
             pointer = f"processes/{process}/path/external_pressure"
             yield Raised(
-                f"{body} {verb} against {case.show(pointer, outside)}, which is {than} its own pressure throughout.",
+                f"The body {body} {verb} against {case.show(pointer, outside)}, which is {than} its own pressure "
+                f"throughout.",
                 quantity=pointer,
                 place=_place(case, process, body, kind),
                 suggestion="Check the external pressure, gauge or absolute, and the direction of the process.",

@@ -7,7 +7,7 @@ from dataclasses import dataclass
 
 from checker.case import Case
 from checker.comparison.compare import Compared
-from checker.facts.state_gaps import is_refused, state_gaps
+from checker.facts.state_gaps import SEVERAL_BODIES, is_refused, state_gaps, unread
 from checker.facts.twins import CONSTANT, IDEAL, REAL
 from checker.findings import Outcome
 from checker.outcomes import NotEvaluable
@@ -54,12 +54,15 @@ class Gap:
 
 def gaps(case: Case) -> tuple[Gap, ...]:
     """Return every gap of a record, in a fixed order."""
+    states = state_gaps(case)
+    with_others = tuple(mark for g in states if g.rule == SEVERAL_BODIES for mark in g.marks)
     return (
         *_models(case),
         *_refused_inputs(case),
-        *(Gap(g.rule, g.pointer, g.place, g.reason, g.marks) for g in state_gaps(case)),
+        *_unread_inputs(case),
+        *(Gap(g.rule, g.pointer, g.place, g.reason, g.marks) for g in states if g.rule != SEVERAL_BODIES),
         *_sequences(case),
-        *(gap for process in case.record.processes for gap in _process(case, process)),
+        *(gap for process in case.record.processes for gap in _process(case, process, with_others)),
         *_surroundings(case),
     )
 
@@ -104,6 +107,15 @@ def _refused_inputs(case: Case) -> Iterator[Gap]:
             yield Gap("value-not-positive", s.pointer, s.place, reason, (reason,))
 
 
+def _unread_inputs(case: Case) -> Iterator[Gap]:
+    """Yield quantities that could not be read, or not in their unit: reading has reported them."""
+    for problem in unread(case):
+        parts = (problem.quantity or "").split("/")
+        words = f"{parts[-1].replace('_', ' ')} of {'/'.join(parts[1:-1])}"
+        marks = (f"{words} is not stated", f"{words}: ")
+        yield Gap(problem.kind, problem.quantity or "", problem.place, problem.message, marks)
+
+
 def _rule_of_model(body: Body, outcome: NotEvaluable) -> str:
     """Return which rule says that a body has no model that can be used."""
     if body.composition is None and body.model == CONSTANT:
@@ -126,13 +138,13 @@ def _sequences(case: Case) -> Iterator[Gap]:
             yield Gap("sequence-not-recomputed", base, sequence.place, reason, ("",), f"{base}/")
 
 
-def _process(case: Case, process: Process) -> Iterator[Gap]:
+def _process(case: Case, process: Process, with_others: tuple[str, ...]) -> Iterator[Gap]:
     ctx = case.context(process.id)
     base = f"processes/{process.id}"
     if ctx is not None and len(ctx.bodies) > 1:
         reason = f"the balance of {', '.join(ctx.bodies)} together is not part of this version"
         mark = "several bodies: closing their balance"
-        yield Gap("several-bodies-not-closed", base, process.place, reason, (mark,), f"{base}/")
+        yield Gap(SEVERAL_BODIES, base, process.place, reason, (mark, *with_others), f"{base}/")
         return
     if process.heat_transfers is None:
         mark = f"heat transfers of {process.id} is not stated"

@@ -8,7 +8,7 @@ from typing import Final
 
 from checker.case import Case
 from checker.outcomes import NotEvaluable
-from checker.problems import Place
+from checker.problems import Place, Problem
 from checker.submission import BodyState, Role, Statement
 from checker.substances.interface import Phase
 
@@ -20,6 +20,8 @@ RULE_OF_KIND: Final = {
     "near-saturation": "near-saturation",
 }
 """Kind of outcome → the rule that reports it; any other: the state is undetermined."""
+UNDETERMINED: Final = "state-undetermined"
+SEVERAL_BODIES: Final = "several-bodies-not-closed"
 TWO_PHASE: Final = "two-phase-from-temperature-and-pressure"
 REACHES_ACROSS: Final = "reach across the saturation line"
 URGENCY: Final = (
@@ -87,6 +89,8 @@ def _single(case: Case) -> Iterator[StateGap]:
             continue
         failure, reason = case.failure(pointer), case.why_not(pointer)
         rule = _rule(case, found, failure, reason)
+        if rule == UNDETERMINED and _meets_others(case, found):
+            rule = SEVERAL_BODIES
         yield StateGap(rule, state, body, found.place, reason, (reason,))
 
 
@@ -94,18 +98,35 @@ def _rule(case: Case, found: BodyState, failure: NotEvaluable | None, reason: st
     base = f"states/{found.state}/{found.body}/"
     if any(s.pointer.startswith(base) and is_refused(s) for s in case.record.statements):
         return "value-not-positive"
+    kinds = [problem.kind for problem in unread(case) if (problem.quantity or "").startswith(base)]
+    if kinds:
+        return kinds[0]
     quality = case.given(f"{base}quality")
     if quality is not None and not 0.0 <= quality <= 1.0:
         return "quality-outside-range"
     near = REACHES_ACROSS in reason or (failure is not None and failure.kind == "near-saturation")
     if near:
         return TWO_PHASE if _claims_two_phases(case, found) else "near-saturation"
-    return RULE_OF_KIND.get(failure.kind, "state-undetermined") if failure else "state-undetermined"
+    return RULE_OF_KIND.get(failure.kind, UNDETERMINED) if failure else UNDETERMINED
 
 
 def is_refused(s: Statement) -> bool:
     """Say whether an input is never calculated with because it is zero or less."""
     return s.role is Role.INPUT and s.usable and s.term.positive and s.quantity.value <= 0.0
+
+
+def unread(case: Case) -> tuple[Problem, ...]:
+    """Return the problems of reading that left a quantity without a value to calculate with."""
+    usable = {s.pointer for s in case.record.statements if s.usable}
+    return tuple(p for p in case.record.problems if p.quantity is not None and p.quantity not in usable)
+
+
+def _meets_others(case: Case, found: BodyState) -> bool:
+    """Say whether a state is the end of a process of several bodies, whose balance would find it."""
+    return any(
+        found.state in (ctx.process.from_state, ctx.process.to_state) and len(ctx.bodies) > 1
+        for ctx in case.plan.contexts
+    )
 
 
 def _claims_two_phases(case: Case, found: BodyState) -> bool:

@@ -6,6 +6,7 @@ at a time, and only where nothing stated tells it.
 
 from __future__ import annotations
 
+import math
 from collections import defaultdict
 from collections.abc import Callable, Iterable, Iterator, Mapping, Sequence
 from heapq import heappop, heappush
@@ -113,6 +114,7 @@ def prune(steps: Sequence[Step], wanted: Iterable[str]) -> list[Step]:
 
 
 LAST_RESORT: Final = 1000.0
+"""What it costs to state a quantity that the path should tell; a statement that nothing replaces costs one."""
 PER_FORMULA: Final = 1e-3
 """What a formula costs beside what it lacks, so that the cheapest way never leads round in a circle."""
 
@@ -143,11 +145,12 @@ def _lacking(
 
 
 def _costs(lacking: Mapping[str, Sequence[Sequence[str]]]) -> dict[str, float]:
-    """Return how many missing statements each key costs.
+    """Return how many missing statements each key costs; infinite where formulas only lead round in a circle.
 
-    What no formula makes costs one; stating what formulas make is the last resort, where they only lead in circles.
+    Heat and work follow from one another; what is missing where neither is known is the work of the boundary.
     """
-    costs = {key: LAST_RESORT if options else 1.0 for key, options in lacking.items()}
+    costs = {key: math.inf if options else 1.0 for key, options in lacking.items()}
+    costs.update({key: LAST_RESORT for key in costs if key.endswith("/boundary_work")})
     changed = True
     while changed:
         changed = False
@@ -174,8 +177,9 @@ def _reasons(
             continue
         seen.add(wanted)
         options = lacking[wanted]
-        if not options or (wanted != key and costs[wanted] >= LAST_RESORT):
+        best = min(options, key=lambda option: sum(costs[p] for p in option), default=())
+        if not best or sum(costs[p] for p in best) >= costs[wanted]:
             reasons[say(wanted)] = None
         else:
-            waiting.extend(min(options, key=lambda option: sum(costs[p] for p in option)))
+            waiting.extend(best)
     return list(reasons)
