@@ -67,9 +67,10 @@ def find_state(
     NotEvaluable
         No state, or several that the phase does not tell apart.
     """
+    samples = _samples(curve, residual, grid, outward)
     found = [
         state
-        for low, high in _brackets(_samples(curve, residual, grid, outward))
+        for low, high in _brackets(samples)
         if (state := _refine(curve, residual, low, high, scale)) is not None
     ]
     found = _distinct(found)
@@ -77,6 +78,8 @@ def find_state(
         found = [state for state in found if state.phase is phase] or found
     if outward:
         found = _first_reached(found, grid[len(grid) // 2])
+    if not found and all(value is None for _, value in samples):
+        residual(curve(grid[len(grid) // 2]))  # raises the model's own reason why there is no state at all
     if not found:
         raise NotEvaluable(f"no state on the path satisfies {what}")
     if len(found) > 1:

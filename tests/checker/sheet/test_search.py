@@ -134,3 +134,14 @@ def test_a_parameter_is_found_without_states():
         find_parameter(lambda v: v + 1.0, grid, "the test")
     with pytest.raises(NotEvaluable, match="more than one state"):
         find_parameter(lambda v: 0.0, grid, "the test")
+
+
+def test_a_curve_without_any_state_gives_the_reason_of_the_model():
+    """Where the model refuses every state of the curve, its own reason is passed on."""
+
+    def refused(v: float) -> PropertyState:
+        raise NotEvaluable("above the range of the equation", "outside-range")
+
+    with pytest.raises(NotEvaluable, match="above the range") as caught:
+        find_state(refused, lambda s: s.pressure, around(1.0), 1.0, "the test", outward=True)
+    assert caught.value.kind == "outside-range"
