@@ -46,12 +46,12 @@ def review(
         The file cannot be read.
     """
     from checker.basis import Basis
-    from checker.document import read_document
+    from checker.document import content_of, read_document
     from checker.engine import Options, review_submission
     from checker.package import submit
     from rules import RULEBOOK
 
-    data = package if isinstance(package, bytes) else Path(package).read_bytes()
+    data = package if isinstance(package, bytes) else content_of(Path(package))
     file = name or ("package.yaml" if isinstance(package, bytes) else str(package))
     document = read_document(data, file)
     return review_submission(

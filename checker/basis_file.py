@@ -7,7 +7,7 @@ from pathlib import Path
 from typing import Final
 
 from checker.basis import DEFAULT_ALLOWANCES, Basis
-from checker.document import read_document
+from checker.document import content_of, read_document
 from checker.document.nodes import Mapping, Node, Scalar
 from checker.vocabulary import WORK_CONVENTIONS, Allowance
 
@@ -33,7 +33,7 @@ class BasisError(ValueError):
 
 def read_basis(path: Path) -> Basis:
     """Return the basis in a file. Raises BasisError, OSError."""
-    document = read_document(path.read_bytes(), str(path))
+    document = read_document(content_of(path), str(path))
     for problem in document.problems:
         where = f"{problem.line}:{problem.column}: " if problem.line else ""
         raise BasisError(f"{path}:{where}{problem.message}")

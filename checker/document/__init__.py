@@ -12,6 +12,7 @@ from checker.document.nodes import (
     plain_tree,
 )
 from checker.document.reading import read_document
+from checker.document.text import content_of
 
 __all__ = [
     "Document",
@@ -22,6 +23,7 @@ __all__ = [
     "Scalar",
     "Sequence",
     "child",
+    "content_of",
     "plain_tree",
     "read_document",
 ]

@@ -2,13 +2,12 @@
 
 from __future__ import annotations
 
-import hashlib
 from collections.abc import Iterator
 from dataclasses import replace
 
 from checker.document.json_reader import looks_like_json, read_json
 from checker.document.nodes import Document, Mapping, Node, Position, Sequence
-from checker.document.text import decode, unreadable, without_forbidden
+from checker.document.text import decode, digest_of, unreadable, without_forbidden
 from checker.document.tree import GivenUp, TreeBuilder
 from checker.document.yaml_reader import read_yaml
 from checker.problems import Place, Problem
@@ -31,7 +30,7 @@ def read_document(data: bytes, file: str) -> Document:
         ``root`` is a mapping, or None where nothing can be read; then a fatal problem says why.
 
     """
-    digest = hashlib.sha256(data).hexdigest()
+    digest = digest_of(data)
     text = decode(data)
     if isinstance(text, Problem):
         return Document(file, digest, None, (text,))

@@ -3,9 +3,11 @@
 from __future__ import annotations
 
 import codecs
+import hashlib
 import re
 from bisect import bisect_right
 from dataclasses import dataclass
+from pathlib import Path
 from typing import Final
 
 from checker.document.nodes import Position
@@ -64,11 +66,25 @@ def unreadable(message: str, suggestion: str, position: Position | None = None) 
     )
 
 
+def content_of(path: Path) -> bytes:
+    """Return the content of a file, but no more of it than shows that it is too large.
+
+    A device or a pipe may never end. Raises OSError.
+    """
+    with path.open("rb") as file:
+        return file.read(MAX_BYTES + 1)
+
+
+def digest_of(data: bytes) -> str:
+    """Return the SHA-256 of a file; nothing for one that was not read to its end."""
+    return "" if len(data) > MAX_BYTES else hashlib.sha256(data).hexdigest()
+
+
 def decode(data: bytes) -> str | Problem:
     """Return the text of a file without its byte order mark, or why there is none."""
     if len(data) > MAX_BYTES:
         return unreadable(
-            f"The file has {len(data)} bytes; a package has at most {MAX_BYTES}.",
+            f"The file has more than {MAX_BYTES} bytes, which is the most that is read.",
             "Divide the package, or leave out what is not part of the record format.",
         )
     if data.startswith(_OTHER_MARKS):

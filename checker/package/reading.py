@@ -8,7 +8,7 @@ from functools import partial
 from pathlib import Path
 from typing import Final
 
-from checker.document import read_document
+from checker.document import content_of, read_document
 from checker.document.nodes import Document, plain_tree
 from checker.package.atlas import Branch, Found, Lost, atlas_of, find
 from checker.package.draft import Draft, draft, record_names
@@ -39,7 +39,7 @@ def read_package(source: Path | bytes, name: str | None = None) -> tuple[Documen
         The file cannot be opened. What it contains never raises.
 
     """
-    data = source if isinstance(source, bytes) else source.read_bytes()
+    data = source if isinstance(source, bytes) else content_of(source)
     file = name or ("package.yaml" if isinstance(source, bytes) else str(source))
     document = read_document(data, file)
     return document, submit(document)

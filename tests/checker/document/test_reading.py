@@ -4,12 +4,13 @@ from __future__ import annotations
 
 import hashlib
 import time
+from pathlib import Path
 
 import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
-from checker.document import Document, Position, plain_tree, read_document
+from checker.document import Document, Position, content_of, plain_tree, read_document
 from checker.problems import Problem
 
 
@@ -24,7 +25,7 @@ from checker.problems import Problem
         (b"\n  text\n", 2, 3, "no mapping"),
         (b"a: 1\nb: 25 \xb0C\n", 2, 7, "0xB0"),
         ("a: 1".encode("utf-16"), 1, 1, "UTF-16"),
-        (b"a: 1\n" * 200_001, 1, 1, "1000005 bytes"),
+        (b"a: 1\n" * 200_001, 1, 1, "more than 1000000 bytes"),
         (b"a: [" + b"1," * 100_001 + b"1]", 1, 1, "100000 keys and values"),
         (b"a: [" + b"*x," * 600 + b"1]", 1, 1, "500 repeated keys"),
     ],
@@ -48,6 +49,13 @@ def test_digest_is_that_of_the_bytes() -> None:
     """The SHA-256 is of the file as it is, byte order mark included."""
     data = b"\xef\xbb\xbfa: 1\n"
     assert read_document(data, "x.yaml").sha256 == hashlib.sha256(data).hexdigest()
+
+
+def test_a_file_without_an_end_is_refused_and_not_read_on() -> None:
+    """A device that never ends is read up to the limit; no digest is given of what was not read."""
+    document = read_document(content_of(Path("/dev/zero")), "zero.yaml")
+    assert "more than 1000000 bytes" in document.problems[0].message
+    assert document.sha256 == ""
 
 
 @pytest.mark.parametrize(
