@@ -26,6 +26,8 @@ _DENSER: Final = 1.04
 _FINELY_DENSER: Final = 1.01  # beside the coldest isotherm a line may pass through all of its liquid in 2 %
 _MOST_STEPS: Final = 250
 _ABOVE_VACUUM: Final = 1.01
+_LITTLE_PRESSURE: Final = 1e4  # Pa
+_EXPANDED: Final = 1e-4  # more than any liquid expands when this pressure is taken off
 _THIN: Final = 0.05  # of the critical density
 _ON_THE_DOME: Final = 1e-6
 _CONFIRMED: Final = 1e-3
@@ -42,8 +44,18 @@ class HelmholtzSurface(LibrarySurface):
             return None
         if known.pair == (PRESSURE, VOLUME) and self._may_have_two_roots(known.first, known.second):
             return None
-        side = self._frozen_side(known) if known.pair == (TEMPERATURE, PRESSURE) else None
-        return self._outside_dome(self.library.point(known.pair, known.first, known.second, side))
+        if known.pair == (TEMPERATURE, PRESSURE):
+            return self._one_phase(known)
+        return self._outside_dome(self.library.point(known.pair, known.first, known.second))
+
+    def _one_phase(self, known: Known) -> Point:
+        try:
+            point = self.library.point(known.pair, known.first, known.second, self._frozen_side(known))
+        except NotEvaluable:
+            self.constants.limits.refuse_pressure(known.second, self.name)
+            self.constants.limits.refuse_temperature(known.first, known.second, self.name)
+            raise
+        return self._outside_dome(point)
 
     def _frozen_side(self, known: Known) -> str | None:
         """Return ``liquid`` just below the melting line of water, where the library would refuse 0 °C."""
@@ -100,18 +112,25 @@ class HelmholtzSurface(LibrarySurface):
         if limits.ice_floats and temperature < limits.lowest(0.0):
             return self._below_freezing(temperature)
         limits.refuse_temperature(temperature, limits.triple_pressure, self.name)
-        dome = self.dome(TEMPERATURE, temperature)
         thinnest = self._thinnest(temperature)
-        if dome is None:
+        if temperature >= self.critical_temperature:
             knee = _THIN / self.constants.critical[2]
             grid = (*geometric(thinnest, knee, _VAPOUR_STEPS), *self._denser(temperature, knee, _DENSER))
             return (self._over_density(temperature, increasing(grid)),)
+        dome = self.dome(TEMPERATURE, temperature)
+        if dome is None:
+            return (self._over_density(temperature, self._over_vacuum(temperature)),)
         liquid, vapour = (1.0 / point.specific_volume for point in dome)
         branches = [*self.between(TEMPERATURE, temperature)]
         if thinnest < vapour:
             branches.append(self._over_density(temperature, geometric(thinnest, vapour, _VAPOUR_STEPS)))
         branches.append(self._over_density(temperature, self._denser(temperature, liquid, _DENSER)))
         return tuple(branches)
+
+    def _over_vacuum(self, temperature: float) -> tuple[float, ...]:
+        """Return the densities [kg/m³] of a liquid whose vapour pressure is next to nothing."""
+        density = 1.0 / self.at(temperature, _LITTLE_PRESSURE, LIQUID).specific_volume
+        return ((1.0 - _EXPANDED) * density, *self._denser(temperature, density, _DENSER))
 
     def _below_freezing(self, temperature: float) -> Curve:
         """Return the isotherm of water under pressure below its triple point's temperature."""

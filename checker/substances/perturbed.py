@@ -6,6 +6,7 @@ with the factors 1 + U, and see what moves.
 
 from __future__ import annotations
 
+import math
 from collections.abc import Mapping
 from dataclasses import dataclass, replace
 from typing import Final
@@ -15,8 +16,7 @@ from checker.substances.interface import ModelUncertainty, Phase, PropertyState,
 from checker.substances.properties import ENERGY, ENTHALPY, ENTROPY, VOLUME, checked_value
 
 _ROUNDS: Final = 40
-_CONVERGED: Final = 1e-12
-_SAME_BRANCH: Final = 0.2
+_CONVERGED: Final = 1e-9
 
 
 @dataclass(frozen=True)
@@ -81,9 +81,8 @@ class PerturbedSubstance:
     def state(self, known: Mapping[str, float], phase: Phase | None = None) -> PropertyState:
         """Return the one state with these two properties. Raises NotEvaluable as the substance itself does."""
         wanted = self._of_base(known)
-        if ENTHALPY not in wanted:
-            return self._moved(self.base.state(wanted, phase))
-        return self._with_enthalpy(wanted, self.base.state(wanted, phase), phase)
+        found = self.base.state(wanted, phase)
+        return self._moved(found) if ENTHALPY not in wanted else self._with_enthalpy(wanted, found)
 
     def states(self, known: Mapping[str, float]) -> tuple[PropertyState, ...]:
         """Return every state with these two properties, ordered by specific volume. Raises NotEvaluable."""
@@ -91,7 +90,7 @@ class PerturbedSubstance:
         found = self.base.states(wanted)
         if ENTHALPY not in wanted:
             return tuple(self._moved(state) for state in found)
-        return tuple(self._with_enthalpy(wanted, state, state.phase) for state in found)
+        return tuple(self._with_enthalpy(wanted, state) for state in found)
 
     def saturation(self, known: Mapping[str, float]) -> tuple[PropertyState, PropertyState]:
         """Return (saturated liquid, saturated vapour) at a temperature or a pressure. Raises NotEvaluable."""
@@ -105,12 +104,9 @@ class PerturbedSubstance:
         return self.base.crosses_saturation(temperature, half_temperature, pressure, half_pressure)
 
     def _of_base(self, known: Mapping[str, float]) -> dict[str, float]:
-        """Return known properties as the base has them; an enthalpy is left to iterate."""
-        factors = {
-            VOLUME: self.density_factor,
-            ENERGY: 1.0 / self.caloric_factor,
-            ENTROPY: 1.0 / self.caloric_factor,
-        }
+        """Return known properties as the base has them; for an enthalpy, a first guess."""
+        energy = 1.0 / self.caloric_factor
+        factors = {VOLUME: self.density_factor, ENERGY: energy, ENTHALPY: energy, ENTROPY: energy}
         return {name: checked_value(name, value) * factors.get(name, 1.0) for name, value in known.items()}
 
     def _moved(self, state: PropertyState) -> PropertyState:
@@ -125,32 +121,31 @@ class PerturbedSubstance:
             specific_entropy=state.specific_entropy * self.caloric_factor,
         )
 
-    def _with_enthalpy(
-        self, wanted: dict[str, float], state: PropertyState, phase: Phase | None
-    ) -> PropertyState:
-        """Return the state with an enthalpy of ours, from one with that enthalpy of the base.
+    def _with_enthalpy(self, wanted: dict[str, float], state: PropertyState) -> PropertyState:
+        """Return the moved state with the enthalpy h, from the base's state with h/caloric_factor.
 
-        Fixed-point iteration: the factors are close to one, so each round leaves some hundredths of the error.
+        h = c u₀ + p v₀/d = c h₀ + p v₀ (1/d − c), so h₀ follows from p v₀, which it hardly moves: a fixed point.
         """
-        target = wanted[ENTHALPY]
-        guess = target
-        moved = self._moved(state)
+        target = wanted[ENTHALPY] * self.caloric_factor
+        share = 1.0 / self.density_factor - self.caloric_factor
+        best, least = self._moved(state), math.inf
         for _ in range(_ROUNDS):
-            enthalpy = moved.specific_enthalpy
-            if enthalpy is None:
+            moved = self._moved(state)
+            if state.pressure is None or state.specific_volume is None or moved.specific_enthalpy is None:
                 break
-            scale = abs(target) + abs(enthalpy - moved.specific_internal_energy)
-            if abs(enthalpy - target) <= _CONVERGED * scale:
-                return moved
-            guess += (target - enthalpy) / self.caloric_factor
-            moved = self._moved(self._nearest({**wanted, ENTHALPY: guess}, state, phase))
-        raise NotEvaluable(f"{self.name}: no state with this enthalpy was found for the moved properties")
+            product = state.pressure * state.specific_volume
+            deviation = abs(moved.specific_enthalpy - target) / (abs(target) + product)
+            if deviation >= least:
+                break
+            best, least = moved, deviation
+            guess = (target - share * product) / self.caloric_factor
+            state = self._nearest({**wanted, ENTHALPY: guess}, state)
+        if least > _CONVERGED:
+            raise NotEvaluable(f"{self.name}: no state with this enthalpy was found for the moved properties")
+        return best
 
-    def _nearest(self, wanted: dict[str, float], like: PropertyState, phase: Phase | None) -> PropertyState:
-        """Return the state of the base on the same side of saturation as ``like``."""
+    def _nearest(self, wanted: dict[str, float], like: PropertyState) -> PropertyState:
+        """Return the state of the base with these properties that is most like another one."""
+        volume = like.specific_volume or 1.0
         found = self.base.states(wanted)
-        same = [state for state in found if phase is not None and state.phase == phase] or list(found)
-        volume = like.specific_volume
-        if volume is None:
-            return same[0]
-        return min(same, key=lambda state: abs((state.specific_volume or volume) / volume - 1.0))
+        return min(found, key=lambda state: abs((state.specific_volume or volume) / volume - 1.0))

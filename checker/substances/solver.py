@@ -22,24 +22,19 @@ from checker.substances.properties import (
 from checker.substances.search import Function
 from checker.substances.surface import Branch, Curve, Surface
 
-_FLAT_STEP: Final = 0.01
+_FLAT_STEPS: Final = (0.01, 0.005, 0.0025)
 _FLAT: Final = 1e-7
 _ROUTES: Final[tuple[tuple[str, Callable[[Surface], Callable[[float], Curve]]], ...]] = (
     (TEMPERATURE, lambda surface: surface.isotherm),
-    (PRESSURE, lambda surface: surface.isobar),
     (QUALITY, lambda surface: surface.quality_line),
+    (PRESSURE, lambda surface: surface.isobar),
     (VOLUME, lambda surface: surface.isochore),
     (ENTROPY, lambda surface: surface.isentrope),
     (ENERGY, lambda surface: surface.isenergetic),
 )
 """Along which curve to search: the first property of this table that is known is held constant."""
-_SETTLED: Final = {
-    (TEMPERATURE, PRESSURE),
-    (TEMPERATURE, VOLUME),
-    (TEMPERATURE, QUALITY),
-    (PRESSURE, QUALITY),
-}
-"""Pairs of which the library's word is final: the equation's own variables, and what phase equilibrium gives."""
+_SETTLED: Final = {(TEMPERATURE, PRESSURE), (TEMPERATURE, VOLUME), (TEMPERATURE, QUALITY)}
+"""Pairs of which the library's word is final: nothing simpler is left to search along."""
 
 
 def solve(surface: Surface, known: Known) -> list[Point]:
@@ -85,19 +80,29 @@ def _on_branch(surface: Surface, branch: Branch, name: str, target: float) -> It
 
 
 def _is_flat(residual: Function, parameter: float) -> bool:
-    """Return whether a hundredth more or less of the parameter changes next to nothing."""
-    around = [residual(parameter * (1.0 + step)) for step in (-_FLAT_STEP, _FLAT_STEP)]
-    moved = [abs(value) for value in around if not math.isnan(value)]
-    return bool(moved) and min(moved) < _FLAT
+    """Return whether, on one side, up to a hundredth of the parameter changes next to nothing.
+
+    Several steps are taken, for a second root close by would make a single one look flat.
+    """
+    for side in (-1.0, 1.0):
+        moved = [abs(residual(parameter * (1.0 + side * step))) for step in _FLAT_STEPS]
+        if max(moved) < _FLAT and not any(map(math.isnan, moved)):
+            return True
+    return False
 
 
 def _distinct(points: Iterable[Point], tolerance: float) -> list[Point]:
     """Return the points by increasing volume, those that two branches share once."""
     kept: list[Point] = []
-    for point in sorted(points, key=lambda p: (p.specific_volume, p.temperature)):
+    for point in sorted(points, key=_order):
         if not (kept and _same(kept[-1], point, tolerance)):
             kept.append(point)
     return kept
+
+
+def _order(point: Point) -> tuple[float, float]:
+    """Return specific volume, then temperature where rounding alone tells the volumes apart."""
+    return float(f"{point.specific_volume:.8e}"), point.temperature
 
 
 def _same(one: Point, other: Point, tolerance: float) -> bool:
