@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterator, Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 
 from checker.basis import Basis
 from checker.comparison.carried import Carried
@@ -71,6 +71,7 @@ class Case:
     display: Display
     basis: Basis
     by_key: Mapping[str, tuple[Statement, ...]]
+    others: Mapping[str, Case] = field(default_factory=dict)
 
     def key(self, pointer: str) -> str:
         """Return the key under which a quantity is calculated."""

@@ -8,6 +8,7 @@ from dataclasses import dataclass
 from checker.basis import Basis
 from checker.case import Case, Raised, Unchecked
 from checker.cautions import CAUTIONS
+from checker.convention import with_convention
 from checker.document.nodes import Document
 from checker.evaluation import make_case
 from checker.findings import (
@@ -60,7 +61,7 @@ def review_submission(
     cases: dict[str, Case] = {}
     for record in in_link_order(submission.records):
         progress(record.id)
-        case = make_case(submission.head, record, basis, cases)
+        case = make_case(submission.head, with_convention(record, basis.work_convention), basis, cases)
         cases[record.id] = case
         found, unchecked, held = apply_rules(case, rulebook, locator)
         findings.extend(found)
@@ -110,8 +111,8 @@ def apply_rules(
                 continue
             applied = True
             for yielded in _call(rule, case, item):
+                clean = False  # what was not checked did not hold either
                 if isinstance(yielded, Raised):
-                    clean = False
                     findings.append(finding_of(rule, yielded, case, locator))
                 else:
                     unchecked[NotChecked(yielded.what, yielded.missing)] = None
@@ -162,9 +163,10 @@ def _visit(
 ) -> None:
     if record.id in ordered or record.id in above:
         return
-    for found in record.body_states.values():
-        parts = (found.same_as or "").split("/")
-        if len(parts) > 1 and parts[1] in by_id:
+    links = [found.same_as or "" for found in record.body_states.values()]
+    for link in (*links, *(limit.quantity for limit in record.limits)):
+        parts = link.split("/")
+        if parts[0] == "records" and parts[1] in by_id:
             _visit(by_id[parts[1]], by_id, ordered, above | {record.id})
     ordered[record.id] = record
 

@@ -31,7 +31,9 @@ def make_case(head: PackageHead, record: Record, basis: Basis, others: Mapping[s
     compared = compare_all(record, sheet, values, carried, moves, references, shifts, basis)
     display = display_of(record, sheet)
     by_key = _by_key(plan, record)
-    return Case(head, record, plan, values, carried, moves, references, compared, display, basis, by_key)
+    return Case(
+        head, record, plan, values, carried, moves, references, compared, display, basis, by_key, dict(others)
+    )
 
 
 def _by_key(plan: RecordPlan, record: Record) -> dict[str, tuple[Statement, ...]]:

@@ -11,11 +11,14 @@ from checker.facts.stated import is_wrong
 from checker.facts.use import inputs, untraceable, unused_inputs, without_source
 from checker.findings import Grade, Outcome
 from checker.submission import PackageHead, Role, Statement, Submission
+from checker.vocabulary import Allowance
 from rules.rule import Rule, Scope
 from rules.state import report_gaps
 
 COARSE: Final = 2.0
 """Stated digits whose half-width is more than this many allowances check nothing (chosen)."""
+TABLE_VALUES: Final = (Allowance.PROPERTY_CHANGE,)
+"""Allowances of values that are read from tables with the digits of the table; their change is what counts."""
 INDEPENDENT: Final = (
     "ISO 9001:2015, 8.3.4 (design verification), read as: by someone else than the originator"
 )
@@ -118,7 +121,7 @@ def too_few_digits(case: Case) -> Yielded:
     """Yield results that agree, written so coarsely that agreement says little."""
     for c in case.compared:
         half_width = c.statement.quantity.half_width
-        written_out = c.statement.quantity.value != 0.0
+        written_out = c.statement.quantity.value != 0.0 and c.statement.term.allowance not in TABLE_VALUES
         if c.outcome is Outcome.AGREES and written_out and half_width > COARSE * c.allowance * (1.0 + 1e-9):
             digit = case.show_difference(c.statement.pointer, 2.0 * half_width)
             allowed = case.show_difference(c.statement.pointer, c.allowance)
@@ -213,6 +216,15 @@ RULES: Final[tuple[Rule, ...]] = (
         "A result is written with so few digits that its agreement says little.",
         "A wrong value would round to the same text.",
         "half-width of the last digit, GUM (JCGM 100:2008), 4.3.7",
+    ),
+    Rule(
+        "body-missing-in-state",
+        report_gaps("body-missing-in-state", "Describe the body in both states, if only as one to be found."),
+        Scope.RECORD,
+        "bookkeeping",
+        Grade.QUERY,
+        "A process has no body that is described in both of its states.",
+        "Nothing of the process can be recomputed.",
     ),
     Rule(
         "several-bodies-not-closed",

@@ -6,7 +6,7 @@ from collections.abc import Callable
 from typing import Final
 
 from checker.case import Case, Raised, Yielded
-from checker.facts.limits import EXCEEDED, Margin, limit_of, margins
+from checker.facts.limits import EXCEEDED, Margin, home_of, limit_of, margins
 from checker.findings import Grade
 from rules.rule import Rule, Scope
 
@@ -41,7 +41,8 @@ def within_uncertainty(case: Case, item: str) -> Yielded:
     """Yield limits of which it cannot be told whether they are met."""
     for margin in margins(case, limit_of(case, item)):
         if margin.uncertain:
-            spread = case.show_difference(limit_of(case, item).quantity, margin.uncertainty)
+            home, pointer = home_of(case, limit_of(case, item))
+            spread = (home or case).show_difference(pointer, margin.uncertainty)
             yield _raised(
                 case,
                 item,
@@ -79,8 +80,9 @@ def _raised(
     limit = limit_of(case, item)
     basis = f" ({limit.basis})" if limit.basis else ""
     bound = f"{margin.stands} the limit of {margin.bound.text}{basis}"
+    home, pointer = home_of(case, limit)
     return Raised(
-        words(case.show(limit.quantity, margin.value), bound),
+        words((home or case).show(pointer, margin.value), bound),
         quantity=f"limits/{item}",
         place=limit.place,
         grade=grade,
@@ -91,16 +93,14 @@ def _raised(
 def not_evaluable(case: Case, item: str) -> Yielded:
     """Yield limits on a quantity without an independent value."""
     limit = limit_of(case, item)
-    if case.value(limit.quantity) is None:
-        elsewhere = limit.quantity.startswith("records/")
-        reason = "it is in another record" if elsewhere else case.why_not(limit.quantity)
+    home, pointer = home_of(case, limit)
+    if home is None or home.value(pointer) is None:
+        reason = "its record was not reviewed before this one" if home is None else home.why_not(pointer)
         yield Raised(
             f"The limit on {limit.quantity} could not be checked: {reason}.",
             quantity=f"limits/{item}",
             place=limit.place,
-            suggestion="Put the limit where its quantity is calculated."
-            if elsewhere
-            else "State what is missing.",
+            suggestion="State what is missing, or put the limit where its quantity is calculated.",
         )
 
 

@@ -5,21 +5,20 @@ from __future__ import annotations
 from typing import Final
 
 from checker.case import Case, Raised, Yielded
+from checker.convention import follows_convention
 from checker.facts.stated import is_wrong
 from checker.findings import Grade
-from checker.submission import Statement
 from rules.reading import reading_rule
 from rules.rule import Rule, Scope
 
 MAGNITUDES: Final = ("results/heat_supplied", "results/heat_rejected")
-WORK_ITEM: Final = ("energy", "mean_power")
 
 
 def convention_missing(case: Case) -> Yielded:
     """Yield the first work quantity whose sign nothing explains, with all others."""
-    if case.record.work_convention or case.basis.work_convention:
+    if case.record.work_convention is not None:
         return
-    signed = [s for s in case.record.statements if s.value != 0.0 and _needs_convention(case, s)]
+    signed = [s for s in case.record.statements if s.value != 0.0 and follows_convention(case.record, s)]
     if signed:
         yield Raised(
             f"{signed[0].quantity.text} is stated, and the package does not say whether work is positive out of the "
@@ -28,15 +27,6 @@ def convention_missing(case: Case) -> Yielded:
             spoils=tuple(s.pointer for s in signed[1:]),
             suggestion="State `conventions: {work: positive out}` or `positive in`, or the direction of each item.",
         )
-
-
-def _needs_convention(case: Case, s: Statement) -> bool:
-    parts = s.pointer.split("/")
-    if len(parts) != 5 or parts[2] != "work_transfers":
-        return s.term.work_sign
-    process = next(p for p in case.record.processes if p.id == parts[1])
-    item = next(i for i in process.work_transfers or () if i.id == parts[3])
-    return s.term.name in WORK_ITEM and item.direction is None
 
 
 def magnitude_negative(case: Case) -> Yielded:

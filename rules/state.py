@@ -8,6 +8,7 @@ from typing import Final
 from checker.case import Case, Raised, Unchecked, Yielded
 from checker.facts.gaps import gaps_of
 from checker.facts.phases import claims_of, possible_phases
+from checker.facts.state_gaps import without_datum
 from checker.facts.stated import is_wrong
 from checker.findings import Grade
 from rules.rule import Rule, RuleFunction, Scope
@@ -44,6 +45,22 @@ def report_costly_gaps(rule: str, suggestion: str) -> RuleFunction:
         return (found for found in every(case) if isinstance(found, Unchecked) or found.spoils)
 
     return costly_gap_found
+
+
+def datum_missing(case: Case) -> Yielded:
+    """Yield, once per body, absolute u, h or s among the inputs whose zero is not known."""
+    seen: set[str] = set()
+    for s in without_datum(case):
+        body = s.pointer.split("/")[2]
+        if body not in seen:
+            seen.add(body)
+            lost = next((costs for g, costs in gaps_of(case, "datum-missing") if f"/{body}" in g.pointer), ())
+            yield Raised(
+                f"{s.term.name.replace('_', ' ')}: {s.quantity.text} is an input, and where it is zero is not stated.",
+                statement=s,
+                spoils=lost,
+                suggestion="State the `datum` of the body, or start from properties without one (T, p, v, quality).",
+            )
 
 
 def phase_disagrees(case: Case, item: str) -> Yielded:
@@ -111,6 +128,16 @@ RULES: Final[tuple[Rule, ...]] = (
         Grade.QUERY,
         "More than one state has the stated properties.",
         "The review lists them all and takes none: only the originator knows which was meant.",
+    ),
+    Rule(
+        "datum-missing",
+        datum_missing,
+        Scope.RECORD,
+        "state",
+        Grade.QUERY,
+        "An absolute u, h or s is an input, and its zero is not stated.",
+        "Tables differ by some hundred kJ/kg in their zero; a value taken from another table means another state.",
+        "reference states in use: IIR, ASHRAE, normal boiling point, 25 °C and 1 atm",
     ),
     Rule(
         "near-saturation",

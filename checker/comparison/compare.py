@@ -79,7 +79,7 @@ def compare_all(
     found = [
         _compare(statement, sheet, values, carried, moves, references, shifts, basis)
         for statement in record.statements
-        if statement.usable and not statement.term.text and _is_compared(statement, sheet)
+        if statement.usable and not statement.term.text and _is_compared(statement, sheet, values)
     ]
     wrong = {c.key for c in found if c.outcome is Outcome.WRONG}
     return _one_origin_per_step([_with_standing(c, sheet, carried, wrong) for c in found], sheet)
@@ -99,14 +99,17 @@ def _one_origin_per_step(found: list[Compared], sheet: Sheet) -> tuple[Compared,
     return tuple(result)
 
 
-def _is_compared(statement: Statement, sheet: Sheet) -> bool:
-    """Results always; an input only where the sheet found the quantity by another way (a surplus input)."""
+def _is_compared(statement: Statement, sheet: Sheet, values: Values) -> bool:
+    """Results always; an input only where the sheet found the quantity by another way (a surplus input).
+
+    An input that cannot be calculated with, such as u without a datum, is no leaf and is not compared.
+    """
     if statement.pointer.startswith(("assumptions/", "surroundings/")):
         return False
     if statement.role is Role.RESULT:
         return True
     key = sheet.key(statement.pointer)
-    return key in sheet.made_by and f"given/{key}" not in sheet.ancestors(key)
+    return f"given/{key}" in values and key in sheet.made_by and f"given/{key}" not in sheet.ancestors(key)
 
 
 def _compare(

@@ -32,6 +32,8 @@ FRACTION_REFERENCE: Final = 0.5
 """A tenth of it, 0.05, is the most that open digits may move a quality or an efficiency (chosen)."""
 TEMPERATURE_REFERENCE: Final = 50.0
 """A tenth of it, 5 K, is the most that open digits may move a temperature (design, section 6). [K]"""
+ROUNDING: Final = 1e-9
+"""A property that changes by less than this part of its value does not change."""
 
 
 class References:
@@ -104,7 +106,7 @@ class References:
             k for k in self._values if k.startswith("states/") and k.endswith(f"/{parts[2]}/{parts[3]}")
         )
         span = max(own) - min(own) if len(own) > 1 else 0.0
-        return span or abs(value)
+        return span if span > ROUNDING * abs(value) else abs(value)
 
     def _floats(self, keys: Iterable[str]) -> list[float]:
         return [value for key in keys if isinstance(value := self._values[key], float)]

@@ -141,6 +141,10 @@ def _sequences(case: Case) -> Iterator[Gap]:
 def _process(case: Case, process: Process, with_others: tuple[str, ...]) -> Iterator[Gap]:
     ctx = case.context(process.id)
     base = f"processes/{process.id}"
+    if ctx is not None and not ctx.bodies:
+        reason = f"no body is described both in state {process.from_state} and in state {process.to_state}"
+        yield Gap("body-missing-in-state", base, process.place, reason, ("",), f"{base}/")
+        return
     if ctx is not None and len(ctx.bodies) > 1:
         reason = f"the balance of {', '.join(ctx.bodies)} together is not part of this version"
         mark = "several bodies: closing their balance"

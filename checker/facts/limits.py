@@ -53,15 +53,24 @@ def limit_of(case: Case, item: str) -> Limit:
     return next(limit for limit in case.record.limits if limit.id == item)
 
 
+def home_of(case: Case, limit: Limit) -> tuple[Case | None, str]:
+    """Return the case in which the quantity of a limit is calculated, and its pointer there."""
+    if not limit.quantity.startswith("records/"):
+        return case, limit.quantity
+    record, _, pointer = limit.quantity.removeprefix("records/").partition("/")
+    return (case if record == case.record.id else case.others.get(record)), pointer
+
+
 def margins(case: Case, limit: Limit) -> Iterator[Margin]:
     """Yield the margin to each bound of a limit; nothing where its quantity has no independent value."""
-    value = case.value(limit.quantity)
-    if value is None:
+    home, pointer = home_of(case, limit)
+    value = None if home is None else home.value(pointer)
+    if home is None or value is None:
         return
-    sign = _sign(case, limit)
+    sign = _sign(home, pointer)
     for word, bound, side in (("at most", limit.at_most, 1.0), ("at least", limit.at_least, -1.0)):
         if bound is not None:
-            uncertainty = math.hypot(case.uncertainty(limit.quantity), _of_bound(bound, case.basis))
+            uncertainty = math.hypot(home.uncertainty(pointer), _of_bound(bound, case.basis))
             yield Margin(word, bound, value, side * (bound.value - sign * value), uncertainty)
 
 
@@ -75,7 +84,7 @@ def _of_bound(bound: Quantity, basis: Basis) -> float:
     return basis.coverage_factor * standard
 
 
-def _sign(case: Case, limit: Limit) -> float:
+def _sign(case: Case, pointer: str) -> float:
     """Return −1 where the originator counts the quantity the other way round (work positive in)."""
-    statements = case.stated(limit.quantity)
+    statements = case.stated(pointer)
     return float(statements[0].sign) if statements else 1.0

@@ -101,6 +101,8 @@ def _rule(case: Case, found: BodyState, failure: NotEvaluable | None, reason: st
     kinds = [problem.kind for problem in unread(case) if (problem.quantity or "").startswith(base)]
     if kinds:
         return kinds[0]
+    if any(s.pointer.startswith(base) for s in without_datum(case)):
+        return "datum-missing"
     quality = case.given(f"{base}quality")
     if quality is not None and not 0.0 <= quality <= 1.0:
         return "quality-outside-range"
@@ -119,6 +121,16 @@ def unread(case: Case) -> tuple[Problem, ...]:
     """Return the problems of reading that left a quantity without a value to calculate with."""
     usable = {s.pointer for s in case.record.statements if s.usable}
     return tuple(p for p in case.record.problems if p.quantity is not None and p.quantity not in usable)
+
+
+def without_datum(case: Case) -> tuple[Statement, ...]:
+    """Return the absolute u, h or s among the inputs that no datum brings to the model's."""
+    unusable = case.plan.leaves.unusable
+    return tuple(
+        s
+        for s in case.record.statements
+        if s.role is Role.INPUT and s.usable and "datum" in unusable.get(case.key(s.pointer), "")
+    )
 
 
 def _meets_others(case: Case, found: BodyState) -> bool:

@@ -37,7 +37,8 @@ def unused_inputs(case: Case) -> Iterator[Statement]:
     for s in inputs(case):
         key = case.key(s.pointer)
         idle = given(key) not in used and key not in compared and s.term.name not in NOT_IN_FORMULAS
-        if (idle and complete) or _has_own_constant(case, s):
+        reported = key in case.plan.leaves.unusable
+        if (idle and complete and not reported) or _has_own_constant(case, s):
             yield s
 
 
