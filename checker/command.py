@@ -3,11 +3,19 @@
 from __future__ import annotations
 
 import argparse
+import os
 import sys
-from collections.abc import Iterable, Sequence
+from collections.abc import Sequence
+from contextlib import suppress
 from enum import IntEnum
+from io import BytesIO, TextIOWrapper
 from pathlib import Path
-from typing import BinaryIO, Final, TextIO
+from typing import TYPE_CHECKING, BinaryIO, Final, TextIO
+
+if TYPE_CHECKING:
+    from checker.basis import Basis
+    from checker.findings import Review
+    from checker.outputs import Targets
 
 FORMATS: Final = ("pdf", "json", "sarif")
 EXAMPLES: Final = """\
@@ -21,6 +29,8 @@ examples:
 exit status: 0 accept or accept as noted; 1 hold for answers or revise and resubmit;
 2 no record could be reviewed, or the call is wrong
 """
+INTERRUPTED: Final = 130
+"""Exit status after an interrupt from the keyboard, as shells count it."""
 
 
 class Exit(IntEnum):
@@ -33,7 +43,35 @@ class Exit(IntEnum):
 
 def main() -> None:
     """Run the command and leave with its exit status."""
-    raise SystemExit(run(sys.argv[1:], sys.stdout, sys.stderr))
+    out, err = _stream(sys.stdout), _stream(sys.stderr)
+    try:
+        status = run(sys.argv[1:], out, err)
+    except KeyboardInterrupt:
+        err.write("jouletally: interrupted\n")
+        status = INTERRUPTED
+    raise SystemExit(_flushed(out, err, status))
+
+
+def _stream(stream: TextIO | None) -> TextIO:
+    """Return a stream that takes every character, whatever the locale, also where the caller closed it."""
+    if stream is None:
+        return Path(os.devnull).open("w", encoding="utf-8")
+    if isinstance(stream, TextIOWrapper):
+        stream.reconfigure(encoding="utf-8", errors="backslashreplace")
+    return stream
+
+
+def _flushed(out: TextIO, err: TextIO, status: int) -> int:
+    """Return the exit status once everything is written; what cannot be written must not fail again at the end."""
+    try:
+        out.flush()
+        return status
+    except OSError as error:
+        os.dup2(os.open(os.devnull, os.O_WRONLY), out.fileno())
+        if isinstance(error, BrokenPipeError):  # the reader has seen enough
+            return status
+        _complain(err, error.strerror)
+        return Exit.NOTHING_REVIEWED
 
 
 def run(argv: Sequence[str], out: TextIO, err: TextIO) -> int:
@@ -47,8 +85,15 @@ def run(argv: Sequence[str], out: TextIO, err: TextIO) -> int:
     except BrokenPipeError:
         return int(Exit.ACCEPTED)
     except OSError as error:
-        err.write(f"jouletally: {error.filename or ''}: {error.strerror or error}\n")
+        _complain(err, ": ".join(filter(None, (error.filename, error.strerror or str(error)))))
         return int(Exit.NOTHING_REVIEWED)
+
+
+def _complain(err: TextIO, text: object) -> None:
+    """Write what went wrong on one line; names of files are in it, which may hold anything."""
+    from reports.plain import neutral
+
+    err.write(f"jouletally: {neutral(str(text))}\n")
 
 
 def _parser() -> argparse.ArgumentParser:
@@ -66,7 +111,9 @@ def _parser() -> argparse.ArgumentParser:
     review.add_argument("--basis", metavar="FILE", help="review basis: allowances and conventions")
     for name in FORMATS:
         review.add_argument(
-            f"--{name}", metavar="F", help=f"write the {name.upper()} report to F; - is standard output"
+            f"--{name}",
+            metavar="F",
+            help=f"write the {name.upper()} report to F, a file or a folder; - is standard output",
         )
     review.set_defaults(action=_review)
     rules = commands.add_parser("rules", help="list the rules, or explain one")
@@ -90,22 +137,28 @@ def _version() -> str:
 
 def _review(arguments: argparse.Namespace, out: TextIO, err: TextIO) -> int:
     """Review every package named; a file that cannot be read does not keep the others from being reviewed."""
+    from checker.outputs import OutputError, targets
+
     wanted = {name: getattr(arguments, name) for name in FORMATS if getattr(arguments, name) is not None}
-    if sum(target == "-" for target in wanted.values()) > 1:
-        err.write("jouletally: only one report can go to standard output\n")
+    packages = [Path(name) for name in arguments.packages]
+    try:
+        reports = targets(packages, wanted, [Path(arguments.basis)] if arguments.basis else ())
+    except OutputError as error:
+        _complain(err, error)
         return Exit.NOTHING_REVIEWED
     basis = _basis(arguments.basis, err)
     if basis is None:
         return Exit.NOTHING_REVIEWED
-    several = len(arguments.packages) > 1
-    if several and "-" in wanted.values():
-        err.write("jouletally: with several packages an output option names a folder, not standard output\n")
-        return Exit.NOTHING_REVIEWED
-    codes = [_review_one(Path(name), wanted, several, basis, out, err) for name in arguments.packages]
+    codes = []
+    for package, files in zip(packages, reports, strict=True):
+        result = _reviewed(package, basis, "pdf" in files, err)
+        codes.append(Exit.NOTHING_REVIEWED if result is None else exit_status(result))
+        if result is not None:
+            _write_reports(result, files, not wanted, out, err)
     return max(codes)
 
 
-def _basis(file: str | None, err: TextIO) -> object | None:
+def _basis(file: str | None, err: TextIO) -> Basis | None:
     from checker.basis import Basis
 
     if file is None:
@@ -115,83 +168,77 @@ def _basis(file: str | None, err: TextIO) -> object | None:
     try:
         return read_basis(Path(file))
     except BasisError as error:
-        err.write(f"jouletally: {error}\n")
+        _complain(err, error)
         return None
 
 
-def _review_one(
-    path: Path, wanted: dict[str, str], several: bool, basis: object, out: TextIO, err: TextIO
-) -> int:
+def _reviewed(path: Path, basis: Basis, diagrams: bool, err: TextIO) -> Review | None:
+    """Return the review of one package, or None where its file cannot be read."""
     from checker.api import review
-    from checker.basis import Basis
+    from checker.document import content_of
     from checker.progress import record_progress
 
-    assert isinstance(basis, Basis)
-    draws = not wanted or "pdf" in wanted
     try:
-        data = path.read_bytes()
+        data = content_of(path)
     except OSError as error:
-        err.write(f"jouletally: {path}: {error.strerror}\n")
-        return Exit.NOTHING_REVIEWED
+        _complain(err, f"{path}: {error.strerror}")
+        return None
     with record_progress(err, path.name) as progress:
-        result = review(data, name=str(path), basis=basis, diagrams=draws, progress=progress)
-    if not wanted:
-        _write("text", result, out)
-        target = Path(f"{path.stem}-review.pdf")
-        _write_file("pdf", result, target)
-        out.write(f"report: {target}\n")
-    for name, target_text in wanted.items():
-        if target_text == "-":
-            _write(name, result, out)
+        return review(data, name=str(path), basis=basis, diagrams=diagrams, progress=progress)
+
+
+def _write_reports(result: Review, files: Targets, prints: bool, out: TextIO, err: TextIO) -> None:
+    """Write the reports of one package, the findings printed first where that is asked for."""
+    from checker.outputs import write_bytes
+    from reports.plain import neutral
+
+    if prints:
+        _print("text", result, out)
+    for name, target in files.items():
+        if target is None:
+            _print(name, result, out)
             continue
-        target = Path(target_text) / f"{path.stem}-review.{name}" if several else Path(target_text)
-        target.parent.mkdir(parents=True, exist_ok=True)
-        _write_file(name, result, target)
-        err.write(f"{result.verdict}: {path}: {target}\n")
-    return exit_status(result)
+        write_bytes(target, _report(name, result))
+        with suppress(BrokenPipeError):
+            if prints:
+                out.write(f"report: {neutral(str(target))}\n")
+            else:
+                err.write(neutral(f"{result.verdict}: {result.package.file}: {target}") + "\n")
 
 
-def exit_status(result: object) -> int:
+def exit_status(result: Review) -> int:
     """Return the exit status that a review calls for."""
-    from checker.findings import Review, Verdict
+    from checker.findings import Verdict
 
-    assert isinstance(result, Review)
     if not any(record.readable for record in result.records):
         return Exit.NOTHING_REVIEWED
     accepted = result.verdict in (Verdict.ACCEPT, Verdict.ACCEPT_AS_NOTED)
     return Exit.ACCEPTED if accepted else Exit.RETURNED
 
 
-def _write(name: str, result: object, out: TextIO) -> None:
-    """Write a report to a text stream (its bytes, where it has a buffer)."""
-    import io
+def _print(name: str, result: Review, out: TextIO) -> None:
+    """Write a report to a text stream (its bytes, where it has a buffer).
 
-    buffer = io.BytesIO()
-    _writer(name)(result, buffer)
+    Who reads it may have seen enough before its end: the other reports are written all the same.
+    """
+    data = _report(name, result)
     raw: BinaryIO | None = getattr(out, "buffer", None)
-    if raw is not None:
-        out.flush()
-        raw.write(buffer.getvalue())
-        raw.flush()
-    else:
-        out.write(buffer.getvalue().decode("utf-8", "replace"))
+    with suppress(BrokenPipeError):
+        if raw is None:
+            out.write(data.decode("utf-8", "replace"))
+        else:
+            out.flush()
+            raw.write(data)
+            raw.flush()
 
 
-def _write_file(name: str, result: object, target: Path) -> None:
-    """Write a report beside its target, then rename, so that no half-written report is left."""
-    import io
-
-    buffer = io.BytesIO()
-    _writer(name)(result, buffer)
-    beside = target.with_name(f".{target.name}.part")
-    beside.write_bytes(buffer.getvalue())
-    beside.replace(target)
-
-
-def _writer(name: str):  # type: ignore[no-untyped-def]
+def _report(name: str, result: Review) -> bytes:
+    """Return a report in one format."""
     from reports import writer
 
-    return writer(name)
+    buffer = BytesIO()
+    writer(name)(result, buffer)
+    return buffer.getvalue()
 
 
 def _rules(arguments: argparse.Namespace, out: TextIO, err: TextIO) -> int:
@@ -228,8 +275,3 @@ def _schema_of(name: str) -> object:
     from checker.package.schema import package_schema
 
     return package_schema()
-
-
-def names(items: Iterable[object]) -> str:
-    """Return items as a comma-separated text."""
-    return ", ".join(str(item) for item in items)

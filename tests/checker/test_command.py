@@ -2,6 +2,7 @@
 
 import io
 import json
+import os
 import subprocess
 import sys
 from pathlib import Path
@@ -173,6 +174,85 @@ def test_reports_are_the_same_bytes_every_time(folder, wrong):
         )
     for suffix in ("pdf", "json", "sarif"):
         assert Path(f"one.{suffix}").read_bytes() == Path(f"two.{suffix}").read_bytes()
+
+
+def command(*argv: str, **settings: object) -> subprocess.CompletedProcess[bytes]:
+    """Run the command as a process of its own."""
+    code = "from checker.command import main; main()"
+    environment = {**os.environ, "PYTHONPATH": str(ROOT), **settings.pop("env", {})}
+    return subprocess.run(
+        [sys.executable, "-c", code, *argv], check=False, stderr=subprocess.PIPE, env=environment, **settings
+    )
+
+
+@pytest.mark.parametrize("argv", [["blank"], ["rules"], ["rules", "energy-not-closed"], ["schema"]])
+def test_the_locale_does_not_matter(argv):
+    """Output is UTF-8 also where the terminal is said to have ASCII only."""
+    done = command(*argv, env={"PYTHONIOENCODING": "ascii"}, stdout=subprocess.PIPE)
+    assert (done.returncode, done.stderr) == (0, b"")
+    assert not done.stdout.decode("utf-8").isascii()
+
+
+def test_a_reader_who_has_seen_enough_does_not_make_it_an_acceptance(wrong):
+    """With its output closed early the command writes the PDF and leaves with the status of the review."""
+    ends = os.pipe()
+    os.close(ends[0])
+    with open(ends[1], "wb") as closed:
+        done = command("review", "wrong.json", stdout=closed)
+    assert (done.returncode, done.stderr) == (1, b"")
+    assert Path("wrong-review.pdf").exists()
+
+
+def test_closed_streams_are_no_reason_to_fail(wrong):
+    """Started without standard output and error, as by some schedulers, it does its work."""
+    script = f'"{sys.executable}" -c "from checker.command import main; main()" review wrong.json >&- 2>&-'
+    done = subprocess.run(script, shell=True, check=False, env={**os.environ, "PYTHONPATH": str(ROOT)})
+    assert done.returncode == 1
+
+
+@pytest.mark.skipif(not Path("/dev/full").exists(), reason="no device that is always full")
+@pytest.mark.parametrize("argv", [["rules"], ["review", "right.json", "--json", "-"]])
+def test_what_cannot_be_written_is_an_error(right, argv):
+    """A full disk leaves with 2 and a line that says so."""
+    with open("/dev/full", "wb") as full:
+        done = command(*argv, stdout=full)
+    assert done.returncode == 2
+    assert done.stderr.decode().strip() == "jouletally: No space left on device"
+
+
+def test_an_interrupt_ends_without_a_traceback(right, monkeypatch, capsys):
+    """As shells expect it: 130."""
+    import checker.api
+    import checker.command
+
+    def interrupted(*_: object, **__: object) -> None:
+        raise KeyboardInterrupt
+
+    monkeypatch.setattr(checker.api, "review", interrupted)
+    monkeypatch.setattr(sys, "argv", ["jouletally", "review", str(right)])
+    with pytest.raises(SystemExit) as leaving:
+        checker.command.main()
+    assert leaving.value.code == 130
+    assert capsys.readouterr().err == "jouletally: interrupted\n"
+
+
+def test_a_report_does_not_replace_what_is_read(right):
+    """`--json` with the package's own name is refused, and the package is as it was."""
+    before = right.read_bytes()
+    code, _, err = call("review", str(right), "--json", str(right))
+    assert code == 2
+    assert "which is read" in err
+    assert right.read_bytes() == before
+
+
+def test_a_file_name_cannot_steer_the_terminal(folder):
+    """Escapes in the name of a file are shown as marks."""
+    path = folder / "a\x1b[31m.json"
+    _, _, err = call("review", str(path))
+    assert "\x1b" not in err
+    path.write_bytes(package(gas_bottle({"internal_energy_change": "31.16 kJ"})))
+    _, out, err = call("review", str(path))
+    assert "\x1b" not in out + err
 
 
 QUICK = """
