@@ -46,5 +46,13 @@ def explain_rule(rulebook: Sequence[Rule], name: str) -> tuple[str, bool]:
     return "\n".join(parts) + "\n", True
 
 
+def guide_section(rulebook: Sequence[Rule]) -> str:
+    """Return the list of rules of the guide for contributors, in rulebook order, in Markdown."""
+    entries = (
+        f"### `{rule.name}`\n\n{rule.grade.capitalize()}, {rule.theme}. {rule.says}\n" for rule in rulebook
+    )
+    return "\n".join(entries)
+
+
 def _wrapped(label: str, text: str) -> list[str]:
     return textwrap.wrap(text, WIDTH, initial_indent=f"  {label}: ", subsequent_indent="    ")
