@@ -2,12 +2,13 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Callable, Iterable, Iterator
 from dataclasses import dataclass
+from typing import Final
 
 from checker.case import Case
 from checker.comparison.compare import Compared
-from checker.facts.state_gaps import SEVERAL_BODIES, is_refused, state_gaps, unread
+from checker.facts.state_gaps import SEVERAL_BODIES, STATE_RULES, is_refused, state_gaps, unread
 from checker.facts.twins import CONSTANT, IDEAL, REAL
 from checker.findings import Outcome
 from checker.outcomes import NotEvaluable
@@ -54,22 +55,13 @@ class Gap:
 
 def gaps(case: Case) -> tuple[Gap, ...]:
     """Return every gap of a record, in a fixed order."""
-    states = state_gaps(case)
-    with_others = tuple(mark for g in states if g.rule == SEVERAL_BODIES for mark in g.marks)
-    return (
-        *_models(case),
-        *_refused_inputs(case),
-        *_unread_inputs(case),
-        *(Gap(g.rule, g.pointer, g.place, g.reason, g.marks) for g in states if g.rule != SEVERAL_BODIES),
-        *_sequences(case),
-        *(gap for process in case.record.processes for gap in _process(case, process, with_others)),
-        *_surroundings(case),
-    )
+    return tuple(gap for _, source in _SOURCES for gap in source(case))
 
 
 def gaps_of(case: Case, rule: str) -> Iterator[tuple[Gap, tuple[str, ...]]]:
     """Yield the gaps that a rule reports, with the pointers of the stated results that each costs."""
-    for gap in gaps(case):
+    source = next(source for rules, source in _SOURCES if rule in rules)
+    for gap in source(case):
         if gap.rule == rule:
             yield gap, tuple(c.statement.pointer for c in lost(case) if gap.costs(c))
 
@@ -83,8 +75,9 @@ def lost(case: Case) -> Iterator[Compared]:
 
 def unexplained(case: Case) -> Iterator[Compared]:
     """Yield the results without an independent value that no gap explains."""
-    known = gaps(case)
-    return (c for c in lost(case) if not any(gap.costs(c) for gap in known))
+    results = tuple(lost(case))
+    known = gaps(case) if results else ()
+    return (c for c in results if not any(gap.costs(c) for gap in known))
 
 
 def _models(case: Case) -> Iterator[Gap]:
@@ -97,6 +90,12 @@ def _models(case: Case) -> Iterator[Gap]:
         except NotEvaluable as outcome:
             rule, reason = _rule_of_model(body, outcome), outcome.reason
             yield Gap(rule, f"bodies/{name}", body.place, reason, (reason,))
+
+
+def _states(case: Case) -> Iterator[Gap]:
+    for g in state_gaps(case):
+        if g.rule != SEVERAL_BODIES:
+            yield Gap(g.rule, g.pointer, g.place, g.reason, g.marks)
 
 
 def _refused_inputs(case: Case) -> Iterator[Gap]:
@@ -138,18 +137,25 @@ def _sequences(case: Case) -> Iterator[Gap]:
             yield Gap("sequence-not-recomputed", base, sequence.place, reason, ("",), f"{base}/")
 
 
-def _process(case: Case, process: Process, with_others: tuple[str, ...]) -> Iterator[Gap]:
-    ctx = case.context(process.id)
+def _processes(case: Case) -> Iterator[Gap]:
+    for process in case.record.processes:
+        ctx, base = case.context(process.id), f"processes/{process.id}"
+        if ctx is not None and not ctx.bodies:
+            reason = (
+                f"no body is described both in state {process.from_state} and in state {process.to_state}"
+            )
+            yield Gap("body-missing-in-state", base, process.place, reason, ("",), f"{base}/")
+        elif ctx is not None and len(ctx.bodies) > 1:
+            reason = f"the balance of {', '.join(ctx.bodies)} together is not part of this version"
+            states = (mark for g in state_gaps(case) if g.rule == SEVERAL_BODIES for mark in g.marks)
+            marks = ("several bodies: closing their balance", *states)
+            yield Gap(SEVERAL_BODIES, base, process.place, reason, marks, f"{base}/")
+        else:
+            yield from _one_body(case, process)
+
+
+def _one_body(case: Case, process: Process) -> Iterator[Gap]:
     base = f"processes/{process.id}"
-    if ctx is not None and not ctx.bodies:
-        reason = f"no body is described both in state {process.from_state} and in state {process.to_state}"
-        yield Gap("body-missing-in-state", base, process.place, reason, ("",), f"{base}/")
-        return
-    if ctx is not None and len(ctx.bodies) > 1:
-        reason = f"the balance of {', '.join(ctx.bodies)} together is not part of this version"
-        mark = "several bodies: closing their balance"
-        yield Gap(SEVERAL_BODIES, base, process.place, reason, (mark, *with_others), f"{base}/")
-        return
     if process.heat_transfers is None:
         mark = f"heat transfers of {process.id} is not stated"
         reason = "no heat transfers are listed, so the entropy that goes with heat is not known"
@@ -184,3 +190,25 @@ def _surroundings(case: Case) -> Iterator[Gap]:
             mark = f"{name} of the surroundings is not stated"
             reason = f"the {words} of the surroundings is not stated"
             yield Gap("surroundings-not-stated", f"surroundings/{name}", case.record.place, reason, (mark,))
+
+
+_SOURCES: Final[tuple[tuple[tuple[str, ...], Callable[[Case], Iterable[Gap]]], ...]] = (
+    (("substance-unknown", "constants-missing", "constants-contradict", "model-not-recomputed"), _models),
+    ((), _refused_inputs),
+    ((), _unread_inputs),
+    ((*STATE_RULES, "datum-missing"), _states),
+    (("sequence-not-recomputed",), _sequences),
+    (
+        (
+            "body-missing-in-state",
+            SEVERAL_BODIES,
+            "heat-transfers-not-stated",
+            "boundary-temperature-missing",
+            "reservoir-not-stated",
+            "too-many-unknowns",
+        ),
+        _processes,
+    ),
+    (("surroundings-not-stated",), _surroundings),
+)
+"""Rules with what finds the gaps that they report; what no rule reports as a gap is reported by itself elsewhere."""

@@ -23,6 +23,8 @@ RULE_OF_KIND: Final = {
 UNDETERMINED: Final = "state-undetermined"
 SEVERAL_BODIES: Final = "several-bodies-not-closed"
 TWO_PHASE: Final = "two-phase-from-temperature-and-pressure"
+STATE_RULES: Final = (UNDETERMINED, TWO_PHASE, *RULE_OF_KIND.values())
+"""The rules that report states as gaps."""
 REACHES_ACROSS: Final = "reach across the saturation line"
 URGENCY: Final = (
     "value-not-positive",
