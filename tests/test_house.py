@@ -27,11 +27,11 @@ TOP_LEVEL = {
 }
 
 LAYERS = (
-    {"quantity", "outcomes", "problems", "findings", "cautions", "tool", "progress"},
+    {"quantity", "outcomes", "problems", "findings", "cautions", "tool", "progress", "outputs"},
     {"term", "document", "substances"},
     {"vocabulary"},
     {"submission", "basis"},
-    {"package", "basis_file", "sheet"},
+    {"package", "basis_file", "convention", "sheet"},
     {"display", "comparison"},
     {"case"},
     {"facts", "evaluation", "diagrams", "ledgers", "rule_text"},
@@ -46,6 +46,7 @@ JOINS_RULES = {"api", "command", "engine", "locate", "rule_text"}
 OPEN_TO_RULES = {
     "case",
     "comparison",
+    "convention",
     "facts",
     "findings",
     "problems",
