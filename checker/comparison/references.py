@@ -34,6 +34,13 @@ TEMPERATURE_REFERENCE: Final = 50.0
 """A tenth of it, 5 K, is the most that open digits may move a temperature (design, section 6). [K]"""
 ROUNDING: Final = 1e-9
 """A property that changes by less than this part of its value does not change."""
+NOTHING: Final = 1e-6
+"""Terms of a balance that are less than this part of what the bodies hold are zero but for arithmetic (chosen)."""
+
+
+def _without_noise(terms: dict[str, float], held: float) -> dict[str, float]:
+    """Return the largest term of each balance, without those that are zero but for the arithmetic."""
+    return {process: size for process, size in terms.items() if size > NOTHING * held}
 
 
 class References:
@@ -45,8 +52,11 @@ class References:
         self._entropies: dict[str, float] = {}
         for key, value in values.items():
             self._collect(key, value)
-        self._largest_energy = max(self._energies.values(), default=0.0)
-        self._largest_entropy = max(self._entropies.values(), default=0.0)
+        energy, entropy = self._held()
+        self._energies = _without_noise(self._energies, energy)
+        self._entropies = _without_noise(self._entropies, entropy)
+        self._largest_energy = max(self._energies.values(), default=energy)
+        self._largest_entropy = max(self._entropies.values(), default=entropy)
 
     def _collect(self, key: str, value: object) -> None:
         parts = key.split("/")
@@ -57,6 +67,20 @@ class References:
             self._energies[parts[1]] = max(self._energies.get(parts[1], 0.0), abs(value))
         elif name in ENTROPY_TERMS or name in ITEM_ENTROPY:
             self._entropies[parts[1]] = max(self._entropies.get(parts[1], 0.0), abs(value))
+
+    def _held(self) -> tuple[float, float]:
+        """Return the largest m·p·v [J] and m·p·v/T [J/K] of a state: what a gas holds, whatever the datum."""
+        energies, entropies = [0.0], [0.0]
+        for key in self._values:
+            if not key.startswith("states/") or not key.endswith("/specific_volume"):
+                continue
+            base, body = key.removesuffix("/specific_volume"), key.split("/")[2]
+            names = (key, f"{base}/pressure", f"{base}/temperature", f"bodies/{body}/mass")
+            found = [v for name in names if isinstance(v := self._values.get(name), float)]
+            if len(found) == len(names) and found[2] > 0.0:
+                energies.append(abs(found[0] * found[1] * found[3]))
+                entropies.append(energies[-1] / found[2])
+        return max(energies), max(entropies)
 
     def reference(self, key: str, value: float) -> float:
         """Return the reference quantity of a comparison. [unit of the quantity]"""

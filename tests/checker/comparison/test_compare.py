@@ -1,12 +1,14 @@
 """Tolerance, digits, standing: stated values against the alternate calculation."""
 
 import math
+from typing import Any
 
 import pytest
 
+from checker import review
 from checker.basis import Basis
 from checker.findings import Outcome, Standing
-from tests.checker.cases import case, compared, gas_bottle
+from tests.checker.cases import case, compared, gas_bottle, package
 
 Q = "processes/warming/heat"
 DU = "processes/warming/internal_energy_change"
@@ -162,3 +164,25 @@ def test_positive_in_flips_work_and_nothing_else():
     ]
     found = case(record, conventions={"work": "positive in"})
     assert {c.outcome for c in found.compared} == {Outcome.AGREES}
+
+
+def free_expansion() -> dict[str, Any]:
+    """Return helium that doubles its volume freely: Q = W = ΔU = 0, and only ΔS = m·R·ln 2."""
+    record = gas_bottle({"internal_energy_change": "0 kJ", "entropy_change": "0.1440 kJ/K"})
+    process = record["processes"][0]
+    process.update(path="free expansion", heat_transfers=[])
+    record["states"]["hot"]["gas"]["inputs"] = {"pressure": "2.500 bar"}
+    return record
+
+
+def test_a_balance_without_terms_is_held_against_what_the_gas_holds():
+    """All energies of a free expansion are zero but for rounding: 0.5 % of m·p·v = 62.31 kJ is tolerated."""
+    c = compared(case(free_expansion()), DU)
+    assert c.outcome is Outcome.AGREES
+    assert c.allowance == pytest.approx(0.005 * 0.1 * 2.077e3 * 300.0, rel=1e-9)
+
+
+def test_a_balance_without_terms_closes():
+    """What rounding leaves of a free expansion's balance is nothing, and no finding."""
+    document = package(free_expansion())
+    assert review(document).findings == ()
