@@ -7,6 +7,7 @@ from collections.abc import Iterator, Sequence
 from checker.case import Case
 from checker.findings import Amount, Ledger, LedgerLine
 from checker.sheet.keys import term_for
+from checker.vocabulary import Allowance
 
 Line = tuple[str, str, str, int]
 """(pointer, label, side, sign in the sum)."""
@@ -83,7 +84,8 @@ def _ledger(case: Case, process: str, kind: str, lines: Sequence[Line], total: s
             stated_complete = False
         rows.append(_row(case, pointer, label, side, sign, value, total))
     reference = max((abs(v) for p, *_ in lines if (v := case.value(p)) is not None), default=0.0)
-    allowed = 0.005 * reference
+    allowance = Allowance.ENERGY if kind == "energy" else Allowance.ENTROPY
+    allowed = case.basis.allowances[allowance] * reference
     return Ledger(
         process,
         kind,

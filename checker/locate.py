@@ -42,8 +42,6 @@ def json_pointer(place: Place) -> str:
 def finding_of_problem(problem: Problem, rules: Mapping[str, Rule], locator: Locator) -> Finding:
     """Return the finding for a problem of the reading stage."""
     rule = rules.get(problem.kind)
-    stated = None if problem.stated is None else Amount(0.0, "", problem.stated)
-    del stated
     return Finding(
         rule=problem.kind,
         theme=rule.theme if rule else "form",

@@ -13,6 +13,7 @@ from checker.comparison.moves import Moves
 from checker.comparison.references import References
 from checker.findings import Outcome, Standing
 from checker.outcomes import NotEvaluable
+from checker.sheet.keys import again, given
 from checker.sheet.step import Found, Sheet, Values
 from checker.submission import Record, Role, Statement
 
@@ -108,8 +109,16 @@ def _is_compared(statement: Statement, sheet: Sheet, values: Values) -> bool:
         return False
     if statement.role is Role.RESULT:
         return True
+    key = _key_of(statement, sheet)
+    source = given(sheet.key(statement.pointer))
+    return source in values and key in sheet.made_by and source not in sheet.ancestors(key)
+
+
+def _key_of(statement: Statement, sheet: Sheet) -> str:
+    """Return the key that a statement is held against: for an input, another formula's where there is one."""
     key = sheet.key(statement.pointer)
-    return f"given/{key}" in values and key in sheet.made_by and f"given/{key}" not in sheet.ancestors(key)
+    second = again(key)
+    return second if statement.role is Role.INPUT and second in sheet.made_by else key
 
 
 def _compare(
@@ -122,7 +131,7 @@ def _compare(
     shifts: Mapping[str, Shift],
     basis: Basis,
 ) -> Compared:
-    key = sheet.key(statement.pointer)
+    key = _key_of(statement, sheet)
     shift = shifts.get(statement.pointer, NO_SHIFT)
     independent = _value_of(key, sheet, values, shift)
     stated = statement.value - shift.value

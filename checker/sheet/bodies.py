@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterator
 
 from checker.outcomes import NotEvaluable
+from checker.quantity import dimensions as dim
 from checker.sheet.balances import STANDARD_GRAVITY, same_value
 from checker.sheet.keys import body_key, clue, given, state_key
 from checker.sheet.models import BodyModel
@@ -204,3 +205,26 @@ def dead_state_steps(record: Record, body: str, model: BodyModel) -> Iterator[St
                     f"{motion} not stated: 0",
                     "0",
                 )
+
+
+EXTENSIVE_DIMENSIONS = frozenset({dim.MASS, dim.AMOUNT, dim.VOLUME, dim.ENERGY, dim.ENTROPY, dim.POWER})
+
+
+def is_per_mass(record: Record) -> bool:
+    """Say whether a record of one body states nothing that depends on how much there is."""
+    return len(record.bodies) == 1 and not any(
+        s.term.dimension in EXTENSIVE_DIMENSIONS or s.quantity.dimension in EXTENSIVE_DIMENSIONS
+        for s in record.statements
+    )
+
+
+def unit_mass_step(body: str) -> Step:
+    """Return a mass of 1 kg for a record in which every quantity is per unit mass. [kg]"""
+    return Step(
+        f"Mass of {body}",
+        (body_key(body, "mass"),),
+        (),
+        lambda: (1.0,),
+        "m = 1 kg",
+        assumes=f"{body}: no mass is stated and every quantity is per unit mass, so the balances are for 1 kg",
+    )

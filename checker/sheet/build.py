@@ -8,7 +8,7 @@ from dataclasses import dataclass
 from typing import Final
 
 from checker.sheet import balances, cycles
-from checker.sheet.bodies import body_steps, dead_state_steps
+from checker.sheet.bodies import body_steps, dead_state_steps, is_per_mass, unit_mass_step
 from checker.sheet.context import ProcessContext
 from checker.sheet.datum import Offset, declared_offset
 from checker.sheet.endstates import Neighbour, curve_steps, path_clues
@@ -18,6 +18,7 @@ from checker.sheet.models import BodyModel, body_model
 from checker.sheet.planner import explain, plan, prune
 from checker.sheet.processes import process_steps
 from checker.sheet.same import SameQuantity, same_quantities
+from checker.sheet.second_way import second_ways
 from checker.sheet.states import CALORIC, SYMBOLS, Clue, StatePlan, clue_steps
 from checker.sheet.step import Sheet, Step, above, users_of
 from checker.sheet.transfers import assumed_candidates
@@ -98,7 +99,10 @@ class _Builder:
         leaf_keys = {*self.leaves.values, *(link.key for link in self.leaves.links)}
         steps = plan(leaf_keys, self.candidates, states, self._searches, self._assumed)
         known = {*leaf_keys, *(output for step in steps for output in step.outputs)}
-        steps = prune(steps, self._wanted(same, {output: step for step in steps for output in step.outputs}))
+        made = {output: step for step in steps for output in step.outputs}
+        again = second_ways(self._twice_told(), self.candidates, known, made)
+        wanted = self._wanted(same, made) | {step.outputs[0] for step in again}
+        steps = prune([*steps, *again], wanted)
         made = {output: step for step in steps for output in step.outputs}
         return Sheet(
             self.record.id,
@@ -110,6 +114,13 @@ class _Builder:
             made,
             users_of(steps),
         )
+
+    def _twice_told(self) -> Iterator[str]:
+        """Yield the inputs that path or link may tell as well, and that are no part of the balance's closure."""
+        for ctx in self.contexts:
+            yield ctx.key("boundary_work")
+        for body in self.record.bodies:
+            yield body_key(body, "mass")
 
     def _body_states(self) -> Iterator[tuple[str, str]]:
         for state in self.record.states:
@@ -191,6 +202,8 @@ class _Builder:
     def _assumed(self, known: set[str]) -> Iterator[Step]:
         for ctx in self.contexts:
             yield from assumed_candidates(ctx, known)
+        if is_per_mass(self.record):
+            yield from (unit_mass_step(body) for body in self.record.bodies)
 
     def _wanted(self, same: SameQuantity, made: Mapping[str, Step]) -> set[str]:
         """Return the keys that a review needs: all results and limits, surplus inputs, states, main balances.

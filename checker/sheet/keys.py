@@ -119,6 +119,11 @@ def clue(pointer: str) -> str:
     return f"clue/{pointer}"
 
 
+def again(pointer: str) -> str:
+    """Return the key of an input's quantity as another formula gives it."""
+    return f"again/{pointer}"
+
+
 def state_key(state: str, body: str, name: str) -> str:
     """Return the pointer of a property of a body in a state."""
     return f"states/{state}/{body}/{name}"
@@ -140,9 +145,9 @@ def share_key(process: str, body: str, name: str) -> str:
 
 
 def plain(key: str) -> str:
-    """Return a key without its ``given/``, ``clue/`` or ``link/`` prefix."""
+    """Return a key without its ``given/``, ``clue/``, ``link/`` or ``again/`` prefix."""
     head, _, rest = key.partition("/")
-    return rest if head in {"given", "clue", "link", "dead"} else key
+    return rest if head in {"given", "clue", "link", "dead", "again"} else key
 
 
 @lru_cache(maxsize=4096)
