@@ -32,6 +32,7 @@ def not_identified(submission: Submission) -> Yielded:
             f"The package has no {' and no '.join(lacking)}.",
             quantity="package",
             place=("package",),
+            grade=Grade.QUERY if "number" in lacking else Grade.REMARK,
             suggestion="State them in the header, so that a review can be filed with what it reviewed.",
         )
 
@@ -145,7 +146,7 @@ RULES: Final[tuple[Rule, ...]] = (
         Scope.PACKAGE,
         "bookkeeping",
         Grade.QUERY,
-        "A package has no number or no revision.",
+        "A package has no number (a query) or no revision (a remark).",
         "A review is of one revision of one document; without them nobody can say of which.",
         "ISO 9001:2015, 7.5.2 (identification of documented information)",
     ),
