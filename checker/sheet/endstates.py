@@ -8,6 +8,7 @@ from __future__ import annotations
 
 from collections.abc import Callable, Iterator, Mapping
 from dataclasses import dataclass
+from typing import Final
 
 from checker.outcomes import NotEvaluable
 from checker.sheet.context import ProcessContext
@@ -28,6 +29,10 @@ NEIGHBOUR = (
     "specific_enthalpy",
     "specific_entropy",
 )
+
+EDGE_SCAN: Final = 50
+EDGE_HALVINGS: Final = 16
+"""How the first state at a pressure is sought: even steps over the range of temperature, then halvings."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -338,16 +343,27 @@ def _by_temperature_range(substance: Substance, pressure: float) -> _Curve:
     """Return states at one pressure, by enthalpy, so that the two-phase span is part of the family."""
     limits = substance.valid_range
     low, high = (limits.temperature_min, limits.temperature_max) if limits else (50.0, 3000.0)
-    ends = []
-    for first, last in ((low, high), (high, low)):
-        for i in range(51):
-            try:
-                edge = substance.state({"pressure": pressure, "temperature": first + (last - first) * i / 50})
-            except NotEvaluable:
-                continue
-            if edge.specific_enthalpy is not None:
-                ends.append(edge.specific_enthalpy)
-                break
-    if len(ends) != 2:
-        raise NotEvaluable("the model has no state at this pressure", "outside-range")
+    ends = [_outermost(substance, pressure, first, last) for first, last in ((low, high), (high, low))]
     return _Curve(lambda h: substance.state({"pressure": pressure, "specific_enthalpy": h}), between(*ends))
+
+
+def _outermost(substance: Substance, pressure: float, first: float, last: float) -> float:
+    """Return the enthalpy [J/kg] of the state at this pressure that comes first on the way between two temperatures."""
+
+    def enthalpy(t: float) -> float | None:
+        try:
+            return substance.state({"pressure": pressure, "temperature": t}).specific_enthalpy
+        except NotEvaluable:
+            return None
+
+    steps = [first + (last - first) * i / EDGE_SCAN for i in range(EDGE_SCAN + 1)]
+    inside = next((i for i, t in enumerate(steps) if enthalpy(t) is not None), None)
+    if inside is None:
+        raise NotEvaluable("the model has no state at this pressure", "outside-range")
+    reached, missed = steps[inside], steps[max(inside - 1, 0)]
+    for _ in range(EDGE_HALVINGS):
+        middle = 0.5 * (reached + missed)
+        reached, missed = (reached, middle) if enthalpy(middle) is None else (middle, missed)
+    found = enthalpy(reached)
+    assert found is not None, "it was evaluated before"
+    return found

@@ -198,3 +198,26 @@ def test_work_along_a_straight_line_is_its_integral(rise: float, ratio: float) -
     found = run("R134a", {"temperature": t1, "quality": x1}, {"specific_volume": v2}, kind)
     assert found.process("boundary_work") == pytest.approx(expected, rel=1e-9)
     assert found.process("heat") == pytest.approx(MASS * (u2 - u1) + expected, rel=1e-7)
+
+
+@pytest.mark.parametrize(
+    ("substance", "library_name", "first", "external"),
+    [
+        # Ends close to the melting line, where the coldest states at the outside pressure lie.
+        ("Carbon dioxide", "CO2", ("T", 228.08, "Q", 0.13615), 1576200.0),
+        ("Nitrogen", "Nitrogen", ("T", 78.941, "P", 4720100.0), 2461000.0),
+    ],
+)
+def test_an_end_close_to_the_melting_line_is_not_missed(
+    substance: str, library_name: str, first: tuple[str, float, str, float], external: float
+) -> None:
+    """The balance against an outside pressure puts h₂ = u₁ + p_ext·v₁ (direct library calls), however cold."""
+    v1, u1 = 1.0 / PropsSI("D", *first, library_name), PropsSI("U", *first, library_name)
+    h2 = u1 + external * v1
+    expected = PropsSI("T", "H", h2, "P", external, library_name)
+    kinds = ["adiabatic", path("against constant external pressure", external_pressure=external)]
+    names = {"T": "temperature", "P": "pressure", "Q": "quality"}
+    known = {names[first[0]]: first[1], names[first[2]]: first[3]}
+    body = matter(substance, "real fluid", mass=MASS)
+    found = one_change(body, known, {"pressure": external}, path=kinds)
+    assert found.state("temperature") == pytest.approx(expected, abs=1e-5)
