@@ -10,6 +10,7 @@ from checker.case import Case, Raised, Yielded
 from checker.comparison.compare import Compared
 from checker.facts.gaps import unexplained
 from checker.facts.mass import contradicts_mass
+from checker.facts.paths import any_follows
 from checker.facts.twins import is_incompressible
 from checker.facts.use import untraceable
 from checker.findings import Grade, Outcome, Standing
@@ -55,8 +56,18 @@ def digits_explain(case: Case) -> Yielded:
 def surplus_input(case: Case) -> Yielded:
     """Yield inputs that are not needed and contradict the others."""
     for c in case.compared:
-        volume = contradicts_mass(case, c.statement.pointer)
-        if c.statement.role is Role.INPUT and c.outcome is Outcome.WRONG and not volume:
+        if c.statement.role is not Role.INPUT or _reported_elsewhere(case, c.statement.pointer):
+            continue
+        if c.outcome is Outcome.NOT_EVALUABLE and c.deviation is not None:
+            yield Raised(
+                f"{c.statement.quantity.text} is more than is needed to find this quantity, and the other inputs "
+                f"give {_recomputed(case, c)}; {c.reason}.",
+                compared=c,
+                theme=c.statement.term.theme,
+                grade=Grade.QUERY,
+                suggestion="State the inputs with the digits that were used, or drop what is not needed.",
+            )
+        elif c.outcome is Outcome.WRONG:
             yield Raised(
                 f"{c.statement.quantity.text} is more than is needed to find this quantity, and the other inputs "
                 f"give {_recomputed(case, c)}.",
@@ -65,6 +76,13 @@ def surplus_input(case: Case) -> Yielded:
                 grade=Grade.QUERY if c.explained_by_digits else None,
                 suggestion="Keep the inputs that define the case and correct or drop the other.",
             )
+
+
+def _reported_elsewhere(case: Case, pointer: str) -> bool:
+    """Say whether a surplus volume, or work of a free expansion, is what another rule reports in its own words."""
+    process = pointer.split("/")[1]
+    free = pointer.endswith("/boundary_work") and any_follows(case, process, "free expansion")
+    return free or contradicts_mass(case, pointer)
 
 
 def rounded_early(case: Case) -> Yielded:

@@ -135,12 +135,13 @@ def _compare(
     shift = shifts.get(statement.pointer, NO_SHIFT)
     independent = _value_of(key, sheet, values, shift)
     stated = statement.value - shift.value
-    half_width, k = statement.quantity.half_width, basis.coverage_factor
+    half_width, k = _half_width(statement), basis.coverage_factor
     size = independent if isinstance(independent, float) else stated
     allowance = references.allowance(key, size)
     propagated = moves.uncertainty.get(key, 0.0)
     tolerance = allowance + _expanded(half_width, propagated, k)
-    open_tolerance = allowance + _expanded(statement.quantity.open_half_width, propagated, k)
+    widest = max(statement.quantity.half_width, statement.quantity.open_half_width)
+    open_tolerance = allowance + _expanded(widest, propagated, k)
     move = moves.digits.get(key, 0.0)
     bare = Compared(
         statement,
@@ -159,6 +160,12 @@ def _compare(
         shift,
     )
     return _judged(bare, references, key in moves.broken)
+
+
+def _half_width(statement: Statement) -> float:
+    """Return the half-width that counts for the tolerance: inputs are exact as written unless they carry ±."""
+    exact = statement.role is Role.INPUT and statement.quantity.plus_minus is None
+    return 0.0 if exact else statement.quantity.half_width
 
 
 def _expanded(half_width: float, propagated: float, k: float) -> float:

@@ -6,7 +6,7 @@ from collections.abc import Iterable
 from typing import Final
 
 from checker.basis import Basis
-from checker.sheet.keys import term_for
+from checker.sheet.keys import plain, term_for
 from checker.sheet.step import Sheet, Values
 from checker.vocabulary import PER_MASS, Allowance
 
@@ -84,6 +84,7 @@ class References:
 
     def reference(self, key: str, value: float) -> float:
         """Return the reference quantity of a comparison. [unit of the quantity]"""
+        key = plain(key)
         term = term_for(key)
         kind = term.allowance if term else Allowance.VALUE
         if kind is Allowance.TEMPERATURE:

@@ -100,8 +100,8 @@ class _Builder:
         steps = plan(leaf_keys, self.candidates, states, self._searches, self._assumed)
         known = {*leaf_keys, *(output for step in steps for output in step.outputs)}
         made = {output: step for step in steps for output in step.outputs}
-        again = second_ways(self._twice_told(), self.candidates, known, made)
-        wanted = self._wanted(same, made) | {step.outputs[0] for step in again}
+        again = tuple(second_ways(self._twice_told(), self.candidates, known, made))
+        wanted = self._wanted(same, made).union(*(step.outputs for step in again))
         steps = prune([*steps, *again], wanted)
         made = {output: step for step in steps for output in step.outputs}
         return Sheet(
@@ -116,11 +116,12 @@ class _Builder:
         )
 
     def _twice_told(self) -> Iterator[str]:
-        """Yield the inputs that path or link may tell as well, and that are no part of the balance's closure."""
+        """Yield what the path (boundary work) or a linked record (mass) tells, whatever the inputs say."""
         for ctx in self.contexts:
             yield ctx.key("boundary_work")
-        for body in self.record.bodies:
-            yield body_key(body, "mass")
+        for link in self.leaves.links:
+            if link.key.endswith("/mass"):
+                yield body_key(link.key.split("/")[3], "mass")
 
     def _body_states(self) -> Iterator[tuple[str, str]]:
         for state in self.record.states:

@@ -8,7 +8,7 @@ import pytest
 from checker import review
 from checker.basis import Basis
 from checker.findings import Outcome, Standing
-from tests.checker.cases import case, compared, gas_bottle, package
+from tests.checker.cases import case, cases, compared, gas_bottle, package
 
 Q = "processes/warming/heat"
 DU = "processes/warming/internal_energy_change"
@@ -186,3 +186,56 @@ def test_a_balance_without_terms_closes():
     """What rounding leaves of a free expansion's balance is nothing, and no finding."""
     document = package(free_expansion())
     assert review(document).findings == ()
+
+
+def with_input(name: str, text: str, path: str = "constant volume") -> dict[str, Any]:
+    """Return the helium bottle with one more input of its process."""
+    record = gas_bottle()
+    record["processes"][0].update(inputs={name: text}, path=path)
+    del record["processes"][0]["work_transfers"]
+    return record
+
+
+@pytest.mark.parametrize(
+    ("path", "text"), [("constant volume", "10.00 kJ"), ("constant pressure", "22.00 kJ")]
+)
+def test_boundary_work_as_an_input_is_held_against_the_path(path, text):
+    """Nothing at constant volume, m·R·ΔT = 20.77 kJ at constant pressure: an input cannot say otherwise."""
+    c = compared(case(with_input("boundary_work", text, path)), "processes/warming/boundary_work")
+    assert c.outcome is Outcome.WRONG
+    assert c.independent == pytest.approx(0.0 if path == "constant volume" else 20770.0, abs=1e-6)
+
+
+def test_boundary_work_as_an_input_that_the_path_gives_agrees():
+    """20.77 kJ is what the path says too."""
+    record = with_input("boundary_work", "20.77 kJ", "constant pressure")
+    assert compared(case(record), "processes/warming/boundary_work").outcome is Outcome.AGREES
+
+
+def test_boundary_work_that_finds_the_state_is_not_held_against_itself():
+    """Where the work is what leads to the last state there is nothing to compare it with."""
+    record = with_input("boundary_work", "20.77 kJ", "constant pressure")
+    record["states"]["hot"]["gas"] = {"inputs": {}, "results": {"temperature": "400.0 K"}}
+    found = case(record)
+    assert compared(found, "states/hot/gas/temperature").outcome is Outcome.AGREES
+    assert [c.statement.pointer for c in found.compared] == ["states/hot/gas/temperature"]
+
+
+@pytest.mark.parametrize(
+    ("text", "explained"), [("31.1 kJ", None), ("31 kJ", True), ("32 kJ", False), ("31.5 kJ", False)]
+)
+def test_a_surplus_input_is_exact_as_written(text, explained):
+    """The digits of an input widen no tolerance; where they alone would explain a deviation it is marked."""
+    c = compared(case(with_input("internal_energy_change", text)), DU)
+    assert (c.outcome is Outcome.AGREES) is (explained is None)
+    assert c.explained_by_digits is bool(explained)
+
+
+def test_a_linked_mass_is_held_against_an_own_one():
+    """The same gas in two records has one mass."""
+    other = gas_bottle(id="other")
+    other["states"]["cold"]["gas"] = {"same_as": "records/bottle/states/hot/gas"}
+    other["states"]["hot"]["gas"]["inputs"] = {"temperature": "450.0 K"}
+    other["bodies"]["gas"]["inputs"]["mass"] = "0.1100 kg"
+    found = cases(gas_bottle(), other)["other"]
+    assert compared(found, "bodies/gas/mass").outcome is Outcome.WRONG
