@@ -41,7 +41,7 @@ def second_ways(
 
 def _tells(step: Step, key: str, known: Set[str], made: Mapping[str, Step]) -> bool:
     """Say whether a formula can be used and rests on neither the quantity nor the input that gives it."""
-    if not known.issuperset(step.parents):
+    if not set(step.parents) <= known:
         return False
     barred = {key, given(key)}
     return all(parent not in barred and barred.isdisjoint(above(parent, made)) for parent in step.parents)
