@@ -14,6 +14,7 @@ from typing import Any, Final
 
 from checker.outcomes import NotEvaluable
 from checker.substances.limits import Limits
+from checker.substances.names import fluid_of
 from checker.substances.properties import (
     ENERGY,
     ENTHALPY,
@@ -81,11 +82,15 @@ class Constants:
 class Library:
     """One library state of one fluid."""
 
-    def __init__(self, backend: str, fluid: str) -> None:
+    def __init__(self, backend: str, name: str) -> None:
+        # Names are commands to the library: only what stands in the table of ours gets there.
+        fluid = fluid_of(name)
+        if backend not in (HELMHOLTZ, INDUSTRIAL):
+            raise NotEvaluable(f"no property source is called {backend[:40]!r}", "not-supported")
         from CoolProp import CoolProp
 
-        self.fluid = fluid
-        self._state: Any = CoolProp.AbstractState(backend, fluid)
+        self.name = fluid.name
+        self._state: Any = CoolProp.AbstractState(backend, fluid.library)
         self._codes: dict[Pair, Any] = {
             pair: getattr(CoolProp, entry.constant) for pair, entry in _PAIRS.items()
         }
@@ -147,9 +152,9 @@ class Library:
         point = self._solved(pair, *_as_inputs(entry, first, second), side)
         if point is None or not self._reproduces(point, pair, first, second):
             raise NotEvaluable(
-                f"the equation of state of {self.fluid} gives no state for these two properties"
+                f"the equation of state of {self.name} gives no state for these two properties"
             )
-        self.constants.limits.refuse_outside(point, self.fluid)
+        self.constants.limits.refuse_outside(point, self.name)
         return point
 
     def _solved(self, pair: Pair, one: float, two: float, side: str | None) -> Point | None:
@@ -201,7 +206,7 @@ class Library:
             volume = 1.0 / (_VANISHING_DENSITY * self.constants.molar_mass)
         except _FAILURES:
             raise NotEvaluable(
-                f"the ideal gas part of {self.fluid} gives no value at {temperature:.6g} K"
+                f"the ideal gas part of {self.name} gives no value at {temperature:.6g} K"
             ) from None
         return energy, entropy - gas_constant * math.log(volume), heat
 

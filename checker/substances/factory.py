@@ -21,6 +21,16 @@ _INDUSTRIAL: Final = "industrial"
 _REFERENCE: Final = "reference"
 _WATER: Final = "Water"
 _CONTRADICTION: Final = 0.02
+_CONSTANTS: Final = (
+    "specific_heat",
+    "specific_heat_at_constant_volume",
+    "specific_heat_at_constant_pressure",
+    "gas_constant",
+    "molar_mass",
+    "density",
+    "specific_volume",
+)
+_OF_A_GAS: Final = {"specific_heat_at_constant_volume", "gas_constant"}
 _LATER: Final = {
     "tabulated": "tabulated properties are not recomputed yet",
     "phase change": "melting and freezing are not recomputed yet",
@@ -109,8 +119,13 @@ def constant_heat(substance: str, constants: Mapping[str, float]) -> Substance:
     NotEvaluable
         Constants are missing or contradict each other.
     """
-    stated = {name: _positive(name, value) for name, value in constants.items()}
+    stated = {name: _positive(name, constants[name]) for name in _CONSTANTS if name in constants}
     heat = stated.get("specific_heat")
+    if heat is not None and _OF_A_GAS & set(stated):
+        raise NotEvaluable(
+            f"{substance[:40]}: a specific heat c makes a liquid or solid, c_v or R make a gas; both are stated",
+            "no-solution",
+        )
     if heat is None and _is_condensed(stated):
         heat = stated["specific_heat_at_constant_pressure"]
     if heat is not None:
@@ -119,11 +134,10 @@ def constant_heat(substance: str, constants: Mapping[str, float]) -> Substance:
 
 
 def _is_condensed(stated: Mapping[str, float]) -> bool:
-    gas = {"specific_heat_at_constant_volume", "gas_constant", "molar_mass"}
     return (
         "specific_heat_at_constant_pressure" in stated
         and bool({"density", "specific_volume"} & set(stated))
-        and not gas & set(stated)
+        and not (_OF_A_GAS | {"molar_mass"}) & set(stated)
     )
 
 

@@ -45,6 +45,17 @@ def test_the_library_is_imported_in_one_place_and_not_at_import_time() -> None:
     assert importing == ["coolprop.py"]
 
 
+@pytest.mark.parametrize(
+    ("backend", "name"),
+    [("REFPROP", "Water"), ("HEOS", "REFPROP::Water"), ("BICUBIC&HEOS", "Water"), ("HEOS", "X")],
+)
+def test_commands_never_reach_the_library(backend: str, name: str) -> None:
+    """Backends and names are commands to the library: what is not in our tables is refused before it."""
+    with pytest.raises(NotEvaluable) as refusal:
+        library_of(backend, name)
+    assert refusal.value.kind == "not-supported"
+
+
 def test_the_dangerous_pairs_are_not_offered() -> None:
     """Pairs that poison a kept state, hang or take the wrong root are not trusted."""
     assert len(TRUSTED) == 11

@@ -93,6 +93,18 @@ def test_contradicting_constants_are_refused() -> None:
         assert refusal.value.kind == "no-solution"
 
 
+def test_a_liquid_and_a_gas_at_once_are_refused() -> None:
+    """A specific heat c beside c_v or R leaves open what the substance is."""
+    with pytest.raises(NotEvaluable, match="both are stated"):
+        make_substance("x", "constant specific heat", {"specific_heat": 460.0, "gas_constant": 287.0})
+
+
+def test_other_constants_of_a_body_are_not_heard() -> None:
+    """Mass, volume and the like among the constants do not matter, whatever their values."""
+    constants = {"specific_heat": 460.0, "mass": -3.0, "mass_fraction": 0.0}
+    assert isinstance(make_substance("x", "constant specific heat", constants), ConstantHeatCondensed)
+
+
 def test_cp_with_a_density_is_a_liquid() -> None:
     """A heat capacity at constant pressure beside a density, without anything of a gas, means a liquid."""
     liquid = make_substance("brine", "constant specific heat", {CP: 3500.0, "density": 1100.0})
