@@ -73,6 +73,8 @@ def _zero(s: Statement) -> bool:
 
 def untraceable(case: Case, pointer: str) -> bool:
     """Say whether no formula of the review leads to a quantity, whatever else were stated."""
+    if case.value(pointer) is not None:
+        return False
     name = pointer.rsplit("/", 1)[-1].replace("_", " ")
     reason = case.why_not(pointer)
     return (

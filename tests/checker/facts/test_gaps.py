@@ -7,6 +7,7 @@ from typing import Any
 import pytest
 
 from checker.facts.gaps import gaps, gaps_of, unexplained
+from checker.facts.use import untraceable
 from tests.checker.cases import case, gas_bottle
 
 ALL = {"internal_energy_change": "31.16 kJ", "entropy_generation": "0.020 kJ/K"}
@@ -55,3 +56,13 @@ def test_a_complete_record_has_no_costly_gap() -> None:
     """In a complete record no gap costs anything."""
     found = case(gas_bottle(ALL))
     assert not any(gap.costs(c) for gap in gaps(found) for c in found.compared)
+
+
+def test_a_result_that_open_digits_hide_is_traceable():
+    """A formula leads to it; only its deviation cannot be judged from a mass of one digit."""
+    record = gas_bottle({"internal_energy_change": "40 kJ"})
+    record["bodies"]["gas"]["inputs"]["mass"] = "0.1 kg"
+    found = case(record)
+    pointer = "processes/warming/internal_energy_change"
+    assert [c.statement.pointer for c in unexplained(found)] == [pointer]
+    assert not untraceable(found, pointer)

@@ -21,13 +21,13 @@ def test_another_formula_is_kept_under_its_own_key():
 
 
 def test_a_formula_that_rests_on_the_input_is_no_second_way():
-    """b is made from w, so it would be compared with itself."""
+    """The parent b is made from w, so it would be compared with itself."""
     made = {"w": OWN, "b": taken("b", "w")}
     assert not list(second_ways(["w"], [OWN, OTHER], {"a", "b", "w", given("w")}, made))
 
 
 def test_what_is_not_known_gives_no_second_way():
-    """b is missing."""
+    """The parent b is missing."""
     assert not list(second_ways(["w"], [OWN, OTHER], {"a", given("w")}, {"w": OWN}))
 
 
