@@ -68,25 +68,22 @@ def isentropic_contradicted(case: Case, process: str) -> Yielded:
 
 
 def pressure_missed(
-    kind: str, fact: Callable[[Case, str, str], tuple[Deviation, float] | None], words: str
+    kind: str, fact: Callable[[Case, str, str], paths.Missed | None], words: str
 ) -> RuleFunction:
-    """Return the rule for a path on whose curve the end state must lie."""
+    """Return the rule for a path on whose curve the states must lie."""
 
     def end_off_the_path(case: Case, process: str) -> Yielded:
-        ctx = case.context(process)
-        assert ctx is not None
         for body in paths.followers(case, process, kind):
             found = fact(case, process, body)
-            if found is None or not found[0].beyond:
+            if found is None or not found.deviation.beyond:
                 continue
-            deviation, on_path = found
-            pointer = f"states/{ctx.process.to_state}/{body}/pressure"
+            pointer = f"states/{found.state}/{body}/pressure"
             yield Raised(
-                f"{words} gives {case.show(pointer, on_path)} at the volume of state {ctx.process.to_state}, and the "
-                f"state has {case.show(pointer, on_path + deviation.size)}.",
+                f"{words} gives {case.show(pointer, found.on_path)} at the volume of state {found.state}, and the "
+                f"state has {case.show(pointer, found.on_path + found.deviation.size)}.",
                 quantity=pointer,
                 place=_place(case, process, body, kind),
-                grade=deviation.grade,
+                grade=found.deviation.grade,
                 suggestion="One of the two is superfluous: let the path find the state, or the states the path.",
             )
 

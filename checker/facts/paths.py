@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
+from dataclasses import dataclass
 from typing import Final
 
 from checker.case import Case
@@ -74,8 +75,17 @@ def _entropy_slack(case: Case, state: str, body: str) -> float | None:
         return None
 
 
-def polytropic_pressure(case: Case, process: str, body: str) -> tuple[Deviation, float] | None:
-    """Return p₂ − p₁·(v₁/v₂)ⁿ for a given exponent, and the pressure on the path. [Pa]"""
+@dataclass(frozen=True, slots=True)
+class Missed:
+    """A state beside its path: how far its pressure is from that of the path at its volume. [Pa]"""
+
+    state: str
+    deviation: Deviation
+    on_path: float
+
+
+def polytropic_pressure(case: Case, process: str, body: str) -> Missed | None:
+    """Return p₂ held against p₁·(v₁/v₂)ⁿ for a given exponent."""
     ctx = case.context(process)
     assert ctx is not None
     exponent = case.given(ctx.path_key(body, "exponent"))
@@ -86,27 +96,50 @@ def polytropic_pressure(case: Case, process: str, body: str) -> tuple[Deviation,
     return _missed(case, ctx, body, p1 * (v1 / v2) ** exponent, p2)
 
 
-def line_pressure(case: Case, process: str, body: str) -> tuple[Deviation, float] | None:
-    """Return p₂ less the pressure at V₂ on the line through the stated points, and the latter. [Pa]"""
+def line_pressure(case: Case, process: str, body: str) -> Missed | None:
+    """Return the end that lies beside the stated line p(V), the last one if both do; the last if none does."""
     ctx = case.context(process)
     assert ctx is not None
+    ends, mass = _ends(case, ctx, body), case.value(f"bodies/{body}/mass")
+    line = None if ends is None or mass is None else _line(case, ctx, body, ends[0], mass * ends[1])
+    if ends is None or mass is None or line is None:
+        return None
+    pressure, volume, slope = line
+    first, last = (
+        _missed(case, ctx, body, pressure + slope * (mass * v - volume), p, start)
+        for p, v, start in ((ends[0], ends[1], True), (ends[2], ends[3], False))
+    )
+    return first if first.deviation.beyond and not last.deviation.beyond else last
+
+
+def _line(
+    case: Case, ctx: ProcessContext, body: str, first: float, volume: float
+) -> tuple[float, float, float] | None:
+    """Return a pressure [Pa], its volume [m³] and dp/dV [Pa/m³] of the stated line.
+
+    A spring gives dp/dV = k/A²; without the point of contact its line begins in the first state.
+    """
+    spring = [case.given(ctx.path_key(body, name)) for name in ("stiffness", "piston_area")]
+    if spring[0] is not None and spring[1]:
+        contact = [case.given(ctx.path_key(body, f"{name}_at_contact")) for name in ("pressure", "volume")]
+        at = (first, volume) if contact[0] is None or contact[1] is None else (contact[0], contact[1])
+        return *at, spring[0] / spring[1] ** 2
     pointers = (ctx.path_key(body, f"points/{i}/{name}") for i in (0, 1) for name in ("pressure", "volume"))
     points = [value for p in pointers if (value := case.given(p)) is not None]
-    ends, mass = _ends(case, ctx, body), case.value(f"bodies/{body}/mass")
-    if len(points) != 4 or ends is None or mass is None or points[1] == points[3]:
+    if len(points) != 4 or points[1] == points[3]:
         return None
-    pa, va, pb, vb = points
-    return _missed(case, ctx, body, pa + (pb - pa) * (mass * ends[3] - va) / (vb - va), ends[2])
+    return points[0], points[1], (points[2] - points[0]) / (points[3] - points[1])
 
 
 def _missed(
-    case: Case, ctx: ProcessContext, body: str, on_path: float, stated: float
-) -> tuple[Deviation, float]:
-    end = f"states/{ctx.process.to_state}/{body}/pressure"
-    start = f"states/{ctx.process.from_state}/{body}/pressure"
-    tolerance = _allowance(case, end) + NOISE * abs(stated) + case.uncertainty(end) + case.uncertainty(start)
-    digits = case.digit_move(end) + case.digit_move(start)
-    return Deviation(stated - on_path, tolerance, digits), on_path
+    case: Case, ctx: ProcessContext, body: str, on_path: float, stated: float, start: bool = False
+) -> Missed:
+    states = (ctx.process.from_state, ctx.process.to_state)
+    first, last = (f"states/{state}/{body}/pressure" for state in states)
+    own = first if start else last
+    tolerance = _allowance(case, own) + NOISE * abs(stated) + case.uncertainty(last) + case.uncertainty(first)
+    digits = case.digit_move(last) + case.digit_move(first)
+    return Missed(states[0 if start else 1], Deviation(stated - on_path, tolerance, digits), on_path)
 
 
 def _ends(case: Case, ctx: ProcessContext, body: str) -> tuple[float, float, float, float] | None:
