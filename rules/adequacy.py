@@ -103,6 +103,23 @@ def heat_not_constant(case: Case, process: str) -> Yielded:
             )
 
 
+def phase_crossed(case: Case, process: str) -> Yielded:
+    """Yield condensed bodies of constant specific heat whose fluid freezes, melts or boils between the ends."""
+    ctx = case.context(process)
+    for body in ctx.bodies if ctx is not None else ():
+        found = adequacy.regions(case, process, body) if is_incompressible(case, body) else None
+        if found is not None and found[0].side != found[1].side:
+            words = [adequacy.REGIONS[end.side] for end in found]
+            shown = [case.show(f"states/{end.state}/{body}/temperature", end.temperature) for end in found]
+            yield Raised(
+                f"{case.record.bodies[body].substance} is {words[0]} at {shown[0]} and {words[1]} at {shown[1]}, and "
+                f"{body} is calculated with one specific heat and no latent heat.",
+                quantity=f"processes/{process}",
+                place=next(p.place for p in case.record.processes if p.id == process),
+                suggestion="Use the model `real fluid`, or put the latent heat into the balance.",
+            )
+
+
 def constants_unlike(case: Case, body: str) -> Yielded:
     """Yield stated constants that are not those of the named fluid."""
     for check in adequacy.constants_of_substance(case, body):
@@ -282,6 +299,16 @@ RULES: Final[tuple[Rule, ...]] = (
         "The record agrees with its own constant and not with the substance.",
         OWN_EQUATION,
         when=constant_heat_process,
+    ),
+    Rule(
+        "latent-heat-left-out",
+        phase_crossed,
+        Scope.PROCESS,
+        "model adequacy",
+        Grade.DISCREPANCY,
+        "A fluid of constant specific heat freezes, melts or boils between the ends of a process.",
+        "Melting takes up as much energy as warming by some 80 K, and evaporation far more.",
+        OWN_EQUATION,
     ),
     Rule(
         "constants-unlike-substance",

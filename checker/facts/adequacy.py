@@ -12,6 +12,7 @@ from checker.facts.twins import (
     IDEAL,
     REAL,
     blocked_in_pressure,
+    boiling_temperature,
     compressibility,
     energy_difference,
     is_condensed,
@@ -181,3 +182,42 @@ def blocked_in(case: Case, process: str, body: str) -> BlockedIn | None:
         return None
     pressure = blocked_in_pressure(real, first, last)
     return None if pressure is None else BlockedIn(ends[1], last - first, pressure)
+
+
+REGIONS: Final = {-1: "frozen", 0: "liquid", 1: "evaporated"}
+
+
+@dataclass(frozen=True, slots=True)
+class Region:
+    """Where the fluid of a condensed body is in a state: −1 frozen, 0 liquid, 1 evaporated; its temperature [K]."""
+
+    state: str
+    side: int
+    temperature: float
+
+
+def regions(case: Case, process: str, body: str) -> tuple[Region, Region] | None:
+    """Return where the real fluid of a body without phases is at both ends of a process; None where not known.
+
+    It is evaporated above the saturation temperature at its stated pressure, or above the critical temperature.
+    """
+    ctx, real = case.context(process), twin(case.record.bodies[body].substance, REAL)
+    if ctx is None or real is None or real.valid_range is None:
+        return None
+    found = [
+        Region(state, side, temperature)
+        for state in (ctx.process.from_state, ctx.process.to_state)
+        if (temperature := case.value(f"states/{state}/{body}/temperature")) is not None
+        and (side := _side(case, real, f"states/{state}/{body}", temperature)) is not None
+    ]
+    return (found[0], found[1]) if len(found) == 2 else None
+
+
+def _side(case: Case, real: Substance, base: str, temperature: float) -> int | None:
+    slack, pressure = case.basis.allowances[Allowance.TEMPERATURE], case.value(f"{base}/pressure")
+    if real.valid_range is None or real.critical_point is None:
+        return None
+    if temperature < real.valid_range.temperature_min - slack:
+        return -1
+    boiling = boiling_temperature(real, pressure) or real.critical_point[0]
+    return int(temperature > boiling + slack)

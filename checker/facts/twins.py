@@ -59,6 +59,16 @@ def saturation_pressure(real: Substance, temperature: float) -> float | None:
         return None
 
 
+def boiling_temperature(real: Substance, pressure: float | None) -> float | None:
+    """Return the bubble temperature [K]; None without a pressure and where there is no saturation line."""
+    if pressure is None:
+        return None
+    try:
+        return real.saturation({"pressure": pressure})[0].temperature
+    except NotEvaluable:
+        return None
+
+
 def is_condensed(real: Substance, temperature: float, pressure: float) -> bool:
     """Say whether the real fluid is liquid (or solid) where a gas is assumed."""
     vapour = saturation_pressure(real, temperature)
