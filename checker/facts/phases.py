@@ -6,6 +6,7 @@ from dataclasses import dataclass
 from typing import Final
 
 from checker.case import Case
+from checker.facts.twins import is_gas, is_incompressible
 from checker.outcomes import NotEvaluable
 from checker.problems import Place
 from checker.submission import Role
@@ -14,6 +15,9 @@ from checker.vocabulary import Allowance
 
 DENSE: Final = (Phase.SUBCOOLED_LIQUID, Phase.SUPERCRITICAL)
 HOT: Final = (Phase.SUPERHEATED_VAPOUR, Phase.SUPERCRITICAL)
+GAS: Final = (Phase.SUPERHEATED_VAPOUR, Phase.SATURATED_VAPOUR, Phase.SUPERCRITICAL)
+CONDENSED: Final = (Phase.SUBCOOLED_LIQUID, Phase.SATURATED_LIQUID, Phase.SUPERCRITICAL, Phase.SOLID)
+"""What an ideal gas, and what a body of constant volume, may be said to be."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -38,14 +42,16 @@ def claims_of(case: Case, state: str, body: str) -> tuple[PhaseClaim, ...]:
 
 
 def possible_phases(case: Case, state: str, body: str) -> tuple[Phase, ...] | None:
-    """Return the phase of a state first, then others that cannot be told from it; None without phases.
+    """Return the phase of a state first, then others that cannot be told from it; None where no state is known.
 
     Above the critical temperature or the critical pressure alone, usage differs: there both words are accepted.
     """
     word = case.word(f"states/{state}/{body}/phase")
+    if word is None:
+        return _of_model(case, state, body)
     temperature, pressure = (case.value(f"states/{state}/{body}/{n}") for n in ("temperature", "pressure"))
     substance = case.plan.substances.get(body)
-    if word is None or substance is None or temperature is None or pressure is None:
+    if substance is None or temperature is None or pressure is None:
         return None
     own = Phase(word)
     quality = case.value(f"states/{state}/{body}/quality")
@@ -60,6 +66,15 @@ def possible_phases(case: Case, state: str, body: str) -> tuple[Phase, ...] | No
         ),
     )
     return tuple(dict.fromkeys((own, *others)))
+
+
+def _of_model(case: Case, state: str, body: str) -> tuple[Phase, ...] | None:
+    """Return the phases that a model without saturation stands for: a gas, or a liquid or solid."""
+    if case.value(f"states/{state}/{body}/temperature") is None:
+        return None
+    if is_incompressible(case, body):
+        return CONDENSED
+    return GAS if is_gas(case, body) else None
 
 
 def _around_critical(substance: Substance, temperature: float, pressure: float) -> tuple[Phase, ...]:

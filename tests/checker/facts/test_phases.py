@@ -56,17 +56,32 @@ def test_a_state_has_its_phase_and_those_it_cannot_be_told_from(
         assert found == (first,)
 
 
-def test_a_model_without_phases_has_none() -> None:
-    """A gas with constant specific heats has no phase to be held against."""
-    record = _water(temperature="400 K", pressure="1 bar")
-    body = {"substance": "Steam", "model": "constant specific heat"}
-    constants = {"mass": "1 kg", "gas_constant": "0.46 kJ/(kg·K)", "cv": "1.4 kJ/(kg·K)"}
-    record["bodies"]["water"] = {**body, "inputs": constants}
-    assert possible_phases(case(record), "now", "water") is None
-
-
 def test_a_claim_knows_where_it_stands() -> None:
     """A phase among the results is placed there."""
     (claim,) = claims_of(case(_water(temperature="150 °C", quality="0.50")), "now", "water")
     assert claim.phase is Phase.WET_VAPOUR
     assert claim.place[-2:] == ("results", "phase")
+
+
+@pytest.mark.parametrize(
+    ("constants", "allowed", "excluded"),
+    [
+        (
+            {"cv": "0.718 kJ/(kg·K)", "gas_constant": "0.287 kJ/(kg·K)"},
+            Phase.SUPERHEATED_VAPOUR,
+            Phase.WET_VAPOUR,
+        ),
+        ({"specific_heat": "4.18 kJ/(kg·K)"}, Phase.SUBCOOLED_LIQUID, Phase.SUPERHEATED_VAPOUR),
+        ({"specific_heat": "0.46 kJ/(kg·K)"}, Phase.SOLID, Phase.WET_VAPOUR),
+    ],
+)
+def test_a_model_of_one_phase_stands_for_some_phases_only(
+    constants: dict[str, str], allowed: Phase, excluded: Phase
+) -> None:
+    """A gas is no wet vapour, and a liquid or solid of constant volume is no vapour at all."""
+    record = _water(temperature="300 K", pressure="1.000 bar")
+    record["bodies"]["water"].update(model="constant specific heat", inputs={"mass": "1 kg", **constants})
+    found = possible_phases(case(record), "now", "water")
+    assert found is not None
+    assert allowed in found
+    assert excluded not in found
