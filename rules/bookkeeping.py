@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections import defaultdict
+from itertools import pairwise
 from typing import Final
 
 from checker.case import Case, Raised, Yielded
@@ -139,6 +140,40 @@ def has_inputs(case: Case, _: str) -> bool:
     return any(True for _ in inputs(case))
 
 
+def sequence_broken(case: Case) -> Yielded:
+    """Yield sequences of which one process does not begin where the one before it ends."""
+    processes = {process.id: process for process in case.record.processes}
+    for sequence in case.record.sequences:
+        known = [processes[name] for name in sequence.processes if name in processes]
+        for before, after in pairwise(known):
+            if before.to_state != after.from_state:
+                yield Raised(
+                    f"In the sequence {sequence.id} {before.id} ends in state {before.to_state}, and {after.id} begins "
+                    f"in state {after.from_state}.",
+                    quantity=f"sequences/{sequence.id}",
+                    place=sequence.place,
+                    suggestion="List the processes in the order in which they follow one another.",
+                )
+
+
+def link_to_other(case: Case) -> Yielded:
+    """Yield states taken over from a body of another substance or model."""
+    for (state, body), found in case.record.body_states.items():
+        if found.same_as is None:
+            continue
+        _, record, _, _, name = found.same_as.split("/")
+        home = case if record == case.record.id else case.others.get(record)
+        other, own = home.record.bodies.get(name) if home else None, case.record.bodies[body]
+        if other is not None and (other.substance, other.model) != (own.substance, own.model):
+            yield Raised(
+                f"State {state} of {body} ({own.substance}, {own.model}) is taken from {name} ({other.substance}, "
+                f"{other.model}) of {record}.",
+                quantity=f"states/{state}/{body}",
+                place=found.place,
+                suggestion="Link states of one substance and model only; state T and v where they alone are meant.",
+            )
+
+
 RULES: Final[tuple[Rule, ...]] = (
     Rule(
         "package-not-identified",
@@ -217,6 +252,24 @@ RULES: Final[tuple[Rule, ...]] = (
         "A result is written with so few digits that its agreement says little.",
         "A wrong value would round to the same text.",
         "half-width of the last digit, GUM (JCGM 100:2008), 4.3.7",
+    ),
+    Rule(
+        "sequence-broken",
+        sequence_broken,
+        Scope.RECORD,
+        "bookkeeping",
+        Grade.QUERY,
+        "A process of a sequence does not begin where the one before it ends.",
+        "The totals of a sequence are those of one way from its first state to its last.",
+    ),
+    Rule(
+        "linked-to-other-substance",
+        link_to_other,
+        Scope.RECORD,
+        "bookkeeping",
+        Grade.DISCREPANCY,
+        "A state is declared the same as that of a body of another substance or model.",
+        "Temperature and specific volume of one substance mean another state of another.",
     ),
     Rule(
         "body-missing-in-state",
