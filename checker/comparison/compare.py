@@ -16,6 +16,7 @@ from checker.outcomes import NotEvaluable
 from checker.sheet.keys import again, given
 from checker.sheet.step import Found, Sheet, Values
 from checker.submission import Record, Role, Statement
+from checker.vocabulary import Allowance
 
 ILL_CONDITIONED = 0.10
 """Largest part of its reference quantity that open input digits may move a result (design, section 6)."""
@@ -135,8 +136,9 @@ def _compare(
     shift = shifts.get(statement.pointer, NO_SHIFT)
     independent = _value_of(key, sheet, values, shift)
     stated = statement.value - shift.value
-    half_width, k = _half_width(statement), basis.coverage_factor
+    k = basis.coverage_factor
     size = independent if isinstance(independent, float) else stated
+    half_width = _half_width(statement, references.reference(key, size))
     allowance = references.allowance(key, size)
     propagated = moves.uncertainty.get(key, 0.0)
     tolerance = allowance + _expanded(half_width, propagated, k)
@@ -162,10 +164,18 @@ def _compare(
     return _judged(bare, references, key in moves.broken)
 
 
-def _half_width(statement: Statement) -> float:
-    """Return the half-width that counts for the tolerance: inputs are exact as written unless they carry ±."""
-    exact = statement.role is Role.INPUT and statement.quantity.plus_minus is None
-    return 0.0 if exact else statement.quantity.half_width
+def _half_width(statement: Statement, reference: float) -> float:
+    """Return the half-width that counts for the tolerance.
+
+    Inputs are exact as written unless they carry ±. A zero, and a quality or efficiency, whose digits are coarser
+    than a tenth of the reference quantity is taken as written too: it is the claim of nothing, or of all.
+    """
+    quantity = statement.quantity
+    if quantity.plus_minus is not None:
+        return quantity.half_width
+    exact = quantity.value == 0.0 or statement.term.allowance is Allowance.FRACTION
+    coarse = quantity.half_width > ILL_CONDITIONED * reference
+    return 0.0 if statement.role is Role.INPUT or (exact and coarse) else quantity.half_width
 
 
 def _expanded(half_width: float, propagated: float, k: float) -> float:

@@ -239,3 +239,37 @@ def test_a_linked_mass_is_held_against_an_own_one():
     other["bodies"]["gas"]["inputs"]["mass"] = "0.1100 kg"
     found = cases(gas_bottle(), other)["other"]
     assert compared(found, "bodies/gas/mass").outcome is Outcome.WRONG
+
+
+@pytest.mark.parametrize(
+    ("text", "explained"), [("0 kJ/K", True), ("0.0 kJ/K", True), ("0.00 kJ/K", False), ("0.000 kJ/K", False)]
+)
+def test_a_zero_is_the_claim_of_nothing(text, explained):
+    """S_gen of 0.0204 kJ/K is not nothing; digits coarser than a tenth of ΔS = 0.0896 kJ/K may hide it."""
+    c = compared(case(gas_bottle({"entropy_generation": text})), SGEN)
+    assert (c.outcome, c.explained_by_digits) == (Outcome.WRONG, explained)
+
+
+def test_a_zero_that_is_nothing_agrees_however_it_is_written():
+    """No work is done at constant volume."""
+    c = compared(case(gas_bottle({"boundary_work": "0 kJ"})), "processes/warming/boundary_work")
+    assert c.outcome is Outcome.AGREES
+
+
+@pytest.mark.parametrize(("text", "outcome"), [("1", Outcome.WRONG), ("0.5", Outcome.AGREES)])
+def test_a_quality_of_one_is_all_vapour(text, outcome):
+    """x = 0.525 is half-way, and no rounding makes it 1."""
+    record = {
+        "id": "tank",
+        "bodies": {"water": {"substance": "Water", "model": "real fluid", "inputs": {"mass": "1.000 kg"}}},
+        "states": {
+            "now": {
+                "water": {
+                    "inputs": {"temperature": "100.0 °C", "specific_volume": "0.8790 m³/kg"},
+                    "results": {"quality": text},
+                }
+            }
+        },
+        "processes": [],
+    }
+    assert compared(case(record), "states/now/water/quality").outcome is outcome
