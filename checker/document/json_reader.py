@@ -165,7 +165,9 @@ class _Reader:
             text = json.loads(text) if "\\" in text else text[1:-1]
         if token.kind == "not-finite":
             self.builder.not_a_number(text, position)
-        self.builder.scalar(text, position, plain=token.kind != "string", null=token.text == "null")
+        is_text = token.kind == "string"
+        verbatim = len(token.text) == len(text) + 2 * is_text
+        self.builder.scalar(text, position, plain=not is_text, null=token.text == "null", verbatim=verbatim)
 
     def _broken(self, at: int) -> _Broken:
         """Return the syntax problem at an offset, with advice by what stands there."""

@@ -17,21 +17,27 @@ class Position:
 
 @dataclass(frozen=True, slots=True)
 class Scalar:
-    """A scalar: its text as written (trailing zeros kept). ``plain`` is false for quoted text."""
+    """A scalar: its text as written (trailing zeros kept). ``plain`` is false for quoted text.
+
+    ``verbatim`` is false where the file shows other characters than the text has, as for escapes and text over
+    several lines: then an offset into the text is no column of the file.
+    """
 
     text: str
     position: Position
     plain: bool = True
     null: bool = False
+    verbatim: bool = True
 
 
 @dataclass(frozen=True, slots=True)
 class Entry:
-    """A key with its value."""
+    """A key with its value. ``key_plain`` is false for a quoted key."""
 
     key: str
     key_position: Position
     value: Node
+    key_plain: bool = True
 
 
 @dataclass(frozen=True, slots=True)
@@ -68,6 +74,13 @@ class Document:
         for part in place:
             node = child(node, part)
         return node
+
+    def entry(self, place: Place) -> Entry | None:
+        """Return the key at ``place`` with its value, or None."""
+        parent = self.node(place[:-1])
+        if not isinstance(parent, Mapping) or not place:
+            return None
+        return next((entry for entry in parent.entries if entry.key == place[-1]), None)
 
     def position(self, place: Place, at_key: bool = False) -> Position:
         """Return the position of the value (or key) at ``place``; of the nearest parent where missing."""

@@ -38,6 +38,7 @@ class _Frame:
     keys: dict[str, Position] = field(default_factory=dict)
     key: str | None = None
     key_position: Position | None = None
+    key_plain: bool = True
     drop: bool = False
 
     @property
@@ -105,7 +106,7 @@ class TreeBuilder:
         else:
             self._deliver(Mapping(tuple(frame.entries), frame.position))
 
-    def scalar(self, text: str, position: Position, plain: bool, null: bool) -> None:
+    def scalar(self, text: str, position: Position, plain: bool, null: bool, verbatim: bool = True) -> None:
         """Take a key or a value."""
         self._counted()
         if self._skipped:
@@ -117,7 +118,7 @@ class TreeBuilder:
         if self._stack and self._stack[-1].wants_key:
             self._key(self._stack[-1], text, position, plain)
         else:
-            self._deliver(Scalar(text, position, plain, null))
+            self._deliver(Scalar(text, position, plain, null, verbatim))
 
     def refuse(self, message: str, position: Position, suggestion: str, lost: bool) -> None:
         """Report an alias, an anchor or a tag at the next value."""
@@ -149,7 +150,7 @@ class TreeBuilder:
 
     def _key(self, frame: _Frame, text: str, position: Position, plain: bool) -> None:
         """Take a key; what stands under a repeated key or a merge key is left out."""
-        frame.key, frame.key_position, frame.drop = text, position, False
+        frame.key, frame.key_position, frame.key_plain, frame.drop = text, position, plain, False
         if text == "<<" and plain:
             self._report(
                 "alias-used",
@@ -183,7 +184,7 @@ class TreeBuilder:
             frame.key, frame.key_position, frame.drop = "", frame.position, True
         else:
             if node is not None and not frame.drop:
-                frame.entries.append(Entry(frame.key, frame.key_position, node))
+                frame.entries.append(Entry(frame.key, frame.key_position, node, frame.key_plain))
                 frame.keys[frame.key] = frame.key_position
             frame.key = frame.key_position = None
 

@@ -70,9 +70,18 @@ def _node(event: yaml.NodeEvent, builder: TreeBuilder) -> None:
         )
     if isinstance(event, yaml.ScalarEvent):
         plain = not event.style
-        builder.scalar(event.value, position, plain, plain and event.value in _NULLS)
+        builder.scalar(event.value, position, plain, plain and event.value in _NULLS, _verbatim(event))
     else:
         builder.begin(position, isinstance(event, yaml.MappingStartEvent))
+
+
+def _verbatim(event: yaml.ScalarEvent) -> bool:
+    """Whether the text stands in the file character by character, on one line."""
+    start, end = event.start_mark, event.end_mark
+    quotes = 2 if event.style else 0
+    if start is None or end is None or start.line != end.line:
+        return False
+    return bool(end.index - start.index == len(event.value) + quotes)
 
 
 def _position(event: yaml.Event) -> Position:

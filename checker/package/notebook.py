@@ -55,7 +55,7 @@ class Notebook:
         """Note a problem.
 
         A suggestion that takes a search may be a function: it is called only for problems that are told.
-        ``offset`` counts in the text of the value; quotes before it are added here.
+        ``offset`` counts in the text of the value (or key); quotes before it are added here.
         """
         self.fatal = self.fatal or fatal
         whole = (*self.root, *place)
@@ -66,7 +66,6 @@ class Notebook:
             return
         node = self.document.node(whole)
         text = node.text if isinstance(node, Scalar) else None
-        quoted = isinstance(node, Scalar) and not node.plain
         self.problems.append(
             Problem(
                 kind,
@@ -78,9 +77,19 @@ class Notebook:
                 stated=None if text is None else shortened(text),
                 suggestion=suggestion if isinstance(suggestion, str) else suggestion(),
                 fatal=fatal,
-                offset=offset + quoted if offset else 0,
+                offset=self._columns(whole, at_key, offset) if offset else 0,
             )
         )
+
+    def _columns(self, place: Place, at_key: bool, offset: int) -> int:
+        """Return an offset in a text as columns of the file; none where the file shows other characters."""
+        if at_key:
+            entry = self.document.entry(place)
+            return offset + (entry is not None and not entry.key_plain)
+        node = self.document.node(place)
+        if not isinstance(node, Scalar):
+            return 0
+        return offset + (not node.plain) if node.verbatim else 0
 
     def closed(self) -> tuple[Problem, ...]:
         """Return the problems, with a last one for those that were only counted."""

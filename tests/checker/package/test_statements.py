@@ -282,3 +282,28 @@ def test_places_are_of_the_document(read: Read) -> None:
         node = result.document.node(place)
         assert node is not None
         assert node.text == statement.quantity.text
+
+
+@pytest.mark.parametrize(
+    ("written", "column"),
+    [
+        ("'150 barr'", len("'150 ")),
+        ("150\n          barr", 0),
+        ('"150\n          barr"', 0),
+        ('"\\u0031\\u0035\\u0030 barr"', 0),
+        ("'150 ''barr'", 0),
+    ],
+)
+def test_offsets_never_leave_the_text(read: Read, written: str, column: int) -> None:
+    """Where the file shows other characters than the text has, the text as a whole is meant."""
+    result = read(("pressure: 150 bar", f"pressure: {written}"))
+    (problem,) = result.problems
+    where, start = result.document.where(problem), result.document.position(problem.place)
+    assert (where.line, where.column) == (start.line, start.column + column)
+
+
+def test_offsets_are_inside_quoted_keys(read: Read) -> None:
+    """The column of a pointer's wrong part is right in a quoted key, as all keys of JSON are."""
+    result = read(("    limits:", "    sources: {'bodies/nitrogen/colour': photo}\n    limits:"))
+    (problem,) = result.problems
+    assert result.document.where(problem).column == len("    sources: {'bodies/nitrogen/") + 1
