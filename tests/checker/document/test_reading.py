@@ -145,9 +145,9 @@ HOSTILE = {
 @pytest.mark.parametrize("file", ["x.yaml", "x.json"])
 def test_hostile_files_return_at_once(name: str, file: str) -> None:
     """Bombs, nesting and sheer size cost at most a few seconds and raise nothing."""
-    start = time.perf_counter()
+    start = time.process_time()
     document = read_document(HOSTILE[name], file)
-    assert time.perf_counter() - start < 5
+    assert time.process_time() - start < 5
     assert isinstance(document, Document)
     assert len(document.problems) <= 530
 
