@@ -4,14 +4,15 @@ from __future__ import annotations
 
 import re
 from collections.abc import Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 from typing import Final
 
 from checker.findings import Amount
 from checker.quantity import unit as unit_of
+from checker.quantity.dimensions import ENERGY, ENTROPY, Dimension
 from checker.quantity.types import Quantity, Scale
 from checker.sheet.keys import plain, term_for
-from checker.sheet.step import Sheet
+from checker.sheet.step import Sheet, Values
 from checker.submission import Record
 
 
@@ -30,6 +31,8 @@ def format_number(value: float, digits: int = 5) -> str:
     return text.replace("-", "−")
 
 
+NOISE: Final = 1e-10
+"""Energies and entropies below this part of the record's largest are rounding noise of the arithmetic."""
 GAUGE_MARK: Final = re.compile(r"\s*\(g\)$|(?<=bar|psi)g$")
 """The mark of a gauge pressure at the end of a unit text."""
 
@@ -40,14 +43,17 @@ class Display:
 
     units: Mapping[str, tuple[Quantity, int]]
     work_sign: int
+    noise: Mapping[Dimension, float] = field(default_factory=dict)
 
     def amount(self, key: str, value: float) -> Amount:
-        """Return a calculated value as an amount."""
+        """Return a calculated value as an amount; what is only rounding noise is zero."""
+        term = term_for(key)
+        if term is not None and abs(value) <= self.noise.get(term.dimension, 0.0):
+            value = 0.0
         found = self.units.get(plain(key))
         if found is not None:
             quantity, sign = found
             return _amount(quantity.number_of(sign * value), quantity.unit.text)
-        term = term_for(key)
         if term is None:
             return _amount(value, "")
         sign = self.work_sign if term.work_sign else 1
@@ -99,7 +105,7 @@ def stated_amount(quantity: Quantity) -> Amount:
     return Amount(quantity.number_of(quantity.value), quantity.unit.text, quantity.text)
 
 
-def display_of(record: Record, sheet: Sheet) -> Display:
+def display_of(record: Record, sheet: Sheet, values: Values) -> Display:
     """Return the display of a record: for each quantity the unit of its first statement.
 
     Where a property is stated for some states only, the unit used for that property elsewhere in the record is
@@ -119,7 +125,17 @@ def display_of(record: Record, sheet: Sheet) -> Display:
             quantity, term = families.get(_family(pointer)), term_for(key)
             if quantity is not None and term is not None and pointer not in units:
                 units[pointer] = (quantity, record.work_sign if term.work_sign else 1)
-    return Display(units, record.work_sign)
+    return Display(units, record.work_sign, _noise(values))
+
+
+def _noise(values: Values) -> dict[Dimension, float]:
+    """Return the size of rounding noise in energies and entropies of a record. [J], [J/K]"""
+    largest: dict[Dimension, float] = {}
+    for key, value in values.items():
+        term = term_for(key)
+        if term is not None and isinstance(value, float) and term.dimension in (ENERGY, ENTROPY):
+            largest[term.dimension] = max(largest.get(term.dimension, 0.0), abs(value))
+    return {dimension: NOISE * size for dimension, size in largest.items()}
 
 
 def _family(pointer: str) -> str:

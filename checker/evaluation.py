@@ -29,7 +29,7 @@ def make_case(head: PackageHead, record: Record, basis: Basis, others: Mapping[s
     carried_leaves = {**plan.leaves.values, **_linked(plan, others, carried=True)}
     carried = carry(record, plan, carried_leaves, values, shifts)
     compared = compare_all(record, sheet, values, carried, moves, references, shifts, basis)
-    display = display_of(record, sheet)
+    display = display_of(record, sheet, values)
     by_key = _by_key(plan, record)
     return Case(
         head, record, plan, values, carried, moves, references, compared, display, basis, by_key, dict(others)

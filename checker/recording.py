@@ -165,7 +165,7 @@ def _cell(case: Case, pointer: str, name: str, compared: dict[str, Compared]) ->
 def _sheet_lines(case: Case) -> Iterator[SheetLine]:
     stated = {case.key(s.pointer): s for s in reversed(case.record.statements) if s.usable}
     for step in case.plan.sheet.steps:
-        if step.trivial or step.title.startswith(HIDDEN_STEPS):
+        if step.trivial or step.title.startswith(HIDDEN_STEPS) or _says_nothing(case, step):
             continue
         outputs = tuple(_sheet_value(case, key, stated) for key in step.outputs)
         yield SheetLine(
@@ -175,6 +175,15 @@ def _sheet_lines(case: Case) -> Iterator[SheetLine]:
             tuple(value for value in outputs if value.independent or value.stated),
             step.assumes or _failure(case, step),
         )
+
+
+def _says_nothing(case: Case, step: Step) -> bool:
+    """Say whether a step only confirms that no work is left over."""
+    key = step.outputs[0]
+    if not key.endswith("/work_residual"):
+        return False
+    value = case.value(key)
+    return value is not None and case.display.amount(key, value).value == 0.0
 
 
 def _failure(case: Case, step: Step) -> str:

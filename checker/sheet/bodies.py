@@ -150,7 +150,10 @@ def _state_steps(state: str, body: str) -> Iterator[Step]:
 def _exergy_parents(state: str, body: str) -> tuple[str, ...]:
     own = tuple(state_key(state, body, f"specific_{n}") for n in ("internal_energy", "volume", "entropy"))
     dead = tuple(f"dead/{body}/specific_{n}" for n in ("internal_energy", "volume", "entropy"))
-    motion = (clue(state_key(state, body, "velocity")), clue(state_key(state, body, "elevation")))
+    motion = (
+        clue(state_key(state, body, "velocity"), "exergy"),
+        clue(state_key(state, body, "elevation"), "exergy"),
+    )
     return (*own, *dead, *motion, given("surroundings/temperature"), given("surroundings/pressure"))
 
 
@@ -194,12 +197,15 @@ def dead_state_steps(record: Record, body: str, model: BodyModel) -> Iterator[St
             key = state_key(state, body, motion)
             if record.stated(key):
                 yield same_value(
-                    clue(key), key, f"{motion.capitalize()} of {body}, {state}", f"{motion} as found"
+                    clue(key, "exergy"),
+                    key,
+                    f"{motion.capitalize()} of {body}, {state}",
+                    f"{motion} as found",
                 )
             else:
                 yield Step(
                     f"{motion.capitalize()} of {body}, {state}",
-                    (clue(key),),
+                    (clue(key, "exergy"),),
                     (),
                     lambda: (0.0,),
                     f"{motion} not stated: 0",

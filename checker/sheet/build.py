@@ -165,7 +165,7 @@ class _Builder:
             body
         ):
             return
-        made = clue(f"{state_key(state, body, 'volume')}/body/specific_volume")
+        made = clue(state_key(state, body, "specific_volume"), "volume")
         self.candidates.append(
             Step(
                 f"Specific volume of {body}, {state}",

@@ -75,7 +75,7 @@ def path_clues(near: Neighbour) -> Iterator[tuple[Clue, Step | None]]:
 
 def _shifted(near: Neighbour, name: str, change: str, formula: str, process: str) -> tuple[Clue, Step]:
     sign = 1.0 if near.forward else -1.0
-    made = clue(f"{state_key(near.sought_state, near.body, name)}/{process}/{name}")
+    made = clue(state_key(near.sought_state, near.body, name), process)
     step = Step(
         f"{name.capitalize()} of {near.body}, {near.sought_state}",
         (made,),
@@ -91,7 +91,7 @@ def _energy_clue(near: Neighbour) -> tuple[Clue, Step]:
     """Return u of the sought state where Q and W are known: u₂ = u₁ + (Q − W − ΔKE − ΔPE)/m."""
     sign = 1.0 if near.forward else -1.0
     key = near.ctx.key
-    made = clue(f"{state_key(near.sought_state, near.body, 'temperature')}/{near.ctx.process.id}/energy")
+    made = clue(state_key(near.sought_state, near.body, "specific_internal_energy"), near.ctx.process.id)
     parents = (
         near.known("specific_internal_energy"),
         near.mass,
@@ -115,7 +115,7 @@ def _enthalpy_clue(near: Neighbour) -> tuple[Clue, Step]:
     """Return h of the sought state along a constant-pressure path: h₂ = h₁ + (Q − W_sh − W_el − ΔKE − ΔPE)/m."""
     sign = 1.0 if near.forward else -1.0
     key = near.ctx.key
-    made = clue(f"{state_key(near.sought_state, near.body, 'pressure')}/{near.ctx.process.id}/enthalpy")
+    made = clue(state_key(near.sought_state, near.body, "specific_enthalpy"), near.ctx.process.id)
     parents = (
         near.known("specific_enthalpy"),
         near.mass,

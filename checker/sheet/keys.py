@@ -114,9 +114,9 @@ def given(pointer: str) -> str:
     return f"given/{pointer}"
 
 
-def clue(pointer: str) -> str:
-    """Return the key of a value that helps to fix a state."""
-    return f"clue/{pointer}"
+def clue(pointer: str, source: str) -> str:
+    """Return the key of a value that helps to fix a state; ``source`` tells two ways to one property apart."""
+    return f"clue@{source}/{pointer}"
 
 
 def again(pointer: str) -> str:
@@ -145,9 +145,9 @@ def share_key(process: str, body: str, name: str) -> str:
 
 
 def plain(key: str) -> str:
-    """Return a key without its ``given/``, ``clue/``, ``link/`` or ``again/`` prefix."""
+    """Return a key without its ``given/``, ``clue@…/``, ``link/`` or ``again/`` prefix."""
     head, _, rest = key.partition("/")
-    return rest if head in {"given", "clue", "link", "dead", "again"} else key
+    return rest if head.partition("@")[0] in {"given", "clue", "link", "dead", "again"} else key
 
 
 @lru_cache(maxsize=4096)

@@ -166,7 +166,7 @@ def clue_steps(plan: StatePlan, mass: str) -> Iterator[tuple[Clue, Step]]:
     """
     base = f"states/{plan.state}/{plan.body}"
     density = f"{base}/density"
-    target = clue(f"{density}/specific_volume")
+    target = clue(f"{base}/specific_volume", "density")
     yield (
         Clue("specific_volume", target, stated=True),
         Step(
@@ -180,7 +180,7 @@ def clue_steps(plan: StatePlan, mass: str) -> Iterator[tuple[Clue, Step]]:
     )
     for total, specific in EXTENSIVE.items():
         source = f"{base}/{total}"
-        made = clue(f"{source}/{specific}")
+        made = clue(f"{base}/{specific}", total)
         yield (
             Clue(specific, made, stated=True),
             Step(
