@@ -80,9 +80,8 @@ def _raised(
     limit = limit_of(case, item)
     basis = f" ({limit.basis})" if limit.basis else ""
     bound = f"{margin.stands} the limit of {margin.bound.text}{basis}"
-    home, pointer = home_of(case, limit)
     return Raised(
-        words((home or case).show(pointer, margin.value), bound),
+        words(margin.shown, bound),
         quantity=f"limits/{item}",
         place=limit.place,
         grade=grade,

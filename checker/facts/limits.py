@@ -9,6 +9,7 @@ from typing import Final
 
 from checker.basis import Basis
 from checker.case import Case
+from checker.display import format_number
 from checker.quantity.types import Quantity
 from checker.submission import Limit
 
@@ -19,13 +20,21 @@ EXCEEDED: Final = ("exceeded", "not met")
 
 @dataclass(frozen=True, slots=True)
 class Margin:
-    """One bound of a limit: how far the quantity is inside it (negative: beyond), and its uncertainty. [SI]"""
+    """One bound of a limit: how far the quantity is inside it (negative: beyond), and its uncertainty. [SI]
+
+    ``value`` is in the originator's sign.
+    """
 
     word: str
     bound: Quantity
     value: float
     size: float
     uncertainty: float
+
+    @property
+    def shown(self) -> str:
+        """The quantity in the unit of its bound, so that both can be read side by side."""
+        return f"{format_number(self.bound.number_of(self.value))} {self.bound.unit.text}".strip()
 
     @property
     def stands(self) -> str:
@@ -71,7 +80,7 @@ def margins(case: Case, limit: Limit) -> Iterator[Margin]:
     for word, bound, side in (("at most", limit.at_most, 1.0), ("at least", limit.at_least, -1.0)):
         if bound is not None:
             uncertainty = math.hypot(home.uncertainty(pointer), _of_bound(bound, case.basis))
-            yield Margin(word, bound, value, side * (bound.value - sign * value), uncertainty)
+            yield Margin(word, bound, sign * value, side * (bound.value - sign * value), uncertainty)
 
 
 def _of_bound(bound: Quantity, basis: Basis) -> float:
