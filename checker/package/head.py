@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import replace
-from typing import Any
+from typing import Any, Final
 
 from checker.document.nodes import Document
 from checker.package.flatten.surroundings import read_surroundings
@@ -15,6 +15,8 @@ from checker.problems import Place
 from checker.submission import PackageHead, Statement
 
 _KEYS = ("package", "records")
+MAX_RECORDS: Final = 1000
+"""Most records of one package; a package has five to fifty, and its review a section for each."""
 
 
 def read_head(
@@ -56,4 +58,9 @@ def records_of(tree: dict[str, Any], notebook: Notebook) -> list[Any]:
         notebook.say("type-wrong", ("records",), "`records` should be a list of records.",
                      "Start each record with `- id: …`.", fatal=True)  # fmt: skip
         return []
-    return records
+    if len(records) > MAX_RECORDS:
+        message = (
+            f"The package has {len(records)} records; those after the first {MAX_RECORDS} were not read."
+        )
+        notebook.say("type-wrong", ("records", MAX_RECORDS), message, "Divide the package.", fatal=True)
+    return records[:MAX_RECORDS]
