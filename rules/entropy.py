@@ -5,7 +5,7 @@ from __future__ import annotations
 from collections.abc import Callable
 from typing import Final
 
-from checker.case import Case, Raised, Yielded
+from checker.case import Case, Raised, Unchecked, Yielded
 from checker.facts import balance, boundaries, cycles, stated
 from checker.facts.deviation import Deviation
 from checker.facts.spans import Crossing
@@ -36,6 +36,8 @@ def generation_with_surroundings_negative(case: Case, process: str) -> Yielded:
 def _below_zero(case: Case, process: str, name: str) -> Yielded:
     pointer = f"processes/{process}/{name}"
     found = balance.generation(case, process, name)
+    if found is None and name == "entropy_generation":
+        yield Unchecked(f"second law: processes/{process}", case.why_not(pointer))
     if found is not None and found.below:
         yield _impossible(case, process, pointer, found)
         return
@@ -193,6 +195,22 @@ def above_carnot(case: Case) -> Yielded:
                 )
 
 
+def rejects_no_heat(case: Case) -> Yielded:
+    """Yield a cycle that turns all its heat into work, where no entropy generation of a process says so."""
+    work = cycles.work_without_rejection(case)
+    processes = [process.id for process in case.record.processes]
+    generated = [balance.generation(case, process, "entropy_generation") for process in processes]
+    slack = max((balance.energy_allowance(case, process) for process in processes), default=0.0)
+    if work is not None and work > slack and not any(g is not None and g.below for g in generated):
+        yield Raised(
+            f"{case.show('results/net_work', work)} of net work is done by a cycle that rejects no heat.",
+            statement=next(iter(case.stated("results/net_work")), None),
+            quantity="results/net_work",
+            place=None if case.stated("results/net_work") else case.record.place,
+            suggestion="Find the process that gives heat off; it was left out, or taken as adiabatic.",
+        )
+
+
 RULES: Final[tuple[Rule, ...]] = (
     Rule(
         "generation-negative",
@@ -297,5 +315,15 @@ RULES: Final[tuple[Rule, ...]] = (
         "An efficiency or a coefficient of performance is higher than that of a reversible cycle.",
         "No cycle between these temperatures does it.",
         "Carnot's theorem",
+    ),
+    Rule(
+        "cycle-rejects-no-heat",
+        rejects_no_heat,
+        Scope.RECORD,
+        "entropy",
+        Grade.DISCREPANCY,
+        "A cycle does net work and rejects no heat.",
+        "It would turn heat into work without a place for the entropy that came with it.",
+        "Kelvin-Planck statement of the second law",
     ),
 )

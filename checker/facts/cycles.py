@@ -5,6 +5,7 @@ from __future__ import annotations
 from typing import Final
 
 from checker.case import Case
+from checker.facts.balance import energy_allowance
 from checker.facts.spans import crossings, temperatures
 from checker.sheet.cycles import is_cycle
 
@@ -33,6 +34,22 @@ def extreme_temperatures(case: Case) -> tuple[float, float] | None:
             elif crossing.heat < 0.0 and (place or own):
                 rejected.append(place or min(own))
     return (min(rejected), max(supplied)) if supplied and rejected else None
+
+
+def work_without_rejection(case: Case) -> float | None:
+    """Return the net work of a closed cycle of which no process gives off heat [J]; None where one does, or is open."""
+    if not closes(case):
+        return None
+    total = 0.0
+    for process in case.record.processes:
+        heat, work = (case.value(f"processes/{process.id}/{name}") for name in ("heat", "work"))
+        if heat is None or work is None:
+            return None
+        least = min([heat, *(crossing.heat for crossing in crossings(case, process))])
+        if least < -energy_allowance(case, process.id):
+            return None
+        total += work
+    return total
 
 
 def highest_efficiency(case: Case) -> float | None:

@@ -258,7 +258,7 @@ def test_a_zero_that_is_nothing_agrees_however_it_is_written():
 
 @pytest.mark.parametrize(("text", "outcome"), [("1", Outcome.WRONG), ("0.5", Outcome.AGREES)])
 def test_a_quality_of_one_is_all_vapour(text, outcome):
-    """x = 0.525 is half-way, and no rounding makes it 1."""
+    """A quality of 0.525 is half-way, and no rounding makes it 1."""
     record = {
         "id": "tank",
         "bodies": {"water": {"substance": "Water", "model": "real fluid", "inputs": {"mass": "1.000 kg"}}},
