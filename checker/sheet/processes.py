@@ -207,12 +207,21 @@ def _rates(ctx: ProcessContext) -> Iterator[Step]:
             yield balances.power_step(
                 f"{base}/mean_power", energy, ctx.duration_of(base), f"Mean power of {item.id}, {p}"
             )
+            if ctx.is_given(f"{base}/mean_power") and not ctx.is_given(f"{base}/duration"):
+                yield from _durations(p, energy, base, duration)
     source = ctx.power_source()
     if source is not None:
         yield balances.mean_power_step(process_key(p, "mean_power"), source, duration, f"Mean power, {p}")
         power = ctx.key("mean_power")
         if ctx.is_given(power):
             yield Step(f"Duration, {p}", (duration,), (source, given(power)), _duration, "t = E/P", "{0}/{1}")
+
+
+def _durations(process: str, energy: str, base: str, duration: str) -> Iterator[Step]:
+    """Yield how long a transfer of given mean power takes; without a duration of its own the process takes as long."""
+    for output in (f"{base}/duration", duration):
+        parents = (energy, given(f"{base}/mean_power"))
+        yield Step(f"Duration, {process}", (output,), parents, _duration, "t = E/P", "{0}/{1}")
 
 
 def _duration(energy: float, power: float) -> tuple[float]:

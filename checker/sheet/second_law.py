@@ -9,12 +9,16 @@ Second law for a closed system with several boundary temperatures.
 from __future__ import annotations
 
 from collections.abc import Iterator, Sequence
+from typing import Final
 
 from checker.outcomes import NotEvaluable
 from checker.sheet.balances import first_less_rest, less_text, sum_text, total
 from checker.sheet.keys import given, process_key, state_key
 from checker.sheet.step import Step
 from checker.submission import Process
+
+ONE_PLACE: Final = 0.3
+"""[K]: 298 K and 25 °C are written for one place (chosen, the default allowance of a temperature)."""
 
 
 def item_entropy_step(process: Process, item: str, energy: str) -> Step:
@@ -95,8 +99,8 @@ def reservoir_step(process: Process, item: str, energy: str, boundary: Sequence[
         )
 
     def at_surroundings(heat: float, ambient: float, *temperatures: float) -> tuple[float]:
-        leaves_warm = heat <= 0.0 and min(temperatures) >= ambient * (1.0 - 1e-12)
-        enters_cold = heat >= 0.0 and max(temperatures) <= ambient * (1.0 + 1e-12)
+        leaves_warm = heat <= 0.0 and min(temperatures) >= ambient - ONE_PLACE
+        enters_cold = heat >= 0.0 and max(temperatures) <= ambient + ONE_PLACE
         if not (leaves_warm or enters_cold):
             raise NotEvaluable(
                 f"the reservoir of heat transfer {item} is not stated, and it cannot be the surroundings",
