@@ -67,6 +67,14 @@ def isentropic_contradicted(case: Case, process: str) -> Yielded:
             )
 
 
+_SUPERFLUOUS: Final = "One of the two is superfluous: let the path find the state, or the states the path."
+_SPLIT: Final = "Correct the line, or make the way up to where the line begins a process of its own."
+
+
+def _begins(case: Case, process: str, state: str) -> bool:
+    return any(p.id == process and p.from_state == state for p in case.record.processes)
+
+
 def pressure_missed(
     kind: str, fact: Callable[[Case, str, str], paths.Missed | None], words: str
 ) -> RuleFunction:
@@ -84,7 +92,7 @@ def pressure_missed(
                 quantity=pointer,
                 place=_place(case, process, body, kind),
                 grade=found.deviation.grade,
-                suggestion="One of the two is superfluous: let the path find the state, or the states the path.",
+                suggestion=_SPLIT if _begins(case, process, found.state) else _SUPERFLUOUS,
             )
 
     return end_off_the_path

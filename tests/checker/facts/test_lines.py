@@ -4,8 +4,9 @@ from typing import Any
 
 import pytest
 
+from checker import review
 from checker.facts.paths import line_pressure
-from tests.checker.cases import case, gas_bottle
+from tests.checker.cases import case, gas_bottle, package
 
 POINTS = [
     {"pressure": "500.0 kPa", "volume": "0.12462 m³"},
@@ -41,3 +42,12 @@ def test_a_first_state_beside_the_line_is_seen():
     assert found is not None
     assert (found.state, found.deviation.beyond) == ("cold", True)
     assert found.on_path == pytest.approx(540e3, rel=1e-9)
+
+
+def test_where_the_line_begins_later_the_way_to_it_is_asked_for():
+    """A spring that is met after some way: the first state is not on its line, and the process is to be split."""
+    record = on_line("600.0 kPa", "504.4 K", **SPRING, **{**CONTACT, "pressure_at_contact": "530.0 kPa"})
+    record["states"]["hot"]["gas"]["inputs"]["temperature"] = "490.0 K"
+    (found,) = [f for f in review(package(record)).findings if f.rule == "line-missed"]
+    assert found.quantity == "states/cold/gas/pressure"
+    assert "process of its own" in found.suggestion
