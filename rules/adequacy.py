@@ -19,6 +19,8 @@ from rules.state import report_gaps
 
 FAR: Final = 10.0
 """So many allowances away, a gas is no ideal gas and the model must be changed (chosen)."""
+NOTED: Final = 4.0
+"""Up to so many allowances a constant specific heat is noted; beyond them it is asked about (chosen)."""
 OWN_EQUATION: Final = "equation of state of the named fluid, as printed with the models of the record"
 
 
@@ -91,7 +93,7 @@ def heat_not_constant(case: Case, process: str) -> Yielded:
             yield Unchecked(
                 f"specific heat of {body}, {process}", "its temperatures are not those of one phase"
             )
-        elif abs(check.constant - check.better) > check.allowed:
+        elif (off := abs(check.constant - check.better)) > check.allowed:
             pointer = f"processes/{process}/internal_energy_change"
             values = [case.show(pointer, value) for value in (check.constant, check.better)]
             yield Raised(
@@ -99,6 +101,7 @@ def heat_not_constant(case: Case, process: str) -> Yielded:
                 f"{case.record.bodies[body].substance} ({check.model}) over the temperatures of the process.",
                 quantity=pointer,
                 place=case.record.bodies[body].place,
+                grade=Grade.REMARK if off <= NOTED * check.allowed else Grade.QUERY,
                 suggestion="Use a mean value for this span, or the model `ideal gas` or `real fluid`.",
             )
 
@@ -295,7 +298,7 @@ RULES: Final[tuple[Rule, ...]] = (
         Scope.PROCESS,
         "model adequacy",
         Grade.QUERY,
-        "The change of internal energy moves by more than the allowance when the specific heat follows temperature.",
+        "ΔU moves by more than the allowance (a remark; beyond four of them a query) when c follows temperature.",
         "The record agrees with its own constant and not with the substance.",
         OWN_EQUATION,
         when=constant_heat_process,

@@ -16,7 +16,7 @@ FORM = [
     ("part-missing", "- id: warming\n        from: cold\n", "- «id: warming\n", True, "`from` is missing in a process"),
     ("part-missing", "  - id: bottle\n    bodies:", "  - «bodies:", True, "`id` is missing in a record"),
     ("part-missing", "{substance: Nitrogen, ", "«{", True, "`substance` is missing in a body"),
-    ("part-missing", "path: constant volume", "path: «{exponent: 1.3}", True, "`kind` is missing in a path with parameters"),
+    ("part-missing", "path: constant volume", "path: «{exponent: 1.3}", True, "`kind` is missing in a path"),
     ("part-missing", "{id: wall, ", "«{", True, "`id` is missing in a heat transfer"),
     ("part-missing", "limits: [{id: working, quantity: states/hot/nitrogen/pressure, at_most: 200 bar, ",
      "limits: [«{id: working, quantity: states/hot/nitrogen/pressure, ", False, "neither `at_most` nor `at_least`"),
