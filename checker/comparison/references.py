@@ -38,9 +38,21 @@ NOTHING: Final = 1e-6
 """Terms of a balance that are less than this part of what the bodies hold are zero but for arithmetic (chosen)."""
 
 
+SEQUENCES: Final = "sequences"
+
+
 def _without_noise(terms: dict[str, float], held: float) -> dict[str, float]:
     """Return the largest term of each balance, without those that are zero but for the arithmetic."""
     return {process: size for process, size in terms.items() if size > NOTHING * held}
+
+
+def _balance_of(key: str) -> str:
+    """Return the process or the sequence of a key, such as ``processes/warming``."""
+    return "/".join(key.split("/", 2)[:2])
+
+
+def _largest(terms: dict[str, float], default: float) -> float:
+    return max((size for name, size in terms.items() if not name.startswith(SEQUENCES)), default=default)
 
 
 class References:
@@ -55,18 +67,18 @@ class References:
         energy, entropy = self._held()
         self._energies = _without_noise(self._energies, energy)
         self._entropies = _without_noise(self._entropies, entropy)
-        self._largest_energy = max(self._energies.values(), default=energy)
-        self._largest_entropy = max(self._entropies.values(), default=entropy)
+        self._largest_energy = _largest(self._energies, energy)
+        self._largest_entropy = _largest(self._entropies, entropy)
 
     def _collect(self, key: str, value: object) -> None:
         parts = key.split("/")
-        if parts[0] != "processes" or len(parts) < 3 or not isinstance(value, float):
+        if parts[0] not in ("processes", SEQUENCES) or len(parts) < 3 or not isinstance(value, float):
             return
-        name = parts[-1]
+        name, balance = parts[-1], _balance_of(key)
         if name in ENERGY_TERMS or name in EXERGY_TERMS or (name == "energy" and len(parts) == 5):
-            self._energies[parts[1]] = max(self._energies.get(parts[1], 0.0), abs(value))
+            self._energies[balance] = max(self._energies.get(balance, 0.0), abs(value))
         elif name in ENTROPY_TERMS or name in ITEM_ENTROPY:
-            self._entropies[parts[1]] = max(self._entropies.get(parts[1], 0.0), abs(value))
+            self._entropies[balance] = max(self._entropies.get(balance, 0.0), abs(value))
 
     def _held(self) -> tuple[float, float]:
         """Return the largest m·p·v [J] and m·p·v/T [J/K] of a state: what a gas holds, whatever the datum."""
@@ -93,11 +105,11 @@ class References:
             return FRACTION_REFERENCE
         if kind is Allowance.PROPERTY_CHANGE:
             return self._property_change(key, value)
-        process = key.split("/")[1] if key.startswith("processes/") else ""
+        balance = _balance_of(key)
         if kind is Allowance.ENERGY:
-            return self._of_balance(self._energies, process, self._largest_energy, value)
+            return self._of_balance(self._energies, balance, self._largest_energy, value)
         if kind is Allowance.ENTROPY:
-            return self._of_balance(self._entropies, process, self._largest_entropy, value)
+            return self._of_balance(self._entropies, balance, self._largest_entropy, value)
         if key.rsplit("/", 1)[-1] in PER_MASS:
             return self._per_mass(key, value)
         return abs(value)
@@ -111,8 +123,12 @@ class References:
             return allowed
         return allowed * self.reference(key, value)
 
-    def _of_balance(self, terms: dict[str, float], process: str, largest: float, value: float) -> float:
-        return terms.get(process, 0.0) or largest or abs(value)
+    def _of_balance(self, terms: dict[str, float], balance: str, largest: float, value: float) -> float:
+        """Return the largest term of a balance; of a sequence's own, and of what it is the sum of."""
+        own = terms.get(balance, 0.0)
+        if balance.startswith(SEQUENCES):
+            own = max(own, largest)
+        return own or largest or abs(value)
 
     def _per_mass(self, key: str, value: float) -> float:
         """Return the balance's reference scaled to the per-mass value."""

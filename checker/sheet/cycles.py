@@ -3,10 +3,12 @@
 from __future__ import annotations
 
 from collections.abc import Iterator, Sequence
+from typing import Final
 
 from checker.outcomes import NotEvaluable
 from checker.sheet.balances import sum_text, total
 from checker.sheet.context import ProcessContext
+from checker.sheet.keys import given
 from checker.sheet.step import Step
 from checker.submission import Record, Role
 
@@ -30,6 +32,7 @@ SUMS = (
     "temperature_change",
     "duration",
 )
+WITH_SURROUNDINGS: Final = "entropy_generation_with_surroundings"
 
 
 def is_cycle(record: Record) -> bool:
@@ -108,6 +111,8 @@ def sequence_steps(record: Record, contexts: Sequence[ProcessContext]) -> Iterat
         if any(s.pointer.startswith(f"{base}/") and s.role is Role.INPUT for s in record.statements):
             continue
         members = [by_id[name] for name in sequence.processes if name in by_id]
+        if record.stated(f"{base}/{WITH_SURROUNDINGS}"):
+            yield _destruction_with_surroundings(sequence.id)
         for name in SUMS:
             yield Step(
                 f"{name.replace('_', ' ').capitalize()}, sequence {sequence.id}",
@@ -117,3 +122,16 @@ def sequence_steps(record: Record, contexts: Sequence[ProcessContext]) -> Iterat
                 "sum over the sequence",
                 sum_text(len(members)),
             )
+
+
+def _destruction_with_surroundings(sequence: str) -> Step:
+    """Return X_d = T₀·S_gen,tot of a sequence that claims the generation with surroundings."""
+    base = f"sequences/{sequence}"
+    return Step(
+        f"Exergy destruction, sequence {sequence}",
+        (f"{base}/exergy_destruction",),
+        (given("surroundings/temperature"), f"{base}/{WITH_SURROUNDINGS}"),
+        lambda ambient, generated: (ambient * generated,),
+        "X_d = T₀·S_gen,tot",
+        "{0}·{1}",
+    )

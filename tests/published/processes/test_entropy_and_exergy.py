@@ -12,7 +12,16 @@ from typing import Any, Final
 import pytest
 from scipy.integrate import quad
 
-from tests.published.processes.calculation import Calculated, heat, matter, one_change, work
+from tests.published.processes.calculation import (
+    Calculated,
+    calculate,
+    heat,
+    matter,
+    one_change,
+    process,
+    quantities,
+    work,
+)
 
 pytestmark = pytest.mark.published
 
@@ -152,3 +161,23 @@ def test_a_process_without_heat_has_no_entropy_transfer() -> None:
     assert found.process("entropy_generation") == pytest.approx(
         MASS * CAPACITY * math.log(301.0 / 300.0), rel=1e-10
     )
+
+
+def test_the_exergy_destroyed_in_a_sequence_belongs_to_the_generation_that_it_claims() -> None:
+    """Where a sequence claims S_gen with surroundings its X_d is T₀ times that, else T₀ times the sum of S_gen."""
+    wall = heat(boundary_temperature=500.0, reservoir_temperature=700.0)
+    steps = [process("cold", "warm", name="one", heat_transfers=[wall]),
+             process("warm", "hot", name="two", heat_transfers=[wall])]  # fmt: skip
+    temperatures = {"cold": 300.0, "warm": 360.0, "hot": 450.0}
+    states = {name: {"temperature": t} for name, t in temperatures.items()}
+    change, warmth = MASS * CAPACITY * math.log(1.5), MASS * CAPACITY * 150.0
+    for claims, reservoir in ((["exergy_destruction"], 500.0),
+                              (["exergy_destruction", "entropy_generation_with_surroundings"], 700.0)):  # fmt: skip
+        sequence = {
+            "id": "both",
+            "processes": ["one", "two"],
+            "results": quantities(**dict.fromkeys(claims, 1.0)),
+        }
+        found = calculate(BLOCK, states, steps, sequences=[sequence])
+        destroyed = found.value("sequences/both/exergy_destruction")
+        assert destroyed == pytest.approx(T0 * (change - warmth / reservoir), rel=1e-10)
