@@ -27,6 +27,9 @@ MAX_IDENTIFIER: Final = 60
 IDENTIFIER_PATTERN: Final = "^[a-z0-9-]+$"
 _IDENTIFIER: Final = re.compile(r"[a-z0-9-]{1,60}")
 
+MAX_PARTS: Final = 200
+"""Most bodies, states, processes, transfers, limits and so on of one record; what needs more is several records."""
+
 T = TypeVar("T")
 
 

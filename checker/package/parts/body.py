@@ -10,6 +10,9 @@ from checker.package.parts.base import Many, Names, OneQuantity, Part, Quantitie
 from checker.package.words import COMPOSITION_BASES, DATUM_NAMES, PROPERTY_SOURCES
 from checker.vocabulary import MODELS, SYNONYMS, Level, canonical
 
+MAX_ROWS = 2000
+"""Most rows of a table of properties."""
+
 BodyNames = Annotated[Quantities, Names("BodyQuantities", Level.BODY)]
 TableRow = Annotated[Quantities, Names("TableRow", Level.STATE, without=("phase",))]
 Model = Annotated[str, Word(MODELS, "a model")]
@@ -56,7 +59,9 @@ class Body(Part):
     datum: Datum | None = Field(None, description="Where u, h and s are zero; needed where they are inputs.")
     composition: Fractions | None = Field(None, description="Fractions of a mixture by substance.")
     composition_basis: Basis = Field("mole", description="What the fractions are fractions of.")
-    table: Many[TableRow] = Field((), description="Rows of properties, for the model `tabulated`.")
+    table: Many[TableRow] = Field(
+        (), max_length=MAX_ROWS, description="Rows of properties, for the model `tabulated`."
+    )
     property_source: PropertySource = Field(
         "reference",
         description="`industrial` takes water from IAPWS-IF97, `reference` from the reference equation.",

@@ -6,7 +6,7 @@ from typing import Annotated, Final
 
 from pydantic import Discriminator, Field, Tag
 
-from checker.package.parts.base import Identifier, Many, Names, OneQuantity, Part, Quantities, Word
+from checker.package.parts.base import MAX_PARTS, Identifier, Many, Names, OneQuantity, Part, Quantities, Word
 from checker.vocabulary import PATH_KINDS, Level
 
 PathKind = Annotated[str, Word(PATH_KINDS, "a path")]
@@ -50,7 +50,9 @@ class PathSpec(Part):
     volume_at_contact: Annotated[object, OneQuantity(Level.PATH, "volume_at_contact")] = Field(
         None, description="Volume when the spring is reached."
     )
-    points: Many[PathPoint] = Field((), description="Points of the line in the p–V diagram.")
+    points: Many[PathPoint] = Field(
+        (), max_length=MAX_PARTS, description="Points of the line in the p–V diagram."
+    )
     results: Annotated[Quantities, Names("PathResults", Level.PATH, without=POINT_NAMES)] = Field(
         {}, description="Parameters that are claimed, such as the exponent."
     )

@@ -8,6 +8,7 @@ from pydantic import Field, model_validator
 from pydantic_core import PydanticCustomError
 
 from checker.package.parts.base import (
+    MAX_PARTS,
     Flag,
     Identifier,
     Many,
@@ -94,10 +95,14 @@ class Process(Part):
         None, description="The path: a word, a word with parameters, a list, or one for each body."
     )
     heat_transfers: Many[HeatTransfer] | None = Field(
-        None, description="All heat transfers; [] means none, a missing key means not stated."
+        None,
+        max_length=MAX_PARTS,
+        description="All heat transfers; [] means none, a missing key means not stated.",
     )
     work_transfers: Many[WorkTransfer] | None = Field(
-        None, description="All work transfers; [] means none, a missing key means not stated."
+        None,
+        max_length=MAX_PARTS,
+        description="All work transfers; [] means none, a missing key means not stated.",
     )
     inputs: ProcessNames = Field({}, description="What the originator started from.")
     results: ProcessNames = Field({}, description="What the originator claims.")

@@ -6,16 +6,13 @@ from typing import Annotated
 
 from pydantic import Field, WithJsonSchema
 
-from checker.package.parts.base import Identifier, Many, Names, Part, Quantities, Text, Word
+from checker.package.parts.base import MAX_PARTS, Identifier, Many, Names, Part, Quantities, Text, Word
 from checker.package.parts.body import Body
 from checker.package.parts.head import Conventions, Head, Surroundings
 from checker.package.parts.process import Process
 from checker.package.parts.state import State
 from checker.package.words import CLAIMS, PURPOSES
 from checker.vocabulary import Level
-
-MAX_PARTS = 200
-"""Most bodies, states or processes of one record; a record that needs more is several records."""
 
 Totals = Annotated[Quantities, Names("CycleQuantities", Level.CYCLE)]
 SequenceNames = Annotated[Quantities, Names("SequenceQuantities", Level.SEQUENCE)]
@@ -73,11 +70,17 @@ class Record(Part):
         min_length=1, max_length=MAX_PARTS, description="The states by identifier."
     )
     processes: Many[Process] = Field(max_length=MAX_PARTS, description="The processes.")
-    sequences: Many[ProcessSequence] = Field((), description="Balances over several processes.")
+    sequences: Many[ProcessSequence] = Field(
+        (), max_length=MAX_PARTS, description="Balances over several processes."
+    )
     inputs: Totals = Field({}, description="Totals of the cycle that were given.")
     results: Totals = Field({}, description="Totals of the cycle that are claimed.")
-    assumptions: Many[Assumption | None] = Field((), description="Declared assumptions.")
-    limits: Many[Limit | None] = Field((), description="Limits, and whether they are met.")
+    assumptions: Many[Assumption | None] = Field(
+        (), max_length=MAX_PARTS, description="Declared assumptions."
+    )
+    limits: Many[Limit | None] = Field(
+        (), max_length=MAX_PARTS, description="Limits, and whether they are met."
+    )
     sources: dict[str, Text] = Field({}, description="Where an input comes from: pointer to text.")
 
 

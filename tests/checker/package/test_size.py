@@ -1,5 +1,7 @@
 """A record and a package have a bounded size."""
 
+import pytest
+
 from checker import Verdict, review
 from checker.package.head import MAX_RECORDS
 from tests.checker.cases import gas_bottle, package
@@ -25,4 +27,26 @@ def test_a_package_of_too_many_records_says_which_were_not_read():
     (told,) = [f for f in found.findings if "after the first" in f.message]
     assert f"{MAX_RECORDS + 5} records" in told.message
     assert told.location.line == MAX_RECORDS + 2
+    assert found.verdict is Verdict.HOLD
+
+
+@pytest.mark.parametrize(
+    ("part", "item", "readable"),
+    [
+        ("assumptions", {"text": "kinetic energy negligible"}, True),
+        ("limits", {"quantity": "states/hot/gas/pressure", "at_most": "9 bar"}, True),
+        ("sequences", {"processes": ["warming"]}, False),
+        ("heat_transfers", {}, False),
+        ("work_transfers", {"kind": "shaft"}, False),
+    ],
+)
+def test_a_list_of_too_many_items_is_told_once(part, item, readable):
+    """More than 200 items are one query at the list; without limits or assumptions the rest is still reviewed."""
+    record = gas_bottle({"internal_energy_change": "31.16 kJ"})
+    where = record["processes"][0] if part.endswith("transfers") else record
+    where[part] = [{"id": f"i{n}", **item} for n in range(201)]
+    found = review(package(record))
+    told = [f for f in found.findings if f.rule == "type-wrong"]
+    assert ["more than 200" in f.message for f in told] == [True]
+    assert found.records[0].readable is readable
     assert found.verdict is Verdict.HOLD
