@@ -1,5 +1,6 @@
 """Reference quantities: what an allowance in per cent is a per cent of."""
 
+from itertools import pairwise
 from typing import Any
 
 import pytest
@@ -11,7 +12,7 @@ def heated(*temperatures: str) -> dict[str, Any]:
     """Return a block heated in steps from 300 K, with a sequence over all of them; m·c = 1 kJ/K."""
     names = [f"s{i}" for i in range(len(temperatures) + 1)]
     states = dict(zip(names, ["300.00 K", *temperatures], strict=True))
-    ends = list(zip(names, names[1:], strict=False))
+    ends = list(pairwise(names))
     return {
         "id": "block",
         "bodies": {
