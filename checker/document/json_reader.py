@@ -14,7 +14,7 @@ _TOKEN: Final = re.compile(
     r"""[ \t\r\n]*(?:
       (?P<bracket>[{}\[\]])
     | (?P<mark>[:,])
-    | (?P<string>"(?:[^"\\\x00-\x1f]+|\\(?:["\\/bfnrt]|u[0-9a-fA-F]{4}))*")
+    | (?P<string>"(?:[^"\\\x00-\x1f]++|\\(?:["\\/bfnrt]|u[0-9a-fA-F]{4}))*+")  # ++, *+: never retried shorter
     | (?P<number>-?(?:0|[1-9][0-9]*)(?:\.[0-9]+)?(?:[eE][+-]?[0-9]+)?)(?![0-9A-Za-z.+-])
     | (?P<word>true|false|null)\b
     | (?P<end>\Z)

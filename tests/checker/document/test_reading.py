@@ -136,6 +136,8 @@ HOSTILE = {
     "long number": b'{"a": ' + b"9" * 900_000 + b"}",
     "control characters": b"\x01" * 900_000,
     "quotes": b'{"a": "' + b"\\\\" * 400_000,
+    "open text": b'{"a": "' + b"x" * 60 + b"\n}",
+    "long open text": b'{"a": "' + b"x" * 900_000,
     "repeated keys": b"".join(b"k%d: 1\n" % n for n in range(40_000)) + b"k39999: 1\n" * 400,
     "anchors": b"".join(b"k%d: &a%d 1\n" % (n, n) for n in range(40_000)),
 }  # fmt: skip
