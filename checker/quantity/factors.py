@@ -90,7 +90,7 @@ class _Reader:
         if self.at >= len(self.text):
             return QuantityError(UNKNOWN, "the unit ends too early", self.at)
         sign = self.text[self.at]
-        shown = sign if sign.isprintable() else f"U+{ord(sign):04X}"
+        shown = "a blank" if sign == " " else sign if sign.isprintable() else f"U+{ord(sign):04X}"
         return QuantityError(UNKNOWN, f"{shown} has no place in a unit here", self.at)
 
     def read_unit(self, sign: int, strict: int, depth: int) -> None:

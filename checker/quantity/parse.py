@@ -66,23 +66,30 @@ def parse_quantity(
         return _read(text, expected, scale, atmosphere)
     except QuantityError as error:
         shown = (explain(text) or error) if error.kind == UNKNOWN else error
-        suggestion = _vetted(shown.suggestion, expected, scale, atmosphere)
+        needed = expected if shown.kind == UNKNOWN else None  # a guess at a name is right in its field only
+        suggestion = _vetted(shown.suggestion, expected, scale, atmosphere, needed)
         raise QuantityError(shown.kind, shown.message, shown.offset, suggestion) from None
 
 
-def _vetted(suggestion: str, expected: Dimension | None, scale: Scale, atmosphere: float | None) -> str:
-    """Return a suggestion that is accepted, or an empty text."""
+def _vetted(
+    suggestion: str,
+    expected: Dimension | None,
+    scale: Scale,
+    atmosphere: float | None,
+    needed: Dimension | None,
+) -> str:
+    """Return a suggestion that is accepted, and of the dimension ``needed``, or an empty text."""
     for _ in range(_LONGEST_CHAIN):
         if not suggestion:
             break
         try:
-            _read(suggestion, expected, scale, atmosphere)
+            quantity = _read(suggestion, expected, scale, atmosphere)
         except QuantityError as error:
             if error.kind == _WITHOUT_ATMOSPHERE:
                 return suggestion
             suggestion = error.suggestion
         else:
-            return suggestion
+            return suggestion if needed in (None, quantity.dimension) else ""
     return ""
 
 
@@ -110,7 +117,7 @@ def _read(text: str, expected: Dimension | None, scale: Scale, atmosphere: float
         open_half_width=number.open_half_width * unit.factor,
         plus_minus=None if parts.half is None else _plus_minus(text, parts, reading),
         atmosphere=added,
-        notes=reading.notes,
+        notes=(*reading.notes, *_note_on_percentage(parts)),
     )
 
 
@@ -153,6 +160,14 @@ def _plus_minus(text: str, parts: Parts, reading: Reading) -> float | None:
         except QuantityError as error:
             raise _moved(error, text, parts.half_unit, parts.half_unit_at) from None
     return half_width_of(parts, reading, of_half)
+
+
+def _note_on_percentage(parts: Parts) -> tuple[str, ...]:
+    """Return how a fraction with a ± before the percent sign was read: 0.5 ± 5 % could be 0.5, give or take 5 %."""
+    if parts.half is None or parts.half_unit or parts.unit != "%" or abs(parts.number.value) > 1.0:
+        return ()
+    numbers = f"{parts.number.text} ± {parts.half.text}"
+    return (f"{numbers} % read as ({numbers}) %; a fraction of one is written without %",)
 
 
 def _moved(error: QuantityError, text: str, unit: str, at: int) -> QuantityError:

@@ -25,6 +25,7 @@ MAX_UNIT_LENGTH: Final = 64
 MASS_PER_AREA: Final[Dimension] = (-2, 1, 0, 0, 0)
 STANDARD_GRAVITY: Final = 9.80665  # m/s², exact: 3rd CGPM (1901)
 
+_PERCENTAGES: Final = frozenset({"%", "‰"})
 _SUFFIX: Final = r"g|gauge|a|abs|absolute"
 _SUFFIXED: Final = re.compile(rf"(.+?)(?: ?\(({_SUFFIX})\)| ({_SUFFIX})|(?<=[²2])([ga]))")
 
@@ -97,6 +98,9 @@ def _product(text: str, factors: Sequence[Factor]) -> Reading:
     name = factors[0].name
     if not lone and any(factor.name.gauge for factor in factors):
         message = "a gauge pressure cannot be part of another unit: write the absolute one, such as bar"
+        raise QuantityError(AMBIGUOUS, message)
+    if not lone and any(factor.name.text in _PERCENTAGES for factor in factors):
+        message = "a percentage stands alone: 95 %, or behind a ±: 5 bar ± 10 %"
         raise QuantityError(AMBIGUOUS, message)
     factor, dimension = si_factor((f.name.definition, f.exponent) for f in factors)
     unit = Unit(text, float(factor), dimension, float(name.zero) if lone else 0.0, lone and name.gauge)

@@ -18,7 +18,7 @@ SPELLINGS: Final[dict[str, str]] = {
     "BTU_IT": "BTU(IT)", "Btu_IT": "BTU(IT)", "BTU_th": "BTU(th)", "Btu_th": "BTU(th)", "cal_IT": "cal(IT)",
     "cal_th": "cal(th)", "kcal_IT": "kcal(IT)", "kcal_th": "kcal(th)", "kp": "kgf",
     # pressures
-    "atü": "at(g)", "ATA": "at(a)",
+    "atü": "at(g)", "barü": "bar(g)", "ATA": "at(a)",
     # temperatures
     "℃": "°C", "℉": "°F", "degC": "°C", "degF": "°F", "degR": "°R", "deg C": "°C", "deg F": "°F",
     "deg R": "°R", "Celsius": "°C", "Fahrenheit": "°F", "Rankine": "°R", "Kelvin": "K", "kelvin": "K",

@@ -5,6 +5,7 @@ from __future__ import annotations
 import pytest
 
 from checker.quantity import QuantityError, parse_quantity
+from checker.quantity import dimensions as dim
 
 # Left: what libraries read without a word, with another value. Right: the suggestion, empty where a person decides.
 SILENTLY_WRONG_ELSEWHERE = [
@@ -132,3 +133,17 @@ def test_offset_points_at_the_part_meant():
         with pytest.raises(QuantityError) as caught:
             parse_quantity(text)
         assert caught.value.offset == offset, text
+
+
+@pytest.mark.parametrize(("text", "expected"), [("301 k J", dim.ENERGY), ("50 cbm", dim.VOLUME)])
+def test_a_suggestion_is_of_the_kind_that_the_field_needs(text: str, expected: dim.Dimension):
+    """What would be readable but no energy (kelvin joule) is not suggested where an energy belongs."""
+    with pytest.raises(QuantityError) as caught:
+        parse_quantity(text, expected=expected)
+    assert caught.value.suggestion == ""
+
+
+def test_a_blank_out_of_place_is_called_so():
+    """Two numbers in one text: the message names the blank instead of showing one."""
+    with pytest.raises(QuantityError, match="a blank has no place in a unit here"):
+        parse_quantity("5 bar 300 mbar")

@@ -61,3 +61,18 @@ def test_the_digits_still_claim_their_half_width():
     """The stated ± and the half-width of the digits are kept apart."""
     quantity = parse_quantity("120.0 ± 2 °C", scale=Scale.ABSOLUTE_TEMPERATURE)
     assert (quantity.half_width, quantity.plus_minus) == (0.05, 2.0)
+
+
+@pytest.mark.parametrize("text", ["5 ± 10 % bar", "5 % bar", "5 bar·%", "3 %²", "3 ‰·kJ", "5 kJ/%"])
+def test_a_percentage_is_no_part_of_a_unit(text: str):
+    """5 ± 10 % bar is not a hundredth of the pressure: a percentage stands alone or behind the ±."""
+    with pytest.raises(QuantityError, match="a percentage stands alone"):
+        parse_quantity(text)
+
+
+def test_a_fraction_before_a_percent_sign_is_read_with_a_note():
+    """0.5 ± 5 % could be meant as 0.5, give or take 5 %; how it was read is told. 95 ± 2 % is clear."""
+    assert parse_quantity("0.5 ± 5 %").value == pytest.approx(0.005)
+    assert "read as (0.5 ± 5) %" in parse_quantity("0.5 ± 5 %").notes[0]
+    assert parse_quantity("95 ± 2 %").notes == ()
+    assert parse_quantity("0.5 % ± 0.1 %").notes == ()
