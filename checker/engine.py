@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Iterable, Iterator, Sequence
+from collections.abc import Callable, Container, Iterable, Iterator, Sequence
 from dataclasses import dataclass
 
 from checker.basis import Basis
@@ -150,25 +150,32 @@ def items_of(case: Case, scope: Scope) -> tuple[str, ...]:
 
 
 def in_link_order(records: Sequence[Record]) -> list[Record]:
-    """Return the records so that those linked to come first; links in a circle keep their place."""
+    """Return the records so that those linked to come first; links in a circle keep their place.
+
+    A chain may be as long as the package, so that the records under way stand in a list and not on the call stack.
+    """
     by_id = {record.id: record for record in records}
     ordered: dict[str, Record] = {}
-    for record in records:
-        _visit(record, by_id, ordered, frozenset())
+    for first in records:
+        under_way = {first.id: _linked_to(first, by_id)}
+        while under_way:
+            name, ahead = next(reversed(under_way.items()))
+            linked = next((other for other in ahead if other not in ordered and other not in under_way), None)
+            if linked is not None:
+                under_way[linked] = _linked_to(by_id[linked], by_id)
+            else:
+                ordered.setdefault(name, by_id[name])
+                del under_way[name]
     return list(ordered.values())
 
 
-def _visit(
-    record: Record, by_id: dict[str, Record], ordered: dict[str, Record], above: frozenset[str]
-) -> None:
-    if record.id in ordered or record.id in above:
-        return
+def _linked_to(record: Record, known: Container[str]) -> Iterator[str]:
+    """Yield the identifiers of the records that a record takes something from."""
     links = [found.same_as or "" for found in record.body_states.values()]
     for link in (*links, *(limit.quantity for limit in record.limits)):
         parts = link.split("/")
-        if parts[0] == "records" and parts[1] in by_id:
-            _visit(by_id[parts[1]], by_id, ordered, above | {record.id})
-    ordered[record.id] = record
+        if parts[0] == "records" and parts[1] in known:
+            yield parts[1]
 
 
 def verdict_of(findings: Iterable[Finding], records: Sequence[RecordReview]) -> Verdict:
