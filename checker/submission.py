@@ -6,7 +6,7 @@ This is the only view of a package that the alternate calculation and the rules 
 from __future__ import annotations
 
 from collections.abc import Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 from enum import StrEnum
 
 from checker.problems import Place, Problem
@@ -209,6 +209,14 @@ class Record:
     work_convention: str | None
     purpose: str | None = None
     state_equilibrium: Mapping[str, tuple[str, ...]] | None = None
+    _usable: Mapping[str, tuple[Statement, ...]] = field(init=False, repr=False, compare=False)
+
+    def __post_init__(self) -> None:
+        usable: dict[str, tuple[Statement, ...]] = {}
+        for statement in self.statements:
+            if statement.usable:
+                usable[statement.pointer] = (*usable.get(statement.pointer, ()), statement)
+        object.__setattr__(self, "_usable", usable)
 
     @property
     def work_sign(self) -> int:
@@ -217,9 +225,8 @@ class Record:
 
     def stated(self, pointer: str, role: Role | None = None) -> tuple[Statement, ...]:
         """Return the usable statements of a quantity."""
-        return tuple(
-            s for s in self.statements if s.pointer == pointer and s.usable and role in (None, s.role)
-        )
+        found = self._usable.get(pointer, ())
+        return found if role is None else tuple(s for s in found if s.role is role)
 
 
 @dataclass(frozen=True, slots=True)
