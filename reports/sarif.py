@@ -107,7 +107,7 @@ class _Run:
 
     def _kind(self, rule: str, kind: str, level: str, message: str) -> Tree:
         index = self._rules[rule][0]
-        text = {"text": neutral(message) or rule}
+        text = {"text": _without_links(neutral(message)) or rule}
         return {"ruleId": rule, "ruleIndex": index, "kind": kind, "level": level, "message": text}
 
     def _locations(self, place: Location | None, record: str | None, quantity: str | None) -> list[Tree]:
@@ -121,6 +121,11 @@ class _Run:
             name = f"records/{record}" + (f"/{quantity}" if quantity else "")
             location["logicalLocations"] = [{"fullyQualifiedName": name}]
         return [location] if location else []
+
+
+def _without_links(message: str) -> str:
+    """Return a message in which no text of others is a link: viewers make one of ``[text](target)``."""
+    return message.replace("](", "] (")
 
 
 def _uri(file: str) -> str:

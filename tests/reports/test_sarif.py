@@ -108,6 +108,13 @@ def test_file_names_become_references(file: str, uri: str) -> None:
     assert run_of(review)["artifacts"][0]["location"]["uri"] == uri
 
 
+def test_no_text_of_others_becomes_a_link() -> None:
+    """A message with ``[text](target)`` in it, which viewers show as a link, is taken apart."""
+    finding = replace(FINDINGS[0], message="`[see here](https://example.invalid)` is not a key of a record.")
+    results = run_of(replace(REVISE, findings=(finding,)))["results"]
+    assert results[0]["message"]["text"].startswith("`[see here] (https://example.invalid)` is not a key")
+
+
 def test_messages_are_neutral() -> None:
     """No escape sequence stands in a message, even after reading the log."""
     messages = [r["message"]["text"] for r in run_of(REVISE)["results"]]
