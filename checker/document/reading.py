@@ -30,6 +30,9 @@ def read_document(data: bytes, file: str) -> Document:
         ``root`` is a mapping, or None where nothing can be read; then a fatal problem says why.
 
     """
+    file = file.encode(
+        "utf-8", "replace"
+    ).decode()  # a name that is no text would make the reports unreadable
     digest = digest_of(data)
     text = decode(data)
     if isinstance(text, Problem):

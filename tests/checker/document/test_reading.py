@@ -58,6 +58,11 @@ def test_a_file_without_an_end_is_refused_and_not_read_on() -> None:
     assert document.sha256 == ""
 
 
+def test_a_file_name_that_is_no_text_is_made_one() -> None:
+    """A byte of a name that is not UTF-8 would stand in JSON as half of a character, which readers refuse."""
+    assert read_document(b"a: 1", "bad\udcff.yaml").file == "bad?.yaml"
+
+
 @pytest.mark.parametrize(
     "character",
     ["\x00", "\x07", "\x0b", "\x7f", "\x85", "\u2028", "\u2029", "\u202e", "\u2066", "\u200f", "\ufeff"],
