@@ -34,7 +34,7 @@ def unique(notebook: Notebook, what: str, items: Collection[tuple[str, Place]]) 
             notebook.say(
                 "identifier-repeated",
                 place,
-                f"A {what} before this one is `{name}` as well.",
+                f"An earlier {what} is `{name}` as well.",
                 "Give each its own identifier.",
                 fatal=True,
             )

@@ -57,6 +57,8 @@ FORM = [
     ("identifier-wrong", "- id: warming", "- id: «Warming 1", True, "Perhaps `warming-1`?"),
     ("identifier-repeated", "id: fan, kind: shaft, inputs: {energy: 1 kJ}}",
      "id: fan, kind: shaft, inputs: {energy: 1 kJ}}, {id: «fan, kind: shaft}", True, "own identifier"),
+    ("identifier-repeated", "    limits:", "    assumptions: [{id: a, text: x}, {id: «a, text: y}]\n    limits:", True,
+     "An earlier assumption is `a` as well"),
     ("reference-unknown", "from: cold", "from: «kold", True, "Perhaps `cold`?"),
     ("reference-unknown", "path: constant volume", "path: {«nitrogn: constant volume}", True, "Perhaps `nitrogen`?"),
     ("reference-unknown", "id: wall, ", "id: wall, body: «argon, ", True, "The body `argon` does not exist"),
