@@ -177,13 +177,14 @@ def _reviewed(path: Path, basis: Basis, diagrams: bool, err: TextIO) -> Review |
     from checker.api import review
     from checker.document import content_of
     from checker.progress import record_progress
+    from reports.plain import neutral
 
     try:
         data = content_of(path)
     except OSError as error:
         _complain(err, f"{path}: {error.strerror}")
         return None
-    with record_progress(err, path.name) as progress:
+    with record_progress(err, neutral(path.name)) as progress:
         return review(data, name=str(path), basis=basis, diagrams=diagrams, progress=progress)
 
 

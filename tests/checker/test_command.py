@@ -5,6 +5,7 @@ import json
 import os
 import subprocess
 import sys
+from contextlib import nullcontext
 from pathlib import Path
 
 import pytest
@@ -245,14 +246,19 @@ def test_a_report_does_not_replace_what_is_read(right):
     assert right.read_bytes() == before
 
 
-def test_a_file_name_cannot_steer_the_terminal(folder):
+def test_a_file_name_cannot_steer_the_terminal(folder, monkeypatch):
     """Escapes in the name of a file are shown as marks."""
     path = folder / "a\x1b[31m.json"
     _, _, err = call("review", str(path))
     assert "\x1b" not in err
     path.write_bytes(package(gas_bottle({"internal_energy_change": "31.16 kJ"})))
+    shown: list[str] = []
+    monkeypatch.setattr(
+        "checker.progress.record_progress", lambda _, name: shown.append(name) or nullcontext(lambda _: None)
+    )
     _, out, err = call("review", str(path))
     assert "\x1b" not in out + err
+    assert shown == ["a\\u{1B}[31m.json"]
 
 
 QUICK = """
