@@ -3,9 +3,9 @@
 from __future__ import annotations
 
 from collections.abc import Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from functools import cached_property
-from typing import Any, Final
+from typing import Final
 
 from hypothesis import assume, reject
 from hypothesis import strategies as st
@@ -13,6 +13,7 @@ from scipy.optimize import brentq
 
 from tests.properties.physics import ConstantHeatGas, IdealGas, Model, RealFluid, Solid, State, work_of
 
+GRAVITY: Final = 9.80665
 T0: Final = 293.15
 P0: Final = 101300.0
 GAS_PATHS: Final = (
@@ -48,9 +49,30 @@ class Body:
     physics: Model
 
 
+@dataclass(frozen=True, slots=True)
+class Motion:
+    """Speed [m/s] and height [m] of a body."""
+
+    velocity: float
+    elevation: float
+
+    @property
+    def kinetic(self) -> float:
+        """Return ½·c². [J/kg]"""
+        return 0.5 * self.velocity**2
+
+    @property
+    def potential(self) -> float:
+        """Return g·z. [J/kg]"""
+        return GRAVITY * self.elevation
+
+
 @dataclass(frozen=True)
 class Leg:
-    """A process between two states, per unit mass; ``electrical`` is put in, ``wall`` and ``reservoir`` are T [K]."""
+    """A process between two states, per unit mass; ``electrical`` is put in, ``wall`` and ``reservoir`` are T [K].
+
+    ``motion`` holds speed and height at both ends where they are stated.
+    """
 
     kind: str
     parameter: float
@@ -59,6 +81,17 @@ class Leg:
     electrical: float = 0.0
     wall: float | None = None
     reservoir: float | None = None
+    motion: tuple[Motion, Motion] | None = None
+
+    @cached_property
+    def kinetic(self) -> float:
+        """Return the change of kinetic energy. [J/kg]"""
+        return 0.0 if self.motion is None else self.motion[1].kinetic - self.motion[0].kinetic
+
+    @cached_property
+    def potential(self) -> float:
+        """Return the change of potential energy. [J/kg]"""
+        return 0.0 if self.motion is None else self.motion[1].potential - self.motion[0].potential
 
     @cached_property
     def boundary_work(self) -> float:
@@ -71,7 +104,8 @@ class Leg:
         a, b = self.first, self.last
         energy, entropy = b.u - a.u, b.s - a.s
         done = self.boundary_work - self.electrical
-        warmth = 0.0 if self.wall is None else energy + done
+        whole = energy + self.kinetic + self.potential
+        warmth = 0.0 if self.wall is None else whole + done
         wall, reservoir = self.wall or 1.0, self.reservoir or 1.0
         generated = entropy - warmth / wall
         swept = 0.0 if a.v is None or b.v is None else P0 * (b.v - a.v)
@@ -80,11 +114,14 @@ class Leg:
             "boundary_work": self.boundary_work,
             "work": done,
             "internal_energy_change": energy,
+            "kinetic_energy_change": self.kinetic,
+            "potential_energy_change": self.potential,
+            "energy_change": whole,
             "entropy_change": entropy,
             "entropy_transfer": warmth / wall,
             "entropy_generation": generated,
             "entropy_generation_with_surroundings": entropy - warmth / reservoir,
-            "exergy_change": energy + swept - T0 * entropy,
+            "exergy_change": whole + swept - T0 * entropy,
             "exergy_destruction": T0 * (entropy - warmth / reservoir),
         }
 
@@ -104,6 +141,16 @@ class Change:
     last_known: str
     middle: State
 
+    @property
+    def parts(self) -> tuple[Leg, Leg]:
+        """Return the process in two, each with half of the electrical work; in between the body rests at height 0."""
+        ends = self.leg.motion
+        half, rest = replace(self.leg, electrical=0.5 * self.leg.electrical), Motion(0.0, 0.0)
+        return (
+            replace(half, last=self.middle, motion=ends and (ends[0], rest)),
+            replace(half, first=self.middle, motion=ends and (rest, ends[1])),
+        )
+
 
 def exact(value: float, digits: int = 5) -> float:
     """Return a value as it can be written with so many significant digits."""
@@ -118,6 +165,13 @@ def numbers(low: float, high: float) -> st.SearchStrategy[float]:
 def ratios(low: float, near: float, far: float) -> st.SearchStrategy[float]:
     """Return ratios well off 1, on both sides of it."""
     return st.one_of(numbers(low, 1.0 / near), numbers(near, far))
+
+
+_motions = st.builds(
+    Motion,
+    st.integers(0, 4000).map(lambda hundredths: hundredths / 100.0),
+    st.integers(-2000, 6000).map(lambda hundredths: hundredths / 100.0),
+)
 
 
 @dataclass(frozen=True, slots=True)
@@ -227,12 +281,14 @@ def _changes(draw: st.DrawFn, ends: tuple[str, ...]) -> Change:
     assume(not (known == "heat" and kind == "polytropic" and isinstance(body.physics, RealFluid)))
     parameter = _parameter(draw, kind, first)
     electrical = draw(numbers(500.0, 5e3)) if kind in ("", "constant volume") and draw(st.booleans()) else 0.0
+    motion = (draw(_motions), draw(_motions)) if kind == "" and draw(st.booleans()) else None
     last = _end(draw, body, first, kind, parameter)
     assume(is_plain(body, first) and is_plain(body, last))
-    last = _rounded_end(body, first, last, kind, parameter, known, electrical)
-    assume(is_plain(body, last))
-    leg = _with_wall(draw, Leg(kind, parameter, first, last, electrical))
-    middle = _along(body, first, last, kind, parameter)
+    bare = Leg(kind, parameter, first, last, electrical, motion=motion)
+    bare = replace(bare, last=_rounded_end(body, bare, known))
+    assume(is_plain(body, bare.last))
+    leg = _with_wall(draw, bare)
+    middle = _along(body, first, leg.last, kind, parameter)
     return Change(
         body,
         draw(st.sampled_from([0.125, 2.5, 40.0])),
@@ -274,16 +330,13 @@ def _end(draw: st.DrawFn, body: Body, a: State, kind: str, parameter: float) -> 
     return at(p=(a.p or 0.0) * ((a.v or 0.0) / larger) ** parameter, v=larger)
 
 
-def _rounded_end(
-    body: Body, a: State, b: State, kind: str, parameter: float, known: str, electrical: float
-) -> State:
+def _rounded_end(body: Body, leg: Leg, known: str) -> State:
     """Return the last state that the five digits of what is given about it lead to."""
-    at = body.physics.at
+    at, a, b, kind, parameter = body.physics.at, leg.first, leg.last, leg.kind, leg.parameter
     if known == "heat":
-        leg = Leg(kind, parameter, a, b, electrical)
-        return heated(
-            body, a, kind, parameter, exact(b.u - a.u + leg.boundary_work - electrical) + electrical, b
-        )
+        others = leg.electrical - leg.kinetic - leg.potential
+        given = exact(b.u - a.u + leg.boundary_work - others)
+        return heated(body, a, kind, parameter, given + others, b)
     if kind == "against constant external pressure":
         return b  # the outside pressure, which it ends at, is already one of five digits
     value = exact(getattr(b, known))
@@ -293,7 +346,7 @@ def _rounded_end(
         p1, v1 = a.p or 0.0, a.v or 0.0
         volume = value if known == "v" else v1 * (p1 / value) ** (1.0 / parameter)
         return at(p=p1 * (v1 / volume) ** parameter, v=volume)
-    held = {
+    held: tuple[str, float | None] = {
         "constant volume": ("v", a.v),
         "constant pressure": ("p", a.p),
         "isothermal": ("t", a.t),
@@ -304,7 +357,7 @@ def _rounded_end(
 
 
 def heated(body: Body, a: State, kind: str, parameter: float, energy: float, near: State) -> State:
-    """Return the state that Q less other work, per mass, leads to along a path; ``near`` is close to it."""
+    """Return the state to which ΔU + W_b per mass leads along a path; ``near`` is close to it."""
     at = body.physics.at
     if kind in ("", "constant volume"):
         return at(u=a.u + energy) if kind == "" else at(v=a.v or 0.0, u=a.u + energy)
@@ -331,14 +384,15 @@ def _with_wall(draw: st.DrawFn, bare: Leg) -> Leg:
     if bare.kind in ADIABATIC:
         assume(bare.values["entropy_change"] > -1e-6)
         return bare
-    warmth = bare.last.u - bare.first.u + bare.boundary_work - bare.electrical
-    assume(abs(warmth) > 0.02 * max(abs(bare.last.u - bare.first.u), abs(bare.boundary_work)))
+    own = bare.last.u - bare.first.u
+    warmth = own + bare.kinetic + bare.potential + bare.boundary_work - bare.electrical
+    assume(abs(warmth) > 0.02 * max(abs(own), abs(bare.boundary_work)))
     beyond, further = draw(numbers(3.0, 60.0)), draw(numbers(1.0, 20.0))
     ends = (bare.first.t, bare.last.t)
     wall = exact(max(ends) + beyond if warmth > 0.0 else min(ends) - beyond)
     reservoir = exact(wall + further if warmth > 0.0 else wall - further)
     assume(reservoir > 40.0 and not any(looks_like_kelvin(t) for t in (wall, reservoir)))
-    leg = Leg(bare.kind, bare.parameter, bare.first, bare.last, bare.electrical, wall, reservoir)
+    leg = replace(bare, wall=wall, reservoir=reservoir)
     assume(leg.values["entropy_generation"] > 0.0)
     return leg
 
@@ -353,10 +407,10 @@ def _along(body: Body, a: State, b: State, kind: str, parameter: float) -> State
     if kind == "constant volume":
         return at(t=exact(0.5 * (a.t + b.t)), v=a.v or 0.0)
     volume = exact(0.5 * ((a.v or 0.0) + (b.v or 0.0)))
-    known: dict[str, Any] = {
-        "constant pressure": {"p": a.p},
-        "isothermal": {"t": a.t},
-        "isentropic": {"s": a.s},
-        "polytropic": {"p": (a.p or 0.0) * ((a.v or 0.0) / volume) ** parameter},
+    held = {
+        "constant pressure": ("p", a.p or 0.0),
+        "isothermal": ("t", a.t),
+        "isentropic": ("s", a.s),
+        "polytropic": ("p", (a.p or 0.0) * ((a.v or 0.0) / volume) ** parameter),
     }[kind]
-    return at(v=volume, **known)
+    return at(**{"v": volume, held[0]: held[1]})

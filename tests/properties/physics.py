@@ -162,7 +162,7 @@ def _library(name: str) -> Any:
     return CoolProp.AbstractState("HEOS", name)
 
 
-_PAIRS: Final = {
+_PAIRS: Final[dict[tuple[str, str], tuple[str, Callable[[float, float], tuple[float, float]]]]] = {
     ("t", "p"): ("PT_INPUTS", lambda t, p: (p, t)),
     ("t", "v"): ("DmassT_INPUTS", lambda t, v: (1.0 / v, t)),
     ("t", "x"): ("QT_INPUTS", lambda t, x: (x, t)),

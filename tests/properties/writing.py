@@ -5,13 +5,13 @@ from __future__ import annotations
 import json
 import math
 from collections.abc import Callable, Mapping
-from dataclasses import dataclass, field, replace
+from dataclasses import dataclass, field
 from fractions import Fraction
 from typing import Any, Final
 
 import yaml
 
-from tests.properties.changes import P0, T0, Change, Leg
+from tests.properties.changes import P0, T0, Change, Leg, Motion
 from tests.properties.physics import State
 
 POUND: Final = Fraction("0.45359237")
@@ -31,6 +31,12 @@ class Units:
     volume: tuple[str, Fraction]
     energy: tuple[str, Fraction]
     entropy: tuple[str, Fraction]
+    length: tuple[str, Fraction] = ("m", _ONE)
+
+    @property
+    def velocity(self) -> tuple[str, Fraction]:
+        """Return the unit of speed and its size in m/s."""
+        return f"{self.length[0]}/s", self.length[1]
 
     def of(self, kind: str) -> tuple[str, Fraction]:
         """Return unit text and size of a kind of quantity; ``energy/mass`` is divided out."""
@@ -65,6 +71,7 @@ IMPERIAL: Final = Units(
     ("ft³", FOOT**3),
     ("BTU(IT)", BTU),
     ("BTU(IT)/°R", BTU * Fraction(9, 5)),
+    ("ft", FOOT),
 )
 
 STATE_NAMES: Final[Mapping[str, tuple[str, str]]] = {
@@ -81,6 +88,7 @@ ENTROPIES: Final = (
     "entropy_generation",
     "entropy_generation_with_surroundings",
 )
+MOTIONS: Final = ("kinetic_energy_change", "potential_energy_change", "energy_change")
 TEMPERATURE_SCALE: Final = 50.0
 
 
@@ -156,14 +164,12 @@ class Writer:
             "first": self._state("first", change.leg.first, change.first_known),
             "last": self._state("last", change.leg.last, (change.last_known,)),
         }
+        for name, motion in zip(states, change.leg.motion or (), strict=False):
+            states[name]["matter"]["inputs"].update(self._motion(motion))
         legs = {"whole": ("first", "last", change.leg)}
         if self.style.split:
             states["middle"] = self._middle()
-            half = replace(change.leg, electrical=0.5 * change.leg.electrical)
-            legs = {
-                "one": ("first", "middle", replace(half, last=change.middle)),
-                "two": ("middle", "last", replace(half, first=change.middle)),
-            }
+            legs = {"one": ("first", "middle", change.parts[0]), "two": ("middle", "last", change.parts[1])}
         record: dict[str, Any] = {
             "id": "trial",
             "bodies": {"matter": self._body()},
@@ -203,7 +209,15 @@ class Writer:
         kind, middle = self.change.leg.kind, self.change.middle
         name = "t" if kind in ("", "constant volume") else "v"
         long, unit = STATE_NAMES[name]
-        return {"matter": {"inputs": {long: self.given(getattr(middle, name), unit)}}}
+        inputs = {long: self.given(getattr(middle, name), unit)}
+        motion = self.change.parts[0].motion
+        return {"matter": {"inputs": {**inputs, **(self._motion(motion[1]) if motion else {})}}}
+
+    def _motion(self, motion: Motion) -> dict[str, str]:
+        return {
+            "velocity": self.given(motion.velocity, "velocity"),
+            "elevation": self.given(motion.elevation, "length"),
+        }
 
     def _process(self, name: str, start: str, end: str, leg: Leg) -> dict[str, Any]:
         found: dict[str, Any] = {
@@ -257,6 +271,8 @@ class Writer:
         entropy = max(entropy, 0.5 * energy / leg.first.t)  # an isentropic change changes no entropy
         claims = {}
         for name, value in values.items():
+            if name in MOTIONS and leg.motion is None:
+                continue
             if (name == "heat" and self.change.last_known == "heat") or (
                 solid and name in ("boundary_work", "exergy_change")
             ):
