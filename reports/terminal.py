@@ -131,7 +131,11 @@ def _particulars(finding: Finding, values: Mapping[str, Checked]) -> Iterator[tu
     for item in finding.causes:
         yield "likely cause", cause(item, finding)
     for quantity in finding.spoils:
-        yield "spoils", _against(quantity, values.get(quantity))
+        held_back = values.get(quantity)
+        if held_back is not None and held_back.recomputed is None:
+            yield "leaves open", f"{quantity}: {shown(held_back.stated)}, not recomputed because of this"
+        else:
+            yield "spoils", _against(quantity, held_back)
     yield "suggestion", finding.suggestion
     yield "basis", finding.basis
 
@@ -165,10 +169,13 @@ def _account(record: RecordReview, page: _Page) -> Iterator[str]:
         yield from page.flow(f"Checked and held ({len(good)}): {listed}.", 2, 4)
     if record.rules_held:
         rules = counted(len(record.rules_held), "rule", "rules")
-        yield from page.flow(f"{rules} found nothing.", 2, 4)
+        yield from page.flow(f"{rules} found nothing wrong.", 2, 4)
     for item in not_recomputed(record):
         yield from page.flow(f"Not recomputed: {item.quantity} {shown(item.stated)}: {item.reason}.", 2, 4)
+    told = {item.quantity for item in not_recomputed(record)}
     for missing in record.not_checked:
+        if missing.what in told:
+            continue
         yield from page.flow(f"Not checked: {missing.what}; missing: {missing.missing}.", 2, 4)
     for assumed in record.assumed:
         yield from page.flow(f"Assumed: {assumed}.", 2, 4)
@@ -182,9 +189,14 @@ def _closing(review: Review, page: _Page) -> Iterator[str]:
     yield from page.strong(page.flow(f"{verdict} {_tally(review)}.", hang=2))
 
 
+def _left_open(record: RecordReview) -> set[str]:
+    """Return what of a record was not recomputed or not checked, each once."""
+    return {item.quantity for item in not_recomputed(record)} | {item.what for item in record.not_checked}
+
+
 def _tally(review: Review) -> str:
     good = sum(len(held(record)) for record in review.records)
-    open_ends = sum(len(record.not_checked) + len(not_recomputed(record)) for record in review.records)
+    open_ends = sum(len(_left_open(record)) for record in review.records)
     records = counted(len(review.records), "record", "records").capitalize()
     unchecked = f"{open_ends} not checked" if open_ends else "nothing left unchecked"
     return (

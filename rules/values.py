@@ -176,7 +176,8 @@ def _suggestion(c: Compared, spoiled: tuple[str, ...]) -> str:
     if not spoiled:
         return "Correct this result." if c.deviation is not None else ""
     count = len(spoiled)
-    return f"Correct this result and the {count} that follow{'s' if count == 1 else ''} from it."
+    others = "the one that follows" if count == 1 else f"the {count} that follow"
+    return f"Correct this result and {others} from it."
 
 
 RULES: Final[tuple[Rule, ...]] = (

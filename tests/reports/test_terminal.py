@@ -34,7 +34,7 @@ COMMENT = """\
 ACCOUNT = """\
   Checked and held (3): bodies/nitrogen/mass 8.63 kg; states/hot/nitrogen/pressure 181 bar;
       processes/warming/entropy_change 0.969 kJ/K.
-  4 rules found nothing.
+  4 rules found nothing wrong.
   Not checked: generation with surroundings; missing: the reservoir_temperature of the heat transfer
       sunlit-wall.
   Assumed: velocity not stated: taken as zero in both states.
