@@ -30,7 +30,7 @@ def integral(pressure: Callable[[float], float], v1: float, v2: float, kinks: Se
     inside = sorted(v for v in kinks if min(v1, v2) < v < max(v1, v2))
     ends = [min(v1, v2), *inside, max(v1, v2)]
     pieces = [quad(pressure, a, b, epsabs=0.0, epsrel=1e-10, limit=400)[0] for a, b in pairwise(ends)]
-    return MASS * sum(pieces) * (1.0 if v2 > v1 else -1.0)
+    return MASS * float(sum(pieces)) * (1.0 if v2 > v1 else -1.0)
 
 
 def run(
@@ -124,8 +124,9 @@ class Expansion:
 def polytropic(substance: str, known: dict[str, float], exponent: float, ratio: float) -> Expansion:
     """Return end state, ∫p dV and Q along p·vⁿ = constant."""
     fluid = LIBRARY_NAMES[substance]
-    pair = [part for name, value in known.items() for part in (_INPUTS[name], value)]
-    p1, v1, u1 = PropsSI("P", *pair, fluid), 1.0 / PropsSI("D", *pair, fluid), PropsSI("U", *pair, fluid)
+    (name, one), (other, two) = ((_INPUTS[name], value) for name, value in known.items())
+    p1, rho1, u1 = (PropsSI(sought, name, one, other, two, fluid) for sought in "PDU")
+    v1 = 1.0 / rho1
     v2, p2 = v1 * ratio, p1 * ratio**-exponent
     done = integral(lambda v: p1 * (v1 / v) ** exponent, v1, v2)
     t2, u2 = (PropsSI(name, "P", p2, "D", 1.0 / v2, fluid) for name in "TU")

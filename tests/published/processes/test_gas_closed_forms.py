@@ -61,7 +61,7 @@ def test_isothermal_work_is_the_logarithm_of_the_volume_ratio(
     last = {"pressure": {"pressure": P1 / ratio}, "specific_volume": {"specific_volume": v1 * ratio}}.get(
         by, {}
     )
-    members = {
+    members: dict[str, Any] = {
         "heat": {"heat_transfers": open_heat(energy=work)},
         "work": {"heat_transfers": open_heat(), "inputs": {"boundary_work": f"{work!r} J"}},
     }.get(by, {"heat_transfers": open_heat()})
