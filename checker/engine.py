@@ -65,8 +65,7 @@ def review_submission(
         cases[record.id] = case
         found, unchecked, held = apply_rules(case, rulebook, locator)
         findings.extend(found)
-        own = [f for f in findings if f.record == record.id]
-        reviews[record.id] = record_review(case, unchecked, held, own, options.diagrams, options.sheet)
+        reviews[record.id] = record_review(case, locator, unchecked, held, options.diagrams, options.sheet)
     findings = sorted(dict.fromkeys(findings), key=reading_order)
     ordered = tuple(_in_document_order(submission, reviews))
     return Review(

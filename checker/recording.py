@@ -11,7 +11,6 @@ from checker.findings import (
     Amount,
     Checked,
     Diagram,
-    Finding,
     NotChecked,
     RecordReview,
     SheetLine,
@@ -21,6 +20,7 @@ from checker.findings import (
     StateRow,
 )
 from checker.ledgers import ledgers
+from checker.locate import Locator
 from checker.sheet.keys import plain, state_key, term_for
 from checker.sheet.step import Found, Step
 from checker.submission import Role
@@ -44,14 +44,13 @@ HIDDEN_STEPS = ("Dead state",)
 
 def record_review(
     case: Case,
+    locator: Locator,
     unchecked: Sequence[NotChecked],
     held: Sequence[str],
-    findings: Sequence[Finding],
     diagrams: bool,
     sheet: bool,
 ) -> RecordReview:
     """Return the review of one record."""
-    del findings
     drawn: tuple[Diagram, ...] = ()
     if diagrams:
         from checker.diagrams import draw
@@ -61,7 +60,7 @@ def record_review(
         id=case.record.id,
         title=case.record.title,
         readable=True,
-        checked=tuple(_checked(case, c) for c in case.compared),
+        checked=tuple(_checked(case, c, locator) for c in case.compared),
         not_checked=tuple(dict.fromkeys((*_not_compared(case), *unchecked))),
         assumed=tuple(_assumed(case)),
         models=tuple(_models(case)),
@@ -73,7 +72,7 @@ def record_review(
     )
 
 
-def _checked(case: Case, c: Compared) -> Checked:
+def _checked(case: Case, c: Compared, locator: Locator) -> Checked:
     statement = c.statement
     term = statement.term
     return Checked(
@@ -90,6 +89,7 @@ def _checked(case: Case, c: Compared) -> Checked:
         outcome=c.outcome,
         standing=c.standing,
         reason=c.reason or c.shift.note,
+        location=locator.at(statement.place),
     )
 
 
