@@ -50,9 +50,20 @@ _OFTEN: Final[dict[str, str]] = {
 """Trade words and symbols in small letters → the word of the format. For suggestions only."""
 
 
+_INVISIBLE_END: Final = re.compile(r"\A[^\S \t\n\r]+|[^\S \t\n\r]+\Z")
+
+
+def _shown(match: re.Match[str]) -> str:
+    """Return characters as visible marks."""
+    return "".join(f"\\u{{{ord(character):X}}}" for character in match[0])
+
+
 def shortened(text: object, length: int = MAX_WORD) -> str:
-    """Return a text for a message: one line, not longer than a line of the report takes."""
-    words = " ".join(str(text).split())
+    r"""Return a text for a message: one line, not longer than a line of the report takes.
+
+    A no-break space at its ends would not be seen, and the text would look right: it is shown as ``\u{A0}``.
+    """
+    words = " ".join(_INVISIBLE_END.sub(_shown, str(text)).split())
     return words if len(words) <= length else f"{words[: length - 1]}…"
 
 

@@ -36,6 +36,7 @@ FORM = [
     ("name-unknown", "        from: cold\n", "        from: cold\n        «duration: 5 s\n", True,
      "inputs: {duration: …}"),
     ("name-unknown", "{temperature: 15 °C, p", "{«temprature: 15 °C, p", False, "Perhaps `temperature`?"),
+    ("name-unknown", "{temperature: 15 °C, p", "{«temperature\u00a0: 15 °C, p", False, "`temperature\\u{A0}` is not"),
     ("name-unknown", "{temperature: 15 °C, p", "{«heat: 15 °C, p", False, "`heat` belongs to a process"),
     ("name-unknown", "pressure: 150 bar", "pressure: 1 bar, «5 bar", False, "a comma starts a new entry"),
     ("name-unknown", "claim: met", "claim: met, basis: code, «edition 2", False, "a comma starts a new entry"),
