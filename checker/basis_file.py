@@ -43,7 +43,7 @@ def read_basis(path: Path) -> Basis:
     for entry in document.root.entries:
         _known(path, entry.key, SETTINGS, entry.value, "setting")
         found[entry.key] = _setting(path, entry.key, entry.value)
-    return Basis(**found)  # type: ignore[arg-type]
+    return Basis(**found)  # type: ignore[arg-type]  # every setting was checked above
 
 
 def _setting(path: Path, name: str, node: Node) -> object:

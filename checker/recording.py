@@ -23,7 +23,7 @@ from checker.ledgers import ledgers
 from checker.locate import Locator
 from checker.sheet.keys import plain, state_key, term_for
 from checker.sheet.step import Found, Step
-from checker.submission import Role
+from checker.submission import Role, Statement
 
 TABLE = (
     "temperature",
@@ -191,7 +191,7 @@ def _failure(case: Case, step: Step) -> str:
     return f"not evaluable: {failure.reason}" if failure else ""
 
 
-def _sheet_value(case: Case, key: str, stated: dict) -> SheetValue:  # type: ignore[type-arg]
+def _sheet_value(case: Case, key: str, stated: dict[str, Statement]) -> SheetValue:
     term = term_for(key)
     independent, carried = case.values.get(key), case.carried.values.get(key)
     statement = stated.get(key)

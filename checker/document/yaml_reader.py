@@ -35,7 +35,7 @@ def _walk(loader: yaml.SafeLoader, builder: TreeBuilder) -> Problem | None:
     """Read one document to its end."""
     documents = 0
     while True:
-        event = loader.get_event()  # type: ignore[no-untyped-call]
+        event = loader.get_event()  # type: ignore[no-untyped-call]  # no types for it
         if isinstance(event, yaml.NodeEvent):
             _node(event, builder)
         elif isinstance(event, yaml.CollectionEndEvent):

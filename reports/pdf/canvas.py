@@ -11,7 +11,7 @@ from reportlab.pdfgen.canvas import Canvas
 _FIXED_TIME: Final = 946684800  # 2000-01-01, the date that invariant documents of this library bear
 
 
-class FixedCanvas(Canvas):  # type: ignore[misc]
+class FixedCanvas(Canvas):  # type: ignore[misc]  # reportlab has no types
     """A canvas that bears a fixed date, whatever SOURCE_DATE_EPOCH says."""
 
     def __init__(self, *args: Any, **settings: Any) -> None:

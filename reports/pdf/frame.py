@@ -16,7 +16,7 @@ _SIZE: Final = 8
 _TOTAL: Final = "number-of-pages"
 
 
-class NumberOfPages(Flowable):  # type: ignore[misc]
+class NumberOfPages(Flowable):  # type: ignore[misc]  # reportlab has no types
     """The last flowable: it takes no room and tells every footer how many pages there are."""
 
     def wrap(self, *_: float) -> tuple[float, float]:

@@ -104,7 +104,7 @@ def words_width(text: str, font: str = REGULAR) -> float:
 Element = Stroke | Sign | Words
 
 
-class Picture(Flowable):  # type: ignore[misc]
+class Picture(Flowable):  # type: ignore[misc]  # reportlab has no types
     """Elements in the order in which they cover each other; ``below`` is the room under their zero."""
 
     def __init__(self, width: float, height: float, below: float, elements: Sequence[Element]) -> None:

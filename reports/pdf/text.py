@@ -142,7 +142,7 @@ def paragraph(style: ParagraphStyle, *parts: str) -> Any:
     return Paragraph("".join(marked(part) for part in parts), style)
 
 
-class Heading(Paragraph):  # type: ignore[misc]
+class Heading(Paragraph):  # type: ignore[misc]  # reportlab has no types
     """A heading that stands in the outline and can be linked to."""
 
     def __init__(self, style: ParagraphStyle, text: str, key: str, level: int) -> None:
