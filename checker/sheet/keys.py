@@ -18,6 +18,9 @@ STATE_OUTPUTS: Final = (
     "specific_entropy",
     "quality",
     "phase",
+    "melted_fraction",
+    "relative_humidity",
+    "humidity_ratio",
 )
 """What evaluating a state yields, in one step."""
 

@@ -19,6 +19,12 @@ CONSTANTS: Final = (
     "specific_heat_at_constant_volume",
     "specific_heat_at_constant_pressure",
     "density",
+    "mass_fraction",
+    "melting_temperature",
+    "melting_span",
+    "latent_heat",
+    "specific_heat_of_solid",
+    "specific_heat_of_liquid",
 )
 """Stated inputs of a body that define a model with constants."""
 
@@ -43,13 +49,14 @@ class BodyModel:
     def substance(self, values: Sequence[float]) -> Substance:
         """Return the substance for values of the parents. Raises NotEvaluable."""
         *constants, density_factor, caloric_factor = values
-        if self.body.composition is not None:
-            raise NotEvaluable("mixtures of stated composition are not recomputed yet", "not-supported")
         return make_substance(
             self.body.substance,
             self.body.model,
             dict(zip(self.constants, constants, strict=True)),
             property_source=self.body.property_source,
+            composition=tuple((self.body.composition or {}).items()),
+            composition_basis=self.body.composition_basis,
+            table=tuple(tuple((name, q.value) for name, q in row.items()) for row in self.body.table),
             density_factor=density_factor,
             caloric_factor=caloric_factor,
         )
@@ -90,4 +97,7 @@ def outputs_of(state: PropertyState) -> tuple[float | str | None, ...]:
         state.specific_entropy,
         state.quality,
         None if state.phase is None else str(state.phase),
+        state.melted_fraction,
+        state.relative_humidity,
+        state.humidity_ratio,
     )

@@ -11,9 +11,14 @@ from checker.outcomes import NotEvaluable
 from checker.substances.constant_heat import ConstantHeatCondensed, ConstantHeatGas
 from checker.substances.ideal_gas import IdealGas
 from checker.substances.interface import Substance
+from checker.substances.melting import make_melting
+from checker.substances.mixtures import make_mixture
+from checker.substances.moist_air import is_moist_air, make_moist_air
 from checker.substances.names import fluid_of, knows_fluid
 from checker.substances.perturbed import PerturbedSubstance
 from checker.substances.real_fluid import IndustrialWater, RealFluid
+from checker.substances.solutions import is_solution, make_solution
+from checker.substances.tabulated import make_tabulated
 
 MOLAR_GAS_CONSTANT: Final = 8.314462618
 """[J/(mol·K)] CODATA 2018, exact by the SI."""
@@ -31,10 +36,10 @@ _CONSTANTS: Final = (
     "specific_volume",
 )
 _OF_A_GAS: Final = {"specific_heat_at_constant_volume", "gas_constant"}
-_LATER: Final = {
-    "tabulated": "tabulated properties are not recomputed yet",
-    "phase change": "melting and freezing are not recomputed yet",
-}
+Composition = tuple[tuple[str, float], ...]
+"""Substances with their fractions."""
+Table = tuple[tuple[tuple[str, float], ...], ...]
+"""Rows of a stated table: names with values in SI."""
 
 
 def make_substance(
@@ -43,6 +48,9 @@ def make_substance(
     constants: Mapping[str, float],
     *,
     property_source: str = _REFERENCE,
+    composition: Composition = (),
+    composition_basis: str = "mole",
+    table: Table = (),
     density_factor: float = 1.0,
     caloric_factor: float = 1.0,
 ) -> Substance:
@@ -60,6 +68,10 @@ def make_substance(
         [kg/mol], density [kg/m³] or specific_volume [m³/kg].
     property_source : str
         ``reference``, or ``industrial`` for water by IAPWS-IF97.
+    composition, composition_basis : tuple of (str, float), str
+        Fractions of a mixture by substance, of amount (``mole``) or of mass (``mass``).
+    table : tuple of rows
+        Stated rows of properties for the model ``tabulated``. [SI]
     density_factor, caloric_factor : float
         Factors on density, and on energies and entropies, that carry the uncertainty of the model. [1]
 
@@ -68,7 +80,7 @@ def make_substance(
     NotEvaluable
         The fluid or the model is not known, or constants are missing or contradict each other.
     """
-    bare = _bare(substance, model, constants, property_source)
+    bare = _bare(substance, model, constants, property_source, (composition, composition_basis), table)
     if density_factor == 1.0 and caloric_factor == 1.0:
         return bare
     for factor in (density_factor, caloric_factor):
@@ -77,12 +89,27 @@ def make_substance(
     return PerturbedSubstance(bare, density_factor, caloric_factor)
 
 
-def _bare(substance: str, model: str, constants: Mapping[str, float], property_source: str) -> Substance:
+def _bare(
+    substance: str,
+    model: str,
+    constants: Mapping[str, float],
+    property_source: str,
+    mixture: tuple[Composition, str],
+    table: Table,
+) -> Substance:
+    if mixture[0]:
+        return make_mixture(substance, model, *mixture)
+    if model == "tabulated":
+        return make_tabulated(substance, constants, table)
+    if model == "phase change":
+        return make_melting(substance, constants)
     if model == "constant specific heat":
         return constant_heat(substance, constants)
-    if model in _LATER:
-        raise NotEvaluable(_LATER[model], "not-supported")
+    if is_moist_air(substance):
+        return make_moist_air(model, constants)
     if model == "real fluid":
+        if is_solution(substance):
+            return make_solution(substance, constants)
         return _real(substance, property_source)
     if model == "ideal gas":
         return _ideal(substance)

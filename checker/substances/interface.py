@@ -26,7 +26,8 @@ class PropertyState:
     temperature [K], pressure [Pa] (None for an incompressible model to which no pressure was given),
     specific_volume [m³/kg] (None where the model states no density), specific_internal_energy [J/kg],
     specific_enthalpy [J/kg] (None without p or v), specific_entropy [J/(kg·K)], quality [1] inside the dome
-    and on its edge (None elsewhere), phase (None where the model has no phases).
+    and on its edge (None elsewhere), phase (None where the model has no phases), melted_fraction [1] of a body
+    that melts, relative_humidity [1] and humidity_ratio [kg of vapour per kg of dry air] of moist air.
     """
 
     temperature: float
@@ -37,6 +38,9 @@ class PropertyState:
     specific_entropy: float
     quality: float | None = None
     phase: Phase | None = None
+    melted_fraction: float | None = None
+    relative_humidity: float | None = None
+    humidity_ratio: float | None = None
 
 
 @dataclass(frozen=True, slots=True)

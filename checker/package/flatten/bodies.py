@@ -11,9 +11,9 @@ from checker.package.spot import Spot
 from checker.problems import Place
 from checker.quantity.types import Quantity
 from checker.submission import Body, Datum
-from checker.vocabulary import BODY, TERMS, Level, canonical
+from checker.vocabulary import TERMS, Level, canonical
 
-_FRACTION = next(term for term in BODY if term.name == "mass_fraction")
+_FRACTION = TERMS[Level.BODY]["mass_fraction"]
 
 
 def read_body(desk: Desk, name: str, part: BodyPart) -> Body:
