@@ -7,7 +7,7 @@ from collections.abc import Sequence
 from checker.package.desk import Desk
 from checker.package.flatten.paths import read_paths
 from checker.package.flatten.references import refer, unique
-from checker.package.parts.process import ONLY_HEAT
+from checker.package.parts.process import BESIDE_INPUTS, ONLY_HEAT
 from checker.package.parts.process import HeatTransfer as HeatPart
 from checker.package.parts.process import Process as ProcessPart
 from checker.package.parts.process import WorkTransfer as WorkPart
@@ -92,7 +92,7 @@ def _heat(
         duration=desk.duration(part.inputs, process.inputs),
     )
     at_system = part.boundary_temperature == SYSTEM
-    for name in ONLY_HEAT:
+    for name in BESIDE_INPUTS:
         text = getattr(part, name)
         if text is not None and not (at_system and name == "boundary_temperature"):
             desk.state(spot, Role.INPUT, TERMS[Level.TRANSFER][name], text, (*where, name))

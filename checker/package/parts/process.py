@@ -25,7 +25,16 @@ from checker.package.parts.state import EQUILIBRIUM_MEANING, Equilibrium
 from checker.package.words import DIRECTIONS, SYSTEM
 from checker.vocabulary import WORK_KINDS, Level
 
-ONLY_HEAT: Final = ("boundary_temperature", "reservoir_temperature")
+BESIDE_INPUTS: Final = (
+    "boundary_temperature",
+    "reservoir_temperature",
+    "final_boundary_temperature",
+    "final_reservoir_temperature",
+    "reservoir_heat_capacity",
+    "heat_loss_coefficient",
+)
+"""Inputs of a heat transfer that may stand directly on it, beside ``inputs``."""
+ONLY_HEAT: Final = (*BESIDE_INPUTS, "entropy_generation")
 """Names of the level *transfer* that say nothing about work."""
 
 ProcessNames = Annotated[Quantities, Names("ProcessQuantities", Level.PROCESS)]
@@ -44,11 +53,23 @@ class HeatTransfer(Part):
     body: Text | None = Field(None, description="The body that the heat enters or leaves.")
     from_: Text | None = Field(None, alias="from", description="Heat between bodies: the body it leaves.")
     to: Text | None = Field(None, description="Heat between bodies: the body it enters.")
-    boundary_temperature: Annotated[object, OneQuantity(Level.TRANSFER, ONLY_HEAT[0], (SYSTEM,))] = Field(
+    boundary_temperature: Annotated[object, OneQuantity(Level.TRANSFER, BESIDE_INPUTS[0], (SYSTEM,))] = Field(
         None, description="Temperature where the heat crosses; `system` follows the system."
     )
-    reservoir_temperature: Annotated[object, OneQuantity(Level.TRANSFER, ONLY_HEAT[1])] = Field(
-        None, description="Temperature of what the heat comes from or goes to."
+    reservoir_temperature: Annotated[object, OneQuantity(Level.TRANSFER, BESIDE_INPUTS[1])] = Field(
+        None, description="Temperature of what the heat comes from or goes to; at the start, if it changes."
+    )
+    final_boundary_temperature: Annotated[object, OneQuantity(Level.TRANSFER, BESIDE_INPUTS[2])] = Field(
+        None, description="Temperature at the end where the heat crosses, if it moves in proportion to the heat."
+    )
+    final_reservoir_temperature: Annotated[object, OneQuantity(Level.TRANSFER, BESIDE_INPUTS[3])] = Field(
+        None, description="Temperature at the end of a reservoir of finite heat capacity."
+    )
+    reservoir_heat_capacity: Annotated[object, OneQuantity(Level.TRANSFER, BESIDE_INPUTS[4])] = Field(
+        None, description="Heat capacity of a finite reservoir."
+    )
+    heat_loss_coefficient: Annotated[object, OneQuantity(Level.TRANSFER, BESIDE_INPUTS[5])] = Field(
+        None, description="Heat flow per kelvin between the body and the reservoir or the surroundings (UA)."
     )
     inputs: HeatNames = Field({}, description="What the originator started from.")
     results: HeatNames = Field({}, description="What the originator claims.")
