@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Mapping
+from dataclasses import replace
 
 from checker.basis import Basis
 from checker.case import Case
@@ -13,13 +14,15 @@ from checker.comparison.moves import moves_of
 from checker.comparison.references import References
 from checker.display import display_of
 from checker.sheet.build import RecordPlan, build_sheet
+from checker.sheet.links import has_own_inputs, target_of
 from checker.sheet.step import Values, evaluate
 from checker.submission import PackageHead, Record, Statement
 
 
 def make_case(head: PackageHead, record: Record, basis: Basis, others: Mapping[str, Case]) -> Case:
     """Return the case of a record; ``others`` holds the cases of records that it links to."""
-    plan = build_sheet(record)
+    followed = without_lost_links(record, others)
+    plan = build_sheet(followed)
     sheet = plan.sheet
     leaves = {**plan.leaves.values, **_linked(plan, others, carried=False)}
     values = evaluate(sheet.steps, leaves)
@@ -27,13 +30,29 @@ def make_case(head: PackageHead, record: Record, basis: Basis, others: Mapping[s
     shifts = shifts_of(record, plan, values, references)
     moves = moves_of(record, sheet, values, plan.substances, basis)
     carried_leaves = {**plan.leaves.values, **_linked(plan, others, carried=True)}
-    carried = carry(record, plan, carried_leaves, values, shifts)
+    carried = carry(followed, plan, carried_leaves, values, shifts)
     compared = compare_all(record, sheet, values, carried, moves, references, shifts, basis)
     display = display_of(record, sheet, values)
     by_key = _by_key(plan, record)
     return Case(
         head, record, plan, values, carried, moves, references, compared, display, basis, by_key, dict(others)
     )
+
+
+def without_lost_links(record: Record, others: Mapping[str, Case]) -> Record:
+    """Return a record without those links to other records that lead to no state, where own inputs stand beside them.
+
+    Inputs that fix the state are then used; that the link was not compared is listed as not checked.
+    """
+    states = dict(record.body_states)
+    for (state, body), found in record.body_states.items():
+        target = target_of(record, state, body)
+        if target is None or target.record == record.id or not has_own_inputs(record, state, body):
+            continue
+        other = others.get(target.record)
+        if other is None or other.value(target.key("temperature")) is None:
+            states[state, body] = replace(found, same_as=None)
+    return record if states == record.body_states else replace(record, body_states=states)
 
 
 def _by_key(plan: RecordPlan, record: Record) -> dict[str, tuple[Statement, ...]]:

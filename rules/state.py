@@ -7,6 +7,7 @@ from typing import Final
 
 from checker.case import Case, Raised, Unchecked, Yielded
 from checker.facts.gaps import gaps_of
+from checker.facts.links import differences, found_otherwise, is_known
 from checker.facts.phases import claims_of, possible_phases
 from checker.facts.state_gaps import without_datum
 from checker.facts.stated import is_wrong
@@ -85,6 +86,11 @@ def has_phase_claim(case: Case, item: str) -> bool:
     return bool(claims_of(case, state, body))
 
 
+def has_links(case: Case, _: str) -> bool:
+    """Say whether a record has linked states."""
+    return any(found.same_as is not None for found in case.record.body_states.values())
+
+
 def quality_outside_range(case: Case, item: str) -> Yielded:
     """Yield a quality below 0 or above 1."""
     pointer = f"states/{item}/quality"
@@ -95,6 +101,30 @@ def quality_outside_range(case: Case, item: str) -> Yielded:
                 statement=s,
                 suggestion="Superheated vapour and subcooled liquid have no quality: state two other properties.",
             )
+
+
+def link_contradicted(case: Case) -> Yielded:
+    """Yield states that are declared the same as another one, and that their own inputs or path put elsewhere."""
+    for found, home, target in found_otherwise(case):
+        link, pointer = str(found.same_as), f"states/{found.state}/{found.body}"
+        if home is None or not is_known(home, target):
+            yield Unchecked(f"link of {pointer}", f"{link} has no value to compare with")
+            continue
+        apart = tuple(differences(case, found, home, target))
+        if not apart:
+            continue
+        first = apart[0]
+        own = first.linked + first.deviation.size
+        grades = [a.deviation.grade for a in apart]
+        yield Raised(
+            f"{found.state} is declared the same as {link}, where {first.name.replace('_', ' ')} is "
+            f"{case.show(first.pointer, first.linked)}; what is stated beside the link gives "
+            f"{case.show(first.pointer, own)}.",
+            quantity=pointer,
+            place=(*found.place, "same_as"),
+            grade=Grade.QUERY if all(grades) else None,
+            suggestion="Drop the link or the inputs beside it, whichever does not define the case.",
+        )
 
 
 RULES: Final[tuple[Rule, ...]] = (
@@ -172,6 +202,16 @@ RULES: Final[tuple[Rule, ...]] = (
         "Properties were read from the wrong region, or the inputs are not those of the state that was meant.",
         PHASE_RULE,
         when=has_phase_claim,
+    ),
+    Rule(
+        "link-contradicted",
+        link_contradicted,
+        Scope.RECORD,
+        "state",
+        Grade.DISCREPANCY,
+        "A state is declared the same as another one, and what is stated beside the link puts it elsewhere.",
+        "Two descriptions of one state cannot both be right, and the result depends on which was used.",
+        when=has_links,
     ),
     Rule(
         "quality-outside-range",

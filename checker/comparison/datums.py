@@ -36,14 +36,17 @@ Key = tuple[str, str]
 
 
 def shifts_of(record: Record, plan: RecordPlan, values: Values, references: References) -> dict[str, Shift]:
-    """Return pointer → shift for every stated absolute u, h, s, U, H or S."""
+    """Return pointer → shift for every stated absolute u, h, s, U, H or S.
+
+    An input has a shift only on a declared datum; without one it is not calculated with, nor compared.
+    """
     groups: dict[Key, list[Statement]] = defaultdict(list)
     for statement in record.statements:
         parts = statement.pointer.split("/")
-        if statement.usable and statement.role is Role.RESULT and parts[0] == "states" and len(parts) == 4:
-            kind = _kind_of(parts[3])
-            if kind:
-                groups[parts[2], kind].append(statement)
+        kind = _kind_of(parts[3]) if parts[0] == "states" and len(parts) == 4 else ""
+        compared = statement.role is Role.RESULT or (kind and plan.offsets.get(parts[2]) is not None)
+        if statement.usable and kind and compared:
+            groups[parts[2], kind].append(statement)
     shifts: dict[str, Shift] = {}
     for (body, kind), statements in groups.items():
         shifts.update(_shifts_of_group(plan, body, kind, statements, values, references))

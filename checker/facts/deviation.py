@@ -55,9 +55,15 @@ def difference(case: Case, first: str, last: str, allowance: float) -> Deviation
     allowance : float
         What the reviewer tolerates, in SI; uncertainty of both is added to it.
     """
-    before, after = case.value(first), case.value(last)
+    return between((case, first), (case, last), allowance)
+
+
+def between(first: tuple[Case, str], last: tuple[Case, str], allowance: float) -> Deviation | None:
+    """Return last − first of quantities of two records, as ``difference`` does for one."""
+    (case, one), (other, two) = first, last
+    before, after = case.value(one), other.value(two)
     if before is None or after is None:
         return None
-    uncertainty = math.hypot(case.uncertainty(first), case.uncertainty(last))
-    digits = math.hypot(case.digit_move(first), case.digit_move(last))
+    uncertainty = math.hypot(case.uncertainty(one), other.uncertainty(two))
+    digits = math.hypot(case.digit_move(one), other.digit_move(two))
     return Deviation(after - before, allowance + uncertainty, digits)

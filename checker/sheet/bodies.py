@@ -8,6 +8,7 @@ from checker.outcomes import NotEvaluable
 from checker.quantity import dimensions as dim
 from checker.sheet.balances import STANDARD_GRAVITY, same_value
 from checker.sheet.keys import body_key, clue, given, state_key
+from checker.sheet.links import mass_steps
 from checker.sheet.models import BodyModel
 from checker.sheet.states import EXTENSIVE, SYMBOLS
 from checker.sheet.step import Step, Value
@@ -17,7 +18,7 @@ from checker.submission import Record
 def body_steps(record: Record, body: str, model: BodyModel, first_state: str | None) -> Iterator[Step]:
     """Yield the candidates of one body, the mass first."""
     states = [state for state, name in record.body_states if name == body]
-    yield from _mass_steps(body, states, first_state)
+    yield from _mass_steps(record, body, states, first_state)
     yield from _constant_steps(body, model)
     if first_state is not None:
         yield Step(
@@ -42,13 +43,10 @@ def _ratio(a: float, b: float) -> tuple[float]:
     return (a / b,)
 
 
-def _mass_steps(body: str, states: list[str], first_state: str | None) -> Iterator[Step]:
+def _mass_steps(record: Record, body: str, states: list[str], first_state: str | None) -> Iterator[Step]:
     mass = body_key(body, "mass")
     yield same_value(mass, given(mass), f"Mass of {body}", "m given")
-    for state in states:
-        yield same_value(
-            mass, f"link/{state_key(state, body, 'mass')}", f"Mass of {body}", "m of the linked record"
-        )
+    yield from mass_steps(record, body)
     yield Step(
         f"Mass of {body}",
         (mass,),

@@ -14,6 +14,7 @@ from checker.sheet.datum import Offset, declared_offset
 from checker.sheet.endstates import Neighbour, curve_steps, path_clues
 from checker.sheet.keys import body_key, clue, given, plain, state_key, term_for
 from checker.sheet.leaves import Leaves, collect
+from checker.sheet.links import link_clues
 from checker.sheet.models import BodyModel, body_model
 from checker.sheet.planner import explain, plan, prune
 from checker.sheet.processes import process_steps
@@ -141,11 +142,8 @@ class _Builder:
         model, substance = self.models[body], self.substances.get(body)
         found = self.record.body_states[state, body]
         phase = Phase(found.phase) if found.phase and found.phase_role is Role.INPUT else None
-        clues = [Clue(name, given(state_key(state, body, name)), stated=True) for name in DIRECT]
-        clues += [
-            Clue(name, f"link/{state_key(state, body, name)}", stated=True)
-            for name in ("temperature", "specific_volume")
-        ]
+        clues = list(link_clues(self.record, state, body))
+        clues += [Clue(name, given(state_key(state, body, name)), stated=True) for name in DIRECT]
         bare = StatePlan(state, body, model, ())
         for made, step in clue_steps(bare, body_key(body, "mass")):
             clues.append(made)

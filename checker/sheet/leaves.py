@@ -7,14 +7,12 @@ from dataclasses import dataclass
 
 from checker.outcomes import NotEvaluable
 from checker.sheet.datum import Offset
-from checker.sheet.keys import body_key, given, state_key
+from checker.sheet.keys import given
+from checker.sheet.links import leaves_of
 from checker.sheet.models import BodyModel, factor_key
 from checker.sheet.same import SameQuantity
 from checker.sheet.step import Link
 from checker.submission import Record, Role
-
-LINKED = ("temperature", "specific_volume")
-"""What a linked state takes over; these two fix a state of any model."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -61,7 +59,7 @@ def collect(
     for body in models:
         values[factor_key(body, "density_factor")] = 1.0
         values[factor_key(body, "caloric_factor")] = 1.0
-    return Leaves(values, known_inputs, frozenset(stated), unusable, tuple(_links(record)))
+    return Leaves(values, known_inputs, frozenset(stated), unusable, tuple(leaves_of(record)))
 
 
 def datum_shift(key: str, offsets: Mapping[str, Offset | None]) -> float:
@@ -89,20 +87,3 @@ def datum_shift(key: str, offsets: Mapping[str, Offset | None]) -> float:
     if shift and not name.startswith("specific_"):
         raise NotEvaluable(f"{name.replace('_', ' ')} as an input needs the model's own datum", "missing")
     return shift
-
-
-def _links(record: Record) -> list[Link]:
-    links = []
-    for (state, body), found in record.body_states.items():
-        if not found.same_as:
-            continue
-        parts = found.same_as.split("/")
-        if len(parts) != 5 or parts[0] != "records" or parts[2] != "states":
-            continue
-        other, other_state, other_body = parts[1], parts[3], parts[4]
-        for name in LINKED:
-            links.append(
-                Link(f"link/{state_key(state, body, name)}", other, state_key(other_state, other_body, name))
-            )
-        links.append(Link(f"link/{state_key(state, body, 'mass')}", other, body_key(other_body, "mass")))
-    return links

@@ -53,6 +53,7 @@ class _Planner:
         self._clue_of: dict[str, list[int]] = defaultdict(list)
         self._ready = [index for index, count in enumerate(self._lacking) if count == 0]
         self._ready_states: list[int] = []
+        self._waiting: list[int] = []
         for index, step in enumerate(candidates):
             for parent in set(step.parents):
                 self._users[parent].append(index)
@@ -73,16 +74,28 @@ class _Planner:
             heappush(self._ready_states, index)
 
     def settle(self) -> None:
-        """Take states and candidates until none applies any more."""
-        while self._ready_states or self._ready:
+        """Take states and candidates until none applies any more.
+
+        A state whose link may still be found waits for it until nothing else applies.
+        """
+        while self._ready_states or self._ready or self._waiting:
             if self._ready_states:
-                state = self._states[heappop(self._ready_states)]
-                if state.key not in self.known and (pair := best_pair(state, self.known)) is not None:
-                    self._take(state_step(state, pair))
-                continue
-            step = self._candidates[heappop(self._ready)]
-            if step.outputs[0] not in self.known:
-                self._take(step)
+                index = heappop(self._ready_states)
+                if self._states[index].awaits_link(self.known):
+                    heappush(self._waiting, index)
+                else:
+                    self._try_state(self._states[index])
+            elif self._ready:
+                step = self._candidates[heappop(self._ready)]
+                if step.outputs[0] not in self.known:
+                    self._take(step)
+            else:
+                self._try_state(self._states[heappop(self._waiting)])
+
+    def _try_state(self, state: StatePlan) -> None:
+        """Take a state where two of its clues are known."""
+        if state.key not in self.known and (pair := best_pair(state, self.known)) is not None:
+            self._take(state_step(state, pair))
 
     def open_states(self) -> list[StatePlan]:
         """Return the states that are not found yet."""

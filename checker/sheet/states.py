@@ -58,11 +58,15 @@ EXTENSIVE: Final = {
 
 @dataclass(frozen=True, slots=True)
 class Clue:
-    """A property known for a state, under a key; ``stated`` where the originator gave it directly."""
+    """A property known for a state, under a key.
+
+    ``stated`` where the originator gave it directly, ``linked`` where the state that this one is the same as has it.
+    """
 
     name: str
     key: str
     stated: bool = False
+    linked: bool = False
 
 
 @dataclass(frozen=True, slots=True)
@@ -85,6 +89,10 @@ class StatePlan:
         """Key whose presence says that the state is found."""
         return state_key(self.state, self.body, "temperature")
 
+    def awaits_link(self, known: frozenset[str] | set[str]) -> bool:
+        """Say whether the state is linked to one that is not found yet."""
+        return any(one.linked and one.key not in known for one in self.clues)
+
     @property
     def outputs(self) -> tuple[str, ...]:
         """Keys of the state's properties."""
@@ -92,13 +100,19 @@ class StatePlan:
 
 
 def best_pair(plan: StatePlan, known: frozenset[str] | set[str]) -> tuple[Clue, ...] | None:
-    """Return the clues to use: two, or one for an incompressible model; None where they do not suffice."""
+    """Return the clues to use: two, or one for an incompressible model; None where they do not suffice.
+
+    A link replaces inputs, so what it brings is used together, and never beside an input that may contradict it.
+    """
     usable: dict[str, Clue] = {}
     for one in plan.clues:
         if one.key in known:
             usable.setdefault(one.name, one)
     if plan.incompressible:
         return _one_clue(usable)
+    linked = tuple(one for one in plan.clues if one.linked and one.key in known)
+    if len(linked) > 1:
+        return linked
     if (saturated := _saturation_quality(plan, usable)) is not None:
         return saturated
     ranked = [
