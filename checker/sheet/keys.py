@@ -2,11 +2,13 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
 from functools import lru_cache
 from typing import Final
 
 from checker.quantity import dimensions as dim
 from checker.vocabulary import Allowance, Level, Term, term_of
+from checker.vocabulary.common import TEMPERATURE
 
 STATE_OUTPUTS: Final = (
     "temperature",
@@ -91,6 +93,21 @@ _HIDDEN: Final[dict[str, Term]] = {
         "work of no kind that is stated",
         allowance=Allowance.ENERGY,
         theme="energy",
+    ),
+    "supplied_power": Term(
+        "supplied_power", "P", dim.POWER, "kW", "constant power into the body beside the losses"
+    ),
+    "mean_temperature": replace(
+        TEMPERATURE, name="mean_temperature", symbol="T̄", meaning="mean temperature over the time"
+    ),
+    "harmonic_mean_temperature": replace(
+        TEMPERATURE,
+        name="harmonic_mean_temperature",
+        symbol="T_h",
+        meaning="harmonic mean temperature over the time",
+    ),
+    "outside_temperature": replace(
+        TEMPERATURE, name="outside_temperature", symbol="T_out", meaning="temperature that losses go to"
     ),
     "density_factor": Term("density_factor", "f_ρ", dim.NONE, "", "factor on the model's density"),
     "caloric_factor": Term("caloric_factor", "f_u", dim.NONE, "", "factor on the model's energy and entropy"),

@@ -1,0 +1,76 @@
+"""Where a body is after a time: its energy per mass followed along the path with a step that adapts itself.
+
+Runge-Kutta pair of order 5 and 4, coefficients of J. R. Dormand and P. J. Prince, J. Comput. Appl. Math. 6 (1980) 19.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Callable
+from typing import Final
+
+from checker.outcomes import NotEvaluable
+
+STAGES: Final = (
+    (1 / 5,),
+    (3 / 40, 9 / 40),
+    (44 / 45, -56 / 15, 32 / 9),
+    (19372 / 6561, -25360 / 2187, 64448 / 6561, -212 / 729),
+    (9017 / 3168, -355 / 33, 46732 / 5247, 49 / 176, -5103 / 18656),
+    (35 / 384, 0.0, 500 / 1113, 125 / 192, -2187 / 6784, 11 / 84),
+)
+DIFFERENCE: Final = (71 / 57600, 0.0, -71 / 16695, 71 / 1920, -17253 / 339200, 22 / 525, -1 / 40)
+"""Order 5 less order 4."""
+ACCURACY: Final = 1e-9
+"""Largest error of a step, relative to the energy that the whole time could bring (chosen)."""
+MOST_STEPS: Final = 2000
+SMALLEST: Final = 1e-12
+
+
+def march(rate: Callable[[float], float], start: float, duration: float) -> float:
+    """Return the energy per mass [J/kg] after a duration [s], which may be negative.
+
+    Parameters
+    ----------
+    rate : callable
+        Energy per mass and time [W/kg] at an energy per mass; may raise NotEvaluable outside the model's range.
+    start : float
+        Energy per mass at the start. [J/kg]
+    duration : float
+        [s]
+
+    Raises
+    ------
+    NotEvaluable
+        The body leaves the range of its model, or the course does not converge.
+    """
+    first = rate(start)
+    energy, done, step = start, 0.0, duration / 16.0
+    scale = max(abs(first * duration), 1e-9)
+    for _ in range(MOST_STEPS):
+        if abs(step) < SMALLEST * abs(duration):
+            rate(energy + first * step)  # raises the model's own reason
+            raise NotEvaluable("the course of the temperature does not converge", "ill-conditioned")
+        step = min(step, duration - done, key=abs)
+        trial = _trial(rate, energy, first, step)
+        off = float("inf") if trial is None else abs(trial[1]) / (ACCURACY * scale)
+        if trial is not None and off <= 1.0:
+            energy, first, done = trial[0], trial[2], done + step
+            if done == duration or abs(duration - done) < SMALLEST * abs(duration):
+                return energy
+        step *= 0.25 if trial is None else min(4.0, max(0.2, 0.9 * (off + 1e-12) ** -0.2))
+    raise NotEvaluable("the course of the temperature does not converge", "ill-conditioned")
+
+
+def _trial(
+    rate: Callable[[float], float], energy: float, first: float, step: float
+) -> tuple[float, float, float] | None:
+    """Return the energy after a step, its error and the rate there; None where a stage leaves the model's range."""
+    rates = [first]
+    moved = energy
+    try:
+        for weights in STAGES:
+            moved = energy + step * sum(w * r for w, r in zip(weights, rates, strict=True))
+            rates.append(rate(moved))
+    except NotEvaluable:
+        return None
+    return moved, step * sum(w * r for w, r in zip(DIFFERENCE, rates, strict=True)), rates[-1]

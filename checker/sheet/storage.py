@@ -1,0 +1,90 @@
+"""What a body stores along a path that its energy alone describes: u at constant volume, h at constant pressure."""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Sequence
+from dataclasses import dataclass
+
+from checker.outcomes import NotEvaluable
+from checker.sheet.keys import body_key, state_key
+from checker.sheet.models import BodyModel
+from checker.substances.interface import Substance
+
+
+@dataclass(frozen=True, slots=True)
+class Stored:
+    """A body in one state of its path.
+
+    Attributes
+    ----------
+    mass, temperature, energy : float
+        [kg], [K], and per mass [J/kg].
+    heat_capacity : callable
+        Returns the heat capacity of a body for which it is constant. [J/K]
+    temperature_of : callable
+        Temperature [K] at an energy per mass [J/kg].
+    """
+
+    mass: float
+    temperature: float
+    energy: float
+    heat_capacity: Callable[[], float]
+    temperature_of: Callable[[float], float]
+
+
+@dataclass(frozen=True, slots=True)
+class Storage:
+    """How a body stores energy: ``energy`` names its energy per mass, ``held`` the property that stays, if any does."""
+
+    model: BodyModel
+    energy: str
+    held: str = ""
+
+    @property
+    def is_constant(self) -> bool:
+        """Whether the heat capacity is constant."""
+        substance = self.model.at_nominal()
+        return substance is not None and substance.model == "constant specific heat"
+
+    def energy_in(self, state: str) -> str:
+        """Return the key of the energy per mass in a state."""
+        return state_key(state, self.model.body.id, self.energy)
+
+    def temperature_in(self, state: str) -> str:
+        """Return the key of the temperature in a state."""
+        return state_key(state, self.model.body.id, "temperature")
+
+    def parents(self, state: str) -> tuple[str, ...]:
+        """Return the keys from which ``read`` takes the body in a state."""
+        body = self.model.body.id
+        held = (state_key(state, body, self.held),) if self.held else ()
+        return (
+            body_key(body, "mass"),
+            self.temperature_in(state),
+            self.energy_in(state),
+            *held,
+            *self.model.parents,
+        )
+
+    def read(self, values: Sequence[float]) -> Stored:
+        """Return the body from the values of its parents. Raises NotEvaluable."""
+        mass, temperature, energy, *rest = values
+        if mass <= 0.0:
+            raise NotEvaluable("the mass must be positive")
+        fixed = {self.held: rest.pop(0)} if self.held else {}
+        substance = self.model.substance(rest)
+        return Stored(
+            mass,
+            temperature,
+            energy,
+            lambda: mass * self._per_kelvin(substance, fixed, temperature),
+            lambda wanted: substance.state({**fixed, self.energy: wanted}).temperature,
+        )
+
+    def _per_kelvin(self, substance: Substance, fixed: dict[str, float], temperature: float) -> float:
+        one, two = (
+            getattr(substance.state({**fixed, "temperature": t}), self.energy)
+            for t in (temperature, temperature + 1.0)
+        )
+        rise: float = two - one
+        return rise
