@@ -2,14 +2,16 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable
+from collections.abc import Callable, Mapping
 from itertools import pairwise
 from typing import Final
 
 from checker.case import Case, Raised, Unchecked, Yielded
-from checker.facts import adequacy
+from checker.facts import adequacy, idealised
+from checker.facts.adequacy import GasCheck
 from checker.facts.gaps import gaps_of
 from checker.facts.paths import followers
+from checker.facts.redone import Moved, in_words
 from checker.facts.twins import is_gas, is_incompressible
 from checker.findings import Grade
 from checker.submission import Role
@@ -20,7 +22,9 @@ from rules.state import report_gaps
 FAR: Final = 10.0
 """So many allowances away, a gas is no ideal gas and the model must be changed (chosen)."""
 NOTED: Final = 4.0
-"""Up to so many allowances a constant specific heat is noted; beyond them it is asked about (chosen)."""
+"""Up to so many allowances what an idealisation costs a result is noted; beyond them it is asked about (chosen)."""
+MOST_SHOWN: Final = 3
+"""Results that a message lists, the worst first."""
 OWN_EQUATION: Final = "equation of state of the named fluid, as printed with the models of the record"
 
 
@@ -29,25 +33,56 @@ def gas_state(case: Case, item: str) -> bool:
     return is_gas(case, item.split("/")[1])
 
 
-def too_dense(case: Case, item: str) -> Yielded:
-    """Yield states of an ideal gas in which the real fluid's compressibility factor is not 1."""
-    state, body = item.split("/")
-    check = adequacy.gas_check(case, state, body)
-    if check is None:
-        yield _no_twin(case, item, body)
-    elif check.factor is not None:
-        off, allowed = abs(check.factor - 1.0), case.basis.allowances[Allowance.VALUE]
-        if off > allowed:
-            yield Raised(
-                f"{case.record.bodies[body].substance} has a compressibility factor of {check.factor:.4f} in state "
-                f"{state}; as an ideal gas its pressure, volume or mass is off by {100 * off:.1f} %.",
-                quantity=f"states/{item}",
-                place=case.record.body_states[state, body].place,
-                grade=Grade.DISCREPANCY if off > FAR * allowed else None,
-                suggestion="Use the model `real fluid`, or show that the results do not need this accuracy.",
+def too_dense(case: Case, body: str) -> Yielded:
+    """Yield an ideal gas whose compressibility factor is off 1 and costs the results more than the allowance."""
+    checks = adequacy.gas_checks(case, body)
+    yield from _without_factor(case, body, checks)
+    worst = adequacy.densest(checks)
+    off = abs(worst[1] - 1.0) / case.basis.allowances[Allowance.VALUE] if worst else 0.0
+    if worst is None or off <= 1.0:
+        return
+    found = idealised.by_real_gas(case, body) or ()
+    if found and found[0].allowances <= 1.0:
+        return
+    yield Raised(
+        f"{case.record.bodies[body].substance} has a compressibility factor of {worst[1]:.4f} in state {worst[0]}. "
+        + _results(case, found, "as a real fluid", "as an ideal gas", off),
+        quantity=f"bodies/{body}",
+        place=case.record.bodies[body].place,
+        grade=_of_density(off, found[0].allowances if found else off),
+        suggestion="Use the model `real fluid`, or show that the results do not need this accuracy.",
+    )
+
+
+def _without_factor(case: Case, body: str, checks: Mapping[str, GasCheck | None]) -> Yielded:
+    for state, check in checks.items():
+        if check is None:
+            yield _no_twin(case, f"{state}/{body}", body)
+        elif check.factor is None and not check.condensed:
+            yield Unchecked(
+                f"ideal-gas-too-dense: states/{state}/{body}", "the real fluid has no value there"
             )
-    elif not check.condensed:
-        yield Unchecked(f"ideal-gas-too-dense: states/{item}", "the real fluid has no value there")
+
+
+def _of_density(off: float, moved: float) -> Grade:
+    """Return the grade by how many allowances Z is off 1, and the results move."""
+    if moved <= NOTED:
+        return Grade.REMARK
+    return Grade.DISCREPANCY if min(off, moved) > FAR else Grade.QUERY
+
+
+def _results(case: Case, found: tuple[Moved, ...], better: str, own: str, off: float = 0.0) -> str:
+    """Return the results that move by more than their allowance, as a sentence."""
+    beyond = [m for m in found if m.allowances > 1.0]
+    if not beyond:
+        share = 100.0 * off * case.basis.allowances[Allowance.VALUE]
+        return f"Its pressure, volume or mass is off by {share:.1f} %; no result could be redone with the real fluid."
+    words = [
+        f"{in_words(m.pointer)} {case.show(m.pointer, m.second)} instead of {case.show(m.pointer, m.first)}"
+        for m in beyond[:MOST_SHOWN]
+    ]
+    more = f"; and {len(beyond) - MOST_SHOWN} more" if len(beyond) > MOST_SHOWN else ""
+    return f"Redone {better} and not {own}: {'; '.join(words)}{more}."
 
 
 def condenses(case: Case, item: str) -> Yielded:
@@ -73,37 +108,29 @@ def _no_twin(case: Case, item: str, body: str) -> Unchecked:
     )
 
 
-def constant_heat_process(case: Case, process: str) -> bool:
-    """Say whether a body of a process is calculated with a constant specific heat and has a better model."""
-    ctx = case.context(process)
-    return ctx is not None and any(
-        adequacy.has_constant_heat(case, body) and adequacy.better_heat(case, body) for body in ctx.bodies
-    )
+def constant_heat_body(case: Case, body: str) -> bool:
+    """Say whether a body is calculated with a constant specific heat and has a better model."""
+    return adequacy.has_constant_heat(case, body) and adequacy.better_heat(case, body) is not None
 
 
-def heat_not_constant(case: Case, process: str) -> Yielded:
-    """Yield processes whose ΔU changes by more than the allowance when c follows the temperature."""
-    ctx = case.context(process)
-    assert ctx is not None
-    for body in ctx.bodies:
-        if not adequacy.has_constant_heat(case, body):
-            continue
-        check = adequacy.heat_check(case, process, body)
-        if check is None:
-            yield Unchecked(
-                f"specific heat of {body}, {process}", "its temperatures are not those of one phase"
-            )
-        elif (off := abs(check.constant - check.better)) > check.allowed:
-            pointer = f"processes/{process}/internal_energy_change"
-            values = [case.show(pointer, value) for value in (check.constant, check.better)]
-            yield Raised(
-                f"ΔU of {body} is {values[0]} with the constant specific heat and {values[1]} with that of "
-                f"{case.record.bodies[body].substance} ({check.model}) over the temperatures of the process.",
-                quantity=pointer,
-                place=case.record.bodies[body].place,
-                grade=Grade.REMARK if off <= NOTED * check.allowed else Grade.QUERY,
-                suggestion="Use a mean value for this span, or the model `ideal gas` or `real fluid`.",
-            )
+def heat_not_constant(case: Case, body: str) -> Yielded:
+    """Yield a body whose results move by more than the allowance when c follows the temperature."""
+    if idealised.of_another_substance(case, body) or idealised.changes_phase(case, body):
+        return
+    found = idealised.by_real_heat(case, body)
+    if found is None:
+        if idealised.claims_something(case):
+            yield Unchecked(f"specific heat of {body}", "its temperatures are not those of one phase")
+    elif found[0].allowances > 1.0:
+        name = case.record.bodies[body].substance
+        yield Raised(
+            f"The specific heat of {name} changes over the temperatures of the record. "
+            + _results(case, found, f"with that of {name}", "with a constant one"),
+            quantity=f"bodies/{body}",
+            place=case.record.bodies[body].place,
+            grade=Grade.REMARK if found[0].allowances <= NOTED else Grade.QUERY,
+            suggestion="Use a mean value for this span, or the model `ideal gas` or `real fluid`.",
+        )
 
 
 def phase_crossed(case: Case, process: str) -> Yielded:
@@ -271,14 +298,15 @@ RULES: Final[tuple[Rule, ...]] = (
     Rule(
         "ideal-gas-too-dense",
         too_dense,
-        Scope.STATE,
+        Scope.BODY,
         "model adequacy",
         Grade.QUERY,
-        "A gas is calculated as ideal where its compressibility factor is off by more than the allowance.",
-        "Pressure, volume or mass are off by as much, and no result of the record shows it.",
+        "A gas is calculated as ideal where its compressibility factor is off 1 by more than the allowance, and the "
+        "record, done once more as a real fluid, moves a result by more than its allowance (a remark; beyond four of "
+        "them a query; beyond ten, with Z as far off, a discrepancy).",
+        "The originator's results agree with the model and not with the gas; nothing else in the record shows it.",
         OWN_EQUATION,
-        needs=("temperature", "pressure"),
-        when=gas_state,
+        when=is_gas,
     ),
     Rule(
         "ideal-gas-condenses",
@@ -295,13 +323,14 @@ RULES: Final[tuple[Rule, ...]] = (
     Rule(
         "constant-specific-heat-over-wide-span",
         heat_not_constant,
-        Scope.PROCESS,
+        Scope.BODY,
         "model adequacy",
         Grade.QUERY,
-        "ΔU moves by more than the allowance (a remark; beyond four of them a query) when c follows temperature.",
+        "A result moves by more than the allowance (a remark; beyond four of them a query) when the record is done "
+        "once more with a specific heat that follows the temperature.",
         "The record agrees with its own constant and not with the substance.",
         OWN_EQUATION,
-        when=constant_heat_process,
+        when=constant_heat_body,
     ),
     Rule(
         "latent-heat-left-out",

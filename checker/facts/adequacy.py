@@ -2,11 +2,11 @@
 
 from __future__ import annotations
 
+from collections.abc import Mapping
 from dataclasses import dataclass
 from typing import Final
 
 from checker.case import Case
-from checker.facts.balance import energy_allowance
 from checker.facts.twins import (
     CONSTANT,
     IDEAL,
@@ -14,7 +14,6 @@ from checker.facts.twins import (
     blocked_in_pressure,
     boiling_temperature,
     compressibility,
-    energy_difference,
     is_condensed,
     is_gas,
     twin,
@@ -47,6 +46,19 @@ def gas_check(case: Case, state: str, body: str) -> GasCheck | None:
     return GasCheck(compressibility(real, temperature, pressure), False)
 
 
+def gas_checks(case: Case, body: str) -> dict[str, GasCheck | None]:
+    """Return how real a gas is in each of its states."""
+    return {state: gas_check(case, state, body) for state in states_of(case, body)}
+
+
+def densest(checks: Mapping[str, GasCheck | None]) -> tuple[str, float] | None:
+    """Return the state in which Z is farthest from 1, and Z; None where no Z is known or the fluid is liquid."""
+    if any(check is not None and check.condensed for check in checks.values()):
+        return None
+    factors = [(s, c.factor) for s, c in checks.items() if c is not None and c.factor is not None]
+    return max(factors, key=lambda found: abs(found[1] - 1.0), default=None)
+
+
 def own_compressibility(case: Case, state: str, body: str) -> float | None:
     """Return Z = p·v/(R·T) of a real fluid in a state."""
     names = ("temperature", "pressure", "specific_volume")
@@ -57,30 +69,9 @@ def own_compressibility(case: Case, state: str, body: str) -> float | None:
     return pressure * volume / (substance.gas_constant * temperature)
 
 
-@dataclass(frozen=True, slots=True)
-class HeatCheck:
-    """ΔU with a constant specific heat and with one that follows the temperature; SI."""
-
-    constant: float
-    better: float
-    allowed: float
-    model: str
-
-
-def heat_check(case: Case, process: str, body: str) -> HeatCheck | None:
-    """Return both changes of internal energy of a body; None where the substance has no better model."""
-    ctx, better = case.context(process), better_heat(case, body)
-    if ctx is None or better is None:
-        return None
-    change, mass = case.value(ctx.share(body, "internal_energy_change")), case.value(f"bodies/{body}/mass")
-    ends = (ctx.process.from_state, ctx.process.to_state)
-    first, last = (case.value(f"states/{state}/{body}/temperature") for state in ends)
-    if change is None or mass is None or first is None or last is None:
-        return None
-    found = energy_difference(better, first, last)
-    if found is None:
-        return None
-    return HeatCheck(change, mass * found, energy_allowance(case, process), better.model)
+def states_of(case: Case, body: str) -> tuple[str, ...]:
+    """Return the states that a body has."""
+    return tuple(state for state, name in case.record.body_states if name == body)
 
 
 def better_heat(case: Case, body: str) -> Substance | None:

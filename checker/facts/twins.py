@@ -75,14 +75,6 @@ def is_condensed(real: Substance, temperature: float, pressure: float) -> bool:
     return vapour is not None and pressure > vapour * (1.0 + 1e-6)
 
 
-def energy_difference(better: Substance, first: float, last: float) -> float | None:
-    """Return u(last) − u(first) at a low pressure, or at the saturation pressure of a liquid. [J/kg]"""
-    ends = [_caloric_state(better, temperature, max(first, last)) for temperature in (first, last)]
-    if ends[0] is None or ends[1] is None:
-        return None
-    return ends[1].specific_internal_energy - ends[0].specific_internal_energy
-
-
 def _caloric_state(better: Substance, temperature: float, warmest: float) -> PropertyState | None:
     pressure = ATMOSPHERE
     if better.model == REAL:
