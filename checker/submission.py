@@ -125,6 +125,11 @@ class HeatTransfer:
     to_body: str | None = None
     at_system: bool = False
 
+    @property
+    def is_internal(self) -> bool:
+        """Say whether the heat passes from one body of the record to another."""
+        return self.from_body is not None and self.to_body is not None
+
 
 @dataclass(frozen=True, slots=True)
 class WorkTransfer:

@@ -21,6 +21,9 @@ from checker.vocabulary import Allowance
 ILL_CONDITIONED = 0.10
 """Largest part of its reference quantity that open input digits may move a result (design, section 6)."""
 
+OF_ONE_MODEL = ("melted_fraction", "relative_humidity", "humidity_ratio")
+"""Properties of a state that only bodies that melt, or moist air, have at all."""
+
 CLEAR_OF_DIGITS = 3.0
 """A deviation this many times the move of the inputs' last digits cannot be their doing: the move is a
 root-sum-square, and three times it covers the worst case of nine inputs that all err one way (chosen)."""
@@ -185,6 +188,9 @@ def _expanded(half_width: float, propagated: float, k: float) -> float:
 def _value_of(key: str, sheet: Sheet, values: Values, shift: Shift) -> Found:
     if not shift.comparable:
         return NotEvaluable(f"{shift.note}, and a single value of it cannot be compared", "missing")
+    name = key.rsplit("/", 1)[-1]
+    if key in values and values[key] is None and name in OF_ONE_MODEL:
+        return NotEvaluable(f"the model of the body knows no {name.replace('_', ' ')}", "missing")
     if key in values:
         return values[key]
     return NotEvaluable(sheet.missing.get(key, "it follows from no input"), "missing")

@@ -5,10 +5,12 @@ from __future__ import annotations
 from collections import defaultdict
 from collections.abc import Iterable, Iterator, Mapping
 from dataclasses import dataclass
+from functools import partial
 from typing import Final
 
 from checker.sheet import balances, cycles
 from checker.sheet.bodies import body_steps, dead_state_steps, is_per_mass, unit_mass_step
+from checker.sheet.closing.assembly import Scene, closing_steps, shortage
 from checker.sheet.context import ProcessContext
 from checker.sheet.datum import Offset, declared_offset
 from checker.sheet.endstates import Neighbour, curve_steps, path_clues
@@ -20,6 +22,7 @@ from checker.sheet.planner import explain, plan, prune
 from checker.sheet.processes import process_steps
 from checker.sheet.same import SameQuantity, same_quantities
 from checker.sheet.second_way import second_ways
+from checker.sheet.shares import SHARES, internal_keys
 from checker.sheet.states import CALORIC, SYMBOLS, Clue, StatePlan, clue_steps
 from checker.sheet.step import Sheet, Step, above, users_of
 from checker.sheet.transfers import assumed_candidates
@@ -79,6 +82,7 @@ class _Builder:
         self.record, self.models, self.substances = record, models, substances
         self.leaves, self.contexts = leaves, contexts
         self.candidates: list[Step] = []
+        self.short: dict[tuple[str, str], str] = {}
         self.neighbours: dict[tuple[str, str], list[Neighbour]] = defaultdict(list)
         for ctx in contexts:
             for body in ctx.bodies:
@@ -98,11 +102,14 @@ class _Builder:
         self.candidates.extend(cycles.cycle_steps(self.record, self.contexts))
         self.candidates.extend(cycles.sequence_steps(self.record, self.contexts))
         leaf_keys = {*self.leaves.values, *(link.key for link in self.leaves.links)}
-        steps = plan(leaf_keys, self.candidates, states, self._searches, self._assumed)
+        scene = Scene(self.record, self.contexts, self.substances, self._first_state)
+        closings = partial(closing_steps, scene)
+        steps = plan(leaf_keys, self.candidates, states, self._searches, closings, self._assumed)
         known = {*leaf_keys, *(output for step in steps for output in step.outputs)}
+        self.short = shortage(scene, [s for s in states if s.key not in known], known)
         made = {output: step for step in steps for output in step.outputs}
         again = tuple(second_ways(self._twice_told(), self.candidates, known, made))
-        wanted = self._wanted(same, made).union(*(step.outputs for step in again))
+        wanted = self._wanted(same, made).union(self._shares(), *(step.outputs for step in again))
         steps = prune([*steps, *again], wanted)
         made = {output: step for step in steps for output in step.outputs}
         return Sheet(
@@ -149,6 +156,7 @@ class _Builder:
             clues.append(made)
             self.candidates.append(step)
         clues.extend(self._volume_clue(state, body))
+        clues.extend(self._shared_clues(state, body))
         for near in self.neighbours.get((state, body), ()):
             for one, made_by in path_clues(near):
                 clues.append(one)
@@ -156,6 +164,18 @@ class _Builder:
                     self.candidates.append(made_by)
         solid = substance is not None and substance.incompressible
         return StatePlan(state, body, model, tuple(clues), phase, self._barred(state, body, phase), solid)
+
+    def _shared_clues(self, state: str, body: str) -> Iterator[Clue]:
+        """Yield what a closing finds, and what bodies in equilibrium take from each other."""
+        for name in SYMBOLS:
+            yield Clue(name, clue(state_key(state, body, name), "closing"), stated=True)
+        for ctx in self.contexts:
+            if state not in (ctx.process.from_state, ctx.process.to_state):
+                continue
+            for name in ctx.together(state):
+                for other in sorted(self.record.bodies):
+                    if other != body and (state, other) in self.record.body_states:
+                        yield Clue(name, state_key(state, other, name))
 
     def _volume_clue(self, state: str, body: str) -> Iterator[Clue]:
         """Yield v = V/m from the body's own volume and mass, in the state in which that volume applies."""
@@ -219,6 +239,13 @@ class _Builder:
         wanted.update(body_key(body, "mass") for body in self.record.bodies)
         return wanted
 
+    def _shares(self) -> Iterator[str]:
+        """Yield what is good to know of each of several bodies, and is not asked for where it cannot be told."""
+        for ctx in self.contexts:
+            if len(ctx.bodies) > 1:
+                yield from (ctx.share(body, name) for body in ctx.bodies for name in SHARES)
+                yield from (key for item in ctx.internal_heats for key in internal_keys(ctx, item))
+
     def _missing(self, known: set[str], same: SameQuantity) -> dict[str, str]:
         """Return what is missing for every stated quantity and every balance that could not be planned."""
         makers: dict[str, list[Step]] = defaultdict(list)
@@ -236,8 +263,6 @@ class _Builder:
         parts = pointer.split("/")
         if parts[0] == "states" and len(parts) > 3 and parts[3] in (*SYMBOLS, "density"):
             return self._say_state(parts[1], parts[2])
-        if parts[0] == "processes" and len(self.record.bodies) > 1:
-            return "several bodies: closing their balance is not part of this version"
         return f"{_words(pointer)} is not stated"
 
     def _say_state(self, state: str, body: str) -> str:
@@ -252,6 +277,8 @@ class _Builder:
         ]
         if self._barred(state, body, self._phase_of(state, body)):
             return f"{base}: T and p as stated reach across the saturation line; quality, phase, v or u would tell"
+        if len(self.record.bodies) > 1 and (state, body) in self.short:
+            return f"{base} is not determined: {self.short[state, body]}"
         only = f"only {', '.join(have)} given" if have else "no property given"
         return "; ".join([f"{base} is not determined ({only}, and no path or balance fixes it)", *blocked])
 

@@ -8,10 +8,12 @@ from typing import Final
 
 from checker.outcomes import NotEvaluable
 from checker.sheet.keys import body_key, given, process_key, share_key, state_key
+from checker.sheet.loss_plan import LossPlan, loss_plan
 from checker.sheet.models import BodyModel
 from checker.sheet.paths import PATHS, Path, WorkFormula
 from checker.sheet.step import Step
-from checker.submission import Process, Record
+from checker.submission import HeatTransfer, Process, Record
+from checker.vocabulary import WORK_KINDS
 
 ENDS: Final = {
     "p": "pressure",
@@ -71,14 +73,37 @@ class ProcessContext:
         return given(own) if self.is_given(own) else self.key("duration")
 
     def has_power(self, base: str) -> bool:
-        """Say whether a transfer is given as a mean power over a given duration."""
+        """Say whether a transfer is given as a mean power over a duration that is given or follows from losses."""
         lasts = self.is_given(f"{base}/duration") or self.is_given(self.key("duration"))
-        return lasts and self.is_given(f"{base}/mean_power")
+        return (lasts or self.losses is not None) and self.is_given(f"{base}/mean_power")
 
     def is_supplied(self, kind: str, item: str) -> bool:
-        """Say whether the energy of a transfer follows from inputs, as energy or as power over a time."""
+        """Say whether the energy of a transfer follows from inputs: energy, power over a time, reservoir or losses."""
         energy = self.heat_item(item) if kind == "heat" else self.work_item(item)
-        return self.is_given(energy) or self.has_power(self.item_base(kind, item))
+        base = self.item_base(kind, item)
+        if self.is_given(energy) or self.has_power(base) or self.has_reservoir_balance(base):
+            return True
+        return self.loses_by_coefficient(base) and self.losses is not None
+
+    def has_finite_reservoir(self, base: str) -> bool:
+        """Say whether the reservoir of a heat transfer cools while it gives heat: its end or capacity is stated."""
+        return self.is_stated(f"{base}/final_reservoir_temperature") or self.is_stated(
+            f"{base}/reservoir_heat_capacity"
+        )
+
+    def has_reservoir_balance(self, base: str) -> bool:
+        """Say whether a finite reservoir is given with both temperatures and its heat capacity."""
+        names = ("reservoir_temperature", "final_reservoir_temperature", "reservoir_heat_capacity")
+        return all(self.is_given(f"{base}/{name}") for name in names)
+
+    def loses_by_coefficient(self, base: str) -> bool:
+        """Say whether a heat transfer follows the temperature by UA·ΔT."""
+        return self.is_given(f"{base}/heat_loss_coefficient") and not self.has_finite_reservoir(base)
+
+    @property
+    def losses(self) -> LossPlan | None:
+        """Return how time, powers and losses follow from one another, or None."""
+        return loss_plan(self)
 
     @property
     def bodies(self) -> tuple[str, ...]:
@@ -93,6 +118,35 @@ class ProcessContext:
         return tuple(PATHS[spec.kind] for spec in self.process.paths.get(body, ()) if spec.kind in PATHS)
 
     @property
+    def external_heats(self) -> tuple[HeatTransfer, ...] | None:
+        """Return the heat transfers across the boundary of the whole system; None where nothing is stated of them."""
+        items = self.process.heat_transfers
+        return None if items is None else tuple(item for item in items if not item.is_internal)
+
+    @property
+    def internal_heats(self) -> tuple[HeatTransfer, ...]:
+        """Return the heat transfers from one body to another."""
+        return tuple(item for item in self.process.heat_transfers or () if item.is_internal)
+
+    @property
+    def other_work_kinds(self) -> tuple[str, ...]:
+        """Return the names of the totals of work that is not boundary work."""
+        rubs = any(item.kind == "friction" for item in self.process.work_transfers or ())
+        friction = rubs or self.is_stated(self.key("friction_work"))
+        return ("shaft_work", "electrical_work", *(("friction_work",) if friction else ()))
+
+    def together(self, state: str) -> tuple[str, ...]:
+        """Return what the bodies share in an end state of this process: ``temperature``, ``pressure``."""
+        own = (self.record.state_equilibrium or {}).get(state, ())
+        return (*own, *(self.process.equilibrium if state == self.process.to_state else ()))
+
+    @property
+    def thermally_linked(self) -> bool:
+        """Say whether the bodies are declared to have one temperature at an end, so that heat passes between them."""
+        ends = (self.process.from_state, self.process.to_state)
+        return len(self.bodies) > 1 and any("temperature" in self.together(state) for state in ends)
+
+    @property
     def no_heat(self) -> str:
         """Return why there is no heat (path kind or insulation), or an empty text."""
         if self.process.insulated:
@@ -103,13 +157,12 @@ class ProcessContext:
     @property
     def unknown_heats(self) -> int:
         """Return how many heat transfers are listed without an input."""
-        return sum(1 for item in self.process.heat_transfers or () if not self.is_supplied("heat", item.id))
+        return sum(1 for item in self.external_heats or () if not self.is_supplied("heat", item.id))
 
     @property
     def heat_known_without_balance(self) -> bool:
         """Say whether Q follows from what is given, so that the balance can close another unknown."""
-        items = self.process.heat_transfers
-        listed = items is not None and self.unknown_heats == 0
+        listed = self.external_heats is not None and self.unknown_heats == 0
         return bool(self.no_heat) or listed or self.is_given(self.key("heat"))
 
     @property
@@ -127,7 +180,7 @@ class ProcessContext:
         """Return the totals of those kinds of work that are listed or claimed without an input."""
         items = self.process.work_transfers or ()
         listed = {self.key(f"{i.kind}_work") for i in items if not self.is_supplied("work", i.id)}
-        named = {self.key(f"{kind}_work") for kind in ("boundary", "shaft", "electrical")}
+        named = {self.key(f"{kind}_work") for kind in WORK_KINDS}
         claimed = {key for key in named if self.is_stated(key) and not self.is_given(key)}
         return frozenset(listed | claimed)
 
@@ -136,12 +189,11 @@ class ProcessContext:
         own = self.same(f"processes/{self.process.id}/bodies/{body}/path/{name}")
         return own if own in self.stated_keys else self.same(f"processes/{self.process.id}/path/{name}")
 
-    def boundary_work_step(self) -> Step | None:
-        """Return the step that takes the boundary work from the path (one body), or None."""
-        if len(self.bodies) != 1:
-            return None
-        body = self.bodies[0]
-        output, title = (self.key("boundary_work"),), f"Boundary work, {self.process.id}"
+    def boundary_work_step(self, body: str) -> Step | None:
+        """Return the step that takes a body's boundary work from its path, or None."""
+        output = (self.share(body, "boundary_work"),)
+        of = f" of {body}" if len(self.bodies) > 1 else ""
+        title = f"Boundary work{of}, {self.process.id}"
         for path in self.paths_of(body):
             if path.work is not None:
                 return _work_step(self, body, path.work, output, f"{title} ({path.kind})")
@@ -155,10 +207,14 @@ class ProcessContext:
         nominal = self.models[body].at_nominal() if body in self.models else None
         return nominal is not None and nominal.incompressible
 
+    def is_quasi_static_for(self, body: str) -> bool:
+        """Say whether a body passes through equilibrium states only, as far as its path and model tell."""
+        return any(path.quasi_static for path in self.paths_of(body)) or self.boundary_work_is_zero(body)
+
     def power_source(self) -> str | None:
         """Return the one energy to which a mean power of the whole process can refer, or None."""
-        heats = self.process.heat_transfers or ()
-        works = [item for item in self.process.work_transfers or () if item.kind != "boundary"]
+        heats = self.external_heats or ()
+        works = [item for item in self.process.work_transfers or () if item.kind in ("shaft", "electrical")]
         if works and not heats:
             return self.key("shaft_work" if all(w.kind == "shaft" for w in works) else "electrical_work")
         return self.key("heat") if not works else None

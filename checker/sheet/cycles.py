@@ -87,7 +87,7 @@ def cycle_steps(record: Record, contexts: Sequence[ProcessContext]) -> Iterator[
 
 
 def _heat_keys(ctx: ProcessContext) -> tuple[str, ...]:
-    items = ctx.process.heat_transfers or ()
+    items = ctx.external_heats or ()
     return tuple(ctx.heat_item(item.id) for item in items) if len(items) > 1 else (ctx.key("heat"),)
 
 

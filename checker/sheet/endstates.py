@@ -12,7 +12,8 @@ from typing import Final
 
 from checker.outcomes import NotEvaluable
 from checker.sheet.context import ProcessContext
-from checker.sheet.keys import body_key, clue, given, state_key
+from checker.sheet.heat_loss import loss_clue
+from checker.sheet.keys import body_key, clue, given, state_key, symbols_of
 from checker.sheet.models import outputs_of
 from checker.sheet.on_path import positive_pressure, state_on
 from checker.sheet.paths import Parameters, Path
@@ -65,10 +66,15 @@ def path_clues(near: Neighbour) -> Iterator[tuple[Clue, Step | None]]:
     for path in near.ctx.paths_of(near.body):
         if path.holds is not None:
             yield Clue(path.holds, near.known(path.holds)), None
-    change = near.ctx.key("temperature_change")
+    change = near.ctx.share(near.body, "temperature_change")
     if near.ctx.is_given(change):
         yield _shifted(near, "temperature", given(change), "T = T_known ± ΔT", process)
+    if len(near.ctx.bodies) > 1:
+        return  # what several bodies have in common is closed for all of them together
     yield _energy_clue(near)
+    lost = loss_clue(near.ctx, near.body, near.known_state, near.sought_state)
+    if lost is not None:
+        yield lost
     if any(path.kind == "constant pressure" for path in near.ctx.paths_of(near.body)):
         yield _enthalpy_clue(near)
 
@@ -120,18 +126,18 @@ def _enthalpy_clue(near: Neighbour) -> tuple[Clue, Step]:
         near.known("specific_enthalpy"),
         near.mass,
         key("heat"),
-        key("shaft_work"),
-        key("electrical_work"),
+        *(key(name) for name in near.ctx.other_work_kinds),
         key("kinetic_energy_change"),
         key("potential_energy_change"),
     )
+    spent = "".join(f" − {{{place}}}" for place in range(3, len(parents)))
     step = Step(
         f"Enthalpy of {near.body}, {near.sought_state}, from the balance",
         (made,),
         parents,
-        lambda h, m, q, sh, el, ke, pe: (h + sign * (q - sh - el - ke - pe) / m,),
-        "h₂ = h₁ + (Q − W_sh − W_el − ΔKE − ΔPE)/m",
-        f"{{0}} {'+' if sign > 0 else '−'} ({{2}} − {{3}} − {{4}} − {{5}} − {{6}})/{{1}}",
+        lambda h, m, q, *others: (h + sign * (q - sum(others)) / m,),
+        f"h₂ = h₁ + (Q − {symbols_of(near.ctx.other_work_kinds, ' − ')} − ΔKE − ΔPE)/m",
+        f"{{0}} {'+' if sign > 0 else '−'} ({{2}}{spent})/{{1}}",
     )
     return Clue("specific_enthalpy", made), step
 
@@ -151,17 +157,19 @@ class _Curve:
 def curve_steps(near: Neighbour, plan: StatePlan, known: set[str]) -> Iterator[Step]:
     """Yield searches for the sought state: on the path's curve with one clue, or on a family with the balance."""
     clues = [one for one in plan.clues if one.key in known]
+    alone = len(near.ctx.bodies) == 1
     for path in near.ctx.paths_of(near.body):
         if path.curve is not None:
             for one in clues:
                 yield _on_curve_step(near, plan, path, one)
-            yield from _balance_steps(near, plan, path, None)
-        elif path.between is not None:
+            if alone:
+                yield from _balance_steps(near, plan, path, None)
+        elif alone and path.between is not None:
             for one in clues:
                 yield from _balance_steps(near, plan, path, one)
 
 
-def _parameters_of(near: Neighbour, path: Path) -> tuple[tuple[str, ...], Callable[..., Parameters]]:
+def parameters_of(near: Neighbour, path: Path) -> tuple[tuple[str, ...], Callable[..., Parameters]]:
     """Return the keys of the path's parameters and how to put them together."""
     if path.kind == "pressure linear in volume":
         return _line_parameters(near)
@@ -209,7 +217,7 @@ def _neighbour_state(values: tuple[float, ...]) -> PropertyState:
 
 def _on_curve_step(near: Neighbour, plan: StatePlan, path: Path, one: Clue) -> Step:
     """Return the step that finds the sought state on the path's curve from one property."""
-    keys, assemble = _parameters_of(near, path)
+    keys, assemble = parameters_of(near, path)
     curve_of = path.curve
     assert curve_of is not None
     count = len(NEIGHBOUR)
@@ -238,8 +246,7 @@ def _balance_steps(near: Neighbour, plan: StatePlan, path: Path, one: Clue | Non
     if ctx.is_given(ctx.key("boundary_work")):
         yield _search_step(near, plan, path, one, given(ctx.key("boundary_work")), ())
     others = (
-        ctx.key("shaft_work"),
-        ctx.key("electrical_work"),
+        *(ctx.key(name) for name in ctx.other_work_kinds),
         ctx.key("kinetic_energy_change"),
         ctx.key("potential_energy_change"),
     )
@@ -250,7 +257,7 @@ def _search_step(
     near: Neighbour, plan: StatePlan, path: Path, one: Clue | None, target: str, others: tuple[str, ...]
 ) -> Step:
     """Return one search: along a family of states until the balance (or the boundary work) is met."""
-    keys, assemble = _parameters_of(near, path)
+    keys, assemble = parameters_of(near, path)
     count, balance = len(NEIGHBOUR), bool(others)
     work_between = path.between
     assert work_between is not None
@@ -283,7 +290,8 @@ def _search_step(
             find_state(family.state, residual, family.grid, scale, what, plan.phase, family.outward)
         )
 
-    formula = "ΔU + W_b + W_sh + W_el + ΔKE + ΔPE = Q" if balance else "∫p dV = W_b"
+    names = symbols_of(("boundary_work", *near.ctx.other_work_kinds), " + ")
+    formula = f"ΔU + {names} + ΔKE + ΔPE = Q" if balance else "∫p dV = W_b"
     return Step(
         f"State {plan.state} of {plan.body}, {path.kind}, from the balance",
         plan.outputs,
@@ -341,10 +349,15 @@ def _by_temperature(substance: Substance, fixed: Mapping[str, float]) -> _Curve:
 
 def _by_temperature_range(substance: Substance, pressure: float) -> _Curve:
     """Return states at one pressure, by enthalpy, so that the two-phase span is part of the family."""
+    ends = enthalpy_range(substance, pressure)
+    return _Curve(lambda h: substance.state({"pressure": pressure, "specific_enthalpy": h}), between(*ends))
+
+
+def enthalpy_range(substance: Substance, pressure: float) -> tuple[float, float]:
+    """Return the enthalpies of the coldest and the hottest state at a pressure [J/kg]. Raises NotEvaluable."""
     limits = substance.valid_range
     low, high = (limits.temperature_min, limits.temperature_max) if limits else (50.0, 3000.0)
-    ends = [_outermost(substance, pressure, first, last) for first, last in ((low, high), (high, low))]
-    return _Curve(lambda h: substance.state({"pressure": pressure, "specific_enthalpy": h}), between(*ends))
+    return _outermost(substance, pressure, low, high), _outermost(substance, pressure, high, low)
 
 
 def _outermost(substance: Substance, pressure: float, first: float, last: float) -> float:

@@ -17,6 +17,7 @@ from checker.sheet.step import Step
 
 Searches = Callable[[StatePlan, set[str]], Iterable[Step]]
 Assumed = Callable[[set[str]], Iterator[Step]]
+Closings = Callable[[Sequence[StatePlan], set[str]], Iterable[Step]]
 
 
 def plan(
@@ -24,16 +25,24 @@ def plan(
     candidates: Sequence[Step],
     states: Sequence[StatePlan],
     searches: Searches,
+    closings: Closings,
     assumed: Assumed,
 ) -> list[Step]:
-    """Return the steps in an order in which parents come first."""
+    """Return the steps in an order in which parents come first.
+
+    What no formula and no search of a single state finds is left to the closings, then to what is assumed.
+    """
     planner = _Planner(candidates, states)
     for leaf in leaves:
         planner.learn(leaf)
     while True:
         planner.settle()
         offered = (step for state in planner.open_states() for step in searches(state, planner.known))
-        if planner.take_first(offered) or planner.take_first(assumed(planner.known)):
+        if planner.take_first(offered):
+            continue
+        if planner.take_first(closings(planner.open_states(), planner.known)):
+            continue
+        if planner.take_first(assumed(planner.known)):
             continue
         return planner.steps
 

@@ -7,8 +7,12 @@ from collections.abc import Iterator, Mapping
 
 from checker.outcomes import NotEvaluable
 from checker.sheet import balances, second_law
+from checker.sheet.boundary import boundary_keys, crossing_steps, sum_at_system_step
 from checker.sheet.context import ProcessContext
-from checker.sheet.keys import body_key, given, process_key, state_key
+from checker.sheet.heat_loss import loss_steps
+from checker.sheet.keys import body_key, given, process_key, state_key, symbols_of
+from checker.sheet.reservoirs import reservoir_steps
+from checker.sheet.shares import at_bodies_step, body_of, share_steps
 from checker.sheet.step import Step
 from checker.sheet.transfers import heat_candidates, work_candidates
 from checker.submission import HeatTransfer
@@ -39,9 +43,10 @@ def process_steps(ctx: ProcessContext, substances: Mapping[str, Substance]) -> I
                 "sum over the bodies",
                 balances.sum_text(len(ctx.bodies)),
             )
+        yield from share_steps(ctx)
     yield balances.energy_change_step(ctx.process)
-    if len(ctx.bodies) == 1:
-        yield from _single_body_steps(ctx, ctx.bodies[0])
+    if ctx.bodies:
+        yield from _balance_steps(ctx)
     yield from _per_mass_steps(ctx)
 
 
@@ -64,13 +69,17 @@ def _body_changes(ctx: ProcessContext, body: str, substance: Substance | None) -
     yield from balances.motion_steps(ctx.process, body, outputs, moves, lifts)
 
 
-def _single_body_steps(ctx: ProcessContext, body: str) -> Iterator[Step]:
+def _balance_steps(ctx: ProcessContext) -> Iterator[Step]:
+    """Yield the balances of the whole system, of one body or several."""
     yield second_law.exergy_change_step(ctx.process)
-    yield from _exponent_steps(ctx, body)
+    for body in ctx.bodies:
+        yield from _exponent_steps(ctx, body)
+    yield from loss_steps(ctx)
     yield from heat_candidates(ctx)
     yield from work_candidates(ctx)
-    yield from _found_velocity(ctx, body)
-    yield from _entropy(ctx, body)
+    if len(ctx.bodies) == 1:
+        yield from _found_velocity(ctx, ctx.bodies[0])
+    yield from _entropy(ctx)
     yield from _rates(ctx)
     p = ctx.process.id
     yield Step(
@@ -81,14 +90,14 @@ def _single_body_steps(ctx: ProcessContext, body: str) -> Iterator[Step]:
         "ΔE − Q + W",
         "{0} − {1} + {2}",
     )
-    kinds = tuple(ctx.key(name) for name in ("boundary_work", "shaft_work", "electrical_work"))
+    kinds = ("boundary_work", *ctx.other_work_kinds)
     yield Step(
         f"Work not accounted for, {p}",
         (process_key(p, "work_residual"),),
-        (ctx.key("work"), *kinds),
+        (ctx.key("work"), *(ctx.key(name) for name in kinds)),
         balances.first_less_rest,
-        "W − W_b − W_sh − W_el",
-        balances.less_text(4),
+        f"W − {symbols_of(kinds, ' − ')}",
+        balances.less_text(1 + len(kinds)),
     )
 
 
@@ -142,15 +151,18 @@ def _found_velocity(ctx: ProcessContext, body: str) -> Iterator[Step]:
     yield balances.found_velocity_step(ctx.process, body, kinetic)
 
 
-def _entropy(ctx: ProcessContext, body: str) -> Iterator[Step]:
-    process, items = ctx.process, ctx.process.heat_transfers
+def _entropy(ctx: ProcessContext) -> Iterator[Step]:
+    process, items = ctx.process, ctx.external_heats
     if items is None and ctx.no_heat:
         for name in ("entropy_transfer", "reservoir_entropy_transfer"):
             yield balances.constant(
                 process_key(process.id, name), f"Entropy transfer, {process.id}", f"0 ({ctx.no_heat})"
             )
     for item in items or ():
-        yield from _item_entropy(ctx, body, item)
+        yield from _item_entropy(ctx, item)
+    together = sum_at_system_step(ctx, process_key(process.id, "entropy_transfer"))
+    if together is not None:
+        yield together
     if items is not None or ctx.no_heat:
         yield from second_law.entropy_steps(process, [item.id for item in items or ()])
         base = f"processes/{process.id}/heat_transfers"
@@ -172,27 +184,14 @@ def _generation_for_exergy(ctx: ProcessContext) -> str:
     return total if ctx.is_stated(ctx.key(total)) else "entropy_generation"
 
 
-def _item_entropy(ctx: ProcessContext, body: str, item: HeatTransfer) -> Iterator[Step]:
-    process, energy = ctx.process, ctx.heat_item(item.id)
-    base = f"processes/{process.id}/heat_transfers/{item.id}"
-    ends = tuple(state_key(state, body, "temperature") for state in (process.from_state, process.to_state))
-    if item.at_system:
-        quasi_static = any(path.quasi_static for path in ctx.paths_of(body)) or ctx.boundary_work_is_zero(
-            body
-        )
-        alone = quasi_static and len(process.heat_transfers or ()) == 1
-        yield second_law.item_entropy_at_system_step(process, item.id, energy, body, alone)
-        boundary: tuple[str, ...] = ends
+def _item_entropy(ctx: ProcessContext, item: HeatTransfer) -> Iterator[Step]:
+    body, energy = body_of(ctx, item), ctx.heat_item(item.id)
+    met = ctx.bodies if body is None else (body,)
+    if item.at_system and len(ctx.bodies) > 1:
+        yield at_bodies_step(ctx, item, body)
     else:
-        yield second_law.item_entropy_step(process, item.id, energy)
-        boundary = (given(f"{base}/boundary_temperature"),)
-    stated = ctx.is_given(f"{base}/reservoir_temperature")
-    yield second_law.reservoir_step(process, item.id, energy, boundary, stated)
-    for name in ("boundary_temperature", "reservoir_temperature"):
-        if ctx.is_given(f"{base}/{name}"):
-            yield balances.same_value(
-                f"{base}/{name}", given(f"{base}/{name}"), f"{name}, {item.id}", f"{name} given"
-            )
+        yield from crossing_steps(ctx, item, energy, met)
+    yield from reservoir_steps(ctx, item, energy, boundary_keys(ctx, item, met))
 
 
 def _rates(ctx: ProcessContext) -> Iterator[Step]:
@@ -200,7 +199,7 @@ def _rates(ctx: ProcessContext) -> Iterator[Step]:
     p, duration = ctx.process.id, ctx.key("duration")
     if ctx.is_given(duration):
         yield balances.same_value(duration, given(duration), f"Duration, {p}", "t given")
-    for kind, items in (("heat", ctx.process.heat_transfers), ("work", ctx.process.work_transfers)):
+    for kind, items in (("heat", ctx.external_heats), ("work", ctx.process.work_transfers)):
         for item in items or ():
             base = f"processes/{p}/{kind}_transfers/{item.id}"
             energy = ctx.heat_item(item.id) if kind == "heat" else ctx.work_item(item.id)

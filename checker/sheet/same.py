@@ -7,6 +7,7 @@ from dataclasses import dataclass, field
 
 from checker.sheet.keys import process_key
 from checker.submission import Process, Record
+from checker.vocabulary import WORK_KINDS
 
 
 @dataclass(frozen=True, slots=True)
@@ -40,10 +41,10 @@ def same_quantities(record: Record) -> SameQuantity:
 
 def _lone_items(process: Process) -> dict[str, str]:
     base, found = f"processes/{process.id}", {}
-    heats = process.heat_transfers or ()
+    heats = [item for item in process.heat_transfers or () if not item.is_internal]
     if len(heats) == 1:
         found[f"{base}/heat_transfers/{heats[0].id}/energy"] = process_key(process.id, "heat")
-    for kind in ("boundary", "shaft", "electrical"):
+    for kind in WORK_KINDS:
         items = [item for item in process.work_transfers or () if item.kind == kind]
         if len(items) == 1:
             found[f"{base}/work_transfers/{items[0].id}/energy"] = process_key(process.id, f"{kind}_work")

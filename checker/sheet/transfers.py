@@ -9,22 +9,31 @@ from collections.abc import Iterator
 
 from checker.sheet.balances import constant, first_less_rest, less_text, same_value, sum_text, total
 from checker.sheet.context import ProcessContext
-from checker.sheet.keys import given
+from checker.sheet.keys import given, symbols_of
+from checker.sheet.reservoirs import reservoir_energy_step
 from checker.sheet.step import Step
+from checker.vocabulary import WORK_KINDS
 
-KINDS = {"boundary": "boundary_work", "shaft": "shaft_work", "electrical": "electrical_work"}
+KINDS = {kind: f"{kind}_work" for kind in WORK_KINDS}
+
+
+def kinds_of(ctx: ProcessContext) -> tuple[str, ...]:
+    """Return the kinds of work of a process: friction only where it is stated."""
+    return tuple(kind for kind in KINDS if kind == "boundary" or KINDS[kind] in ctx.other_work_kinds)
 
 
 def heat_candidates(ctx: ProcessContext) -> Iterator[Step]:
     """Yield the ways to the heat: given, none by the path, none listed, sum of items, balance."""
     p, heat = ctx.process.id, ctx.key("heat")
-    items = ctx.process.heat_transfers
+    items = ctx.external_heats
     keys = [ctx.heat_item(item.id) for item in items or ()]
     yield from _given(ctx, heat, f"Heat, {p}", "Q given")
     for item, key in zip(items or (), keys, strict=True):
         if key != heat:
             yield from _given(ctx, key, f"Heat transfer {item.id}, {p}", "Q_k given")
         yield from _from_power(ctx, "heat", item.id, key)
+        if (step := reservoir_energy_step(ctx, item.id, key)) is not None:
+            yield step
     if ctx.no_heat:
         yield constant(heat, f"Heat, {p}", f"Q = 0 ({ctx.no_heat})")
     if items == ():
@@ -49,7 +58,7 @@ def heat_candidates(ctx: ProcessContext) -> Iterator[Step]:
 def _unknown_item(ctx: ProcessContext, keys: list[str]) -> Iterator[Step]:
     """Yield the one heat transfer that nobody gave, from the balance less the others."""
     supplied = {
-        ctx.heat_item(i.id) for i in ctx.process.heat_transfers or () if ctx.is_supplied("heat", i.id)
+        ctx.heat_item(i.id) for i in ctx.external_heats or () if ctx.is_supplied("heat", i.id)
     }
     unknown = [key for key in keys if key not in supplied]
     if len(unknown) != 1:
@@ -100,13 +109,14 @@ def _product(a: float, b: float) -> tuple[float]:
 def work_candidates(ctx: ProcessContext) -> Iterator[Step]:
     """Yield the ways to the work: given, by the path, none listed, sums, balance."""
     p, work = ctx.process.id, ctx.key("work")
-    for kind, name in KINDS.items():
-        yield from _kind_candidates(ctx, kind, ctx.key(name))
+    for kind in kinds_of(ctx):
+        yield from _kind_candidates(ctx, kind, ctx.key(KINDS[kind]))
     yield from _given(ctx, work, f"Work, {p}", "W given")
-    kinds = tuple(ctx.key(name) for name in KINDS.values())
+    kinds = tuple(ctx.key(KINDS[kind]) for kind in kinds_of(ctx))
     if ctx.heat_known_without_balance:
         yield from _kind_from_balance(ctx)
-    yield Step(f"Work, {p}", (work,), kinds, total, "W = W_b + W_sh + W_el", sum_text(3))
+    formula = f"W = {symbols_of((KINDS[kind] for kind in kinds_of(ctx)), ' + ')}"
+    yield Step(f"Work, {p}", (work,), kinds, total, formula, sum_text(len(kinds)))
     if ctx.heat_known_without_balance:
         yield Step(
             f"Work from the balance, {p}",
@@ -125,13 +135,13 @@ def work_candidates(ctx: ProcessContext) -> Iterator[Step]:
                 (work, *others),
                 first_less_rest,
                 "W_kind = W − W_others",
-                less_text(3),
+                less_text(len(kinds)),
             )
 
 
 def _kind_from_balance(ctx: ProcessContext) -> Iterator[Step]:
     """Yield the one kind of work that is listed or claimed without an input, from the balance less the others."""
-    kinds = tuple(ctx.key(name) for name in KINDS.values())
+    kinds = tuple(ctx.key(KINDS[kind]) for kind in kinds_of(ctx))
     for kind in kinds:
         if kind not in ctx.claimed_work_kinds:
             continue
@@ -142,7 +152,7 @@ def _kind_from_balance(ctx: ProcessContext) -> Iterator[Step]:
             (ctx.key("heat"), ctx.key("energy_change"), *others),
             first_less_rest,
             "W_kind = Q − ΔE − W_others",
-            less_text(4),
+            less_text(1 + len(kinds)),
         )
 
 
@@ -164,9 +174,9 @@ def _kind_candidates(ctx: ProcessContext, kind: str, key: str) -> Iterator[Step]
         if listed.kind == kind:
             yield from _from_power(ctx, "work", listed.id, ctx.work_item(listed.id))
     if kind == "boundary":
-        if (step := ctx.boundary_work_step()) is not None:
+        if len(ctx.bodies) == 1 and (step := ctx.boundary_work_step(ctx.bodies[0])) is not None:
             yield step
-    elif items is not None and not keys:
+    elif kind != "friction" and items is not None and not keys:
         yield constant(key, f"{name}, {p}", f"W = 0 (no {kind} work listed)")
     if len(keys) > 1:
         yield Step(f"{name}, {p}", (key,), tuple(keys), total, "W = ΣW_k", sum_text(len(keys)))
@@ -191,7 +201,8 @@ def assumed_candidates(ctx: ProcessContext, known: set[str]) -> Iterator[Step]:
         return
     if ctx.key("work") in known and ctx.key("boundary_work") in known:
         return
-    for kind, name in KINDS.items():
+    for kind in kinds_of(ctx):
+        name = KINDS[kind]
         key = ctx.key(name)
         if kind != "boundary" and key not in known and not ctx.is_stated(key):
             yield constant(
