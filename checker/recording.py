@@ -7,11 +7,13 @@ from collections.abc import Iterator, Sequence
 from checker.case import Case
 from checker.comparison.compare import Compared
 from checker.display import as_text, stated_amount
+from checker.facts.phases import claims_of, phase_found, possible_phases
 from checker.findings import (
     Amount,
     Checked,
     Diagram,
     NotChecked,
+    Outcome,
     RecordReview,
     SheetLine,
     SheetValue,
@@ -60,7 +62,7 @@ def record_review(
         id=case.record.id,
         title=case.record.title,
         readable=True,
-        checked=tuple(_checked(case, c, locator) for c in case.compared),
+        checked=(*(_checked(case, c, locator) for c in case.compared), *_phases(case, locator)),
         not_checked=tuple(dict.fromkeys((*_not_compared(case), *unchecked))),
         assumed=tuple(_assumed(case)),
         models=tuple(_models(case)),
@@ -91,6 +93,27 @@ def _checked(case: Case, c: Compared, locator: Locator) -> Checked:
         reason=c.reason or c.shift.note,
         location=locator.at(statement.place),
     )
+
+
+def _phases(case: Case, locator: Locator) -> Iterator[Checked]:
+    """Yield the stated phases, each against the one that its state has."""
+    for state, body in case.record.body_states:
+        possible = possible_phases(case, state, body) or ()
+        for claim in claims_of(case, state, body) if possible else ():
+            agrees = claim.phase in possible
+            yield Checked(
+                quantity=state_key(state, body, "phase"),
+                symbol="phase",
+                role="stated result" if claim.role is Role.RESULT else "input",
+                stated=Amount(0.0, "", claim.phase),
+                recomputed=Amount(0.0, "", phase_found(case, state, body)),
+                carried=None,
+                deviation=None,
+                tolerance=None,
+                outcome=Outcome.AGREES if agrees else Outcome.WRONG,
+                standing=Standing.HOLDS if agrees else Standing.ORIGIN,
+                location=locator.at(claim.place),
+            )
 
 
 def _shown(case: Case, c: Compared, value: Found) -> Amount | None:

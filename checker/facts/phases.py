@@ -22,10 +22,11 @@ CONDENSED: Final = (Phase.SUBCOOLED_LIQUID, Phase.SATURATED_LIQUID, Phase.SUPERC
 
 @dataclass(frozen=True, slots=True)
 class PhaseClaim:
-    """A phase word as stated."""
+    """A phase word as stated, among inputs or results."""
 
     phase: Phase
     place: Place
+    role: Role
 
 
 def claims_of(case: Case, state: str, body: str) -> tuple[PhaseClaim, ...]:
@@ -35,9 +36,10 @@ def claims_of(case: Case, state: str, body: str) -> tuple[PhaseClaim, ...]:
         return ()
     claims = []
     if found.phase is not None and found.phase_role is Role.INPUT:
-        claims.append(PhaseClaim(Phase(found.phase), (*found.place, "inputs", "phase")))
+        claims.append(PhaseClaim(Phase(found.phase), (*found.place, "inputs", "phase"), Role.INPUT))
     if found.claimed_phase is not None:
-        claims.append(PhaseClaim(Phase(found.claimed_phase), (*found.place, "results", "phase")))
+        place = (*found.place, "results", "phase")
+        claims.append(PhaseClaim(Phase(found.claimed_phase), place, Role.RESULT))
     return tuple(claims)
 
 
@@ -66,6 +68,12 @@ def possible_phases(case: Case, state: str, body: str) -> tuple[Phase, ...] | No
         ),
     )
     return tuple(dict.fromkeys((own, *others)))
+
+
+def phase_found(case: Case, state: str, body: str) -> str:
+    """Return the phase of a state in words; of a model without phases, what it stands for."""
+    word = case.word(f"states/{state}/{body}/phase")
+    return word or ("liquid or solid" if is_incompressible(case, body) else "gas")
 
 
 def _of_model(case: Case, state: str, body: str) -> tuple[Phase, ...] | None:

@@ -4,7 +4,10 @@ from __future__ import annotations
 
 import json
 
+import pytest
+
 from checker import review
+from checker.findings import Outcome
 from tests.checker.cases import gas_bottle, package
 
 
@@ -23,3 +26,32 @@ def test_every_comparison_has_its_place_in_the_file():
         location = checked[quantity].location
         assert location is not None
         assert lines[location.line - 1][location.column - 1 :].startswith(f'"{text}"')
+
+
+@pytest.mark.parametrize(
+    ("section", "word", "role", "outcome"),
+    [
+        ("results", "superheated vapour", "stated result", Outcome.AGREES),
+        ("inputs", "superheated vapour", "input", Outcome.AGREES),
+        ("results", "wet vapour", "stated result", Outcome.WRONG),
+    ],
+)
+def test_a_stated_phase_is_among_what_was_checked(section, word, role, outcome):
+    """Helium of constant specific heats is a gas; the word is listed whether or not it says so."""
+    record = gas_bottle({"internal_energy_change": "31.16 kJ"})
+    record["states"]["hot"]["gas"].setdefault(section, {})["phase"] = word
+    checked = {item.quantity: item for item in review(package(record)).records[0].checked}
+    phase = checked["states/hot/gas/phase"]
+    assert (phase.role, phase.stated.text, phase.outcome) == (role, word, outcome)
+    assert phase.recomputed is not None
+    assert phase.recomputed.text == "gas"
+
+
+def test_a_phase_of_a_state_that_is_not_found_is_not_checked():
+    """Nothing fixes the hot state, so its phase is compared with nothing."""
+    record = gas_bottle({"internal_energy_change": "31.16 kJ"})
+    record["states"]["hot"]["gas"] = {"results": {"phase": "superheated vapour"}}
+    record["processes"][0]["path"] = "end states only"
+    found = review(package(record)).records[0]
+    assert "states/hot/gas/phase" not in {item.quantity for item in found.checked}
+    assert "phase of hot/gas" in {item.what for item in found.not_checked}
