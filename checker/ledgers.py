@@ -34,6 +34,7 @@ def _energy_lines(case: Case, base: str) -> list[Line]:
         ("boundary_work", "boundary work"),
         ("shaft_work", "shaft work"),
         ("electrical_work", "electrical work"),
+        ("friction_work", "friction work"),
     ):
         pointer = f"{base}/{name}"
         if case.value(pointer) or case.stated(pointer):

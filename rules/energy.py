@@ -5,7 +5,7 @@ from __future__ import annotations
 from typing import Final
 
 from checker.case import Case, Raised, Yielded
-from checker.facts import balance, stated
+from checker.facts import balance, exchange, stated
 from checker.facts.cycles import RATIOS, closes
 from checker.facts.mass import masses_of
 from checker.facts.paths import any_follows
@@ -89,6 +89,43 @@ def work_from_rigid_vessel(case: Case, process: str) -> Yielded:
                 place=_place(case, process),
                 suggestion="Check the sign: stirring and heating by electricity go into the system.",
             )
+
+
+def out_of_reach(case: Case, process: str) -> Yielded:
+    """Yield an end temperature that the given powers and losses never lead to."""
+    found = exchange.unreachable(case, next(p for p in case.record.processes if p.id == process))
+    if found is None:
+        return
+    pointer = f"states/{found.state}/{found.body}/temperature"
+    powers = f"{case.show(found.power, found.supplied)} and " if found.supplied else ""
+    yield Raised(
+        f"With {powers}the losses of {', '.join(found.losses)} {found.body} settles at "
+        f"{case.show(pointer, found.settles)}; {case.show(pointer, found.temperature)} is never reached.",
+        statement=next(iter(case.stated(pointer, Role.INPUT)), None),
+        quantity=pointer,
+        place=None if case.stated(pointer, Role.INPUT) else _place(case, process),
+        suggestion="Check the power, the loss coefficient with its unit, and the temperature outside.",
+    )
+
+
+def friction_gives_work(case: Case, process: str) -> Yielded:
+    """Yield friction that gives work, stated or found."""
+    pointer = f"processes/{process}/friction_work"
+    found = exchange.friction(case, process)
+    stated_out = [s for s in case.stated(pointer) if s.value > s.quantity.half_width]
+    if stated_out or (found is not None and found.size > found.tolerance):
+        shown = (
+            stated_out[0].quantity.text if stated_out else case.show(pointer, found.size if found else 0.0)
+        )
+        yield Raised(
+            f"Friction work of {shown} leaves the system by the work convention; friction only takes work in.",
+            statement=stated_out[0] if stated_out else None,
+            quantity=pointer,
+            place=None if stated_out else _place(case, process),
+            grade=None if stated_out or found is None else found.grade,
+            suggestion="State it as a work transfer `kind: friction, direction: in` with a positive number, or check "
+            "what else the balance lacks.",
+        )
 
 
 def rigid_fluid(case: Case, process: str) -> bool:
@@ -222,6 +259,26 @@ RULES: Final[tuple[Rule, ...]] = (
         "Several heat transfers of one process are unknown.",
         "One balance closes one unknown; how the rest was divided is not shown.",
         FIRST_LAW,
+    ),
+    Rule(
+        "temperature-out-of-reach",
+        out_of_reach,
+        Scope.PROCESS,
+        "energy",
+        Grade.DISCREPANCY,
+        "Powers and heat losses balance before the end temperature is reached.",
+        "The heater is too small, or a loss coefficient is wrong; no duration makes the process possible.",
+        "energy balance of a body at uniform temperature: dE/dt = P + UA·(T_out − T)",
+    ),
+    Rule(
+        "friction-gives-work",
+        friction_gives_work,
+        Scope.PROCESS,
+        "energy",
+        Grade.DISCREPANCY,
+        "Friction work leaves the system.",
+        "Its sign is turned round, so that friction counts as a gain of work and as destroyed entropy.",
+        "second law: friction turns work into internal energy, never the reverse",
     ),
     Rule(
         "totals-do-not-add-up",

@@ -16,6 +16,7 @@ ENERGY_TERMS: Final = (
     "boundary_work",
     "shaft_work",
     "electrical_work",
+    "friction_work",
     "internal_energy_change",
     "kinetic_energy_change",
     "potential_energy_change",

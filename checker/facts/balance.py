@@ -8,7 +8,7 @@ from checker.case import Case
 from checker.facts.deviation import NOISE, Deviation
 from checker.facts.spans import temperatures
 
-KINDS: Final = ("boundary_work", "shaft_work", "electrical_work")
+KINDS: Final = ("boundary_work", "shaft_work", "electrical_work", "friction_work")
 
 
 def energy_scale(case: Case, process: str) -> float:

@@ -29,7 +29,7 @@ def _runs_uphill(case: Case, c: Crossing) -> bool:
 
 def from_surroundings(case: Case, c: Crossing) -> bool:
     """Say whether the stated reservoir of a heat transfer is the surroundings."""
-    return c.reservoir is not None and is_surroundings(case, c.reservoir)
+    return c.reservoir is not None and not c.is_finite and is_surroundings(case, c.reservoir)
 
 
 def against_body(case: Case, process: Process) -> tuple[Crossing, ...]:
@@ -39,7 +39,7 @@ def against_body(case: Case, process: Process) -> tuple[Crossing, ...]:
     inside the boundary.
     """
     ctx, span = case.context(process.id), temperatures(case, process.id)
-    if ctx is None or len(ctx.bodies) != 1 or len(span) != 2 or not _bounded(case, process.id):
+    if ctx is None or len(ctx.bodies) != 1 or len(span) != 2 or not is_bounded(case, process.id):
         return ()
     slack = case.basis.allowances[Allowance.TEMPERATURE]
     low, high = min(span) - slack, max(span) + slack
@@ -51,12 +51,12 @@ def against_body(case: Case, process: Process) -> tuple[Crossing, ...]:
     )
 
 
-def _bounded(case: Case, process: str) -> bool:
-    others = (case.value(f"processes/{process}/{kind}") for kind in ("shaft_work", "electrical_work"))
-    if any(value != 0.0 for value in others):
-        return False
+def is_bounded(case: Case, process: str) -> bool:
+    """Say whether the end temperatures of a process are the extremes of what its one body has in between."""
     ctx = case.context(process)
     assert ctx is not None
+    if any(case.value(f"processes/{process}/{kind}") != 0.0 for kind in ctx.other_work_kinds):
+        return False
     return any_follows(case, process, *MONOTONIC) or is_incompressible(case, ctx.bodies[0])
 
 
@@ -66,7 +66,10 @@ def losses(case: Case, process: Process) -> tuple[Crossing, ...]:
     return tuple(
         c
         for c in crossings(case, process)
-        if c.heat < 0.0 and (from_surroundings(case, c) or (c.reservoir is None and _defaults(c, ambient)))
+        if c.heat < 0.0
+        and (
+            from_surroundings(case, c) or (c.reservoir is None and not c.is_finite and _defaults(c, ambient))
+        )
     )
 
 

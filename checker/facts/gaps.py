@@ -8,6 +8,7 @@ from typing import Final
 
 from checker.case import Case
 from checker.comparison.compare import Compared
+from checker.facts.exchange import NEVER_REACHED, unreachable
 from checker.facts.state_gaps import SEVERAL_BODIES, STATE_RULES, is_refused, state_gaps, unread
 from checker.facts.twins import CONSTANT, IDEAL, REAL
 from checker.findings import Outcome
@@ -184,6 +185,16 @@ def _unknowns(case: Case, process: Process) -> Iterator[Gap]:
     yield Gap("too-many-unknowns", base, process.place, reason, marks, f"{base}/")
 
 
+def _out_of_reach(case: Case) -> Iterator[Gap]:
+    """Yield end temperatures that powers and losses never lead to; a rule of its own reports them."""
+    for process in case.record.processes:
+        found = unreachable(case, process)
+        if found is not None:
+            base = f"processes/{process.id}"
+            reason = f"{NEVER_REACHED}: powers and losses balance before"
+            yield Gap("temperature-out-of-reach", base, process.place, reason, (NEVER_REACHED,), f"{base}/")
+
+
 def _surroundings(case: Case) -> Iterator[Gap]:
     for name, words in (("temperature", "temperature T₀"), ("pressure", "pressure p₀")):
         if case.given(f"surroundings/{name}") is None:
@@ -209,6 +220,7 @@ _SOURCES: Final[tuple[tuple[tuple[str, ...], Callable[[Case], Iterable[Gap]]], .
         ),
         _processes,
     ),
+    (("temperature-out-of-reach",), _out_of_reach),
     (("surroundings-not-stated",), _surroundings),
 )
 """Rules with what finds the gaps that they report; what no rule reports as a gap is reported by itself elsewhere."""

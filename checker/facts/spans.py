@@ -13,12 +13,16 @@ SAME_TEMPERATURE = 0.05
 
 @dataclass(frozen=True, slots=True)
 class Crossing:
-    """One heat transfer: heat positive into the system [J]; temperatures in K, None where not known."""
+    """One heat transfer: heat positive into the system [J]; temperatures at the start in K, None where not known.
+
+    ``is_finite``: the reservoir changes its temperature, so that it is not the surroundings.
+    """
 
     item: str
     heat: float
     boundary: float | None
     reservoir: float | None
+    is_finite: bool = False
 
     @property
     def pointer(self) -> str:
@@ -44,7 +48,9 @@ def crossings(case: Case, process: Process) -> tuple[Crossing, ...]:
         heat = case.value(f"{base}/energy")
         if heat is not None:
             boundary, reservoir = (case.given(f"{base}/{k}_temperature") for k in ("boundary", "reservoir"))
-            found.append(Crossing(item.id, heat, boundary, reservoir))
+            ctx = case.context(process.id)
+            finite = ctx is not None and ctx.has_finite_reservoir(base)
+            found.append(Crossing(item.id, heat, boundary, reservoir, finite))
     return tuple(found)
 
 

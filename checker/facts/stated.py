@@ -57,7 +57,9 @@ def heat(case: Case, process: str) -> Stated | None:
 
 def work(case: Case, process: str) -> Stated | None:
     """Return the stated work of a process: its total, else the sum of its kinds, each stated or none."""
-    kinds = ("boundary_work", "shaft_work", "electrical_work")
+    ctx = case.context(process)
+    others = ("shaft_work", "electrical_work") if ctx is None else ctx.other_work_kinds
+    kinds = ("boundary_work", *others)
     summed = total(_kind(case, process, kind) for kind in kinds)
     return one(case, f"processes/{process}/work") or summed
 

@@ -10,6 +10,7 @@ from checker.case import Case
 from checker.facts.stated import Stated, items, one, one_or_nothing, total
 from checker.sheet.cycles import SUMS
 from checker.submission import Process
+from checker.vocabulary import WORK_KINDS
 
 SHARED: Final = (
     "internal_energy_change",
@@ -49,12 +50,14 @@ def sums(case: Case) -> Iterator[Sum]:
 
 def _of_process(case: Case, process: Process) -> Iterator[Sum]:
     base = f"processes/{process.id}"
-    for what, kind in (("heat", ""), ("work", "boundary"), ("work", "shaft"), ("work", "electrical")):
+    for what, kind in (("heat", ""), *(("work", kind) for kind in WORK_KINDS)):
         pointer = f"{base}/{kind}_work" if kind else f"{base}/heat"
         stated, parts = one(case, pointer), items(case, process.id, what, kind)
         if stated is not None and parts is not None and len(parts.parts) > 1:
             yield Sum(pointer, stated, parts, f"the {what} transfers")
-    kinds = tuple(f"{base}/{kind}_work" for kind in ("boundary", "shaft", "electrical"))
+    ctx = case.context(process.id)
+    others = ("shaft_work", "electrical_work") if ctx is None else ctx.other_work_kinds
+    kinds = tuple(f"{base}/{name}" for name in ("boundary_work", *others))
     yield from _sum(case, f"{base}/work", kinds, "the kinds of work")
     if len(case.record.bodies) > 1:
         for name in SHARED:

@@ -22,6 +22,9 @@ NOT_IN_FORMULAS: Final = (
     "elevation",
     "boundary_temperature",
     "reservoir_temperature",
+    "final_boundary_temperature",
+    "final_reservoir_temperature",
+    "reservoir_heat_capacity",
 )
 """Inputs that serve a check, a rate, one end of a motion or an entropy, and need not enter a formula."""
 

@@ -81,8 +81,10 @@ def sum_at_system_step(ctx: ProcessContext, output: str) -> Step | None:
     Each of them depends on when its heat crosses, which nobody states; their sum along a quasi-static path does not.
     """
     items = ctx.external_heats or ()
-    if len(items) < 2 or not all(item.at_system for item in items) or not all(
-        ctx.is_quasi_static_for(body) for body in ctx.bodies
+    if (
+        len(items) < 2
+        or not all(item.at_system for item in items)
+        or not all(ctx.is_quasi_static_for(body) for body in ctx.bodies)
     ):
         return None
     works = tuple(ctx.key(name) for name in ctx.other_work_kinds)

@@ -124,9 +124,9 @@ class _Builder:
         )
 
     def _twice_told(self) -> Iterator[str]:
-        """Yield what the path (boundary work) or a linked record (mass) tells, whatever the inputs say."""
+        """Yield what path, reservoir, losses or a linked record (mass) tell, whatever the inputs say."""
         for ctx in self.contexts:
-            yield ctx.key("boundary_work")
+            yield from ctx.told_twice
         for link in self.leaves.links:
             if link.key.endswith("/mass"):
                 yield body_key(link.key.split("/")[3], "mass")

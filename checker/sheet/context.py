@@ -101,6 +101,15 @@ class ProcessContext:
         return self.is_given(f"{base}/heat_loss_coefficient") and not self.has_finite_reservoir(base)
 
     @property
+    def told_twice(self) -> tuple[str, ...]:
+        """Return the keys of quantities that are held against another formula where an input gives them."""
+        heats = {self.item_base("heat", item.id): item.id for item in self.external_heats or ()}
+        finite = [f"{base}/final_reservoir_temperature" for base in heats if self.has_finite_reservoir(base)]
+        timed = self.losses is not None
+        lost = [self.heat_item(item) for base, item in heats.items() if timed and self.loses_by_coefficient(base)]
+        return (self.key("boundary_work"), *((self.key("duration"),) if timed else ()), *finite, *lost)
+
+    @property
     def losses(self) -> LossPlan | None:
         """Return how time, powers and losses follow from one another, or None."""
         return loss_plan(self)

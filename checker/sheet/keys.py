@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterable
 from dataclasses import replace
 from functools import lru_cache
 from typing import Final
@@ -127,6 +128,11 @@ _HEADS: Final = {
     "assumptions": Level.ASSUMPTION,
     "surroundings": Level.SURROUNDINGS,
 }
+
+
+def symbols_of(names: Iterable[str], join: str) -> str:
+    """Return the symbols of totals of a process, joined: ``W_sh + W_el``."""
+    return join.join(term.symbol for name in names if (term := term_of(Level.PROCESS, name)) is not None)
 
 
 def given(pointer: str) -> str:

@@ -9,114 +9,11 @@ Second law for a closed system with several boundary temperatures.
 from __future__ import annotations
 
 from collections.abc import Iterator, Sequence
-from typing import Final
 
-from checker.outcomes import NotEvaluable
 from checker.sheet.balances import first_less_rest, less_text, sum_text, total
-from checker.sheet.keys import given, process_key, state_key
+from checker.sheet.keys import given, process_key
 from checker.sheet.step import Step
 from checker.submission import Process
-
-ONE_PLACE: Final = 0.3
-"""[K]: 298 K and 25 °C are written for one place (chosen, the default allowance of a temperature)."""
-
-
-def item_entropy_step(process: Process, item: str, energy: str) -> Step:
-    """Return Q_k/T_b,k at a stated boundary temperature."""
-    base = f"processes/{process.id}/heat_transfers/{item}"
-    return Step(
-        f"Entropy with heat transfer {item}, {process.id}",
-        (f"{base}/item_entropy",),
-        (energy, given(f"{base}/boundary_temperature")),
-        _per_temperature,
-        "Q_k/T_b,k",
-        "{0}/{1}",
-    )
-
-
-def item_entropy_at_system_step(
-    process: Process, item: str, energy: str, body: str, quasi_static: bool
-) -> Step:
-    """Return ∫δQ/T where heat crosses at the system's own temperature.
-
-    It equals ΔS where this is the only transfer besides quasi-static boundary work (``quasi_static``), and Q/T
-    where the temperature does not change; else it depends on when how much heat crosses, which nobody states.
-    """
-    base = f"processes/{process.id}/heat_transfers/{item}"
-    ends = (
-        state_key(process.from_state, body, "temperature"),
-        state_key(process.to_state, body, "temperature"),
-    )
-    alone = ("entropy_change", "shaft_work", "electrical_work") if quasi_static else ()
-    return Step(
-        f"Entropy with heat transfer {item}, {process.id}",
-        (f"{base}/item_entropy",),
-        (energy, *ends, *(process_key(process.id, name) for name in alone)),
-        _at_system,
-        "∫δQ/T = ΔS (heat at the system's temperature, quasi-static; Q_k/T with other work, T constant)"
-        if quasi_static
-        else "∫δQ/T = Q_k/T, T constant",
-        "" if quasi_static else "{0}/{1}",
-    )
-
-
-def _at_system(
-    heat: float, first: float, last: float, change: float | None = None, *other_works: float
-) -> tuple[float]:
-    if change is not None and not any(other_works):
-        return (change,)
-    if heat == 0.0:
-        return (0.0,)
-    if abs(first - last) > 1e-6 * first:
-        raise NotEvaluable(
-            "the system's temperature changes, and how the heat is spread over it is not stated"
-        )
-    return (heat / first,)
-
-
-def _per_temperature(heat: float, temperature: float) -> tuple[float]:
-    if temperature <= 0.0:
-        raise NotEvaluable("a boundary temperature must be above absolute zero")
-    return (heat / temperature,)
-
-
-def reservoir_step(process: Process, item: str, energy: str, boundary: Sequence[str], stated: bool) -> Step:
-    """Return Q_k/T_res,k: at the stated reservoir, else at the surroundings where that is the default.
-
-    The surroundings are the default where heat leaves at T_b ≥ T₀ or enters at T_b ≤ T₀ (design, section 2).
-    ``boundary`` holds the key of T_b, or of both end temperatures where heat crosses at the system's.
-    """
-    base = f"processes/{process.id}/heat_transfers/{item}"
-    output, title = (f"{base}/reservoir_entropy",), f"Entropy of the reservoir of {item}, {process.id}"
-    if stated:
-        return Step(
-            title,
-            output,
-            (energy, given(f"{base}/reservoir_temperature")),
-            _per_temperature,
-            "Q_k/T_res,k",
-            "{0}/{1}",
-        )
-
-    def at_surroundings(heat: float, ambient: float, *temperatures: float) -> tuple[float]:
-        leaves_warm = heat <= 0.0 and min(temperatures) >= ambient - ONE_PLACE
-        enters_cold = heat >= 0.0 and max(temperatures) <= ambient + ONE_PLACE
-        if not (leaves_warm or enters_cold):
-            raise NotEvaluable(
-                f"the reservoir of heat transfer {item} is not stated, and it cannot be the surroundings",
-                "missing",
-            )
-        return (heat / ambient,)
-
-    return Step(
-        title,
-        output,
-        (energy, given("surroundings/temperature"), *boundary),
-        at_surroundings,
-        "Q_k/T_res,k = Q_k/T₀",
-        "{0}/{1}",
-        assumes=f"{process.id}: heat transfer {item} meets the surroundings",
-    )
 
 
 def entropy_steps(process: Process, items: Sequence[str]) -> Iterator[Step]:

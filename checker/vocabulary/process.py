@@ -19,7 +19,8 @@ _PROCESS_ENERGY: Final[tuple[Term, ...]] = (
     energy(
         "friction_work",
         "W_fr",
-        "work that friction at the moving boundary turns into internal energy of the system",
+        "work that friction turns into internal energy of the system, at a piston out of its boundary work; "
+        "it always goes in",
         work_sign=True,
     ),
     energy("internal_energy_change", "ΔU", "change of internal energy"),

@@ -60,7 +60,8 @@ class HeatTransfer(Part):
         None, description="Temperature of what the heat comes from or goes to; at the start, if it changes."
     )
     final_boundary_temperature: Annotated[object, OneQuantity(Level.TRANSFER, BESIDE_INPUTS[2])] = Field(
-        None, description="Temperature at the end where the heat crosses, if it moves in proportion to the heat."
+        None,
+        description="Temperature at the end where the heat crosses, if it moves in proportion to the heat.",
     )
     final_reservoir_temperature: Annotated[object, OneQuantity(Level.TRANSFER, BESIDE_INPUTS[3])] = Field(
         None, description="Temperature at the end of a reservoir of finite heat capacity."
