@@ -64,6 +64,7 @@ _PAIRS: Final[dict[Pair, _Inputs]] = {
     (VOLUME, ENTHALPY): _Inputs("DmassHmass_INPUTS", volume=0),
     (VOLUME, ENTROPY): _Inputs("DmassSmass_INPUTS", volume=0),
 }
+_VAPOUR: Final = _PAIRS[(TEMPERATURE, VOLUME)]
 TRUSTED: Final = frozenset(_PAIRS)
 """The pairs with one root that the library finds. Not among them: what leaves an imposed phase behind (D,Q), (Q,S),
 (H,Q); what may hang (H,S); what takes the wrong root (T,S), (H,T), (T,U)."""
@@ -79,6 +80,13 @@ class Constants:
     limits: Limits
 
 
+def property_library() -> Any:
+    """Return the property library itself, for the adapters of mixtures and solutions; loaded on first use."""
+    from CoolProp import CoolProp  # costs more than everything else a review does
+
+    return CoolProp
+
+
 class Library:
     """One library state of one fluid."""
 
@@ -87,7 +95,7 @@ class Library:
         fluid = fluid_of(name)
         if backend not in (HELMHOLTZ, INDUSTRIAL):
             raise NotEvaluable(f"no property source is called {backend[:40]!r}", "not-supported")
-        from CoolProp import CoolProp
+        CoolProp = property_library()  # noqa: N806 - a module
 
         self.name = fluid.name
         self._state: Any = CoolProp.AbstractState(backend, fluid.library)
@@ -186,6 +194,20 @@ class Library:
         except _FAILURES:
             return None
         return pressure if math.isfinite(pressure) and pressure > 0.0 else None
+
+    def vapour(self, temperature: float, volume: float) -> Point:
+        """Return the vapour at a temperature [K] and specific volume [m³/kg], whether it is stable there or not.
+
+        For vapour among other gases, which may be colder than the triple point or a little supersaturated. No limit
+        of the equation is held here: the caller knows its own. Raises NotEvaluable where the equation has no value.
+        """
+        point = self._solved((TEMPERATURE, VOLUME), *_as_inputs(_VAPOUR, temperature, volume), GAS)
+        if point is None:
+            raise NotEvaluable(
+                f"the equation of state of {self.name} gives no vapour at {temperature:.6g} K and "
+                f"{volume:.6g} m³/kg"
+            )
+        return point
 
     def ideal_part(self, temperature: float) -> tuple[float, float, float]:
         """Return u [J/kg], s [J/(kg·K)] at v = 1 m³/kg and cv [J/(kg·K)] of the ideal gas at a temperature [K].

@@ -8,6 +8,7 @@ from functools import lru_cache
 from typing import Final
 
 from checker.outcomes import NotEvaluable
+from checker.substances.composition import read_composition, with_molar_mass
 from checker.substances.constant_heat import ConstantHeatCondensed, ConstantHeatGas
 from checker.substances.ideal_gas import IdealGas
 from checker.substances.interface import Substance
@@ -26,6 +27,8 @@ _INDUSTRIAL: Final = "industrial"
 _REFERENCE: Final = "reference"
 _WATER: Final = "Water"
 _CONTRADICTION: Final = 0.02
+_OF_MIXTURES: Final = ("real fluid", "ideal gas", "constant specific heat")
+"""Models to which a stated composition says what the substance is; the others state their properties."""
 _CONSTANTS: Final = (
     "specific_heat",
     "specific_heat_at_constant_volume",
@@ -97,8 +100,8 @@ def _bare(
     mixture: tuple[Composition, str],
     table: Table,
 ) -> Substance:
-    if mixture[0]:
-        return make_mixture(substance, model, *mixture)
+    if mixture[0] and model in _OF_MIXTURES:
+        return _mixture(substance, model, constants, mixture)
     if model == "tabulated":
         return make_tabulated(substance, constants, table)
     if model == "phase change":
@@ -114,6 +117,15 @@ def _bare(
     if model == "ideal gas":
         return _ideal(substance)
     raise NotEvaluable(f"no model is called {model[:40]!r}", "not-supported")
+
+
+def _mixture(
+    substance: str, model: str, constants: Mapping[str, float], mixture: tuple[Composition, str]
+) -> Substance:
+    if model != "constant specific heat":
+        return make_mixture(substance, model, *mixture)
+    known = with_molar_mass(constants, read_composition(*mixture), MOLAR_GAS_CONSTANT, _CONTRADICTION)
+    return constant_heat(substance, known)
 
 
 @lru_cache(maxsize=256)
