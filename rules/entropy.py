@@ -8,11 +8,13 @@ from typing import Final
 from checker.case import Case, Raised, Unchecked, Yielded
 from checker.facts import balance, boundaries, cycles, stated
 from checker.facts.deviation import Deviation
+from checker.facts.origins import is_destroyed_inside
 from checker.facts.spans import Crossing
-from checker.findings import Grade, Standing
+from checker.findings import Grade
 from checker.problems import Place
 from checker.submission import Process
 from checker.vocabulary import Allowance
+from rules.below_zero import stated_below_zero
 from rules.rule import Rule, Scope
 from rules.state import report_costly_gaps
 
@@ -29,7 +31,7 @@ def generation_negative(case: Case, process: str) -> Yielded:
 
 def generation_with_surroundings_negative(case: Case, process: str) -> Yielded:
     """Yield an entropy generation with the surroundings below zero that nothing else explains."""
-    if not _is_reported(case, process):
+    if not is_destroyed_inside(case, process):
         yield from _below_zero(case, process, "entropy_generation_with_surroundings")
 
 
@@ -41,13 +43,12 @@ def _below_zero(case: Case, process: str, name: str) -> Yielded:
     if found is not None and found.below:
         yield _impossible(case, process, pointer, found)
         return
-    for s in case.stated(pointer):
-        if s.value < -s.quantity.half_width and _stands_alone(case, pointer):
-            yield Raised(
-                f"{name.replace('_', ' ')}: {s.quantity.text} is stated, and entropy is not destroyed.",
-                statement=s,
-                suggestion="S_gen = ΔS − ΣQ/T_b: check the order of the difference and the sign of the heat.",
-            )
+    yield from stated_below_zero(
+        case,
+        pointer,
+        "entropy is not destroyed",
+        "S_gen = ΔS − ΣQ/T_b: check the order of the difference and the sign of the heat.",
+    )
 
 
 def _impossible(case: Case, process: str, pointer: str, found: Deviation) -> Raised:
@@ -63,18 +64,6 @@ def _impossible(case: Case, process: str, pointer: str, found: Deviation) -> Rai
         grade=found.grade,
         suggestion="Check the boundary temperatures, the sign of the heat and the states.",
     )
-
-
-def _is_reported(case: Case, process: str) -> bool:
-    """Say whether what the reservoirs destroy is reported for the system, or for a heat transfer, already."""
-    own = balance.generation(case, process, "entropy_generation")
-    return (own is not None and own.below) or bool(boundaries.uphill(case, _process(case, process)))
-
-
-def _stands_alone(case: Case, pointer: str) -> bool:
-    """Say whether a negative generation is reported nowhere else as inherited, and is not within its tolerance."""
-    key = case.key(pointer)
-    return all(c.standing not in (Standing.INHERITED, Standing.HOLDS) for c in case.compared if c.key == key)
 
 
 def _hint(case: Case, process: str) -> str:

@@ -6,14 +6,15 @@ from typing import Final
 
 from checker.case import Case, Raised, Yielded
 from checker.facts import stated
+from checker.facts.origins import DESTRUCTIONS, EXERGIES
 from checker.facts.spans import surroundings_temperature
-from checker.findings import Grade, Standing
+from checker.findings import Grade
 from checker.vocabulary import Allowance
+from rules.below_zero import stated_below_zero
 from rules.rule import Rule, Scope
 from rules.state import report_costly_gaps
 
 GOUY_STODOLA: Final = "Gouy-Stodola theorem: X_d = T₀·S_gen"
-NEVER_NEGATIVE: Final = ("exergy_destruction", "specific_exergy_destruction")
 
 
 def not_from_generation(case: Case, process: str) -> Yielded:
@@ -62,34 +63,24 @@ def not_closed(case: Case, process: str) -> Yielded:
 
 def destruction_negative(case: Case, process: str) -> Yielded:
     """Yield an exergy destruction stated below zero, where nothing above it is wrong."""
-    for name in NEVER_NEGATIVE:
-        pointer = f"processes/{process}/{name}"
-        for s in case.stated(pointer):
-            if s.value < -s.quantity.half_width and _stands_alone(case, pointer):
-                yield Raised(
-                    f"{name.replace('_', ' ')}: {s.quantity.text} is stated, and destroyed exergy is never negative.",
-                    statement=s,
-                    suggestion="Check the sign of the entropy generation and that of the work.",
-                )
+    for name in DESTRUCTIONS:
+        yield from stated_below_zero(
+            case,
+            f"processes/{process}/{name}",
+            "destroyed exergy is never negative",
+            "Check the sign of the entropy generation and that of the work.",
+        )
 
 
 def exergy_negative(case: Case, item: str) -> Yielded:
     """Yield a closed-system exergy of a state stated below zero, where nothing above it is wrong."""
-    for name in ("exergy", "specific_exergy"):
-        pointer = f"states/{item}/{name}"
-        for s in case.stated(pointer):
-            if s.value < -s.quantity.half_width and _stands_alone(case, pointer):
-                yield Raised(
-                    f"{name.replace('_', ' ')}: {s.quantity.text} is stated, and a state other than that of the "
-                    f"surroundings can always do work.",
-                    statement=s,
-                    suggestion="Closed-system exergy has p₀·(v − v₀) in it; flow exergy may be negative.",
-                )
-
-
-def _stands_alone(case: Case, pointer: str) -> bool:
-    key = case.key(pointer)
-    return all(c.standing not in (Standing.INHERITED, Standing.HOLDS) for c in case.compared if c.key == key)
+    for name in EXERGIES:
+        yield from stated_below_zero(
+            case,
+            f"states/{item}/{name}",
+            "a state other than that of the surroundings can always do work",
+            "Closed-system exergy has p₀·(v − v₀) in it; flow exergy may be negative.",
+        )
 
 
 RULES: Final[tuple[Rule, ...]] = (

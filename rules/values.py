@@ -3,15 +3,14 @@
 from __future__ import annotations
 
 from collections import defaultdict
-from collections.abc import Iterator
 from typing import Final
 
 from checker.case import Case, Raised, Yielded
 from checker.comparison.compare import Compared
 from checker.facts.gaps import unexplained
 from checker.facts.mass import contradicts_mass
+from checker.facts.origins import is_impossible, origins, spoiled_by
 from checker.facts.paths import any_follows
-from checker.facts.twins import is_incompressible
 from checker.facts.use import untraceable
 from checker.findings import Grade, Outcome, Standing
 from checker.submission import Role
@@ -20,13 +19,12 @@ from rules.rule import Rule, Scope
 
 def disagrees(case: Case) -> Yielded:
     """Yield one finding per origin, with everything that it spoiled."""
-    for group in _origins(case):
+    for group in origins(case):
         firm = [c for c in group if not c.explained_by_digits]
-        if not firm:
+        if not firm or is_impossible(case, firm[0]):
             continue
         first = firm[0]
-        others = tuple(c.statement.pointer for c in group if c is not first)
-        spoiled = tuple(dict.fromkeys((*others, *_spoiled_by(case, group))))
+        spoiled = spoiled_by(case, group, first)
         yield Raised(
             _message(case, first),
             compared=first,
@@ -39,16 +37,16 @@ def disagrees(case: Case) -> Yielded:
 
 def digits_explain(case: Case) -> Yielded:
     """Yield origins that open digits alone would explain."""
-    for group in _origins(case):
+    for group in origins(case):
         first = group[0]
-        if not all(c.explained_by_digits for c in group):
+        if not all(c.explained_by_digits for c in group) or is_impossible(case, first):
             continue
         yield Raised(
             f"{_message(case, first)} The digits that the inputs or the stated number leave open would explain it.",
             compared=first,
             theme=first.statement.term.theme,
             origin=True,
-            spoils=(*(c.statement.pointer for c in group[1:]), *_spoiled_by(case, group)),
+            spoils=spoiled_by(case, group, first),
             suggestion="State the inputs with the digits that were used, or correct the result.",
         )
 
@@ -88,7 +86,7 @@ def _reported_elsewhere(case: Case, pointer: str) -> bool:
 def rounded_early(case: Case) -> Yielded:
     """Yield results that follow from the originator's rounded numbers but not from the inputs."""
     for c in case.compared:
-        if c.standing is Standing.EARLY_ROUNDING:
+        if c.standing is Standing.EARLY_ROUNDING and not is_impossible(case, c):
             yield Raised(
                 f"{_message(case, c)} It follows from the rounded numbers stated before it.",
                 compared=c,
@@ -127,30 +125,6 @@ def not_recomputed(case: Case) -> Yielded:
             spoils=also,
             suggestion="State what is missing, or show the calculation that leads to it.",
         )
-
-
-def _origins(case: Case) -> Iterator[list[Compared]]:
-    """Yield groups of wrong results that start in one step, in document order."""
-    groups: dict[object, list[Compared]] = {}
-    for c in case.compared:
-        starts = c.standing in (Standing.ORIGIN, Standing.ORIGIN_UNKNOWN) and c.outcome is Outcome.WRONG
-        if starts and c.statement.role is Role.RESULT and not _asks_for_pressure(case, c):
-            step = case.plan.sheet.made_by.get(c.key)
-            groups.setdefault(step.outputs if step else c.key, []).append(c)
-    yield from groups.values()
-
-
-def _asks_for_pressure(case: Case, c: Compared) -> bool:
-    """Say whether a pressure is claimed of a model that has none: another rule says so in its own words."""
-    parts = c.statement.pointer.split("/")
-    return c.independent is None and parts[-1] == "pressure" and is_incompressible(case, parts[2])
-
-
-def _spoiled_by(case: Case, group: list[Compared]) -> Iterator[str]:
-    keys = {c.key for c in group}
-    for c in case.compared:
-        if c.standing is Standing.INHERITED and keys & set(c.inherits_from):
-            yield c.statement.pointer
 
 
 def _recomputed(case: Case, c: Compared) -> str:
