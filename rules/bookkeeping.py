@@ -282,20 +282,28 @@ RULES: Final[tuple[Rule, ...]] = (
     ),
     Rule(
         "several-bodies-not-closed",
-        report_gaps("several-bodies-not-closed", "Have the balance of this process checked by hand."),
+        report_gaps(
+            "several-bodies-not-closed",
+            "State one of the unknowns, that the bodies are in equilibrium, the volume that they share, a path, or the "
+            "heat and work of one body.",
+        ),
         Scope.RECORD,
         "bookkeeping",
         Grade.QUERY,
-        "A process has several bodies, whose common balance this version does not recompute.",
-        "What is not recomputed is said to be so, never passed over.",
+        "What is stated of several bodies holds fewer equations than unknowns.",
+        "A system is closed by as many independent equations as it has unknowns; fewer leave its states open.",
     ),
     Rule(
         "sequence-not-recomputed",
-        report_gaps("sequence-not-recomputed", "Have the balance of this sequence checked by hand."),
+        report_gaps(
+            "sequence-not-recomputed",
+            "State the path of each process, the stop at the end of all but the last, and the total heat or work or "
+            "a property of the last state.",
+        ),
         Scope.RECORD,
         "bookkeeping",
         Grade.QUERY,
-        "A balance over several processes starts from inputs of its own, which this version does not recompute.",
-        "What is not recomputed is said to be so, never passed over.",
+        "A sequence with stops lacks what it needs to be followed from its first state.",
+        "Where a path changes depends on when its stop is reached, and how far it goes on the total.",
     ),
 )

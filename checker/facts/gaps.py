@@ -14,8 +14,11 @@ from checker.facts.twins import CONSTANT, IDEAL, REAL
 from checker.findings import Outcome
 from checker.outcomes import NotEvaluable
 from checker.problems import Place
-from checker.submission import Body, Process, Role
+from checker.submission import Body, Process, Role, SequenceOfProcesses
 from checker.substances import knows_fluid
+
+STOPS: Final = ("lift_pressure", "stop_volume")
+"""What says where the path of a sequence changes."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -94,8 +97,15 @@ def _models(case: Case) -> Iterator[Gap]:
 
 
 def _states(case: Case) -> Iterator[Gap]:
+    lost_sequences = {gap.pointer for gap in _sequences(case)}
+    elsewhere = {
+        state
+        for sequence in case.record.sequences
+        if f"sequences/{sequence.id}" in lost_sequences
+        for state in _states_of(case, sequence)
+    }
     for g in state_gaps(case):
-        if g.rule != SEVERAL_BODIES:
+        if g.rule != SEVERAL_BODIES and g.state not in elsewhere:
             yield Gap(g.rule, g.pointer, g.place, g.reason, g.marks)
 
 
@@ -129,13 +139,27 @@ def _rule_of_model(body: Body, outcome: NotEvaluable) -> str:
 def _sequences(case: Case) -> Iterator[Gap]:
     for sequence in case.record.sequences:
         base = f"sequences/{sequence.id}"
-        inputs = [
-            s for s in case.record.statements if s.pointer.startswith(f"{base}/") and s.role is Role.INPUT
-        ]
-        if inputs:
-            names = ", ".join(s.term.name.replace("_", " ") for s in inputs)
-            reason = f"a balance over several processes that starts from {names} is not part of this version"
-            yield Gap("sequence-not-recomputed", base, sequence.place, reason, ("",), f"{base}/")
+        stops = [s.term.name for s in case.record.statements if s.pointer in (f"{base}/{n}" for n in STOPS)]
+        if stops and not _is_followed(case, sequence):
+            named = " and ".join(name.replace("_", " ") for name in stops)
+            reason = f"the sequence with its {named} could not be followed"
+            open_states = _states_of(case, sequence)
+            marks = (mark for g in state_gaps(case) if g.state in open_states for mark in g.marks)
+            yield Gap("sequence-not-recomputed", base, sequence.place, reason, ("sequence with", *marks))
+
+
+def _states_of(case: Case, sequence: SequenceOfProcesses) -> frozenset[str]:
+    """Return the states that a sequence leads to."""
+    return frozenset(p.to_state for p in case.record.processes if p.id in sequence.processes)
+
+
+def _is_followed(case: Case, sequence: SequenceOfProcesses) -> bool:
+    """Say whether the last state of a sequence is found."""
+    last = next((p for p in case.record.processes if p.id == sequence.processes[-1]), None)
+    bodies = [body for state, body in case.record.body_states if last is not None and state == last.to_state]
+    return last is not None and all(
+        case.value(f"states/{last.to_state}/{body}/temperature") is not None for body in bodies
+    )
 
 
 def _processes(case: Case) -> Iterator[Gap]:
@@ -146,22 +170,33 @@ def _processes(case: Case) -> Iterator[Gap]:
                 f"no body is described both in state {process.from_state} and in state {process.to_state}"
             )
             yield Gap("body-missing-in-state", base, process.place, reason, ("",), f"{base}/")
-        elif ctx is not None and len(ctx.bodies) > 1:
-            reason = f"the balance of {', '.join(ctx.bodies)} together is not part of this version"
-            states = (mark for g in state_gaps(case) if g.rule == SEVERAL_BODIES for mark in g.marks)
-            marks = ("several bodies: closing their balance", *states)
-            yield Gap(SEVERAL_BODIES, base, process.place, reason, marks, f"{base}/")
-        else:
-            yield from _one_body(case, process)
+            continue
+        yield from _several_bodies(case, process)
+        yield from _heats(case, process)
 
 
-def _one_body(case: Case, process: Process) -> Iterator[Gap]:
+def _several_bodies(case: Case, process: Process) -> Iterator[Gap]:
+    """Yield what several bodies lack to be closed together, once for each set of unknowns, at its first process."""
+    ends = (process.from_state, process.to_state)
+    for gap in state_gaps(case):
+        if gap.rule == SEVERAL_BODIES and process is _first_process(case, gap.state) and gap.state in ends:
+            base = f"processes/{process.id}"
+            yield Gap(SEVERAL_BODIES, base, process.place, gap.reason, gap.marks)
+
+
+def _first_process(case: Case, state: str) -> Process | None:
+    return next((p for p in case.record.processes if state in (p.from_state, p.to_state)), None)
+
+
+def _heats(case: Case, process: Process) -> Iterator[Gap]:
     base = f"processes/{process.id}"
     if process.heat_transfers is None:
         mark = f"heat transfers of {process.id} is not stated"
         reason = "no heat transfers are listed, so the entropy that goes with heat is not known"
         yield Gap("heat-transfers-not-stated", base, process.place, reason, (mark,), f"{base}/")
     for item in process.heat_transfers or ():
+        if item.is_internal:
+            continue
         own = f"{base}/heat_transfers/{item.id}"
         if not item.at_system and case.given(f"{own}/boundary_temperature") is None:
             mark = f"boundary temperature of {process.id}/heat_transfers/{item.id} is not stated"
@@ -178,7 +213,7 @@ def _unknowns(case: Case, process: Process) -> Iterator[Gap]:
     ctx = case.context(process.id)
     if ctx is None or ctx.unknown_heats < 2:
         return
-    unknown = [i.id for i in process.heat_transfers or () if not ctx.is_supplied("heat", i.id)]
+    unknown = [i.id for i in ctx.external_heats or () if not ctx.is_supplied("heat", i.id)]
     base = f"processes/{process.id}"
     marks = tuple(f"energy of {process.id}/heat_transfers/{name} is not stated" for name in unknown)
     reason = f"{len(unknown)} heat transfers are unknown ({', '.join(unknown)}), and one balance closes one unknown"

@@ -41,9 +41,11 @@ def temperatures(case: Case, process: str) -> tuple[float, ...]:
 
 
 def crossings(case: Case, process: Process) -> tuple[Crossing, ...]:
-    """Return the heat transfers of a process whose heat is known."""
+    """Return the heat transfers across the boundary of the whole system whose heat is known."""
     found = []
     for item in process.heat_transfers or ():
+        if item.is_internal:
+            continue
         base = f"processes/{process.id}/heat_transfers/{item.id}"
         heat = case.value(f"{base}/energy")
         if heat is not None:

@@ -9,6 +9,7 @@ from typing import Final
 from checker.case import Case
 from checker.outcomes import NotEvaluable
 from checker.problems import Place, Problem
+from checker.sheet.melting import UNTOLD
 from checker.submission import BodyState, Role, Statement
 from checker.substances.interface import Phase
 
@@ -74,14 +75,22 @@ def _lead(group: list[StateGap], order: list[str]) -> StateGap:
     first, *rest = sorted(group, key=rank)
     if not rest:
         return first
-    others = ", ".join(gap.state for gap in rest)
+    states = dict.fromkeys(gap.state for gap in rest if gap.state != first.state)
+    others = ", ".join(states) or f"{first.state} of {', '.join(gap.body for gap in rest)}"
     marks = tuple(mark for gap in (first, *rest) for mark in gap.marks)
     return replace(first, reason=f"{first.reason}; with it state {others} stays open", marks=marks)
 
 
 def _connected(case: Case, one: StateGap, other: StateGap) -> bool:
     ends = {one.state, other.state}
+    if one.rule == other.rule and _cause(one) == _cause(other):
+        return True  # one closing looked for both
     return one.body == other.body and any({p.from_state, p.to_state} == ends for p in case.record.processes)
+
+
+def _cause(gap: StateGap) -> str:
+    """Return the reason without the name of the state."""
+    return gap.reason.partition(" is not determined")[2] or gap.reason
 
 
 def _single(case: Case) -> Iterator[StateGap]:
@@ -108,7 +117,7 @@ def _rule(case: Case, found: BodyState, failure: NotEvaluable | None, reason: st
     quality = case.given(f"{base}quality")
     if quality is not None and not 0.0 <= quality <= 1.0:
         return "quality-outside-range"
-    near = REACHES_ACROSS in reason or (failure is not None and failure.kind == "near-saturation")
+    near = REACHES_ACROSS in reason or UNTOLD in reason or (failure is not None and failure.kind == "near-saturation")
     if near:
         return TWO_PHASE if _claims_two_phases(case, found) else "near-saturation"
     return RULE_OF_KIND.get(failure.kind, UNDETERMINED) if failure else UNDETERMINED

@@ -10,6 +10,7 @@ from checker.sheet.balances import STANDARD_GRAVITY, same_value
 from checker.sheet.keys import body_key, clue, given, state_key
 from checker.sheet.links import mass_steps
 from checker.sheet.models import BodyModel
+from checker.sheet.moist import water_content_steps
 from checker.sheet.states import EXTENSIVE, SYMBOLS
 from checker.sheet.step import Step, Value
 from checker.submission import Record
@@ -19,6 +20,7 @@ def body_steps(record: Record, body: str, model: BodyModel, first_state: str | N
     """Yield the candidates of one body, the mass first."""
     states = [state for state, name in record.body_states if name == body]
     yield from _mass_steps(record, body, states, first_state)
+    yield from water_content_steps(record, record.bodies[body])
     yield from _constant_steps(body, model)
     if first_state is not None:
         yield Step(

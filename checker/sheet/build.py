@@ -17,6 +17,7 @@ from checker.sheet.endstates import Neighbour, curve_steps, path_clues
 from checker.sheet.keys import body_key, clue, given, plain, state_key, term_for
 from checker.sheet.leaves import Leaves, collect
 from checker.sheet.links import link_clues
+from checker.sheet.melting import FRACTION, UNTOLD, melting_state
 from checker.sheet.models import BodyModel, body_model
 from checker.sheet.planner import explain, plan, prune
 from checker.sheet.processes import process_steps
@@ -163,7 +164,10 @@ class _Builder:
                 if made_by is not None:
                     self.candidates.append(made_by)
         solid = substance is not None and substance.incompressible
-        return StatePlan(state, body, model, tuple(clues), phase, self._barred(state, body, phase), solid)
+        melting = melting_state(self.record, state, body, substance, phase)
+        clues = [one for one in clues if melting is not None or one.name != FRACTION]
+        barred = self._barred(state, body, phase)
+        return StatePlan(state, body, model, tuple(clues), phase, barred, solid, melting)
 
     def _shared_clues(self, state: str, body: str) -> Iterator[Clue]:
         """Yield what a closing finds, and what bodies in equilibrium take from each other."""
@@ -275,7 +279,11 @@ class _Builder:
             for n in CALORIC
             if (k := state_key(state, body, n)) in self.leaves.unusable
         ]
-        if self._barred(state, body, self._phase_of(state, body)):
+        phase = self._phase_of(state, body)
+        melting = melting_state(self.record, state, body, self.substances[body], phase)
+        if melting is not None and not melting.stated_tells:
+            return f"{base}: T as stated is its melting temperature and {UNTOLD}; melted fraction, phase or u would"
+        if self._barred(state, body, phase):
             return f"{base}: T and p as stated reach across the saturation line; quality, phase, v or u would tell"
         if len(self.record.bodies) > 1 and (state, body) in self.short:
             return f"{base} is not determined: {self.short[state, body]}"

@@ -6,7 +6,7 @@ from collections.abc import Iterator, Sequence
 from typing import Final
 
 from checker.outcomes import NotEvaluable
-from checker.sheet.balances import sum_text, total
+from checker.sheet.balances import same_value, sum_text, total
 from checker.sheet.context import ProcessContext
 from checker.sheet.keys import given
 from checker.sheet.step import Step
@@ -104,12 +104,10 @@ def _per_work(useful: float, work: float) -> tuple[float]:
 
 
 def sequence_steps(record: Record, contexts: Sequence[ProcessContext]) -> Iterator[Step]:
-    """Yield the totals of every sequence that has no inputs of its own."""
+    """Yield the totals of every sequence: sums over its processes, and its own inputs where they stay open."""
     by_id = {ctx.process.id: ctx for ctx in contexts}
     for sequence in record.sequences:
         base = f"sequences/{sequence.id}"
-        if any(s.pointer.startswith(f"{base}/") and s.role is Role.INPUT for s in record.statements):
-            continue
         members = [by_id[name] for name in sequence.processes if name in by_id]
         if record.stated(f"{base}/{WITH_SURROUNDINGS}"):
             yield _destruction_with_surroundings(sequence.id)
@@ -122,6 +120,10 @@ def sequence_steps(record: Record, contexts: Sequence[ProcessContext]) -> Iterat
                 "sum over the sequence",
                 sum_text(len(members)),
             )
+        for name in (*SUMS, "lift_pressure", "stop_volume"):
+            key = f"{base}/{name}"
+            if record.stated(key, Role.INPUT):
+                yield same_value(key, given(key), f"{name.replace('_', ' ')}, {sequence.id}", "given")
 
 
 def _destruction_with_surroundings(sequence: str) -> Step:

@@ -6,7 +6,7 @@ direction.
 
 from __future__ import annotations
 
-from collections.abc import Callable, Iterator, Mapping
+from collections.abc import Callable, Iterator, Mapping, Sequence
 from dataclasses import dataclass
 from typing import Final
 
@@ -210,7 +210,8 @@ def _line_parameters(near: Neighbour) -> tuple[tuple[str, ...], Callable[..., Pa
     return (near.mass, *points), from_points
 
 
-def _neighbour_state(values: tuple[float, ...]) -> PropertyState:
+def full_state(values: Sequence[float]) -> PropertyState:
+    """Return a known state from its properties in the order of NEIGHBOUR."""
     t, p, v, u, h, s = values
     return PropertyState(t, p, v, u, h, s)
 
@@ -223,7 +224,7 @@ def _on_curve_step(near: Neighbour, plan: StatePlan, path: Path, one: Clue) -> S
     count = len(NEIGHBOUR)
 
     def find(*values: float) -> tuple[Value, ...]:
-        through = _neighbour_state(values[:count])
+        through = full_state(values[:count])
         parameters = assemble(*values[count + 1 : count + 1 + len(keys)])
         substance = plan.model.substance(values[count + 1 + len(keys) :])
         pressure = curve_of(through, parameters)
@@ -264,7 +265,7 @@ def _search_step(
     fixed = () if one is None else (one.key,)
 
     def find(*values: float) -> tuple[Value, ...]:
-        known = _neighbour_state(values[:count])
+        known = full_state(values[:count])
         mass, wanted, rest = values[count], values[count + 1], values[count + 2 :]
         spent, rest = sum(rest[: len(others)]), rest[len(others) :]
         clue_value, rest = (rest[0], rest[1:]) if one is not None else (0.0, rest)

@@ -3,11 +3,12 @@
 from __future__ import annotations
 
 from collections.abc import Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from typing import Final
 
 from checker.outcomes import NotEvaluable
 from checker.sheet.keys import body_key, given
+from checker.sheet.moist import WATER_CONTENT, needs_water_content, water_source
 from checker.submission import Body, Record, Role
 from checker.substances import make_substance
 from checker.substances.interface import PropertyState, Substance
@@ -31,23 +32,33 @@ CONSTANTS: Final = (
 
 @dataclass(frozen=True, slots=True)
 class BodyModel:
-    """The model of a body; ``parents`` are the leaves from which the substance is made."""
+    """The model of a body; ``parents`` are the keys from which the substance is made.
+
+    All are leaves but the water content of moist air, which a step gives; ``refusal`` says why it could not.
+    """
 
     body: Body
     constants: tuple[str, ...]
     nominal: tuple[float, ...]
+    refusal: NotEvaluable | None = None
 
     @property
     def parents(self) -> tuple[str, ...]:
         """Keys of the constants and of the two model factors."""
         return (
-            *(given(body_key(self.body.id, name)) for name in self.constants),
+            *(self._constant_key(name) for name in self.constants),
             factor_key(self.body.id, "density_factor"),
             factor_key(self.body.id, "caloric_factor"),
         )
 
+    def _constant_key(self, name: str) -> str:
+        key = body_key(self.body.id, name)
+        return key if name == WATER_CONTENT else given(key)
+
     def substance(self, values: Sequence[float]) -> Substance:
         """Return the substance for values of the parents. Raises NotEvaluable."""
+        if self.refusal is not None:
+            raise self.refusal
         *constants, density_factor, caloric_factor = values
         return make_substance(
             self.body.substance,
@@ -81,7 +92,22 @@ def body_model(record: Record, body: Body) -> BodyModel:
         for name in CONSTANTS
         if (found := record.stated(body_key(body.id, name), Role.INPUT))
     ]
-    return BodyModel(body, tuple(name for name, _ in stated), tuple(value for _, value in stated))
+    model = BodyModel(body, tuple(name for name, _ in stated), tuple(value for _, value in stated))
+    return _with_water(record, model) if needs_water_content(body) else model
+
+
+def _with_water(record: Record, model: BodyModel) -> BodyModel:
+    """Return the model of moist air with its water content, where the record tells it."""
+    source = water_source(record, model.body)
+    if source is None:
+        return model
+    try:
+        content = source.value()
+    except NotEvaluable as outcome:
+        return replace(model, refusal=outcome)
+    return replace(
+        model, constants=(*model.constants, WATER_CONTENT), nominal=(*model.nominal, content)
+    )
 
 
 def outputs_of(state: PropertyState) -> tuple[float | str | None, ...]:

@@ -67,7 +67,7 @@ class _Planner:
             for parent in set(step.parents):
                 self._users[parent].append(index)
         for index, state in enumerate(states):
-            for key in {clue.key for clue in state.clues}:
+            for key in {*(clue.key for clue in state.clues), *state.model.parents}:
                 self._clue_of[key].append(index)
 
     def learn(self, key: str) -> None:

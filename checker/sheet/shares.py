@@ -32,7 +32,7 @@ def heats_of_body(ctx: ProcessContext, body: str) -> list[Signed] | None:
         return [(given(share), 1.0)]
     if any(path.no_heat for path in ctx.paths_of(body)):
         return []
-    if ctx.process.heat_transfers is None and not ctx.process.insulated:
+    if ctx.process.heat_transfers is None:
         return None
     if any(item.body is None for item in ctx.external_heats or ()):
         return None

@@ -8,6 +8,7 @@ from typing import Final
 
 from checker.outcomes import NotEvaluable
 from checker.sheet.keys import STATE_OUTPUTS, clue, given, state_key
+from checker.sheet.melting import FRACTION, MeltingState
 from checker.sheet.models import BodyModel, outputs_of
 from checker.sheet.step import Function, Step, Value
 from checker.substances.interface import Phase
@@ -20,6 +21,7 @@ SYMBOLS: Final = {
     "specific_enthalpy": "h",
     "specific_entropy": "s",
     "quality": "x",
+    FRACTION: "f_m",
 }
 
 PAIRS: Final[tuple[tuple[str, str], ...]] = (
@@ -73,7 +75,8 @@ class Clue:
 class StatePlan:
     """Everything structural about one body in one state.
 
-    ``phase`` is the phase word among the inputs; ``barred`` are pairs that the stated digits do not support.
+    ``phase`` is the phase word among the inputs; ``barred`` are pairs that the stated digits do not support;
+    ``melting`` is what fixes the state of a body that melts.
     """
 
     state: str
@@ -83,6 +86,7 @@ class StatePlan:
     phase: Phase | None = None
     barred: frozenset[tuple[str, str]] = frozenset()
     incompressible: bool = False
+    melting: MeltingState | None = None
 
     @property
     def key(self) -> str:
@@ -109,7 +113,7 @@ def best_pair(plan: StatePlan, known: frozenset[str] | set[str]) -> tuple[Clue, 
         if one.key in known:
             usable.setdefault(one.name, one)
     if plan.incompressible:
-        return _one_clue(usable)
+        return _one_clue(plan.melting, usable)
     linked = tuple(one for one in plan.clues if one.linked and one.key in known)
     if len(linked) > 1:
         return linked
@@ -131,7 +135,11 @@ def _saturation_quality(plan: StatePlan, usable: dict[str, Clue]) -> tuple[Clue,
     return None if alone is None else (alone,)
 
 
-def _one_clue(usable: dict[str, Clue]) -> tuple[Clue, ...] | None:
+def _one_clue(melting: MeltingState | None, usable: dict[str, Clue]) -> tuple[Clue, ...] | None:
+    if melting is not None:
+        usable = _that_tell(melting, usable)
+        if FRACTION in usable:
+            return tuple(usable[name] for name in ("temperature", FRACTION, "pressure") if name in usable)
     names = ("temperature", "specific_internal_energy", "specific_entropy", "specific_enthalpy")
     first = next((usable[name] for name in names if name in usable), None)
     if first is None:
@@ -141,12 +149,22 @@ def _one_clue(usable: dict[str, Clue]) -> tuple[Clue, ...] | None:
     return None if first.name == "specific_enthalpy" else (first,)
 
 
+def _that_tell(melting: MeltingState, usable: dict[str, Clue]) -> dict[str, Clue]:
+    """Return the clues of a body that melts without a temperature that leaves open how much of it is melted."""
+    temperature = usable.get("temperature")
+    if temperature is None:
+        return usable
+    tells = melting.stated_tells if temperature.stated else melting.found_tells and FRACTION not in usable
+    return usable if tells else {name: one for name, one in usable.items() if name != "temperature"}
+
+
 def state_step(plan: StatePlan, pair: tuple[Clue, ...]) -> Step:
     """Return the step that evaluates a state from the given clues."""
     names = tuple(one.name for one in pair)
     symbols = ", ".join(SYMBOLS[name] for name in names)
     word = f", {plan.phase}" if plan.phase else ""
-    others = [SYMBOLS[name] for name in SYMBOLS if name not in names]
+    hidden = names if plan.melting is not None else (*names, FRACTION)
+    others = [SYMBOLS[name] for name in SYMBOLS if name not in hidden]
     return Step(
         title=f"State {plan.state} of {plan.body}",
         outputs=plan.outputs,

@@ -16,6 +16,7 @@ from checker.sheet.context import ProcessContext
 from checker.sheet.keys import body_key, state_key
 from checker.sheet.states import Clue, StatePlan
 from checker.sheet.step import Step
+from checker.sheet.stops import stop_steps
 from checker.submission import Record
 from checker.substances.interface import Substance
 
@@ -35,6 +36,8 @@ class Scene:
 
 def closing_steps(scene: Scene, open_states: Sequence[StatePlan], known: set[str]) -> Iterator[Step]:
     """Yield the steps that close what several states have in common, in the order in which they can be solved."""
+    for sequence in scene.record.sequences:
+        yield from stop_steps(sequence, scene.contexts, open_states, known)
     problem = assemble(scene, open_states, known)
     if problem is None or len(problem.unknowns) > MOST_UNKNOWNS:
         return
@@ -64,7 +67,7 @@ def shortage(scene: Scene, open_states: Sequence[StatePlan], known: set[str]) ->
         names = ", ".join(dict.fromkeys(e.name for e in held)) or "none"
         reason = (
             f"{_counted(len(group), 'unknown')} ({words}) and {_counted(len(held), 'equation')} ({names}): "
-            "one more input is needed"
+            f"{_counted(len(group) - len(held), 'more input')} needed"
         )
         for spot in (spot for i in group for spot in problem.unknowns[i].spots):
             found.setdefault(spot, reason)
@@ -72,7 +75,7 @@ def shortage(scene: Scene, open_states: Sequence[StatePlan], known: set[str]) ->
 
 
 def _counted(number: int, word: str) -> str:
-    return f"{number} {word}{'' if number == 1 else 's'}"
+    return f"{max(number, 1)} {word}{'' if number < 2 else 's'}"
 
 
 @dataclass(frozen=True, slots=True)
@@ -141,7 +144,9 @@ def assemble(scene: Scene, open_states: Sequence[StatePlan], known: set[str]) ->
     leaders, shared = _temperatures(charts, groups.values())
     unknowns, at = _unknowns(charts, leaders, shared, known)
     equations = [
-        e for e in _distinct(_equations(scene, charts, clues, groups, known)) if _is_usable(e, charts, known, at)
+        e
+        for e in _distinct(_equations(scene, charts, clues, groups, known))
+        if _is_usable(e, charts, known, at)
     ]
     incidence = [tuple(sorted(_touched(e, charts, leaders, at))) for e in equations]
     kept = [

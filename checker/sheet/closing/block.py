@@ -35,11 +35,11 @@ class Unknown:
 
     @property
     def words(self) -> str:
-        """The unknown in words, such as ``T of steel and water, end``."""
+        """The unknown in words, such as ``T of steel and water in end``."""
         if not self.spots:
             return f"m of {self.body}"
         bodies = " and ".join(body for _, body in self.spots)
-        return f"{SYMBOLS[self.name]} of {bodies}, {self.spots[0][0]}"
+        return f"{SYMBOLS[self.name]} of {bodies} in {self.spots[0][0]}"
 
     @property
     def outputs(self) -> tuple[str, ...]:

@@ -45,8 +45,12 @@ def usable_clues(plan: StatePlan, known: Set[str], processes: Set[str]) -> dict[
         source = one.key.partition("/")[0].partition("@")[2]
         if one.key in known and not (source in processes and one.name in FROM_BALANCE):
             found.setdefault(one.name, one)
+    if plan.melting is not None and not plan.melting.stated_tells:
+        found.pop(TEMPERATURE, None)
     if plan.barred and {TEMPERATURE, PRESSURE} <= found.keys():
-        del found[PRESSURE]  # their digits reach across the saturation line: together they tell no more than one
+        del found[
+            PRESSURE
+        ]  # their digits reach across the saturation line: together they tell no more than one
     return found
 
 
