@@ -224,6 +224,11 @@ def liquid_full(case: Case, process: str) -> Yielded:
             )
 
 
+def can_be_critical(case: Case, item: str) -> bool:
+    """Say whether a state belongs to a fluid with a critical point."""
+    return adequacy.has_critical_point(case, item.split("/")[1])
+
+
 def near_critical(case: Case, item: str) -> Yielded:
     """Yield states close to the critical point."""
     state, body = item.split("/")
@@ -294,6 +299,7 @@ RULES: Final[tuple[Rule, ...]] = (
         "Published uncertainties do not hold there, and the last digits of the inputs move the results.",
         OWN_EQUATION,
         needs=("temperature",),
+        when=can_be_critical,
     ),
     Rule(
         "ideal-gas-too-dense",

@@ -86,6 +86,12 @@ def has_constant_heat(case: Case, body: str) -> bool:
     return own is not None and own.model == CONSTANT
 
 
+def has_critical_point(case: Case, body: str) -> bool:
+    """Say whether a body is a real fluid whose equation has a critical point."""
+    substance = case.plan.substances.get(body)
+    return substance is not None and substance.model == REAL and substance.critical_point is not None
+
+
 def near_critical(case: Case, state: str, body: str) -> bool:
     """Say whether a state of a real fluid is so close to its critical point that properties are uncertain."""
     substance = case.plan.substances.get(body)
