@@ -14,6 +14,7 @@ class Level(StrEnum):
 
     BODY = "body"
     STATE = "state"
+    ROW = "row"
     PROCESS = "process"
     TRANSFER = "transfer"
     PATH = "path"

@@ -15,6 +15,7 @@ from checker.vocabulary import SYNONYMS, TERMS, Level
 LEVEL_WORDS: Final[dict[Level, str]] = {
     Level.BODY: "a body",
     Level.STATE: "a body in a state",
+    Level.ROW: "a row of a table",
     Level.PROCESS: "a process",
     Level.TRANSFER: "a heat or work transfer",
     Level.PATH: "a path",

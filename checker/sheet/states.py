@@ -108,6 +108,8 @@ def best_pair(plan: StatePlan, known: frozenset[str] | set[str]) -> tuple[Clue, 
 
     A link replaces inputs, so what it brings is used together, and never beside an input that may contradict it.
     """
+    if not all(key in known for key in plan.model.parents):
+        return None
     usable: dict[str, Clue] = {}
     for one in plan.clues:
         if one.key in known:

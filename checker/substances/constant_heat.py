@@ -6,11 +6,12 @@ Datum of both: u = 0 at 273.15 K; s = 0 at 273.15 K (the gas: and 100 kPa).
 from __future__ import annotations
 
 import math
-from collections.abc import Callable, Mapping
+from collections.abc import Mapping
 from dataclasses import dataclass
 from typing import ClassVar, Final
 
 from checker.outcomes import NotEvaluable
+from checker.substances.condensed import Condensed
 from checker.substances.interface import Phase, PropertyState, ValidRange
 from checker.substances.properties import (
     ENERGY,
@@ -20,7 +21,6 @@ from checker.substances.properties import (
     TEMPERATURE,
     VOLUME,
     Known,
-    checked_value,
     read_known,
 )
 from checker.substances.without_phases import WithoutPhases
@@ -43,16 +43,8 @@ def _positive(temperature: float) -> float:
     return temperature
 
 
-class _ConstantHeat(WithoutPhases):
-    """What both have in common."""
-
-    model: ClassVar[str] = "constant specific heat"
-    critical_point: ClassVar[tuple[float, float, float] | None] = None
-    valid_range: ClassVar[ValidRange | None] = None
-
-
 @dataclass(frozen=True)
-class ConstantHeatGas(_ConstantHeat):
+class ConstantHeatGas(WithoutPhases):
     """An ideal gas with constant cv [J/(kg·K)] and specific gas constant R [J/(kg·K)].
 
     u = cv (T − 273.15 K), h = u + R T, s = cv ln(T/273.15 K) + R ln(v/v°) with v° = R · 273.15 K / 100 kPa.
@@ -63,6 +55,9 @@ class ConstantHeatGas(_ConstantHeat):
     gas_constant: float
     molar_mass: float | None = None
 
+    model: ClassVar[str] = "constant specific heat"
+    critical_point: ClassVar[tuple[float, float, float] | None] = None
+    valid_range: ClassVar[ValidRange | None] = None
     incompressible: ClassVar[bool] = False
 
     @property
@@ -135,7 +130,7 @@ class ConstantHeatGas(_ConstantHeat):
 
 
 @dataclass(frozen=True)
-class ConstantHeatCondensed(_ConstantHeat):
+class ConstantHeatCondensed(Condensed):
     """A liquid or solid with constant specific heat c [J/(kg·K)] and constant specific volume [m³/kg], if stated.
 
     u = c (T − 273.15 K), s = c ln(T/273.15 K), h = u + p v where p and v are known. Temperature alone fixes u
@@ -147,8 +142,12 @@ class ConstantHeatCondensed(_ConstantHeat):
     specific_volume: float | None = None
     molar_mass: float | None = None
 
-    incompressible: ClassVar[bool] = True
-    gas_constant: ClassVar[float | None] = None
+    model: ClassVar[str] = "constant specific heat"
+
+    @property
+    def valid_range(self) -> ValidRange | None:
+        """None: a stated constant has no range of its own."""
+        return None
 
     @property
     def equation(self) -> str:
@@ -156,58 +155,21 @@ class ConstantHeatCondensed(_ConstantHeat):
         volume = "" if self.specific_volume is None else f", v = {self.specific_volume:.6g} m³/kg"
         return f"c = {self.heat_capacity:.6g} J/(kg·K) constant{volume}"
 
-    def state(self, known: Mapping[str, float], phase: Phase | None = None) -> PropertyState:
-        """Return the state with T, u, s, or h and p; with a pressure beside any of them.
+    def _energy(self, temperature: float) -> float:
+        return self.heat_capacity * (temperature - DATUM_TEMPERATURE)
 
-        Raises
-        ------
-        NotEvaluable
-            The properties do not fix a temperature, or would have to fix a pressure.
-        """
-        del phase
-        self.refuse_quality(known)
-        values = {name: checked_value(name, value) for name, value in known.items()}
-        pressure = values.pop(PRESSURE, None)
-        if len(values) != 1:
-            reason = self._too_many(values) if values else f"{self.name}: no temperature"
-            raise NotEvaluable(reason, "not-supported" if VOLUME in values else "missing")
-        ((name, value),) = values.items()
-        temperature = _positive(self._temperature(name, value, pressure))
-        return self._at(temperature, pressure)
+    def _entropy(self, temperature: float) -> float:
+        return self.heat_capacity * math.log(temperature / DATUM_TEMPERATURE)
 
-    def _too_many(self, values: Mapping[str, float]) -> str:
-        if VOLUME in values:
-            return (
-                f"{self.name} is modelled as incompressible: its specific volume fixes neither pressure nor "
-                "temperature; a temperature alone fixes its energy and entropy"
-            )
-        return f"one property beside the pressure fixes a state of {self.name}, not {len(values)}"
+    def _volume(self, temperature: float) -> float | None:
+        del temperature
+        return self.specific_volume
 
-    def states(self, known: Mapping[str, float]) -> tuple[PropertyState, ...]:
-        """Return the one state with these properties. Raises NotEvaluable."""
-        return (self.state(known),)
+    def _of_energy(self, energy: float) -> float:
+        return DATUM_TEMPERATURE + energy / self.heat_capacity
 
-    def _temperature(self, name: str, value: float, pressure: float | None) -> float:
-        inverse: dict[str, Callable[[], float]] = {
-            TEMPERATURE: lambda: value,
-            ENERGY: lambda: DATUM_TEMPERATURE + value / self.heat_capacity,
-            ENTROPY: lambda: DATUM_TEMPERATURE * _exponential(value / self.heat_capacity),
-            ENTHALPY: lambda: (
-                DATUM_TEMPERATURE + self._energy_of_enthalpy(value, pressure) / self.heat_capacity
-            ),
-        }
-        if name not in inverse:
-            raise NotEvaluable(self._too_many({name: value}), "not-supported")
-        return inverse[name]()
+    def _of_entropy(self, entropy: float) -> float:
+        return DATUM_TEMPERATURE * _exponential(entropy / self.heat_capacity)
 
-    def _energy_of_enthalpy(self, enthalpy: float, pressure: float | None) -> float:
-        if pressure is None or self.specific_volume is None:
-            raise NotEvaluable(f"the enthalpy of {self.name} needs a pressure and a density", "missing")
-        return enthalpy - pressure * self.specific_volume
-
-    def _at(self, temperature: float, pressure: float | None) -> PropertyState:
-        energy = self.heat_capacity * (temperature - DATUM_TEMPERATURE)
-        entropy = self.heat_capacity * math.log(temperature / DATUM_TEMPERATURE)
-        volume = self.specific_volume
-        enthalpy = None if pressure is None or volume is None else energy + pressure * volume
-        return PropertyState(temperature, pressure, volume, energy, enthalpy, entropy)
+    def _of_enthalpy(self, enthalpy: float, pressure: float | None) -> float:
+        return self._of_energy(self._enthalpy_less_flow(enthalpy, pressure, self.specific_volume))

@@ -10,19 +10,21 @@ from typing import Final
 from checker.outcomes import NotEvaluable
 from checker.substances.composition import read_composition, with_molar_mass
 from checker.substances.constant_heat import ConstantHeatCondensed, ConstantHeatGas
+from checker.substances.handbook import handbook_material
 from checker.substances.ideal_gas import IdealGas
 from checker.substances.interface import Substance
+from checker.substances.materials import material_of
 from checker.substances.melting import make_melting
 from checker.substances.mixtures import make_mixture
 from checker.substances.moist_air import is_moist_air, make_moist_air
 from checker.substances.names import fluid_of, knows_fluid
 from checker.substances.perturbed import PerturbedSubstance
+from checker.substances.properties import MOLAR_GAS_CONSTANT as MOLAR_GAS_CONSTANT
+from checker.substances.properties import positive_constant
 from checker.substances.real_fluid import IndustrialWater, RealFluid
 from checker.substances.solutions import is_solution, make_solution
 from checker.substances.tabulated import make_tabulated
 
-MOLAR_GAS_CONSTANT: Final = 8.314462618
-"""[J/(mol·K)] CODATA 2018, exact by the SI."""
 _INDUSTRIAL: Final = "industrial"
 _REFERENCE: Final = "reference"
 _WATER: Final = "Water"
@@ -38,6 +40,7 @@ _CONSTANTS: Final = (
     "density",
     "specific_volume",
 )
+_OF_VOLUME: Final = {"density", "specific_volume"}
 _OF_A_GAS: Final = {"specific_heat_at_constant_volume", "gas_constant"}
 Composition = tuple[tuple[str, float], ...]
 """Substances with their fractions."""
@@ -90,6 +93,11 @@ def make_substance(
         if not (math.isfinite(factor) and factor > 0.0):
             raise NotEvaluable("a factor on a property must be positive", "missing")
     return PerturbedSubstance(bare, density_factor, caloric_factor)
+
+
+def knows_substance(name: str) -> bool:
+    """Say whether a name is a fluid of the table, a solution or moist air: what needs no constants of its own."""
+    return knows_fluid(name) or is_solution(name) or is_moist_air(name)
 
 
 def _bare(
@@ -151,20 +159,24 @@ def constant_heat(substance: str, constants: Mapping[str, float]) -> Substance:
     """Return a gas, liquid or solid with a constant specific heat.
 
     ``specific_heat`` makes a liquid or solid; cp or cv make a gas (of which two of cp, cv and R are needed, R also
-    from a molar mass, stated or of the fluid), cp with a density but no cv and no R a liquid.
+    from a molar mass, stated or of the fluid), cp with a density but no cv and no R a liquid. A material of the
+    handbook table of which none of these is stated has the specific heat of the table.
 
     Raises
     ------
     NotEvaluable
         Constants are missing or contradict each other.
     """
-    stated = {name: _positive(name, constants[name]) for name in _CONSTANTS if name in constants}
+    stated = {name: positive_constant(name, constants[name]) for name in _CONSTANTS if name in constants}
     heat = stated.get("specific_heat")
     if heat is not None and _OF_A_GAS & set(stated):
         raise NotEvaluable(
             f"{substance[:40]}: a specific heat c makes a liquid or solid, c_v or R make a gas; both are stated",
             "no-solution",
         )
+    if not set(stated) - _OF_VOLUME and (material := material_of(substance)) is not None:
+        volume = _volume(stated)
+        return handbook_material(substance, material, None if volume is None else 1.0 / volume)
     if heat is None and _is_condensed(stated):
         heat = stated["specific_heat_at_constant_pressure"]
     if heat is not None:
@@ -175,15 +187,9 @@ def constant_heat(substance: str, constants: Mapping[str, float]) -> Substance:
 def _is_condensed(stated: Mapping[str, float]) -> bool:
     return (
         "specific_heat_at_constant_pressure" in stated
-        and bool({"density", "specific_volume"} & set(stated))
+        and bool(_OF_VOLUME & set(stated))
         and not (_OF_A_GAS | {"molar_mass"}) & set(stated)
     )
-
-
-def _positive(name: str, value: float) -> float:
-    if not (math.isfinite(value) and value > 0.0):
-        raise NotEvaluable(f"the {name.replace('_', ' ')} must be positive, not {value:.6g}", "no-solution")
-    return float(value)
 
 
 def _volume(stated: Mapping[str, float]) -> float | None:

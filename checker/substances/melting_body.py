@@ -145,10 +145,10 @@ class Melting(Condensed):
                 f"the melted fraction and {name.replace('_', ' ')} of {self.name} both fix its state",
                 "missing",
             )
-        if abs(temperature - melting) <= SLACK:
-            return self._at(melting, pressure, fraction)
         if (fraction == 0.0 and temperature < melting) or (fraction == 1.0 and temperature > melting):
             return self._at(temperature, pressure)
+        if abs(temperature - melting) <= SLACK:
+            return self._at(melting, pressure, fraction)
         raise NotEvaluable(
             f"{self.name} has the melted fraction {fraction:.4g} at {melting:.6g} K and not at {temperature:.6g} K"
         )

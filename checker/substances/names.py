@@ -41,7 +41,8 @@ class Fluid(NamedTuple):
     equation: str
 
 
-def _rows(file: str) -> list[list[str]]:
+def table_rows(file: str) -> list[list[str]]:
+    """Return the cells of one of the text tables beside this module, without comments and empty lines."""
     from importlib import resources
 
     text = resources.files(__package__).joinpath(file).read_text(encoding="utf-8")
@@ -52,10 +53,10 @@ def _rows(file: str) -> list[list[str]]:
 @lru_cache(maxsize=1)
 def _table() -> tuple[dict[str, Fluid], dict[str, str]]:
     """Return folded name → fluid, and folded name → the spelling for suggestions."""
-    equations = dict(_rows("equations.txt"))
+    equations = dict(table_rows("equations.txt"))
     fluids: dict[str, Fluid] = {}
     spellings: dict[str, str] = {}
-    for library, name, grams, kind, key, synonyms in _rows("fluids.txt"):
+    for library, name, grams, kind, key, synonyms in table_rows("fluids.txt"):
         fluid = Fluid(library, name, float(grams) / 1000.0, kind == "pure", equations[key])
         for spelling in (name, library, *filter(None, (word.strip() for word in synonyms.split(";")))):
             fluids.setdefault(fold(spelling), fluid)

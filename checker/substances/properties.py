@@ -8,6 +8,9 @@ from typing import Final, NamedTuple
 
 from checker.outcomes import NotEvaluable
 
+MOLAR_GAS_CONSTANT: Final = 8.314462618
+"""[J/(mol·K)] CODATA 2018, exact by the SI."""
+
 TEMPERATURE: Final = "temperature"
 PRESSURE: Final = "pressure"
 VOLUME: Final = "specific_volume"
@@ -15,6 +18,8 @@ ENERGY: Final = "specific_internal_energy"
 ENTHALPY: Final = "specific_enthalpy"
 ENTROPY: Final = "specific_entropy"
 QUALITY: Final = "quality"
+MELTED: Final = "melted_fraction"
+"""Fixes a state of a body that melts, and of no other."""
 
 ORDER: Final = (TEMPERATURE, PRESSURE, VOLUME, ENERGY, ENTHALPY, ENTROPY, QUALITY)
 INDEX: Final = {name: index for index, name in enumerate(ORDER)}
@@ -74,7 +79,7 @@ def checked_value(name: object, value: object) -> float:
     NotEvaluable
         The name is no property, or the value is no finite number or physically impossible.
     """
-    if not isinstance(name, str) or name not in INDEX:
+    if not isinstance(name, str) or (name not in INDEX and name != MELTED):
         raise NotEvaluable(f"{str(name)[:40]!r} is not a property that fixes a state", "missing")
     if isinstance(value, bool) or not isinstance(value, int | float):
         raise NotEvaluable(f"the {name.replace('_', ' ')} is not a number", "missing")
@@ -86,8 +91,8 @@ def checked_value(name: object, value: object) -> float:
         raise NotEvaluable(f"the {name.replace('_', ' ')} is not a finite number")
     if name in (TEMPERATURE, PRESSURE, VOLUME) and number <= 0.0:
         raise NotEvaluable(f"{in_words(name, number)}: absolute values are positive")
-    if name == QUALITY and not 0.0 <= number <= 1.0:
-        raise NotEvaluable(f"quality {number:.6g} is not between 0 and 1")
+    if name in (QUALITY, MELTED) and not 0.0 <= number <= 1.0:
+        raise NotEvaluable(f"{name.replace('_', ' ')} {number:.6g} is not between 0 and 1")
     return number
 
 
@@ -101,6 +106,17 @@ def read_known(known: Mapping[str, float]) -> Known:
     """
     if len(known) != 2:
         raise NotEvaluable(f"two independent properties fix a state, not {len(known)}", "missing")
+    if MELTED in known:
+        raise NotEvaluable(
+            "a melted fraction fixes no state of this model: it does not melt", "not-supported"
+        )
     values = {name: checked_value(name, value) for name, value in known.items()}
     first, second = sorted(values, key=INDEX.__getitem__)
     return Known((first, second), values[first], values[second])
+
+
+def positive_constant(name: str, value: float) -> float:
+    """Return a constant of a model. Raises NotEvaluable where it is not a positive number."""
+    if not (math.isfinite(value) and value > 0.0):
+        raise NotEvaluable(f"the {name.replace('_', ' ')} must be positive, not {value:.6g}", "no-solution")
+    return float(value)

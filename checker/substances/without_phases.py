@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 from collections.abc import Mapping
-from typing import ClassVar
 
 from checker.outcomes import NotEvaluable
 from checker.substances.interface import ModelUncertainty, PropertyState
@@ -14,7 +13,10 @@ from checker.substances.uncertainty import EXACT
 class WithoutPhases:
     """The saturation half of the interface for a model that does not condense."""
 
-    uncertainty: ClassVar[ModelUncertainty] = EXACT
+    @property
+    def uncertainty(self) -> ModelUncertainty:
+        """Published uncertainty of the model: none, where it is exact by its own definition."""
+        return EXACT
 
     def saturation(self, known: Mapping[str, float]) -> tuple[PropertyState, PropertyState]:
         """Raise NotEvaluable: the model has no phases."""

@@ -28,7 +28,7 @@ from checker.vocabulary.common import (
 )
 from checker.vocabulary.process import PER_MASS as PER_MASS
 from checker.vocabulary.process import PROCESS
-from checker.vocabulary.state import STATE
+from checker.vocabulary.state import ROW, STATE
 
 TRANSFER: Final[tuple[Term, ...]] = (
     energy("energy", "E_k", "energy of this transfer"),
@@ -137,6 +137,7 @@ ASSUMPTION: Final[tuple[Term, ...]] = (
             "characteristic_length",
             "mass",
             "specific_heat",
+            "density",
         }
     ),
     replace(
@@ -158,6 +159,7 @@ TERMS: Final[dict[Level, dict[str, Term]]] = {
     for level, terms in (
         (Level.BODY, BODY),
         (Level.STATE, STATE),
+        (Level.ROW, ROW),
         (Level.PROCESS, PROCESS),
         (Level.TRANSFER, TRANSFER),
         (Level.PATH, PATH),
@@ -185,6 +187,15 @@ SYNONYMS: Final[dict[Level, dict[str, str]]] = {
         "x": "quality",
         "V": "volume",
     },
+    Level.ROW: {
+        "T": "temperature",
+        "v": "specific_volume",
+        "u": "specific_internal_energy",
+        "h": "specific_enthalpy",
+        "s": "specific_entropy",
+        "cp": "specific_heat_at_constant_pressure",
+        "cv": "specific_heat_at_constant_volume",
+    },
     Level.PROCESS: {"Q": "heat", "W": "work"},
     Level.SEQUENCE: {"Q": "heat", "W": "work"},
     Level.SURROUNDINGS: {"T": "temperature", "p": "pressure"},
@@ -209,7 +220,7 @@ MODELS: Final[tuple[str, ...]] = (
     "tabulated",
     "phase change",
 )
-WORK_KINDS: Final[tuple[str, ...]] = ("boundary", "shaft", "electrical")
+WORK_KINDS: Final[tuple[str, ...]] = ("boundary", "shaft", "electrical", "friction")
 WORK_CONVENTIONS: Final[tuple[str, ...]] = ("positive out", "positive in")
 
 

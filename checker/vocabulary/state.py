@@ -1,4 +1,4 @@
-"""What may be stated of a body in a state."""
+"""What may be stated of a body in a state, and in a row of a table of its properties."""
 
 from __future__ import annotations
 
@@ -6,7 +6,7 @@ from typing import Final
 
 from checker.quantity import dimensions as dim
 from checker.term import Allowance, Term
-from checker.vocabulary.common import DENSITY, PRESSURE, TEMPERATURE, VOLUME
+from checker.vocabulary.common import DENSITY, PRESSURE, TEMPERATURE, VOLUME, heat_capacity
 
 STATE: Final[tuple[Term, ...]] = (
     TEMPERATURE,
@@ -70,7 +70,6 @@ STATE: Final[tuple[Term, ...]] = (
         dim.NONE,
         "",
         "mass of water vapour per mass of dry air",
-        allowance=Allowance.FRACTION,
     ),
     Term(
         "melted_fraction",
@@ -80,4 +79,19 @@ STATE: Final[tuple[Term, ...]] = (
         "part of the mass that is melted",
         allowance=Allowance.FRACTION,
     ),
+)
+
+_TABLED: Final = (
+    "temperature",
+    "specific_volume",
+    "density",
+    "specific_internal_energy",
+    "specific_enthalpy",
+    "specific_entropy",
+)
+ROW: Final[tuple[Term, ...]] = (
+    *(term for term in STATE if term.name in _TABLED),
+    heat_capacity("specific_heat", "c", "specific heat capacity of a solid or liquid at this temperature"),
+    heat_capacity("specific_heat_at_constant_volume", "c_v", "c_v at this temperature"),
+    heat_capacity("specific_heat_at_constant_pressure", "c_p", "c_p at this temperature"),
 )

@@ -68,10 +68,10 @@ def _row(
     """Return one row of a table: name → quantity."""
     quantities = {}
     for written, text in row.items():
-        key = canonical(Level.STATE, written)
-        term = TERMS[Level.STATE].get(key)
-        if term is None or term.text:
-            spot = Spot(Level.STATE, f"bodies/{name}/table/{number}", place)
+        key = canonical(Level.ROW, written)
+        term = TERMS[Level.ROW].get(key)
+        if term is None:
+            spot = Spot(Level.ROW, f"bodies/{name}/table/{number}", place)
             desk.unknown(spot, written, text, (*place, written))
         elif text is not None:
             read = desk.read(text, term, (*place, written), f"bodies/{name}/table/{number}/{key}")

@@ -14,7 +14,7 @@ MAX_ROWS = 2000
 """Most rows of a table of properties."""
 
 BodyNames = Annotated[Quantities, Names("BodyQuantities", Level.BODY)]
-TableRow = Annotated[Quantities, Names("TableRow", Level.STATE, without=("phase",))]
+TableRow = Annotated[Quantities, Names("TableRow", Level.ROW)]
 Model = Annotated[str, Word(MODELS, "a model")]
 _DATUM_SYMBOLS = tuple(s for s, name in SYNONYMS[Level.STATE].items() if name in DATUM_NAMES)
 DatumName = Annotated[str, Word((*DATUM_NAMES, *_DATUM_SYMBOLS), "a property with a zero point")]

@@ -36,8 +36,6 @@ def test_each_model_word_makes_its_model() -> None:
     [
         ("Unobtainium", "real fluid", {}, "reference", "no fluid named"),
         ("Nitrogin", "ideal gas", {}, "reference", "Nitrogen"),
-        ("Water", "tabulated", {}, "reference", "not recomputed yet"),
-        ("Water", "phase change", {}, "reference", "not recomputed yet"),
         ("Water", "perfect", {}, "reference", "no model is called"),
         ("Water", "real fluid", {}, "hearsay", "no property source"),
         ("Nitrogen", "real fluid", {}, "industrial", "one for water"),

@@ -8,7 +8,7 @@ from hypothesis import given, settings
 from hypothesis import strategies as st
 
 from checker.outcomes import NotEvaluable
-from checker.substances.names import _rows, all_fluids, fluid_of, fold, knows_fluid, nearest_fluids
+from checker.substances.names import all_fluids, fluid_of, fold, knows_fluid, nearest_fluids, table_rows
 
 PSEUDO_PURE = {"Air", "R404A", "R407C", "R410A", "R507A", "SES36"}
 
@@ -34,7 +34,7 @@ def test_molar_mass_and_kind_are_those_of_the_library() -> None:
 def test_equation_keys_are_those_of_the_library() -> None:
     """The citation in a report is that of the equation which the library uses."""
     compared = 0
-    for row in _rows("fluids.txt"):
+    for row in table_rows("fluids.txt"):
         assert CoolProp.get_BibTeXKey(row[0], "EOS").split(",")[0] == row[4], row[0]
         compared += 1
     assert compared == 136
@@ -43,7 +43,7 @@ def test_equation_keys_are_those_of_the_library() -> None:
 def test_no_name_means_two_fluids() -> None:
     """After folding, every spelling of the table still belongs to one fluid."""
     owner: dict[str, str] = {}
-    for library, name, _, _, _, synonyms in _rows("fluids.txt"):
+    for library, name, _, _, _, synonyms in table_rows("fluids.txt"):
         for spelling in (name, library, *filter(None, synonyms.split(";"))):
             assert owner.setdefault(fold(spelling), library) == library, spelling
     assert len(owner) > 300
