@@ -49,7 +49,7 @@ def not_closed(case: Case, process: str) -> Yielded:
 def inputs_overdetermined(case: Case, process: str) -> Yielded:
     """Yield inputs that give all terms of the energy balance and do not close it."""
     residual = balance.energy_residual(case, process)
-    if residual is not None and residual.beyond:
+    if residual is not None and residual.beyond and not exchange.rubs_reversibly(case, process):
         pointer = f"processes/{process}/energy_change"
         yield Raised(
             f"The inputs give all terms of the energy balance, and leave "
@@ -99,8 +99,9 @@ def out_of_reach(case: Case, process: str) -> Yielded:
     pointer = f"states/{found.state}/{found.body}/temperature"
     powers = f"{case.show(found.power, found.supplied)} and " if found.supplied else ""
     yield Raised(
-        f"With {powers}the losses of {', '.join(found.losses)} {found.body} settles at "
-        f"{case.show(pointer, found.settles)}; {case.show(pointer, found.temperature)} is never reached.",
+        f"With {powers}the heat through {', '.join(found.losses)}, {found.body} settles at "
+        f"{case.show(pointer, found.settles)}; {case.show(pointer, found.temperature)} is never "
+        f"{'held' if found.stays else 'reached'}.",
         statement=next(iter(case.stated(pointer, Role.INPUT)), None),
         quantity=pointer,
         place=None if case.stated(pointer, Role.INPUT) else _place(case, process),
@@ -112,17 +113,15 @@ def friction_gives_work(case: Case, process: str) -> Yielded:
     """Yield friction that gives work, stated or found."""
     pointer = f"processes/{process}/friction_work"
     found = exchange.friction(case, process)
-    stated_out = [s for s in case.stated(pointer) if s.value > s.quantity.half_width]
-    if stated_out or (found is not None and found.size > found.tolerance):
-        shown = (
-            stated_out[0].quantity.text if stated_out else case.show(pointer, found.size if found else 0.0)
-        )
+    outward = next((s for s in case.stated(pointer) if s.value > s.quantity.half_width), None)
+    if outward is not None or (found is not None and found.size > found.tolerance):
+        shown = outward.quantity.text if outward else case.show(pointer, case.value(pointer) or 0.0)
         yield Raised(
             f"Friction work of {shown} leaves the system by the work convention; friction only takes work in.",
-            statement=stated_out[0] if stated_out else None,
+            statement=outward,
             quantity=pointer,
-            place=None if stated_out else _place(case, process),
-            grade=None if stated_out or found is None else found.grade,
+            place=_place(case, process) if outward is None else None,
+            grade=found.grade if outward is None and found is not None else None,
             suggestion="State it as a work transfer `kind: friction, direction: in` with a positive number, or check "
             "what else the balance lacks.",
         )

@@ -6,7 +6,7 @@ from collections.abc import Callable
 from typing import Final
 
 from checker.case import Case, Raised, Unchecked, Yielded
-from checker.facts import balance, boundaries, cycles, stated
+from checker.facts import balance, boundaries, cycles, exchange, stated
 from checker.facts.deviation import Deviation
 from checker.facts.origins import is_destroyed_inside
 from checker.facts.spans import Crossing
@@ -124,6 +124,30 @@ def heat_runs_uphill(case: Case, process: str) -> Yielded:
             )
 
 
+def finite_reservoir_impossible(case: Case, process: str) -> Yielded:
+    """Yield finite reservoirs that warm while they give heat, or end beyond what they heat or cool."""
+    for found in exchange.backwards(case, _process(case, process)):
+        base = f"processes/{process}/heat_transfers/{found.item.id}"
+        heat = case.show(f"{base}/energy", abs(found.heat))
+        ends = [case.show(f"{base}/final_reservoir_temperature", t) for t in (found.first, found.last)]
+        gives = "gives" if found.heat > 0.0 else "takes"
+        if found.limit is None:
+            message = f"The reservoir of {found.item.id} {gives} {heat} and goes from {ends[0]} to {ends[1]}."
+        else:
+            limit = case.show(f"{base}/final_reservoir_temperature", found.limit)
+            message = (
+                f"The reservoir of {found.item.id} {gives} {heat} and ends at {ends[1]}, with {found.against} at "
+                f"{limit}: the last of this heat runs uphill."
+            )
+        yield Raised(
+            message,
+            quantity=base,
+            place=found.item.place,
+            suggestion="Check its heat capacity and both temperatures; of a stream or a stratified store state how the "
+            "boundary temperature moves.",
+        )
+
+
 def boundary_implausible(case: Case, process: str) -> Yielded:
     """Yield heat that crosses where the body is never that cold (entering) or that hot (leaving)."""
     generated = balance.generation(case, process, "entropy_generation")
@@ -239,6 +263,16 @@ RULES: Final[tuple[Rule, ...]] = (
         Grade.DISCREPANCY,
         "Heat runs from a colder reservoir into a hotter boundary, or the reverse.",
         "By itself heat goes from hot to cold; a sum over other terms can hide that it does not.",
+        CLAUSIUS,
+    ),
+    Rule(
+        "finite-reservoir-impossible",
+        finite_reservoir_impossible,
+        Scope.PROCESS,
+        "entropy",
+        Grade.DISCREPANCY,
+        "A finite reservoir ends colder than what it heats, hotter than what it cools, or changes the wrong way.",
+        "So much heat does not leave it by itself; a sum over the whole process can hide that its end is impossible.",
         CLAUSIUS,
     ),
     Rule(

@@ -6,7 +6,7 @@ from collections.abc import Callable
 from typing import Final
 
 from checker.case import Case, Raised, Yielded
-from checker.facts import paths
+from checker.facts import exchange, paths
 from checker.facts.deviation import Deviation
 from checker.findings import Grade
 from checker.submission import Role
@@ -52,7 +52,7 @@ def _place(case: Case, process: str, body: str, kind: str) -> tuple[str | int, .
 
 
 def isentropic_contradicted(case: Case, process: str) -> Yielded:
-    """Yield an isentropic path whose end states differ in entropy."""
+    """Yield an isentropic path whose end states differ in entropy, or along which something rubs."""
     for body in paths.followers(case, process, "isentropic"):
         deviation = paths.entropy_change(case, process, body)
         if deviation is not None and deviation.beyond:
@@ -64,6 +64,15 @@ def isentropic_contradicted(case: Case, process: str) -> Yielded:
                 place=_place(case, process, body, "isentropic"),
                 grade=deviation.grade,
                 suggestion="Let the isentropic path find the end state, or declare what the process really is.",
+            )
+        elif exchange.rubs_reversibly(case, process):
+            pointer = f"processes/{process}/friction_work"
+            yield Raised(
+                f"The path of {body} is declared as isentropic, reversible and adiabatic, and friction work of "
+                f"{case.show(pointer, case.value(pointer) or 0.0)} is stated.",
+                quantity=pointer,
+                place=_place(case, process, body, "isentropic"),
+                suggestion="Declare it as adiabatic, or as polytropic with its exponent, or leave out the friction.",
             )
 
 

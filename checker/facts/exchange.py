@@ -10,8 +10,9 @@ from checker.facts.balance import energy_allowance
 from checker.facts.boundaries import is_bounded
 from checker.facts.deviation import Deviation
 from checker.sheet.context import ProcessContext
-from checker.sheet.heat_loss import OUTSIDE, SUPPLIED
-from checker.sheet.loss_plan import COEFFICIENT, Unknown
+from checker.sheet.heat_loss import STEADY
+from checker.sheet.heater import SUPPLIED
+from checker.sheet.loss_plan import Unknown
 from checker.submission import HeatTransfer, Process
 from checker.vocabulary import Allowance
 
@@ -23,7 +24,7 @@ NEVER_REACHED = "is never reached"
 class Unreachable:
     """An end temperature beyond the one at which powers and losses balance. [K], [W]
 
-    ``power`` is the pointer of the supplied power.
+    ``power`` is the pointer of the supplied power; ``stays``: the temperature is said to be the same at both ends.
     """
 
     state: str
@@ -33,6 +34,7 @@ class Unreachable:
     power: str
     supplied: float
     losses: tuple[str, ...]
+    stays: bool
 
 
 def unreachable(case: Case, process: Process) -> Unreachable | None:
@@ -50,18 +52,15 @@ def unreachable(case: Case, process: Process) -> Unreachable | None:
     )
     power = f"processes/{process.id}/{SUPPLIED}"
     supplied = case.value(power)
-    pairs = [
-        (case.given(f"{base}/{COEFFICIENT}"), case.value(f"{base}/{OUTSIDE}"))
-        for base in (f"processes/{process.id}/heat_transfers/{item}" for item in plan.losses)
-    ]
-    known = [(ua, t) for ua, t in pairs if ua is not None and t is not None]
-    if first is None or last is None or supplied is None or len(known) < len(pairs):
+    settles = case.value(f"processes/{process.id}/{STEADY}")
+    if first is None or last is None or supplied is None or settles is None:
         return None
-    settles = (supplied + sum(ua * t for ua, t in known)) / sum(ua for ua, _ in known)
     reached = (settles - last) * (last - first) > 0.0
     if reached or abs(settles - last) <= case.basis.allowances[Allowance.TEMPERATURE]:
         return None
-    return Unreachable(process.to_state, plan.body, last, settles, power, supplied, plan.losses)
+    return Unreachable(
+        process.to_state, plan.body, last, settles, power, supplied, plan.losses, first == last
+    )
 
 
 @dataclass(frozen=True, slots=True)
@@ -117,6 +116,14 @@ def _other_side(case: Case, ctx: ProcessContext, base: str) -> list[tuple[str, f
         if own is not None:
             found.append((body, own))
     return found
+
+
+def rubs_reversibly(case: Case, process: str) -> bool:
+    """Say whether a path that is reversible by itself is declared together with friction."""
+    ctx, found = case.context(process), friction(case, process)
+    if ctx is None or found is None or not found.beyond:
+        return False
+    return any(path.reversible for body in ctx.bodies for path in ctx.paths_of(body))
 
 
 def friction(case: Case, process: str) -> Deviation | None:

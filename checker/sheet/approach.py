@@ -1,4 +1,4 @@
-"""How a body of one temperature takes up constant powers while it exchanges heat: time, and means over the time.
+"""How long a body of one temperature takes that takes up constant powers and exchanges heat by UA·ΔT.
 
     dE/dt = P + Σ UA_k·(T_k − T) = UA·(T_∞ − T)        T_∞ = (P + Σ UA_k·T_k)/UA, UA = Σ UA_k
 
@@ -29,8 +29,6 @@ ACCURACY: Final = 1e-10
 DEEPEST: Final = 24
 """Relative accuracy of an integral, and how often an interval is halved at most."""
 MOST_EVALUATIONS: Final = 4000
-STEPS: Final = 4000
-STEP_ACCURACY: Final = 1e-10
 CELSIUS: Final = 273.15
 
 
@@ -54,15 +52,6 @@ class Exchange:
         return self.drive / self.coefficient
 
 
-@dataclass(frozen=True, slots=True)
-class Course:
-    """How long a process takes [s], and the arithmetic and harmonic means over its time of the temperature. [K]"""
-
-    duration: float
-    mean: float
-    harmonic: float
-
-
 def out_of_reach(exchange: Exchange, last: float) -> NotEvaluable:
     """Return why a temperature is never reached, naming the one at which the body settles."""
     settles = (
@@ -76,20 +65,17 @@ def out_of_reach(exchange: Exchange, last: float) -> NotEvaluable:
     )
 
 
-def exponential(capacity: float, first: float, last: float, exchange: Exchange) -> Course:
-    """Return the course of a body of constant heat capacity [J/K] between two temperatures [K].
+def exponential_time(capacity: float, first: float, last: float, exchange: Exchange) -> float:
+    """Return the time [s] of a body of constant heat capacity [J/K] between two temperatures [K].
 
     t = (C/UA)·ln((T_∞ − T₁)/(T_∞ − T₂)); closed form. Raises NotEvaluable where the end is out of reach.
     """
-    settles, ua = exchange.steady, exchange.coefficient
+    settles = exchange.steady
     if first == last:
-        return _at_rest(first, exchange)
+        raise no_time(first, exchange)
     if (settles - last) * (last - first) <= 0.0:
         raise out_of_reach(exchange, last)
-    duration = capacity / ua * math.log1p((last - first) / (settles - last))
-    mean = settles - capacity * (last - first) / (ua * duration)
-    inverse = (1.0 + capacity * math.log(last / first) / (ua * duration)) / settles
-    return Course(duration, mean, 1.0 / inverse)
+    return capacity / exchange.coefficient * math.log1p((last - first) / (settles - last))
 
 
 def exponential_end(capacity: float, first: float, duration: float, exchange: Exchange) -> float:
@@ -103,11 +89,11 @@ def exponential_end(capacity: float, first: float, duration: float, exchange: Ex
     return last
 
 
-def _at_rest(temperature: float, exchange: Exchange) -> Course:
-    """Return the course of a body whose temperature stays, of no duration of its own."""
+def no_time(temperature: float, exchange: Exchange) -> NotEvaluable:
+    """Return why a temperature that is the same at both ends tells no time."""
     if abs(exchange.net(temperature)) > 1e-6 * max(abs(exchange.drive), exchange.coefficient):
-        raise out_of_reach(exchange, temperature)
-    return Course(0.0, temperature, temperature)
+        return out_of_reach(exchange, temperature)
+    return NotEvaluable("the temperature does not change, so it tells no duration")
 
 
 class Profile:
@@ -127,59 +113,46 @@ class Profile:
             found = self._known[energy] = self._temperature_of(energy)
         return found
 
-    def course(self, exchange: Exchange) -> Course:
-        """Return the course from the first energy to the last. Raises NotEvaluable where the end is out of reach."""
+    def time(self, exchange: Exchange) -> float:
+        """Return the time [s] from the first energy to the last. Raises NotEvaluable where the end is out of reach."""
         if self.first == self.last:
-            return _at_rest(self.temperature(self.first), exchange)
+            raise no_time(self.temperature(self.first), exchange)
         way = math.copysign(1.0, self.last - self.first)
-        for energy in (self.first, self.last):
-            if way * exchange.net(self.temperature(energy)) <= 0.0:
-                raise out_of_reach(exchange, self.temperature(self.last))
 
-        def integrands(energy: float) -> tuple[float, float, float]:
-            temperature = self.temperature(energy)
-            net = exchange.net(temperature)
+        def per_energy(energy: float) -> float:
+            net = exchange.net(self.temperature(energy))
             if way * net <= 0.0:
                 raise out_of_reach(exchange, self.temperature(self.last))
-            return self.mass / net, self.mass * temperature / net, self.mass / (net * temperature)
+            return self.mass / net
 
-        duration, weighted, inverse = _integrate(integrands, self.first, self.last)
-        return Course(duration, weighted / duration, duration / inverse)
-
-
-Integrands = Callable[[float], tuple[float, float, float]]
+        for energy in (self.first, self.last):
+            per_energy(energy)
+        return _integral(per_energy, self.first, self.last)
 
 
-def _integrate(function: Integrands, low: float, high: float) -> tuple[float, float, float]:
-    """Return three integrals by halving intervals until two rules agree."""
+def _integral(function: Callable[[float], float], low: float, high: float) -> float:
+    """Return an integral by halving intervals until two rules agree."""
     whole = _gauss(function, low, high)
-    scale = tuple(abs(value) for value in whole)
-    sums, open_intervals = [0.0, 0.0, 0.0], [(low, high, whole, 0)]
+    total, open_intervals = 0.0, [(low, high, whole, 0)]
     while open_intervals:
         left, right, rough, depth = open_intervals.pop()
         middle = 0.5 * (left + right)
         halves = _gauss(function, left, middle), _gauss(function, middle, right)
-        fine = tuple(a + b for a, b in zip(*halves, strict=True))
-        off = max(abs(a - b) / s for a, b, s in zip(fine, rough, scale, strict=True))
-        if off <= ACCURACY or depth == DEEPEST:
-            sums = [total + part for total, part in zip(sums, fine, strict=True)]
+        if depth == DEEPEST or abs(sum(halves) - rough) <= ACCURACY * abs(whole):
+            total += sum(halves)
         else:
             open_intervals += [(left, middle, halves[0], depth + 1), (middle, right, halves[1], depth + 1)]
-    return sums[0], sums[1], sums[2]
+    return total
 
 
-def _gauss(function: Integrands, low: float, high: float) -> tuple[float, float, float]:
+def _gauss(function: Callable[[float], float], low: float, high: float) -> float:
     centre, half = 0.5 * (low + high), 0.5 * (high - low)
-    sums = [0.0, 0.0, 0.0]
-    for node, weight in NODES:
-        for sign in (-1.0, 1.0) if node else (1.0,):
-            values = function(centre + sign * node * half)
-            sums = [total + weight * half * value for total, value in zip(sums, values, strict=True)]
-    return sums[0], sums[1], sums[2]
+    places = ((sign * node, weight) for node, weight in NODES for sign in ((-1.0, 1.0) if node else (1.0,)))
+    return half * sum(weight * function(centre + place * half) for place, weight in places)
 
 
-def power_for(profile: Profile, losses: Exchange, meets: Callable[[float, Course], float]) -> float:
-    """Return the constant power [W] for which a course does what is asked.
+def power_for(profile: Profile, losses: Exchange, meets: Callable[[float, float], float]) -> float:
+    """Return the constant power [W] for which the time is as asked.
 
     Parameters
     ----------
@@ -188,8 +161,8 @@ def power_for(profile: Profile, losses: Exchange, meets: Callable[[float, Course
     losses : Exchange
         The exchange without the power that is sought.
     meets : callable
-        Takes the power and its course; falls below zero where the process is too slow, that is for a power too close
-        to the one at which the end is never reached.
+        Takes the power and its time [s]; falls below zero where the process is too slow, that is for a power too
+        close to the one at which the end is never reached.
 
     Notes
     -----
@@ -205,7 +178,7 @@ def power_for(profile: Profile, losses: Exchange, meets: Callable[[float, Course
     def value(beyond: float) -> float:
         power = slow + way * beyond
         try:
-            return meets(power, profile.course(Exchange(losses.coefficient, losses.drive + power)))
+            return meets(power, profile.time(Exchange(losses.coefficient, losses.drive + power)))
         except NotEvaluable:
             return -math.inf
 

@@ -2,27 +2,36 @@
 
     Q_k = UA_k·(T_out,k − T̄)·t        ∫δQ_k/T = UA_k·t·(T_out,k/T_h − 1)
 
-with the arithmetic mean T̄ and the harmonic mean T_h of the body's temperature over the time; see ``approach``.
+with the arithmetic mean T̄ and the harmonic mean T_h of the body's temperature over the time. Both follow from the
+balances of the body, whatever its heat capacity, since its stored energy changes by T·dS along its path:
+
+    ΔE = ΣUA·(T_∞ − T̄)·t        ΔS = ΣUA·(T_∞/T_h − 1)·t        T_∞ = (P + ΣUA·T_out)/ΣUA
 """
 
 from __future__ import annotations
 
 from collections.abc import Callable, Iterator, Sequence
 
-from checker.sheet.approach import Course, Exchange, Profile, exponential, exponential_end, power_for
-from checker.sheet.balances import constant, same_value
+from checker.sheet.approach import Exchange, Profile, exponential_end, exponential_time
+from checker.sheet.balances import same_value
 from checker.sheet.context import ProcessContext
+from checker.sheet.heater import (
+    OUTSIDE,
+    SUPPLIED,
+    losses_of,
+    sought_energy_step,
+    storage_of,
+    supplied_steps,
+)
 from checker.sheet.keys import clue, given, process_key, state_key
-from checker.sheet.loss_plan import COEFFICIENT, LossPlan, Source, Unknown
+from checker.sheet.loss_plan import COEFFICIENT, LossPlan, Unknown
 from checker.sheet.marching import march
 from checker.sheet.states import Clue
 from checker.sheet.step import Step
-from checker.sheet.storage import Storage
 
-SUPPLIED, MEAN, HARMONIC = "supplied_power", "mean_temperature", "harmonic_mean_temperature"
-OUTSIDE = "outside_temperature"
+STEADY = "steady_temperature"
+MEAN, HARMONIC = "mean_temperature", "harmonic_mean_temperature"
 """Names of the quantities that only the sheet knows."""
-SETTLES = "T_∞ = (P + ΣUA·T_out)/ΣUA"
 
 
 def loss_steps(ctx: ProcessContext) -> Iterator[Step]:
@@ -33,16 +42,10 @@ def loss_steps(ctx: ProcessContext) -> Iterator[Step]:
     p = ctx.process.id
     for item in plan.losses:
         yield _outside(ctx, item)
-    yield from _supplied(ctx, plan)
-    if plan.unknown in (Unknown.DURATION, Unknown.END, Unknown.POWER_OF_ENERGY):
-        yield _course_step(
-            ctx,
-            plan,
-            (ctx.key("duration"),),
-            f"Duration, {p}",
-            lambda c: (c.duration,),
-            _duration_text(ctx, plan),
-        )
+    yield from supplied_steps(ctx, plan)
+    yield _steady(ctx, plan)
+    if plan.unknown is not Unknown.POWER:
+        yield _duration(ctx, plan)
     yield _means(ctx, plan)
     for item in plan.losses:
         base = ctx.item_base("heat", item)
@@ -55,7 +58,7 @@ def loss_steps(ctx: ProcessContext) -> Iterator[Step]:
             "{0}·({1} − {2})·{3}",
         )
     if plan.sought is not None and plan.unknown is Unknown.POWER:
-        yield _sought_energy(ctx, plan, plan.sought)
+        yield sought_energy_step(ctx, plan, plan.sought)
 
 
 def at_system_step(ctx: ProcessContext, item: str) -> Step:
@@ -82,7 +85,7 @@ def loss_clue(ctx: ProcessContext, body: str, known: str, sought: str) -> tuple[
     plan = ctx.losses
     if plan is None or plan.unknown is not Unknown.END or body != plan.body:
         return None
-    forward, storage = sought == ctx.process.to_state, _storage(ctx, plan)
+    forward, storage = sought == ctx.process.to_state, storage_of(ctx, plan)
     name = "temperature" if storage.is_constant else storage.energy
     made = clue(state_key(sought, body, name), f"{ctx.process.id}-loss")
     parents = storage.parents(known)
@@ -101,19 +104,11 @@ def loss_clue(ctx: ProcessContext, body: str, known: str, sought: str) -> tuple[
         (made,),
         (ctx.key("duration"), *parents, *exchange),
         end,
-        f"T₂ = T_∞ + (T₁ − T_∞)·exp(−UA·t/C), {SETTLES}"
+        "T₂ = T_∞ + (T₁ − T_∞)·exp(−ΣUA·t/C)"
         if storage.is_constant
-        else f"m·d{symbol}/dt = P + ΣUA·(T_out − T), followed over t",
+        else f"m·d{symbol}/dt = ΣUA·(T_∞ − T), followed over t",
     )
     return Clue(name, made), step
-
-
-def _storage(ctx: ProcessContext, plan: LossPlan) -> Storage:
-    """Return how the body of a plan stores energy: an incompressible one by its temperature alone."""
-    energy = "specific_enthalpy" if plan.at_pressure else "specific_internal_energy"
-    if ctx.boundary_work_is_zero(plan.body):
-        return Storage(ctx.models[plan.body], energy)
-    return Storage(ctx.models[plan.body], energy, "pressure" if plan.at_pressure else "specific_volume")
 
 
 def _outside(ctx: ProcessContext, item: str) -> Step:
@@ -127,148 +122,76 @@ def _outside(ctx: ProcessContext, item: str) -> Step:
     )
 
 
-def _supplied(ctx: ProcessContext, plan: LossPlan) -> Iterator[Step]:
-    """Yield the sum of the constant powers into the body: given, or found from the time."""
-    key, title = process_key(ctx.process.id, SUPPLIED), f"Power supplied, {ctx.process.id}"
-    if plan.sought is not None:
-        yield _found_power(ctx, plan, plan.sought, key, title)
-        return
-    if not plan.sources:
-        yield constant(key, title, "P = 0 (no power beside the losses)")
-        return
-    parents, read = _powers(ctx, plan.sources)
-    yield Step(title, (key,), parents, lambda *values: (sum(read(values)),), "P = ΣP_k, into the system")
-
-
-def _powers(
-    ctx: ProcessContext, sources: Sequence[Source]
-) -> tuple[tuple[str, ...], Callable[[Sequence[float]], list[float]]]:
-    """Return the keys from which powers are read, and how: as given, or as energy over the duration. [W]"""
-    timed = any(not source.power for source in sources)
-    keys = (
-        *(source.power or source.energy for source in sources),
-        *((given(ctx.key("duration")),) if timed else ()),
-    )
-
-    def read(values: Sequence[float]) -> list[float]:
-        return [
-            source.sign * value / (1.0 if source.power else values[-1])
-            for source, value in zip(sources, values, strict=False)
-        ]
-
-    return keys, read
-
-
-def _found_power(ctx: ProcessContext, plan: LossPlan, sought: Source, key: str, title: str) -> Step:
-    """Return the power for which the time is the given one, or for which power and time make the given energy."""
-    others = tuple(source for source in plan.sources if source is not sought)
-    known, read = _powers(ctx, others)
-    storage, timed = _storage(ctx, plan), plan.unknown is Unknown.POWER
-    parents = storage.parents(ctx.process.from_state)
-    exchange, build = _exchange(ctx, plan, powered=False)
-    first, last = len(parents) + 1, len(parents) + 1 + len(exchange)
-
-    def power(wanted: float, *values: float) -> tuple[float]:
-        own, end = storage.read(values[: len(parents)]), values[len(parents)]
-        flow, beside = build(values[first:last]), sum(read(values[last:]))
-        profile = Profile(own.mass, own.temperature_of, own.energy, end)
-        return (power_for(profile, flow, _meeting(timed, wanted if timed else sought.sign * wanted, beside)),)
-
+def _steady(ctx: ProcessContext, plan: LossPlan) -> Step:
+    """Return the temperature at which powers and losses balance."""
+    pairs, build = losses_of(ctx, plan)
+    terms = [f"{{{n}}}·{{{n + 1}}}" for n in range(1, 1 + len(pairs), 2)]
+    coefficients = " + ".join(f"{{{n}}}" for n in range(1, 1 + len(pairs), 2))
     return Step(
-        title,
-        (key,),
-        (
-            ctx.key("duration") if timed else sought.energy,
-            *parents,
-            storage.energy_in(ctx.process.to_state),
-            *exchange,
-            *known,
-        ),
-        power,
-        "P such that ∫dE/(P + ΣUA·(T_out − T)) = t"
-        if timed
-        else "P such that P·t = E, t = ∫dE/(P + ΣUA·(T_out − T))",
-        "t = {0}" if timed else "E = {0}",
+        f"Temperature at which powers and losses balance, {ctx.process.id}",
+        (process_key(ctx.process.id, STEADY),),
+        (process_key(ctx.process.id, SUPPLIED), *pairs),
+        lambda power, *values: (build(values, power).steady,),
+        "T_∞ = (P + ΣUA·T_out)/ΣUA",
+        f"({{0}} + {' + '.join(terms)})/({coefficients})",
     )
 
 
-def _meeting(timed: bool, wanted: float, beside: float) -> Callable[[float, Course], float]:
-    """Return what is above zero where a power is more than enough: time to spare, or energy to spare."""
-    return lambda power, course: wanted - (course.duration if timed else (power - beside) * course.duration)
-
-
-def _sought_energy(ctx: ProcessContext, plan: LossPlan, sought: Source) -> Step:
-    """Return the energy of the one transfer whose power was found."""
-    others = tuple(source for source in plan.sources if source is not sought)
-    known, read = _powers(ctx, others)
-    return Step(
-        f"Energy at the power found, {ctx.process.id}",
-        (sought.key,),
-        (process_key(ctx.process.id, SUPPLIED), ctx.key("duration"), *known),
-        lambda power, t, *values: (sought.sign * (power - sum(read(values))) * t,),
-        "E_k = (P − ΣP_others)·t",
-    )
-
-
-def _means(ctx: ProcessContext, plan: LossPlan) -> Step:
-    p = ctx.process.id
-    powers = "the powers are constant and " if plan.sources else ""
-    return _course_step(
-        ctx,
-        plan,
-        (process_key(p, MEAN), process_key(p, HARMONIC)),
-        f"Mean temperatures of {plan.body} over the time, {p}",
-        lambda course: (course.mean, course.harmonic),
-        "T̄ = ∫T dt/t, T_h = t/∫dt/T, dt = dE/(P + ΣUA·(T_out − T))",
-        f"{p}: {powers}{plan.body} has one temperature throughout at any time",
-    )
-
-
-def _duration_text(ctx: ProcessContext, plan: LossPlan) -> str:
-    if _storage(ctx, plan).is_constant:
-        return f"t = (C/UA)·ln((T_∞ − T₁)/(T_∞ − T₂)), {SETTLES}, C = ΔE/ΔT"
-    return "t = ∫dE/(P + ΣUA·(T_out − T))"
-
-
-def _course_step(
-    ctx: ProcessContext,
-    plan: LossPlan,
-    outputs: tuple[str, ...],
-    title: str,
-    take: Callable[[Course], tuple[float, ...]],
-    formula: str,
-    assumes: str = "",
-) -> Step:
-    """Return a step that follows the body from its first state to its last."""
-    storage, state = _storage(ctx, plan), ctx.process.to_state
+def _duration(ctx: ProcessContext, plan: LossPlan) -> Step:
+    """Return how long the body takes from its first state to its last."""
+    storage, state = storage_of(ctx, plan), ctx.process.to_state
     parents = storage.parents(ctx.process.from_state)
     exchange, build = _exchange(ctx, plan)
     count = len(parents)
 
-    def follow(*values: float) -> tuple[float, ...]:
+    def duration(*values: float) -> tuple[float]:
         own, last, end = storage.read(values[:count]), values[count], values[count + 1]
         flow = build(values[count + 2 :])
         if storage.is_constant and end != own.temperature:
             capacity = own.mass * (last - own.energy) / (end - own.temperature)
-            return take(exponential(capacity, own.temperature, end, flow))
-        return take(Profile(own.mass, own.temperature_of, own.energy, last).course(flow))
+            return (exponential_time(capacity, own.temperature, end, flow),)
+        return (Profile(own.mass, own.temperature_of, own.energy, last).time(flow),)
 
-    ends = (storage.energy_in(state), storage.temperature_in(state))
-    return Step(title, outputs, (*parents, *ends, *exchange), follow, formula, "", assumes)
+    return Step(
+        f"Duration, {ctx.process.id}",
+        (ctx.key("duration"),),
+        (*parents, storage.energy_in(state), storage.temperature_in(state), *exchange),
+        duration,
+        "t = (C/ΣUA)·ln((T_∞ − T₁)/(T_∞ − T₂)), C = ΔE/ΔT"
+        if storage.is_constant
+        else "t = ∫dE/(ΣUA·(T_∞ − T))",
+    )
+
+
+def _means(ctx: ProcessContext, plan: LossPlan) -> Step:
+    """Return the arithmetic and the harmonic mean of the body's temperature over the time."""
+    p, body = ctx.process.id, plan.body
+    stored = ctx.key("enthalpy_change" if plan.at_pressure else "internal_energy_change")
+    coefficients = tuple(given(f"{ctx.item_base('heat', item)}/{COEFFICIENT}") for item in plan.losses)
+
+    def means(settles: float, change: float, entropy: float, t: float, *ua: float) -> tuple[float, float]:
+        return settles - change / (sum(ua) * t), settles / (1.0 + entropy / (sum(ua) * t))
+
+    powers = "the powers are constant and " if plan.sources else ""
+    return Step(
+        f"Mean temperatures of {body} over the time, {p}",
+        (process_key(p, MEAN), process_key(p, HARMONIC)),
+        (process_key(p, STEADY), stored, ctx.key("entropy_change"), ctx.key("duration"), *coefficients),
+        means,
+        f"T̄ = T_∞ − {'ΔH' if plan.at_pressure else 'ΔU'}/(ΣUA·t), T_h = T_∞/(1 + ΔS/(ΣUA·t))",
+        "",
+        f"{p}: {powers}{body} has one temperature throughout at any time",
+    )
 
 
 def _exchange(
-    ctx: ProcessContext, plan: LossPlan, powered: bool = True
+    ctx: ProcessContext, plan: LossPlan
 ) -> tuple[tuple[str, ...], Callable[[Sequence[float]], Exchange]]:
-    """Return the keys of the losses (and of the power before them), and how they are put together."""
-    bases = [ctx.item_base("heat", item) for item in plan.losses]
-    keys = [key for base in bases for key in (given(f"{base}/{COEFFICIENT}"), f"{base}/{OUTSIDE}")]
-    power = (process_key(ctx.process.id, SUPPLIED),) if powered else ()
+    """Return the keys of the steady temperature and the coefficients, and how they are put together."""
+    coefficients = tuple(given(f"{ctx.item_base('heat', item)}/{COEFFICIENT}") for item in plan.losses)
 
     def build(values: Sequence[float]) -> Exchange:
-        supplied, pairs = (values[0], values[1:]) if powered else (0.0, values)
-        coefficients, outside = pairs[::2], pairs[1::2]
-        drive = supplied + sum(ua * t for ua, t in zip(coefficients, outside, strict=True))
-        return Exchange(sum(coefficients), drive)
+        total = sum(values[1:])
+        return Exchange(total, values[0] * total)
 
-    return (*power, *keys), build
+    return (process_key(ctx.process.id, STEADY), *coefficients), build

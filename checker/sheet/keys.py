@@ -98,6 +98,12 @@ _HIDDEN: Final[dict[str, Term]] = {
     "supplied_power": Term(
         "supplied_power", "P", dim.POWER, "kW", "constant power into the body beside the losses"
     ),
+    "steady_temperature": replace(
+        TEMPERATURE,
+        name="steady_temperature",
+        symbol="T_∞",
+        meaning="temperature where powers and losses balance",
+    ),
     "mean_temperature": replace(
         TEMPERATURE, name="mean_temperature", symbol="T̄", meaning="mean temperature over the time"
     ),
