@@ -18,7 +18,9 @@ from rules import (
     exergy,
     form,
     limits,
+    materials,
     path,
+    practice,
     sign,
     state,
     units,
@@ -37,7 +39,9 @@ RULEBOOK: Final[tuple[Rule, ...]] = (
     *entropy.RULES,
     *exergy.RULES,
     *adequacy.RULES,  # by a model that holds
+    *materials.RULES,
     *assumptions.RULES,
+    *practice.RULES,  # in equipment that takes it
     *limits.RULES,  # within what is promised
     *bookkeeping.RULES,  # so that somebody can sign
 )

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Mapping
+from collections.abc import Mapping
 from itertools import pairwise
 from typing import Final
 
@@ -10,7 +10,6 @@ from checker.case import Case, Raised, Unchecked, Yielded
 from checker.facts import adequacy, idealised
 from checker.facts.adequacy import GasCheck
 from checker.facts.gaps import gaps_of
-from checker.facts.paths import followers
 from checker.facts.redone import Moved, in_words
 from checker.facts.twins import is_gas, is_incompressible
 from checker.findings import Grade
@@ -134,10 +133,12 @@ def heat_not_constant(case: Case, body: str) -> Yielded:
 
 
 def phase_crossed(case: Case, process: str) -> Yielded:
-    """Yield condensed bodies of constant specific heat whose fluid freezes, melts or boils between the ends."""
+    """Yield condensed bodies of constant specific heat that freeze, melt or boil between the ends."""
     ctx = case.context(process)
     for body in ctx.bodies if ctx is not None else ():
         found = adequacy.regions(case, process, body) if is_incompressible(case, body) else None
+        if found is None or found[0].side == found[1].side:
+            found = adequacy.melts(case, process, body)
         if found is not None and found[0].side != found[1].side:
             words = [adequacy.REGIONS[end.side] for end in found]
             shown = [case.show(f"states/{end.state}/{body}/temperature", end.temperature) for end in found]
@@ -146,7 +147,7 @@ def phase_crossed(case: Case, process: str) -> Yielded:
                 f"{body} is calculated with one specific heat and no latent heat.",
                 quantity=f"processes/{process}",
                 place=next(p.place for p in case.record.processes if p.id == process),
-                suggestion="Use the model `real fluid`, or put the latent heat into the balance.",
+                suggestion="Use the model `real fluid` or `phase change`, or put the latent heat into the balance.",
             )
 
 
@@ -209,21 +210,6 @@ def incompressible_state(case: Case, item: str) -> bool:
     return is_incompressible(case, item.split("/")[1])
 
 
-def liquid_full(case: Case, process: str) -> Yielded:
-    """Yield liquids of constant volume that are heated in a vessel of constant volume."""
-    for body in followers(case, process, "constant volume"):
-        found = adequacy.blocked_in(case, process, body) if is_incompressible(case, body) else None
-        if found is not None:
-            pointer = f"states/{found.state}/{body}/pressure"
-            yield Raised(
-                f"The body {body} is warmed by {found.warming:.4g} K in a closed volume. Its model leaves the pressure "
-                f"out; {case.record.bodies[body].substance} itself would go to {case.show(pointer, found.pressure)}.",
-                quantity=f"processes/{process}",
-                place=next(p.place for p in case.record.processes if p.id == process),
-                suggestion="Use the model `real fluid`, or show the gas cushion or relief that takes the expansion.",
-            )
-
-
 def can_be_critical(case: Case, item: str) -> bool:
     """Say whether a state belongs to a fluid with a critical point."""
     return adequacy.has_critical_point(case, item.split("/")[1])
@@ -240,11 +226,6 @@ def near_critical(case: Case, item: str) -> Yielded:
             place=case.record.body_states[state, body].place,
             suggestion="Show how much the result moves with temperature and pressure.",
         )
-
-
-def on_process(kind: str) -> Callable[[Case, str], bool]:
-    """Return whether a process has a body on a path of this kind."""
-    return lambda case, process: bool(followers(case, process, kind))
 
 
 RULES: Final[tuple[Rule, ...]] = (
@@ -344,9 +325,9 @@ RULES: Final[tuple[Rule, ...]] = (
         Scope.PROCESS,
         "model adequacy",
         Grade.DISCREPANCY,
-        "A fluid of constant specific heat freezes, melts or boils between the ends of a process.",
+        "A fluid or material of constant specific heat freezes, melts or boils between the ends of a process.",
         "Melting takes up as much energy as warming by some 80 K, and evaporation far more.",
-        OWN_EQUATION,
+        "equation of state of the named fluid; melting temperatures of the handbook table with its sources",
     ),
     Rule(
         "constants-unlike-substance",
@@ -377,16 +358,5 @@ RULES: Final[tuple[Rule, ...]] = (
         "A pressure is claimed as a result of a model of constant volume.",
         "Such a model has no pressure of its own; the number comes from somewhere else.",
         when=incompressible_state,
-    ),
-    Rule(
-        "liquid-full-at-constant-volume",
-        liquid_full,
-        Scope.PROCESS,
-        "model adequacy",
-        Grade.QUERY,
-        "A liquid of constant volume is warmed in a closed volume.",
-        "A blocked-in liquid builds up some bar for every kelvin; the model cannot show it.",
-        "thermal expansion of blocked-in liquids, API Standard 521 (from memory)",
-        when=on_process("constant volume"),
     ),
 )

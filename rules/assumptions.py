@@ -6,8 +6,10 @@ from collections.abc import Callable, Iterator
 from typing import Final
 
 from checker.case import Case, Raised, Unchecked, Yielded
-from checker.facts import adequacy, assumptions, balance, boundaries
+from checker.facts import adequacy, assumptions, balance, boundaries, lumped, pace
 from checker.facts.deviation import Deviation
+from checker.facts.lumped import Wall
+from checker.facts.redone import in_words
 from checker.facts.twins import REAL, is_incompressible
 from checker.findings import Grade
 from checker.submission import Process
@@ -81,27 +83,34 @@ def _motion(name: str, quantity: str) -> RuleFunction:
 
 
 def wall_matters(case: Case, item: str) -> Yielded:
-    """Yield a neglected wall that takes up more heat than the allowance of the largest balance."""
-    heat = assumptions.neglected_heat(case, item)
-    if heat is None:
+    """Yield a neglected wall that takes up more heat than the allowance of the balance."""
+    found = lumped.wall(case, item)
+    if found is None:
         yield Unchecked(f"assumption {item}", f"not given: {assumptions.missing_inputs(case, item)}")
-        return
-    sizes = {p.id: balance.energy_allowance(case, p.id) for p in case.record.processes}
-    process = max(sizes, key=lambda name: sizes[name], default=None)
-    if process is not None and heat > sizes[process]:
-        pointer = f"processes/{process}/energy_change"
+    elif found.heat > found.allowed:
+        pointer = f"processes/{found.process}/energy_change"
         yield _raised(
             case,
             item,
-            f"The wall takes up {case.show_difference(pointer, heat)}, and up to "
-            f"{case.show_difference(pointer, sizes[process])} would be negligible in the balance of {process}.",
+            f"The wall takes up {case.show_difference(pointer, found.heat)}, and up to "
+            f"{case.show_difference(pointer, found.allowed)} would be negligible in the balance of {found.process}."
+            + _with_wall(case, found),
             "Make the wall a body of the system, or its heat a heat transfer.",
         )
+
+
+def _with_wall(case: Case, found: Wall) -> str:
+    if not found.pointer:
+        return ""
+    values = [case.show(found.pointer, value) for value in (found.with_wall, found.without)]
+    return f" With the wall the {in_words(found.pointer)} is {values[0]} instead of {values[1]}."
 
 
 def not_uniform(case: Case, item: str) -> Yielded:
     """Yield a body that one temperature does not describe."""
     number = assumptions.biot_number(case, item)
+    if number is None and pace.spreading(case, item) is not None:
+        return  # its time scale tells it
     if number is None:
         yield Unchecked(f"assumption {item}", f"not given: {assumptions.missing_inputs(case, item)}")
     elif number > assumptions.LARGEST_BIOT * (1.0 + 1e-9):

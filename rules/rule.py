@@ -40,7 +40,8 @@ class Rule:
     scope : Scope
         What the function is called for.
     theme : str
-        form, units, sign, state, path, energy, entropy, exergy, model adequacy, limit, bookkeeping.
+        form, units, sign, state, path, energy, entropy, exergy, model adequacy, practice, limit,
+        bookkeeping.
     grade : Grade
         Of its findings, unless a finding brings its own.
     says : str

@@ -11,7 +11,6 @@ from checker.facts.twins import (
     CONSTANT,
     IDEAL,
     REAL,
-    blocked_in_pressure,
     boiling_temperature,
     compressibility,
     is_condensed,
@@ -21,6 +20,7 @@ from checker.facts.twins import (
 from checker.submission import Role
 from checker.substances.factory import MOLAR_GAS_CONSTANT
 from checker.substances.interface import Substance
+from checker.substances.materials import melting_material_of
 from checker.vocabulary import Allowance
 
 NEAR_TEMPERATURE: Final = 0.02
@@ -156,37 +156,12 @@ def digits_of_constants(case: Case, body: str) -> float:
     return moved
 
 
-@dataclass(frozen=True, slots=True)
-class BlockedIn:
-    """A liquid that warms in a closed volume: end state, warming [K], pressure of the real fluid there [Pa]."""
-
-    state: str
-    warming: float
-    pressure: float
-
-
-def blocked_in(case: Case, process: str, body: str) -> BlockedIn | None:
-    """Return what warming a full liquid would do by its real equation; None where it cools or is not known.
-
-    The liquid starts at the atmospheric pressure, or just above its own vapour pressure where that is higher.
-    """
-    ctx, real = case.context(process), twin(case.record.bodies[body].substance, REAL)
-    if ctx is None or real is None:
-        return None
-    ends = (ctx.process.from_state, ctx.process.to_state)
-    first, last = (case.value(f"states/{state}/{body}/temperature") for state in ends)
-    if first is None or last is None or last - first <= case.basis.allowances[Allowance.TEMPERATURE]:
-        return None
-    pressure = blocked_in_pressure(real, first, last)
-    return None if pressure is None else BlockedIn(ends[1], last - first, pressure)
-
-
-REGIONS: Final = {-1: "frozen", 0: "liquid", 1: "evaporated"}
+REGIONS: Final = {-2: "solid", -1: "frozen", 0: "liquid", 1: "evaporated"}
 
 
 @dataclass(frozen=True, slots=True)
 class Region:
-    """Where the fluid of a condensed body is in a state: −1 frozen, 0 liquid, 1 evaporated; its temperature [K]."""
+    """Where the fluid of a condensed body is in a state: below 0 solid, 0 liquid, 1 evaporated; its temperature [K]."""
 
     state: str
     side: int
@@ -218,3 +193,28 @@ def _side(case: Case, real: Substance, base: str, temperature: float) -> int | N
         return -1
     boiling = boiling_temperature(real, pressure) or real.critical_point[0]
     return int(temperature > boiling + slack)
+
+
+def melts(case: Case, process: str, body: str) -> tuple[Region, Region] | None:
+    """Return on which side of its melting temperature a body of constant specific heat is at both ends of a process.
+
+    None where the handbook table has no melting temperature of its substance.
+    """
+    ctx, row = case.context(process), melting_material_of(case.record.bodies[body].substance)
+    if ctx is None or row is None or row.melting_temperature is None or not has_constant_heat(case, body):
+        return None
+    slack = case.basis.allowances[Allowance.TEMPERATURE]
+    ends = (ctx.process.from_state, ctx.process.to_state)
+    values = [case.value(f"states/{state}/{body}/temperature") for state in ends]
+    if (
+        values[0] is None
+        or values[1] is None
+        or min(abs(v - row.melting_temperature) for v in values if v) <= slack
+    ):
+        return None
+    first, last = (
+        Region(state, -2 if value < row.melting_temperature else 0, value)
+        for state, value in zip(ends, values, strict=True)
+        if value is not None
+    )
+    return first, last

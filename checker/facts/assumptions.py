@@ -5,12 +5,16 @@ from __future__ import annotations
 from typing import Final
 
 from checker.case import Case
+from checker.facts.paths import end_pressures, external_pressure
 from checker.package.assumptions import KnownAssumption, known_assumption
-from checker.sheet.paths import PATHS
 from checker.submission import Assumption
+from checker.vocabulary import Allowance
 
 LARGEST_BIOT: Final = 0.1
 """Biot number up to which one temperature describes a body (standard criterion of lumped capacitance)."""
+
+FREE: Final = "free expansion"
+AGAINST: Final = "against constant external pressure"
 
 
 def assumption(case: Case, item: str) -> Assumption:
@@ -39,13 +43,6 @@ def biot_number(case: Case, item: str) -> float | None:
     return coefficient * length / conductivity
 
 
-def neglected_heat(case: Case, item: str) -> float | None:
-    """Return m·c·ΔT of a neglected body; None where one of them is not given. [J]"""
-    names = ("mass", "specific_heat", "temperature_change")
-    mass, heat, change = (case.given(f"assumptions/{item}/{name}") for name in names)
-    return None if mass is None or heat is None or change is None else abs(mass * heat * change)
-
-
 def motion_stated(case: Case, name: str) -> bool:
     """Say whether a velocity or an elevation is stated anywhere in the record."""
     return any(s.pointer.startswith("states/") and s.term.name == name for s in case.record.statements)
@@ -61,9 +58,19 @@ def densities(case: Case, body: str) -> tuple[float, ...]:
 def sudden_path(case: Case, process: str) -> str | None:
     """Return the declared path of a process that is no sequence of equilibrium states, or None."""
     ctx = case.context(process)
-    kinds = [p.kind for body in (ctx.bodies if ctx else ()) for p in (ctx.paths_of(body) if ctx else ())]
-    sudden = ("free expansion", "against constant external pressure")
-    return next((kind for kind in kinds if kind in sudden and not PATHS[kind].quasi_static), None)
+    followed = [(b, p) for b in ctx.bodies for p in ctx.paths_of(b) if not p.quasi_static] if ctx else []
+    for body, path in followed:
+        if path.kind == FREE or (path.kind == AGAINST and not _in_balance(case, process, body)):
+            return path.kind
+    return None
+
+
+def _in_balance(case: Case, process: str, body: str) -> bool:
+    """Say whether the pressure at both ends is the constant one outside: then the boundary moves slowly."""
+    outside, ends = external_pressure(case, process, body), end_pressures(case, process, body)
+    if outside is None or ends is None:
+        return False
+    return all(abs(p - outside) <= case.basis.allowances[Allowance.VALUE] * outside for p in ends)
 
 
 def says_path(case: Case, process: str) -> bool:

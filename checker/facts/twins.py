@@ -14,6 +14,7 @@ from checker.substances.names import knows_fluid
 REAL: Final = "real fluid"
 IDEAL: Final = "ideal gas"
 CONSTANT: Final = "constant specific heat"
+TABULATED: Final = "tabulated"
 ATMOSPHERE: Final = 101325.0
 
 
@@ -31,7 +32,7 @@ def twin(substance: str, model: str) -> Substance | None:
 def is_gas(case: Case, body: str) -> bool:
     """Say whether a body is modelled as an ideal gas, with constant specific heats or not."""
     own = case.plan.substances.get(body)
-    return own is not None and own.model in (IDEAL, CONSTANT) and not own.incompressible
+    return own is not None and own.model in (IDEAL, CONSTANT, TABULATED) and not own.incompressible
 
 
 def is_incompressible(case: Case, body: str) -> bool:
@@ -75,25 +76,30 @@ def is_condensed(real: Substance, temperature: float, pressure: float) -> bool:
     return vapour is not None and pressure > vapour * (1.0 + 1e-6)
 
 
-def _caloric_state(better: Substance, temperature: float, warmest: float) -> PropertyState | None:
-    pressure = ATMOSPHERE
-    if better.model == REAL:
-        vapour = saturation_pressure(better, warmest)
-        if vapour is None:
-            return None
-        pressure = max(pressure, 1.1 * vapour)
+def _liquid_state(real: Substance, temperature: float, pressure: float | None) -> PropertyState | None:
+    vapour = saturation_pressure(real, temperature)
+    if vapour is None:
+        return None
     try:
-        return better.state({"temperature": temperature, "pressure": pressure})
+        pressed = max(ATMOSPHERE if pressure is None else pressure, 1.1 * vapour)
+        return real.state({"temperature": temperature, "pressure": pressed})
     except NotEvaluable:
         return None
 
 
-def blocked_in_pressure(real: Substance, first: float, last: float) -> float | None:
-    """Return the pressure of a liquid warmed at constant volume from its saturation pressure or 1 atm. [Pa]"""
-    start = _caloric_state(real, first, first)
-    if start is None or start.specific_volume is None:
+def blocked_in_pressure(
+    real: Substance, first: float, last: float, pressure: float | None = None
+) -> tuple[float, float] | None:
+    """Return the pressures at both ends of a liquid that is warmed at constant volume. [Pa]
+
+    It starts at the pressure that is known, else at the atmospheric one, and just above its own vapour pressure where
+    that is higher; None where it is no liquid then.
+    """
+    start = _liquid_state(real, first, pressure)
+    if start is None or start.specific_volume is None or start.pressure is None:
         return None
     try:
-        return real.state({"temperature": last, "specific_volume": start.specific_volume}).pressure
+        end = real.state({"temperature": last, "specific_volume": start.specific_volume}).pressure
     except NotEvaluable:
         return None
+    return None if end is None else (start.pressure, end)

@@ -28,7 +28,8 @@ ASSUMPTIONS: Final[tuple[KnownAssumption, ...]] = (
                     "the change of potential energy is below the allowance of the energy balance",
                     also=("negligible potential energy", "potential energy neglected")),
     KnownAssumption("uniform temperature",
-                    "the Biot number h·L/λ is at most 0.1, so that one temperature describes the body",
+                    "the Biot number h·L/λ is at most 0.1, so that one temperature describes the body; with density, "
+                    "specific heat and a duration also the diffusion time L²·ρ·c/λ is no longer than the process",
                     needs=("heat_transfer_coefficient", "characteristic_length", "thermal_conductivity"),
                     also=("lumped capacity", "lumped system")),
     KnownAssumption("wall heat capacity negligible",
@@ -40,7 +41,9 @@ ASSUMPTIONS: Final[tuple[KnownAssumption, ...]] = (
     KnownAssumption("constant specific heat",
                     "the specific heat changes over the temperature span by less than the allowance",
                     also=("constant specific heats",)),
-    KnownAssumption("quasi-equilibrium", "the path between the states is a sequence of equilibrium states",
+    KnownAssumption("quasi-equilibrium",
+                    "the path between the states is a sequence of equilibrium states; with a duration and a "
+                    "characteristic length (or the piston's area) a pressure wave crosses the body at least ten times",
                     also=("quasi-static",)),
     KnownAssumption("reversible", "no entropy is generated"),
     KnownAssumption("adiabatic", "no heat crosses the boundary", also=("insulated",)),

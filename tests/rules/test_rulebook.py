@@ -29,6 +29,7 @@ THEMES = {
     "entropy",
     "exergy",
     "model adequacy",
+    "practice",
     "limit",
     "bookkeeping",
 }

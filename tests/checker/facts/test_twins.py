@@ -52,4 +52,17 @@ def test_blocked_in_water_builds_up_pressure() -> None:
     real = twin("Water", REAL)
     assert real is not None
     found = blocked_in_pressure(real, 293.15, 313.15)
-    assert found == pytest.approx(20.0 * 3.0e-4 / 4.4e-10, rel=0.10)
+    assert found is not None
+    assert found[1] - found[0] == pytest.approx(20.0 * 3.0e-4 / 4.4e-10, rel=0.10)
+
+
+def test_blocked_in_water_starts_from_the_pressure_that_is_known() -> None:
+    """From 30 bar it starts at 30 bar; from a pressure below that of its vapour just above the latter."""
+    real = twin("Water", REAL)
+    assert real is not None
+    found = blocked_in_pressure(real, 293.15, 313.15, 30e5)
+    assert found is not None
+    assert found[0] == pytest.approx(30e5, rel=1e-9)
+    hot = blocked_in_pressure(real, 453.15, 463.15, 1e5)
+    assert hot is not None
+    assert hot[0] > (saturation_pressure(real, 453.15) or 0.0)
