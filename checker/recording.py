@@ -7,6 +7,7 @@ from collections.abc import Iterator, Sequence
 from checker.case import Case
 from checker.comparison.compare import Compared
 from checker.display import as_text, stated_amount
+from checker.facts.materials import taken_from_table
 from checker.facts.phases import claims_of, phase_found, possible_phases
 from checker.findings import (
     Amount,
@@ -139,6 +140,9 @@ def _assumed(case: Case) -> Iterator[str]:
         for step in case.plan.sheet.steps
         if step.assumes and case.failure(step.outputs[0]) is None
     )
+    for body in case.record.bodies:
+        if (taken := taken_from_table(case, body)) is not None:
+            yield f"{body}: not stated, so that of {taken.material} in the handbook table: {', '.join(taken.names)}"
 
 
 def _models(case: Case) -> Iterator[str]:

@@ -91,12 +91,15 @@ def condenses(case: Case, item: str) -> Yielded:
     if check is None:
         yield _no_twin(case, item, body)
     elif check.condensed:
+        name = case.record.bodies[body].substance
+        what = f"{check.component} of {name} would condense" if check.component else f"{name} is liquid"
         yield Raised(
-            f"{case.record.bodies[body].substance} is liquid at the temperature and pressure of state {state}, and is "
-            f"calculated as an ideal gas.",
+            f"{what} at the temperature and pressure of state {state}, and is calculated as an ideal gas.",
             quantity=f"states/{item}",
             place=case.record.body_states[state, body].place,
-            suggestion="Use the model `real fluid`.",
+            suggestion="Count the condensate and its latent heat."
+            if check.component
+            else "Use the model `real fluid`.",
         )
 
 
@@ -144,7 +147,7 @@ def phase_crossed(case: Case, process: str) -> Yielded:
             shown = [case.show(f"states/{end.state}/{body}/temperature", end.temperature) for end in found]
             yield Raised(
                 f"{case.record.bodies[body].substance} is {words[0]} at {shown[0]} and {words[1]} at {shown[1]}, and "
-                f"{body} is calculated with one specific heat and no latent heat.",
+                f"{body} is calculated {adequacy.without_latent_heat(case, body)}.",
                 quantity=f"processes/{process}",
                 place=next(p.place for p in case.record.processes if p.id == process),
                 suggestion="Use the model `real fluid` or `phase change`, or put the latent heat into the balance.",
@@ -242,12 +245,12 @@ RULES: Final[tuple[Rule, ...]] = (
     ),
     Rule(
         "constants-missing",
-        report_gaps("constants-missing", "State the specific heat among the inputs of the body."),
+        report_gaps("constants-missing", "State these constants among the inputs of the body."),
         Scope.RECORD,
         "model adequacy",
         Grade.QUERY,
-        "A model with constant specific heat has no constants to work with.",
-        "Nothing of the body can be recomputed; the review takes no constants of its own.",
+        "A model with constant specific heats has no constants to work with.",
+        "Nothing of the body can be recomputed; what is neither stated nor in the handbook table is not guessed.",
     ),
     Rule(
         "model-not-recomputed",

@@ -73,7 +73,7 @@ def phase_disagrees(case: Case, item: str) -> Yielded:
             yield Unchecked(f"phase of {item}", "the model has no phases, or the state is not known")
         elif claim.phase not in possible:
             yield Raised(
-                f"phase: {claim.phase} is stated; recomputed it is {possible[0]}.",
+                f"phase: {claim.phase} is stated; recomputed it is {possible[0] if possible else 'partly melted'}.",
                 quantity=f"states/{item}/phase",
                 place=claim.place,
                 suggestion="Take the properties from the region in which the state lies.",
@@ -171,12 +171,14 @@ RULES: Final[tuple[Rule, ...]] = (
     ),
     Rule(
         "near-saturation",
-        report_gaps("near-saturation", "State phase, quality, specific volume or internal energy."),
+        report_gaps(
+            "near-saturation", "State phase, quality or melted fraction, specific volume or internal energy."
+        ),
         Scope.RECORD,
         "state",
         Grade.QUERY,
-        "Temperature and pressure, with their digits, reach across the saturation line.",
-        "Liquid and vapour at one temperature and pressure differ by the whole energy of evaporation.",
+        "Temperature and pressure, with their digits, reach across the saturation line, or melting.",
+        "Liquid and vapour (solid and liquid) at one temperature differ by the whole energy of evaporation (melting).",
         PHASE_RULE,
     ),
     Rule(

@@ -7,10 +7,12 @@ from dataclasses import dataclass
 from typing import Final
 
 from checker.case import Case
+from checker.facts.mixed import condensing_component, is_mixed, mixed_compressibility
 from checker.facts.twins import (
     CONSTANT,
     IDEAL,
     REAL,
+    TABULATED,
     boiling_temperature,
     compressibility,
     is_condensed,
@@ -29,15 +31,24 @@ NEAR_PRESSURE: Final = 0.10
 
 @dataclass(frozen=True, slots=True)
 class GasCheck:
-    """A gas held against its real fluid in one state; Z None where the real fluid does not tell."""
+    """A gas held against its real fluid in one state; Z None where the real fluid does not tell.
+
+    ``component`` is what condenses of a mixture.
+    """
 
     factor: float | None
     condensed: bool
+    component: str = ""
 
 
 def gas_check(case: Case, state: str, body: str) -> GasCheck | None:
     """Return how real a gas is in a state; None without the state or without an equation of the real fluid."""
     temperature, pressure = (case.value(f"states/{state}/{body}/{n}") for n in ("temperature", "pressure"))
+    if temperature is not None and pressure is not None and is_mixed(case, body):
+        component = condensing_component(case, body, temperature, pressure)
+        if component:
+            return GasCheck(None, True, component)
+        return GasCheck(mixed_compressibility(case, body, temperature, pressure), False)
     real = twin(case.record.bodies[body].substance, REAL)
     if real is None or temperature is None or pressure is None:
         return None
@@ -171,13 +182,16 @@ class Region:
 def regions(case: Case, process: str, body: str) -> tuple[Region, Region] | None:
     """Return where the real fluid of a body without phases is at both ends of a process; None where not known.
 
-    It is evaporated above the saturation temperature at its stated pressure, or above the critical temperature.
+    It is evaporated above the saturation temperature at its stated pressure, or above the critical temperature. A body
+    that melts by its own model is not told frozen from liquid, and a stated table may hold latent heats.
     """
     ctx, real = case.context(process), twin(case.record.bodies[body].substance, REAL)
-    if ctx is None or real is None or real.valid_range is None:
+    own = case.plan.substances.get(body)
+    if ctx is None or real is None or real.valid_range is None or own is None or own.model == TABULATED:
         return None
+    lowest = -1 if own.model == CONSTANT else 0
     found = [
-        Region(state, side, temperature)
+        Region(state, max(side, lowest), temperature)
         for state in (ctx.process.from_state, ctx.process.to_state)
         if (temperature := case.value(f"states/{state}/{body}/temperature")) is not None
         and (side := _side(case, real, f"states/{state}/{body}", temperature)) is not None
@@ -193,6 +207,12 @@ def _side(case: Case, real: Substance, base: str, temperature: float) -> int | N
         return -1
     boiling = boiling_temperature(real, pressure) or real.critical_point[0]
     return int(temperature > boiling + slack)
+
+
+def without_latent_heat(case: Case, body: str) -> str:
+    """Return in words what a body without phases, or without vapour, is calculated with."""
+    constant = has_constant_heat(case, body)
+    return "with one specific heat and no latent heat" if constant else "without latent heat of evaporation"
 
 
 def melts(case: Case, process: str, body: str) -> tuple[Region, Region] | None:

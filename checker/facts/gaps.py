@@ -15,7 +15,7 @@ from checker.findings import Outcome
 from checker.outcomes import NotEvaluable
 from checker.problems import Place
 from checker.submission import Body, Process, Role, SequenceOfProcesses
-from checker.substances import knows_fluid
+from checker.substances import knows_substance
 
 STOPS: Final = ("lift_pressure", "stop_volume")
 """What says where the path of a sequence changes."""
@@ -132,7 +132,11 @@ def _rule_of_model(body: Body, outcome: NotEvaluable) -> str:
         if outcome.kind != "no-solution":
             return "constants-missing"
         return "value-not-positive" if "must be positive" in outcome.reason else "constants-contradict"
-    unknown = body.model in (REAL, IDEAL) and not knows_fluid(body.substance)
+    if body.model == "tabulated":
+        return "table-unusable"
+    if body.model == "phase change":
+        return "value-not-positive" if "must be positive" in outcome.reason else "constants-missing"
+    unknown = body.model in (REAL, IDEAL) and not knows_substance(body.substance)
     return "substance-unknown" if body.composition is None and unknown else "model-not-recomputed"
 
 
@@ -239,7 +243,16 @@ def _surroundings(case: Case) -> Iterator[Gap]:
 
 
 _SOURCES: Final[tuple[tuple[tuple[str, ...], Callable[[Case], Iterable[Gap]]], ...]] = (
-    (("substance-unknown", "constants-missing", "constants-contradict", "model-not-recomputed"), _models),
+    (
+        (
+            "substance-unknown",
+            "constants-missing",
+            "constants-contradict",
+            "model-not-recomputed",
+            "table-unusable",
+        ),
+        _models,
+    ),
     ((), _refused_inputs),
     ((), _unread_inputs),
     ((*STATE_RULES, "datum-missing"), _states),

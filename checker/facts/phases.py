@@ -46,8 +46,13 @@ def claims_of(case: Case, state: str, body: str) -> tuple[PhaseClaim, ...]:
 def possible_phases(case: Case, state: str, body: str) -> tuple[Phase, ...] | None:
     """Return the phase of a state first, then others that cannot be told from it; None where no state is known.
 
+    There is none for a body that is melting.
+
     Above the critical temperature or the critical pressure alone, usage differs: there both words are accepted.
     """
+    melted = case.value(f"states/{state}/{body}/melted_fraction")
+    if melted is not None:
+        return _by_melted_fraction(melted, case.basis.allowances[Allowance.FRACTION])
     word = case.word(f"states/{state}/{body}/phase")
     if word is None:
         return _of_model(case, state, body)
@@ -73,6 +78,8 @@ def possible_phases(case: Case, state: str, body: str) -> tuple[Phase, ...] | No
 def phase_found(case: Case, state: str, body: str) -> str:
     """Return the phase of a state in words; of a model without phases, what it stands for."""
     word = case.word(f"states/{state}/{body}/phase")
+    if word is None and case.value(f"states/{state}/{body}/melted_fraction") is not None:
+        return "partly melted"
     return word or ("liquid or solid" if is_incompressible(case, body) else "gas")
 
 
@@ -83,6 +90,13 @@ def _of_model(case: Case, state: str, body: str) -> tuple[Phase, ...] | None:
     if is_incompressible(case, body):
         return CONDENSED
     return GAS if is_gas(case, body) else None
+
+
+def _by_melted_fraction(melted: float, slack: float) -> tuple[Phase, ...]:
+    """Return what a body that melts may be said to be: solid, liquid, or none of the words while it melts."""
+    if melted <= slack:
+        return (Phase.SOLID,)
+    return (Phase.SUBCOOLED_LIQUID, Phase.SATURATED_LIQUID) if melted >= 1.0 - slack else ()
 
 
 def _around_critical(substance: Substance, temperature: float, pressure: float) -> tuple[Phase, ...]:

@@ -13,6 +13,7 @@ from typing import Final
 from checker.outcomes import NotEvaluable
 from checker.submission import Datum
 from checker.substances.interface import PropertyState, Substance
+from checker.substances.melting_body import Melting
 
 
 @dataclass(frozen=True, slots=True)
@@ -112,6 +113,13 @@ def declared_offset(substance: Substance | None, datum: Datum | None, shared: bo
 def named_offsets(substance: Substance) -> Iterator[Offset]:
     """Yield the offsets of the model's own datum and of the named reference states that the substance has."""
     yield OWN
+    if isinstance(substance, Melting):
+        melted = substance.state({"melted_fraction": 1.0})
+        yield Offset(
+            -melted.specific_internal_energy,
+            -melted.specific_entropy,
+            "all melted, at the melting temperature (u = 0, s = 0)",
+        )
     absolute = _absolute_zero_offset(substance)
     if absolute is not None:
         yield absolute

@@ -8,12 +8,13 @@ from typing import Final
 
 from checker.sheet.balances import same_value
 from checker.sheet.keys import body_key, state_key
+from checker.sheet.melting import FRACTION
 from checker.sheet.states import EXTENSIVE, Clue
 from checker.sheet.step import Link, Step
 from checker.submission import Record, Role
 
 LINKED: Final = ("temperature", "specific_volume")
-"""What a linked state takes over; these two fix a state of any model."""
+"""What a linked state takes over; these two fix a state of any model, a body that melts needs its fraction too."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -44,9 +45,14 @@ def leaves_of(record: Record) -> Iterator[Link]:
         target = target_of(record, state, body)
         if target is None or target.record == record.id:
             continue
-        for name in LINKED:
+        for name in _taken_over(record, body):
             yield Link(f"link/{state_key(state, body, name)}", target.record, target.key(name))
         yield Link(f"link/{state_key(state, body, 'mass')}", target.record, body_key(target.body, "mass"))
+
+
+def _taken_over(record: Record, body: str) -> tuple[str, ...]:
+    own = record.bodies.get(body)
+    return (*LINKED, FRACTION) if own is not None and own.model == "phase change" else LINKED
 
 
 def link_clues(record: Record, state: str, body: str) -> Iterator[Clue]:
@@ -54,7 +60,7 @@ def link_clues(record: Record, state: str, body: str) -> Iterator[Clue]:
     target = target_of(record, state, body)
     if target is not None:
         here = target.record == record.id
-        for name in LINKED:
+        for name in _taken_over(record, body):
             key = target.key(name) if here else f"link/{state_key(state, body, name)}"
             yield Clue(name, key, stated=True, linked=True)
 
