@@ -1,11 +1,11 @@
 """Heat losses by UA·ΔT over time: duration, heater power, end state, energy and entropy of each loss.
 
-    Q_k = UA_k·(T_out,k − T̄)·t        ∫δQ_k/T = UA_k·t·(T_out,k/T_h − 1)
+    Q_k = UA_k·(T_out,k − T_mean)·t        ∫δQ_k/T = UA_k·t·(T_out,k/T_harmarm − 1)
 
-with the arithmetic mean T̄ and the harmonic mean T_h of the body's temperature over the time. Both follow from the
+with the arithmetic mean T_mean and the harmonic mean T_harm of the body's temperature over the time. Both follow from the
 balances of the body, whatever its heat capacity, since its stored energy changes by T·dS along its path:
 
-    ΔE = ΣUA·(T_∞ − T̄)·t        ΔS = ΣUA·(T_∞/T_h − 1)·t        T_∞ = (P + ΣUA·T_out)/ΣUA
+    ΔE = ΣUA·(T_∞ − T_mean)·t        ΔS = ΣUA·(T_∞/T_harmarm − 1)·t        T_∞ = (P + ΣUA·T_out)/ΣUA
 """
 
 from __future__ import annotations
@@ -54,7 +54,7 @@ def loss_steps(ctx: ProcessContext) -> Iterator[Step]:
             (ctx.heat_item(item),),
             (given(f"{base}/{COEFFICIENT}"), f"{base}/{OUTSIDE}", process_key(p, MEAN), ctx.key("duration")),
             lambda ua, outside, mean, t: (ua * (outside - mean) * t,),
-            "Q_k = ∫UA·(T_out − T) dt = UA·(T_out − T̄)·t",
+            "Q_k = ∫UA·(T_out − T) dt = UA·(T_out − T_mean)·t",
             "{0}·({1} − {2})·{3}",
         )
     if plan.sought is not None and plan.unknown is Unknown.POWER:
@@ -69,7 +69,7 @@ def at_system_step(ctx: ProcessContext, item: str) -> Step:
         (f"{base}/item_entropy",),
         (given(f"{base}/{COEFFICIENT}"), ctx.key("duration"), f"{base}/{OUTSIDE}", process_key(p, HARMONIC)),
         lambda ua, t, outside, harmonic: (ua * t * (outside / harmonic - 1.0),),
-        "∫δQ_k/T = ∫UA·(T_out/T − 1) dt = UA·t·(T_out/T_h − 1)",
+        "∫δQ_k/T = ∫UA·(T_out/T − 1) dt = UA·t·(T_out/T_harmarm − 1)",
         "{0}·{1}·({2}/{3} − 1)",
     )
 
@@ -178,7 +178,7 @@ def _means(ctx: ProcessContext, plan: LossPlan) -> Step:
         (process_key(p, MEAN), process_key(p, HARMONIC)),
         (process_key(p, STEADY), stored, ctx.key("entropy_change"), ctx.key("duration"), *coefficients),
         means,
-        f"T̄ = T_∞ − {'ΔH' if plan.at_pressure else 'ΔU'}/(ΣUA·t), T_h = T_∞/(1 + ΔS/(ΣUA·t))",
+        f"T_mean = T_∞ − {'ΔH' if plan.at_pressure else 'ΔU'}/(ΣUA·t), T_harm = T_∞/(1 + ΔS/(ΣUA·t))",
         "",
         f"{p}: {powers}{body} has one temperature throughout at any time",
     )

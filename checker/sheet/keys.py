@@ -105,12 +105,12 @@ _HIDDEN: Final[dict[str, Term]] = {
         meaning="temperature where powers and losses balance",
     ),
     "mean_temperature": replace(
-        TEMPERATURE, name="mean_temperature", symbol="T̄", meaning="mean temperature over the time"
+        TEMPERATURE, name="mean_temperature", symbol="T_mean", meaning="mean temperature over the time"
     ),
     "harmonic_mean_temperature": replace(
         TEMPERATURE,
         name="harmonic_mean_temperature",
-        symbol="T_h",
+        symbol="T_harm",
         meaning="harmonic mean temperature over the time",
     ),
     "outside_temperature": replace(

@@ -43,34 +43,37 @@ def march(rate: Callable[[float], float], start: float, duration: float) -> floa
     NotEvaluable
         The body leaves the range of its model, or the course does not converge.
     """
-    first = rate(start)
+    first, refused = (
+        rate(start),
+        NotEvaluable("the course of the temperature does not converge", "ill-conditioned"),
+    )
     energy, done, step = start, 0.0, duration / 16.0
     scale = max(abs(first * duration), 1e-9)
     for _ in range(MOST_STEPS):
         if abs(step) < SMALLEST * abs(duration):
-            rate(energy + first * step)  # raises the model's own reason
-            raise NotEvaluable("the course of the temperature does not converge", "ill-conditioned")
+            break
         step = min(step, duration - done, key=abs)
-        trial = _trial(rate, energy, first, step)
-        off = float("inf") if trial is None else abs(trial[1]) / (ACCURACY * scale)
-        if trial is not None and off <= 1.0:
-            energy, first, done = trial[0], trial[2], done + step
-            if done == duration or abs(duration - done) < SMALLEST * abs(duration):
+        try:
+            moved, error, last = _trial(rate, energy, first, step)
+        except NotEvaluable as outcome:  # a stage beyond the model's range, or the course itself
+            refused, step = outcome, 0.25 * step
+            continue
+        off = abs(error) / (ACCURACY * scale)
+        if off <= 1.0:
+            energy, first, done = moved, last, done + step
+            if abs(duration - done) < SMALLEST * abs(duration):
                 return energy
-        step *= 0.25 if trial is None else min(4.0, max(0.2, 0.9 * (off + 1e-12) ** -0.2))
-    raise NotEvaluable("the course of the temperature does not converge", "ill-conditioned")
+        step *= min(4.0, max(0.2, 0.9 * (off + 1e-12) ** -0.2))
+    raise refused
 
 
 def _trial(
     rate: Callable[[float], float], energy: float, first: float, step: float
-) -> tuple[float, float, float] | None:
-    """Return the energy after a step, its error and the rate there; None where a stage leaves the model's range."""
+) -> tuple[float, float, float]:
+    """Return the energy after a step, its error and the rate there."""
     rates = [first]
     moved = energy
-    try:
-        for weights in STAGES:
-            moved = energy + step * sum(w * r for w, r in zip(weights, rates, strict=True))
-            rates.append(rate(moved))
-    except NotEvaluable:
-        return None
+    for weights in STAGES:
+        moved = energy + step * sum(w * r for w, r in zip(weights, rates, strict=True))
+        rates.append(rate(moved))
     return moved, step * sum(w * r for w, r in zip(DIFFERENCE, rates, strict=True)), rates[-1]
