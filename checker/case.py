@@ -10,7 +10,7 @@ from checker.comparison.carried import Carried
 from checker.comparison.compare import Compared
 from checker.comparison.moves import Moves
 from checker.comparison.references import References
-from checker.display import Display, as_text, difference_text
+from checker.display import Display, as_text, deviation_texts, difference_text
 from checker.findings import Cause, Grade
 from checker.outcomes import NotEvaluable
 from checker.problems import Place, Problem
@@ -137,6 +137,12 @@ class Case:
         key = self.key(pointer)
         unit = self.display.amount(key, 0.0).unit
         return difference_text(self.display.difference(key, value), unit)
+
+    def show_deviation(self, pointer: str, deviation: float, tolerance: float) -> tuple[str, str]:
+        """Return a deviation and its tolerance as text in the originator's unit, rounded alike."""
+        key = self.key(pointer)
+        unit, difference = self.display.amount(key, 0.0).unit, self.display.difference
+        return deviation_texts(difference(key, deviation), difference(key, tolerance), unit)
 
     def context(self, process: str) -> ProcessContext | None:
         """Return the context of a process."""

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 import re
 from collections.abc import Mapping
 from dataclasses import dataclass, field
@@ -33,6 +34,9 @@ def format_number(value: float, digits: int = 5) -> str:
 
 NOISE: Final = 1e-10
 """Energies and entropies below this part of the record's largest are rounding noise of the arithmetic."""
+ROUNDED: Final = (1e-4, 1e5)
+LARGEST: Final = 1e6
+"""Tolerances, and the largest deviation, that are written without a power of ten."""
 GAUGE_MARK: Final = re.compile(r"\s*\(g\)$|(?<=bar|psi)g$")
 """The mark of a gauge pressure at the end of a unit text."""
 
@@ -96,8 +100,23 @@ def _amount(number: float, unit: str) -> Amount:
 
 def difference_text(number: float, unit: str) -> str:
     """Return a difference with its unit; degrees become differences of degrees."""
-    shown = {"°C": "K", "°F": "Δ°F"}.get(unit, unit.replace("(g)", "").replace("(a)", ""))
-    return f"{format_number(number, 3)} {shown}".strip()
+    return f"{format_number(number, 3)} {_unit_of_difference(unit)}".strip()
+
+
+def deviation_texts(deviation: float, tolerance: float, unit: str) -> tuple[str, str]:
+    """Return a deviation to the second digit of its tolerance (GUM, JCGM 100:2008, 7.2.6), and the tolerance."""
+    shown = _unit_of_difference(unit)
+    if not ROUNDED[0] <= tolerance < ROUNDED[1] or abs(deviation) >= LARGEST:
+        return difference_text(deviation, unit), f"{format_number(tolerance, 2)} {shown}".strip()
+    decimals = max(0, 1 - math.floor(math.log10(tolerance)))
+    mantissa, _, exponent = f"{tolerance:.1e}".partition("e")
+    near = f"{float(f'{mantissa}e{exponent}'):.{max(0, 1 - int(exponent))}f}"
+    written = f"{deviation:.{decimals}f}".replace("-", "−")
+    return f"{written} {shown}".strip(), f"{near} {shown}".strip()
+
+
+def _unit_of_difference(unit: str) -> str:
+    return {"°C": "K", "°F": "Δ°F"}.get(unit, unit.replace("(g)", "").replace("(a)", ""))
 
 
 def stated_amount(quantity: Quantity) -> Amount:

@@ -8,6 +8,7 @@ from typing import Final
 
 from checker.case import Case, Raised, Yielded
 from checker.facts.gaps import unexplained
+from checker.facts.naming import name_of
 from checker.facts.stated import is_wrong
 from checker.facts.use import inputs, untraceable, unused_inputs, without_source
 from checker.findings import Grade, Outcome
@@ -70,7 +71,7 @@ def not_traceable(case: Case) -> Yielded:
     for c in unexplained(case):
         if untraceable(case, c.statement.pointer):
             yield Raised(
-                f"{c.statement.term.name.replace('_', ' ')}: {c.statement.quantity.text} is stated as a result, and no "
+                f"{name_of(c.statement)}: {c.statement.quantity.text} is stated as a result, and no "
                 f"formula leads to it from the inputs of this record.",
                 compared=c,
                 suggestion="State it as an input with its source, or show what it follows from.",

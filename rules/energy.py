@@ -8,6 +8,7 @@ from checker.case import Case, Raised, Yielded
 from checker.facts import balance, exchange, stated
 from checker.facts.cycles import RATIOS, closes
 from checker.facts.mass import masses_of
+from checker.facts.naming import name_of
 from checker.facts.paths import any_follows
 from checker.facts.sums import sums
 from checker.facts.twins import REAL, is_gas
@@ -171,7 +172,7 @@ def totals_do_not_add_up(case: Case) -> Yielded:
         if not stated.any_wrong(case, found.stated, found.parts):
             statement = found.stated.parts[0]
             yield Raised(
-                f"{statement.term.name.replace('_', ' ')}: {statement.quantity.text} is stated, and {found.words} add "
+                f"{name_of(statement)}: {statement.quantity.text} is stated, and {found.words} add "
                 f"up to {case.show(found.pointer, found.parts.value)}.",
                 statement=statement,
                 suggestion="Correct the total or the part that is wrong.",

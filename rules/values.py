@@ -9,6 +9,7 @@ from checker.case import Case, Raised, Yielded
 from checker.comparison.compare import Compared
 from checker.facts.gaps import unexplained
 from checker.facts.mass import contradicts_mass
+from checker.facts.naming import name_of
 from checker.facts.origins import is_impossible, origins, spoiled_by
 from checker.facts.paths import any_follows
 from checker.facts.use import untraceable
@@ -134,12 +135,12 @@ def _recomputed(case: Case, c: Compared) -> str:
 
 
 def _message(case: Case, c: Compared) -> str:
-    name = c.statement.term.name.replace("_", " ")
+    name = name_of(c.statement)
     if c.deviation is None:
         return f"{name}: {c.statement.quantity.text} is stated, but {c.reason}."
     note = f" ({c.shift.note})" if c.shift.note else ""
-    deviation = case.show_difference(c.statement.pointer, c.statement.sign * c.deviation)
-    tolerance = case.show_difference(c.statement.pointer, c.tolerance)
+    pointer = c.statement.pointer
+    deviation, tolerance = case.show_deviation(pointer, c.statement.sign * c.deviation, c.tolerance)
     return (
         f"{name}: {c.statement.quantity.text} is stated, {_recomputed(case, c)} is recomputed; the difference of "
         f"{deviation} is beyond {tolerance}{note}."

@@ -5,7 +5,7 @@ from __future__ import annotations
 from dataclasses import dataclass, replace
 from typing import Final
 
-from checker.package.examples import example_of, units_of
+from checker.package.examples import units_of
 from checker.package.nearest import shortened
 from checker.quantity import dimensions as dim
 from checker.quantity.dimensions import Dimension
@@ -21,19 +21,19 @@ _TIMED: Final = (dim.ENERGY, dim.ENTROPY, dim.SPECIFIC_ENERGY, dim.SPECIFIC_ENTR
 _WORDS: Final[dict[str, tuple[str, str]]] = {
     "rate-for-total": (
         "`{text}` is a rate ({unit}), and {name} is a total.",
-        "State the total, {example}, or give the `duration` under `inputs`.",
+        "State the total (in {units}), or give the `duration` under `inputs`.",
     ),
     "specific-for-total": (
         "`{text}` is per unit {per} ({unit}), and {name} is that of the whole body.",
-        "Multiply by the {per} and state the total, {example}.",
+        "Multiply by the {per} and state the total (in {units}).",
     ),
     "total-for-specific": (
         "`{text}` is a total ({unit}), and {name} is per unit mass.",
-        "Divide by the mass and state it per kilogram, {example}.",
+        "Divide by the mass and state it per kilogram (in {units}).",
     ),
     "dimension-wrong": (
         "`{text}` has the unit of another kind of quantity ({unit}); {name} is stated in {units}.",
-        "Write it {example}.",
+        "Correct the unit, or move the value to the quantity that it is.",
     ),
 }
 """Kind → message and suggestion."""
@@ -96,7 +96,6 @@ def wrong_unit(quantity: Quantity, term: Term) -> WrongUnit | None:
         "unit": quantity.unit.text or "no unit",
         "name": term.name,
         "units": units_of(term),
-        "example": f"such as {example_of(term)}",
         "per": "amount" if got in _MOLAR else "mass",
     }
     advice = _instead(got, expected) if kind == "dimension-wrong" else ""

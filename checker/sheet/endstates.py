@@ -236,7 +236,7 @@ def _on_curve_step(near: Neighbour, plan: StatePlan, path: Path, one: Clue) -> S
         plan.outputs,
         (*(near.known(name) for name in NEIGHBOUR), one.key, *keys, *plan.model.parents),
         find,
-        f"p = p(v) along the path, with {symbol}",
+        "p = p(v) along the path" if one.name == "pressure" else f"p = p(v) along the path, with {symbol}",
         f"{symbol} = {{{count}}}",
     )
 

@@ -11,6 +11,7 @@ from checker.substances.properties import (
     ENERGY,
     ENTROPY,
     PRESSURE,
+    QUALITY,
     TEMPERATURE,
     VOLUME,
     Known,
@@ -42,6 +43,8 @@ class HelmholtzSurface(LibrarySurface):
         """Return the state of a pair with one root; None for the pairs that must be searched."""
         if known.pair not in TRUSTED:
             return None
+        if not self._pure and QUALITY in known.pair and 0.0 < known.value(QUALITY) < 1.0:
+            raise NotEvaluable(two_phase_mixture(self.name), "not-supported")
         if known.pair == (PRESSURE, VOLUME) and self._may_have_two_roots(known.first, known.second):
             return None
         if known.pair == (TEMPERATURE, PRESSURE):

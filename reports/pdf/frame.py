@@ -8,30 +8,32 @@ from reportlab.lib.units import mm
 from reportlab.platypus import Flowable, Frame, PageTemplate
 
 from checker.findings import Review
-from reports.pdf.fonts import REGULAR, width
+from reports.pdf.fonts import REGULAR
 from reports.pdf.styles import FOOTER, HAIRLINE, HEADER, LANDSCAPE, MARGIN, MUTED, PORTRAIT, RULE
 from reports.pdf.text import fitting, flat
 
 _SIZE: Final = 8
-_TOTAL: Final = "number-of-pages"
+_ROOM: Final = 80.0
+"""Of the text that says which page it is and of how many. [pt]"""
 
 
 class NumberOfPages(Flowable):  # type: ignore[misc]  # reportlab has no types
-    """The last flowable: it takes no room and tells every footer how many pages there are."""
+    """The last flowable: it takes no room and writes into every footer which page of how many it is."""
 
     def wrap(self, *_: float) -> tuple[float, float]:
         """Return its size, which is none."""
         return (0, 0)
 
     def draw(self) -> None:
-        """Define the form that the footers refer to."""
+        """Define the forms that the footers refer to: each ends at the margin, whatever the number of pages."""
         canvas = self.canv
-        total = str(canvas.getPageNumber())
-        canvas.beginForm(_TOTAL, 0, -3, 40, 12)
-        canvas.setFont(REGULAR, _SIZE)
-        canvas.setFillColor(MUTED)
-        canvas.drawString(0, 0, total)
-        canvas.endForm()
+        total = canvas.getPageNumber()
+        for number in range(1, total + 1):
+            canvas.beginForm(_form(number), 0, -3, _ROOM, 12)
+            canvas.setFont(REGULAR, _SIZE)
+            canvas.setFillColor(MUTED)
+            canvas.drawRightString(_ROOM, 0, f"page {number} of {total}")
+            canvas.endForm()
 
 
 def page_templates(review: Review) -> list[Any]:
@@ -66,16 +68,19 @@ def _header(canvas: Any, review: Review) -> None:
 
 
 def _footer(canvas: Any) -> None:
-    """Write ``page x of y``; y is a form that is defined on the last page."""
+    """Write ``page x of y``, a form that is defined on the last page, when y is known."""
     right, bottom = canvas._pagesize[0] - MARGIN, 11 * mm
     _pen(canvas)
-    room = width("0000", REGULAR, _SIZE)
     canvas.drawString(MARGIN, bottom, "Alternate calculation and review")
-    canvas.drawRightString(right - room, bottom, f"page {canvas.getPageNumber()} of ")
     canvas.saveState()
-    canvas.translate(right - room, bottom)
-    canvas.doForm(_TOTAL)
+    canvas.translate(right - _ROOM, bottom)
+    canvas.doForm(_form(canvas.getPageNumber()))
     canvas.restoreState()
+
+
+def _form(number: int) -> str:
+    """Return the name of the form with the number of a page."""
+    return f"number-of-page-{number}"
 
 
 def _pen(canvas: Any) -> None:

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import math
+import re
 from collections.abc import Callable, Sequence
 from typing import Any, Final
 
@@ -24,6 +25,8 @@ _SIDES: Final = (
     ("transfer", "Transfers across the boundary"),
     ("generation", "Generated in the system"),
 )
+_PLAIN: Final = re.compile(r"[-+−]?[0-9]+(\.[0-9]*)?")
+_LARGEST: Final = 1e7
 _NEGLIGIBLE: Final = 1e-9  # of the largest term: what remains there is the rounding of the machine
 
 
@@ -71,7 +74,17 @@ def _sum(lines: Sequence[LedgerLine], of: Side, unit: str) -> Any:
     if len(numbers) < len(lines) or not all(map(math.isfinite, numbers)):
         return MISSING
     total = math.fsum(line.sign * number for line, number in zip(lines, numbers, strict=True))
-    return paragraph(CELL_RIGHT, bold(f"{rounded(total, 4)} {unit}"))
+    return paragraph(CELL_RIGHT, bold(f"{sum_text(amounts, total)} {unit}"))
+
+
+def sum_text(amounts: Sequence[Amount | None], total: float) -> str:
+    """Return a sum with as many decimals as the term that is written with most of them."""
+    texts = [amount.text.removesuffix(amount.unit).strip() for amount in amounts if amount]
+    if not all(map(_PLAIN.fullmatch, texts)) or abs(total) >= _LARGEST:
+        return rounded(total, 5)
+    decimals = max(len(text.partition(".")[2]) for text in texts)
+    written = f"{total:.{decimals}f}".replace("-", "−")
+    return written if any(digit in written for digit in "123456789") else "0"
 
 
 def _closing(ledger: Ledger) -> list[Row]:

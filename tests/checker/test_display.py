@@ -1,8 +1,12 @@
 """Numbers for people."""
 
 import pytest
+from hypothesis import given
+from hypothesis import strategies as st
 
-from checker.display import difference_text, format_number
+from checker.display import deviation_texts, difference_text, format_number
+from checker.findings import Amount
+from reports import numbers
 from tests.checker.cases import case, gas_bottle
 
 
@@ -29,6 +33,22 @@ def test_a_difference_of_degrees_is_in_kelvin():
     """A deviation of a °C value is no temperature."""
     assert difference_text(0.3, "°C") == "0.3 K"
     assert difference_text(0.3, "bar(g)") == "0.3 bar"
+
+
+@given(st.floats(1e-4, 9e4), st.floats(1.0, 900.0))
+def test_a_message_rounds_a_deviation_as_the_report_does(tolerance, times):
+    """The same deviation beside the same tolerance is printed once in the message and once in the table."""
+    amount = Amount(0.0, "kJ", "0")
+    for value in (tolerance * times, -tolerance * times):
+        if abs(value) < 1e6:
+            deviation, allowed = deviation_texts(value, tolerance, "kJ")
+            assert numbers.deviation(value, tolerance, amount).removeprefix("+") == deviation
+            assert numbers.tolerance(tolerance, amount) == allowed
+
+
+def test_a_huge_deviation_has_three_digits():
+    """Beyond a million digits beside the tolerance say nothing."""
+    assert deviation_texts(2.0e7, 31.7, "kJ") == ("2.00e+07 kJ", "32 kJ")
 
 
 def test_formulas_use_absolute_temperature_and_pressure():

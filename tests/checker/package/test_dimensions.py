@@ -21,7 +21,7 @@ CASES = [
     # level, name, text, kind, what is said
     (Level.PROCESS, "heat", "5 kJ", None, ""),
     (Level.PROCESS, "heat", "5 kW", "rate-for-total", "or give the `duration`"),
-    (Level.PROCESS, "entropy_change", "5 W/K", "rate-for-total", "0.969 kJ/K"),
+    (Level.PROCESS, "entropy_change", "5 W/K", "rate-for-total", "in J/K, kJ/K"),
     (Level.PROCESS, "specific_work", "5 kJ/kg", None, ""),
     (Level.PROCESS, "specific_work", "5 kW/kg", "rate-for-total", "rate"),
     (Level.STATE, "internal_energy", "5 kJ/kg", "specific-for-total", "Multiply by the mass"),

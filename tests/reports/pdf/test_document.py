@@ -121,9 +121,7 @@ def test_every_page_is_numbered(revise: PdfReader) -> None:
     """Each page says which it is and of how many, and after the cover, which package it belongs to."""
     total = len(revise.pages)
     for number, page in enumerate(revise.pages, 1):
-        assert f"page {number} of" in words(page)
-        form = page["/Resources"]["/XObject"]["/FormXob.number-of-pages"].get_object()  # type: ignore[index]
-        assert f"({total})".encode() in form.get_data()
+        assert f"page {number} of {total}" in words(page)
         assert number == 1 or "TC-0417, revision A" in words(page)
 
 
