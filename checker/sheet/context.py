@@ -203,11 +203,12 @@ class ProcessContext:
         output = (self.share(body, "boundary_work"),)
         of = f" of {body}" if len(self.bodies) > 1 else ""
         title = f"Boundary work{of}, {self.process.id}"
+        incompressible = self.boundary_work_is_zero(body)
         for path in self.paths_of(body):
-            if path.work is not None:
+            # At one temperature a body may melt, and its end state is then sought by the balance.
+            if path.work is not None and not (incompressible and path.kind == "isothermal"):
                 return _work_step(self, body, path.work, output, f"{title} ({path.kind})")
-        nominal = self.models[body].at_nominal() if body in self.models else None
-        if nominal is not None and nominal.incompressible:
+        if incompressible:
             return Step(title, output, (), lambda: (0.0,), "W_b = 0 (incompressible)", "0")
         return None
 

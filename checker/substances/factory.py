@@ -15,6 +15,7 @@ from checker.substances.ideal_gas import IdealGas
 from checker.substances.interface import Substance
 from checker.substances.materials import material_of
 from checker.substances.melting import make_melting
+from checker.substances.melting_body import Melting
 from checker.substances.mixtures import make_mixture
 from checker.substances.moist_air import is_moist_air, make_moist_air
 from checker.substances.names import fluid_of, knows_fluid
@@ -92,6 +93,10 @@ def make_substance(
     for factor in (density_factor, caloric_factor):
         if not (math.isfinite(factor) and factor > 0.0):
             raise NotEvaluable("a factor on a property must be positive", "missing")
+    if isinstance(bare, Melting) and bare.material is not None:
+        bare, caloric_factor = bare.moved(caloric_factor), 1.0
+        if density_factor == 1.0:
+            return bare
     return PerturbedSubstance(bare, density_factor, caloric_factor)
 
 

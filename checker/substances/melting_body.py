@@ -10,7 +10,7 @@ from __future__ import annotations
 
 import math
 from collections.abc import Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from functools import lru_cache
 from typing import ClassVar, Final
 
@@ -78,15 +78,10 @@ class Melting(Condensed):
 
     @property
     def uncertainty(self) -> ModelUncertainty:
-        """That of the constants taken from the handbook table, the largest of them for all."""
+        """That of the constants taken from the handbook table: the largest of them; ``moved`` uses each for its own."""
         if self.material is None:
             return EXACT
-        spreads = {
-            "latent_heat": self.material.latent_spread,
-            "specific_heat_of_solid": self.material.solid_spread,
-            "specific_heat_of_liquid": self.material.liquid_spread,
-        }
-        largest = max((spreads.get(name, 0.0) for name in self.own), default=0.0)
+        largest = max((self._spreads()[name] for name in self.own), default=0.0)
         return ModelUncertainty(0.0, largest, f"handbook table: {self.material.source}")
 
     @property
@@ -102,6 +97,34 @@ class Melting(Condensed):
             return text
         taken = ", ".join(name.replace("_", " ") for name in self.own)
         return f"{text}; {taken} of {self.material.name} from the handbook table ({self.material.source})"
+
+    def moved(self, caloric_factor: float) -> Melting:
+        """Return the body with the constants of the handbook table off by their own uncertainties.
+
+        ``caloric_factor`` [1] is 1 + U with U the largest of them; each constant moves by its own share of it.
+        """
+        largest = self.uncertainty.caloric
+        if self.material is None or largest == 0.0:
+            return self
+        share = (caloric_factor - 1.0) / largest
+        own = {name: 1.0 + share * self._spreads()[name] for name in self.own}
+        return replace(
+            self,
+            latent_heat=self.latent_heat * own.get("latent_heat", 1.0),
+            heat_of_solid=self.heat_of_solid * own.get("specific_heat_of_solid", 1.0),
+            heat_of_liquid=self.heat_of_liquid * own.get("specific_heat_of_liquid", 1.0),
+        )
+
+    def _spreads(self) -> dict[str, float]:
+        """Return the relative uncertainties of what the table has; that of a melting temperature does not count."""
+        row = self.material
+        assert row is not None, "asked of bodies with constants of the table only"
+        return {
+            "melting_temperature": 0.0,
+            "latent_heat": row.latent_spread,
+            "specific_heat_of_solid": row.solid_spread,
+            "specific_heat_of_liquid": row.liquid_spread,
+        }
 
     def state(self, known: Mapping[str, float], phase: Phase | None = None) -> PropertyState:
         """Return the state with T, u, s, h and p, or the melted fraction alone or with T.
