@@ -1,11 +1,11 @@
 """Heat losses by UA·ΔT over time: duration, heater power, end state, energy and entropy of each loss.
 
-    Q_k = UA_k·(T_out,k − T_mean)·t        ∫δQ_k/T = UA_k·t·(T_out,k/T_harmarm − 1)
+    Q_k = UA_k·(T_out,k − T_mean)·t        ∫δQ_k/T = UA_k·t·(T_out,k/T_harm − 1)
 
-with the arithmetic mean T_mean and the harmonic mean T_harm of the body's temperature over the time. Both follow from the
+with the arithmetic mean T_mean and the harmonic mean T_harm of the temperature over the time. Both follow from the
 balances of the body, whatever its heat capacity, since its stored energy changes by T·dS along its path:
 
-    ΔE = ΣUA·(T_∞ − T_mean)·t        ΔS = ΣUA·(T_∞/T_harmarm − 1)·t        T_∞ = (P + ΣUA·T_out)/ΣUA
+    ΔE = ΣUA·(T_∞ − T_mean)·t        ΔS = ΣUA·(T_∞/T_harm − 1)·t        T_∞ = (P + ΣUA·T_out)/ΣUA
 """
 
 from __future__ import annotations
@@ -13,7 +13,7 @@ from __future__ import annotations
 from collections.abc import Callable, Iterator, Sequence
 
 from checker.sheet.approach import Exchange, Profile, exponential_end, exponential_time
-from checker.sheet.balances import same_value
+from checker.sheet.balances import same_value, sum_text
 from checker.sheet.context import ProcessContext
 from checker.sheet.heater import (
     OUTSIDE,
@@ -69,7 +69,7 @@ def at_system_step(ctx: ProcessContext, item: str) -> Step:
         (f"{base}/item_entropy",),
         (given(f"{base}/{COEFFICIENT}"), ctx.key("duration"), f"{base}/{OUTSIDE}", process_key(p, HARMONIC)),
         lambda ua, t, outside, harmonic: (ua * t * (outside / harmonic - 1.0),),
-        "∫δQ_k/T = ∫UA·(T_out/T − 1) dt = UA·t·(T_out/T_harmarm − 1)",
+        "∫δQ_k/T = ∫UA·(T_out/T − 1) dt = UA·t·(T_out/T_harm − 1)",
         "{0}·{1}·({2}/{3} − 1)",
     )
 
@@ -137,46 +137,70 @@ def _steady(ctx: ProcessContext, plan: LossPlan) -> Step:
     )
 
 
-def _duration(ctx: ProcessContext, plan: LossPlan) -> Step:
-    """Return how long the body takes from its first state to its last."""
+def _time(
+    ctx: ProcessContext, plan: LossPlan
+) -> tuple[tuple[str, ...], Callable[[Sequence[float]], float], str]:
+    """Return the keys from which the time between the end states follows, the function, and its substitution."""
     storage, state = storage_of(ctx, plan), ctx.process.to_state
     parents = storage.parents(ctx.process.from_state)
     exchange, build = _exchange(ctx, plan)
-    count = len(parents)
+    n = len(parents)
 
-    def duration(*values: float) -> tuple[float]:
-        own, last, end = storage.read(values[:count]), values[count], values[count + 1]
-        flow = build(values[count + 2 :])
+    def time(values: Sequence[float]) -> float:
+        own, last, end = storage.read(values[:n]), values[n], values[n + 1]
+        flow = build(values[n + 2 :])
         if storage.is_constant and end != own.temperature:
             capacity = own.mass * (last - own.energy) / (end - own.temperature)
-            return (exponential_time(capacity, own.temperature, end, flow),)
-        return (Profile(own.mass, own.temperature_of, own.energy, last).time(flow),)
+            return exponential_time(capacity, own.temperature, end, flow)
+        return Profile(own.mass, own.temperature_of, own.energy, last).time(flow)
 
+    coefficients = sum_text(len(plan.losses), n + 3)
+    exact = (
+        f"{{0}}·({{{n}}} − {{2}})/({{{n + 1}}} − {{1}})/({coefficients})"
+        f"·ln(({{{n + 2}}} − {{1}})/({{{n + 2}}} − {{{n + 1}}}))"
+    )
+    ends = (storage.energy_in(state), storage.temperature_in(state))
+    return (*parents, *ends, *exchange), time, exact if storage.is_constant else ""
+
+
+def _duration(ctx: ProcessContext, plan: LossPlan) -> Step:
+    """Return how long the body takes from its first state to its last."""
+    parents, time, text = _time(ctx, plan)
     return Step(
         f"Duration, {ctx.process.id}",
         (ctx.key("duration"),),
-        (*parents, storage.energy_in(state), storage.temperature_in(state), *exchange),
-        duration,
-        "t = (C/ΣUA)·ln((T_∞ − T₁)/(T_∞ − T₂)), C = ΔE/ΔT"
-        if storage.is_constant
-        else "t = ∫dE/(ΣUA·(T_∞ − T))",
+        parents,
+        lambda *values: (time(values),),
+        "t = (C/ΣUA)·ln((T_∞ − T₁)/(T_∞ − T₂)), C = ΔE/ΔT" if text else "t = ∫dE/(ΣUA·(T_∞ − T))",
+        text,
     )
 
 
 def _means(ctx: ProcessContext, plan: LossPlan) -> Step:
-    """Return the arithmetic and the harmonic mean of the body's temperature over the time."""
-    p, body = ctx.process.id, plan.body
-    stored = ctx.key("enthalpy_change" if plan.at_pressure else "internal_energy_change")
-    coefficients = tuple(given(f"{ctx.item_base('heat', item)}/{COEFFICIENT}") for item in plan.losses)
+    """Return the arithmetic and the harmonic mean of the body's temperature over the time.
 
-    def means(settles: float, change: float, entropy: float, t: float, *ua: float) -> tuple[float, float]:
-        return settles - change / (sum(ua) * t), settles / (1.0 + entropy / (sum(ua) * t))
+    Where both ends are given the time is that between them, whatever is said of the duration, which the means of a
+    slow process could not follow: they are differences of large numbers.
+    """
+    p, body, coefficients = ctx.process.id, plan.body, _coefficients(ctx, plan)
+    stored = ctx.key("enthalpy_change" if plan.at_pressure else "internal_energy_change")
+    own = (process_key(p, STEADY), stored, ctx.key("entropy_change"), *coefficients)
+    count = len(own)
+    given_time = plan.unknown is Unknown.END
+    parents, time, _ = ((ctx.key("duration"),), _first, "") if given_time else _time(ctx, plan)
+
+    def means(*values: float) -> tuple[float, float]:
+        settles, change, entropy, *ua = values[:count]
+        if change == 0.0 and not given_time:
+            return settles, settles
+        exchanged = sum(ua) * time(values[count:])
+        return settles - change / exchanged, settles / (1.0 + entropy / exchanged)
 
     powers = "the powers are constant and " if plan.sources else ""
     return Step(
         f"Mean temperatures of {body} over the time, {p}",
         (process_key(p, MEAN), process_key(p, HARMONIC)),
-        (process_key(p, STEADY), stored, ctx.key("entropy_change"), ctx.key("duration"), *coefficients),
+        (*own, *parents),
         means,
         f"T_mean = T_∞ − {'ΔH' if plan.at_pressure else 'ΔU'}/(ΣUA·t), T_harm = T_∞/(1 + ΔS/(ΣUA·t))",
         "",
@@ -184,14 +208,21 @@ def _means(ctx: ProcessContext, plan: LossPlan) -> Step:
     )
 
 
+def _first(values: Sequence[float]) -> float:
+    return values[0]
+
+
+def _coefficients(ctx: ProcessContext, plan: LossPlan) -> tuple[str, ...]:
+    return tuple(given(f"{ctx.item_base('heat', item)}/{COEFFICIENT}") for item in plan.losses)
+
+
 def _exchange(
     ctx: ProcessContext, plan: LossPlan
 ) -> tuple[tuple[str, ...], Callable[[Sequence[float]], Exchange]]:
     """Return the keys of the steady temperature and the coefficients, and how they are put together."""
-    coefficients = tuple(given(f"{ctx.item_base('heat', item)}/{COEFFICIENT}") for item in plan.losses)
 
     def build(values: Sequence[float]) -> Exchange:
         total = sum(values[1:])
         return Exchange(total, values[0] * total)
 
-    return (process_key(ctx.process.id, STEADY), *coefficients), build
+    return (process_key(ctx.process.id, STEADY), *_coefficients(ctx, plan)), build

@@ -18,15 +18,18 @@ SUPPLIED, OUTSIDE = "supplied_power", "outside_temperature"
 
 def supplied_steps(ctx: ProcessContext, plan: LossPlan) -> Iterator[Step]:
     """Yield the sum of the constant powers into the body: given, or found from the time."""
-    key, title = process_key(ctx.process.id, SUPPLIED), f"Power supplied, {ctx.process.id}"
+    key, title = (
+        process_key(ctx.process.id, SUPPLIED),
+        f"Power into the body beside the losses, {ctx.process.id}",
+    )
     if plan.sought is not None:
         yield _found_power(ctx, plan, plan.sought, key, title)
         return
     if not plan.sources:
-        yield constant(key, title, "P = 0 (no power beside the losses)")
+        yield constant(key, title, "P = 0 (no heater)")
         return
     parents, read = _powers(ctx, plan.sources)
-    yield Step(title, (key,), parents, lambda *values: (sum(read(values)),), "P = ΣP_k, into the system")
+    yield Step(title, (key,), parents, lambda *values: (sum(read(values)),), "P = ΣP_k")
 
 
 def _powers(

@@ -27,7 +27,7 @@ _EQUAL: Final = str.maketrans(
 # The typeface has raised digits but no raised signs, so that kg⁻¹ is set with a raised −1.
 _RAISED: Final = re.compile("[⁰¹²³⁴-⁹]*[⁺⁻][⁺⁻⁰¹²³⁴-⁹]*")
 _LOWERED_BY_RAISING: Final = str.maketrans("⁺⁻⁰¹²³⁴⁵⁶⁷⁸⁹", "+−0123456789")
-_INDEX: Final = re.compile(r"(?<=[^\W_])_([A-Za-z0-9]+(?:[,-][A-Za-z0-9]+)*)")
+_INDEX: Final = re.compile(r"(?<=[^\W_])_([A-Za-z0-9∞]+(?:[,-][A-Za-z0-9∞]+)*)")
 
 
 class Markup(str):
