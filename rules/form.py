@@ -39,6 +39,14 @@ RULES: Final[tuple[Rule, ...]] = (
         _YAML,
     ),
     reading_rule(
+        "value-missing",
+        "form",
+        Grade.QUERY,
+        "A quantity is named, and no value is written beside it.",
+        "A value that was forgotten, or that stands behind a #, is neither used nor checked.",
+        _YAML,
+    ),
+    reading_rule(
         "alias-used",
         "form",
         Grade.QUERY,

@@ -7,6 +7,7 @@ from dataclasses import dataclass
 from typing import Final
 
 from checker.package.dimensions import as_total, is_rate_of, wrong_unit
+from checker.document.nodes import Scalar
 from checker.package.examples import example_of
 from checker.package.layout import LEVEL_WORDS
 from checker.package.nearest import shortened
@@ -47,7 +48,9 @@ class Desk:
                 self.unknown(spot, written, text, place)
             elif name in seen:
                 self._repeated(spot, seen[name], written, name, place)
-            elif text is not None:
+            elif text is None:
+                self.blank(written, place, f"{spot.prefix}/{name}")
+            else:
                 seen[name] = written
                 term = TERMS[spot.level][name]
                 if term.text and isinstance(text, str):
@@ -130,6 +133,19 @@ class Desk:
         if spot.work and term.name in _WORK_ITEM:
             return {"in": -1, "out": 1}.get(spot.direction or "", self.work_sign)
         return self.work_sign if term.work_sign else 1
+
+    def blank(self, written: str, place: Place, pointer: str) -> None:
+        """Note a key that was left without a value; a null that is written out is left open on purpose."""
+        node = self.notebook.document.node((*self.notebook.root, *place))
+        if isinstance(node, Scalar) and not node.text:
+            self.notebook.say(
+                "value-missing",
+                place,
+                f"`{shortened(written, 40)}` has no value; what stands after # is a comment.",
+                "Write the value before the #, or leave the key out.",
+                at_key=True,
+                quantity=pointer,
+            )
 
     def unknown(self, spot: Spot, written: str, value: object, place: Place) -> None:
         """Note a name that may not stand at a spot."""

@@ -17,6 +17,7 @@ KINDS: Final[dict[str, str]] = {
     "type-wrong": "a text, a list or a mapping stands where another of them belongs",
     "name-unknown": "a key is not one that may stand at this place",
     "name-repeated": "one quantity is given by its name and by its symbol in the same mapping",
+    "value-missing": "a quantity is named, and no value is written beside it",
     "word-unknown": "a word is not one of the closed list that belongs here",
     "identifier-wrong": "an identifier has other characters than a to z, 0 to 9 and hyphens",
     "identifier-repeated": "an identifier stands for two things",

@@ -94,7 +94,9 @@ def _heat(
     at_system = part.boundary_temperature == SYSTEM
     for name in BESIDE_INPUTS:
         text = getattr(part, name)
-        if text is not None and not (at_system and name == "boundary_temperature"):
+        if text is None:
+            desk.blank(name, (*where, name), f"{spot.prefix}/{name}")
+        elif not (at_system and name == "boundary_temperature"):
             desk.state(spot, Role.INPUT, TERMS[Level.TRANSFER][name], text, (*where, name))
     desk.take_both(spot, part.inputs, part.results)
     return HeatTransfer(part.id, (*desk.notebook.root, *where), part.body, part.from_, part.to, at_system)

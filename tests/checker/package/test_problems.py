@@ -46,6 +46,7 @@ FORM = [
     ("name-unknown", "kind: shaft, inputs: {energy: 1 kJ}",
      "kind: shaft, inputs: {energy: 1 kJ, «boundary_temperature: 300 K}", False, "not a quantity"),
     ("name-repeated", "temperature: 15 °C, p", "temperature: 15 °C, «T: 15 °C, p", False, "only `temperature`"),
+    ("value-missing", "results: {pressure: 181 bar}", "results: {«pressure: }", False, "after # is a comment"),
     ("word-unknown", "model: real fluid", "model: «real gas", True, "Perhaps `ideal gas`?"),
     ("word-unknown", "path: constant volume", "path: «isochoric", True, "Perhaps `constant volume`?"),
     ("word-unknown", "path: constant volume", "path: {kind: «Polytropic}", True, "Perhaps `polytropic`?"),

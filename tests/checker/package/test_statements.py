@@ -252,11 +252,29 @@ def test_an_unreadable_text_is_not_stated(read: Read) -> None:
     assert "states/cold/nitrogen/pressure" in pointers
 
 
-def test_blank_values_are_not_stated(read: Read) -> None:
-    """A name without a value counts as not written."""
-    result = read(("temperature: 15 °C, p", "temperature: , p"))
-    assert result.problems == ()
-    assert "states/cold/nitrogen/temperature" not in [s.pointer for s in result.record.statements]
+@pytest.mark.parametrize("written", ["", "~", "null"])
+def test_blank_values_are_not_stated(read: Read, written: str) -> None:
+    """A name without a value states nothing; where it was not left open on purpose, it is asked about."""
+    result = read(("temperature: 15 °C, p", f"temperature: {written}, p"))
+    pointer = "states/cold/nitrogen/temperature"
+    asked = [] if written else [("value-missing", pointer, True)]
+    assert [(p.kind, p.quantity, p.at_key) for p in result.problems] == asked
+    assert pointer not in [s.pointer for s in result.record.statements]
+
+
+def test_a_boundary_temperature_without_value_is_asked_about(read: Read) -> None:
+    """It stands beside the inputs of its transfer and is one of them."""
+    result = read(("boundary_temperature: 70 °C", "boundary_temperature: "))
+    pointer = "processes/warming/heat_transfers/wall/boundary_temperature"
+    assert [(p.kind, p.quantity) for p in result.problems] == [("value-missing", pointer)]
+
+
+def test_a_value_behind_a_number_sign_is_a_comment(read: Read) -> None:
+    """The pointer has the whole word, whatever was written; the rest of the record is read."""
+    result = read(("temperature: 15 °C, pressure: 150 bar}", "temperature: 15 °C,\n      p: # 150 bar\n    }"))
+    ((kind, quantity),) = [(p.kind, p.quantity) for p in result.problems]
+    assert (kind, quantity) == ("value-missing", "states/cold/nitrogen/pressure")
+    assert "states/cold/nitrogen/temperature" in [s.pointer for s in result.record.statements]
 
 
 def test_of_a_name_and_its_symbol_the_first_is_read(read: Read) -> None:
