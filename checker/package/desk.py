@@ -6,8 +6,8 @@ from collections.abc import Mapping
 from dataclasses import dataclass
 from typing import Final
 
-from checker.package.dimensions import as_total, is_rate_of, wrong_unit
 from checker.document.nodes import Scalar
+from checker.package.dimensions import as_total, is_rate_of, wrong_unit
 from checker.package.examples import example_of
 from checker.package.layout import LEVEL_WORDS
 from checker.package.nearest import shortened

@@ -271,7 +271,9 @@ def test_a_boundary_temperature_without_value_is_asked_about(read: Read) -> None
 
 def test_a_value_behind_a_number_sign_is_a_comment(read: Read) -> None:
     """The pointer has the whole word, whatever was written; the rest of the record is read."""
-    result = read(("temperature: 15 °C, pressure: 150 bar}", "temperature: 15 °C,\n      p: # 150 bar\n    }"))
+    result = read(
+        ("temperature: 15 °C, pressure: 150 bar}", "temperature: 15 °C,\n      p: # 150 bar\n    }")
+    )
     ((kind, quantity),) = [(p.kind, p.quantity) for p in result.problems]
     assert (kind, quantity) == ("value-missing", "states/cold/nitrogen/pressure")
     assert "states/cold/nitrogen/temperature" in [s.pointer for s in result.record.statements]
