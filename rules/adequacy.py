@@ -37,14 +37,15 @@ def too_dense(case: Case, body: str) -> Yielded:
     checks = adequacy.gas_checks(case, body)
     yield from _without_factor(case, body, checks)
     worst = adequacy.densest(checks)
-    off = abs(worst[1] - 1.0) / case.basis.allowances[Allowance.VALUE] if worst else 0.0
+    off = abs(worst.factor - 1.0) / case.basis.allowances[Allowance.VALUE] if worst else 0.0
     if worst is None or off <= 1.0:
         return
     found = idealised.by_real_gas(case, body) or ()
     if found and found[0].allowances <= 1.0:
         return
     yield Raised(
-        f"{case.record.bodies[body].substance} has a compressibility factor of {worst[1]:.4f} in state {worst[0]}. "
+        f"{case.record.bodies[body].substance} has a compressibility factor of {worst.factor:.4f} "
+        f"{'at half the pressure of' if worst.halfway else 'in'} state {worst.state}. "
         + _results(case, found, "as a real fluid", "as an ideal gas", off),
         quantity=f"bodies/{body}",
         place=case.record.bodies[body].place,

@@ -33,12 +33,23 @@ NEAR_PRESSURE: Final = 0.10
 class GasCheck:
     """A gas held against its real fluid in one state; Z None where the real fluid does not tell.
 
-    ``component`` is what condenses of a mixture.
+    ``component`` is what condenses of a mixture. ``halfway`` is Z at half the pressure: where attraction and repulsion
+    just balance, Z is 1 and the gas is no ideal one all the same.
     """
 
     factor: float | None
     condensed: bool
     component: str = ""
+    halfway: float | None = None
+
+
+@dataclass(frozen=True, slots=True)
+class Dense:
+    """Where the compressibility factor of a body is farthest from 1; ``halfway``: at half the pressure of the state."""
+
+    state: str
+    factor: float
+    halfway: bool = False
 
 
 def gas_check(case: Case, state: str, body: str) -> GasCheck | None:
@@ -48,13 +59,15 @@ def gas_check(case: Case, state: str, body: str) -> GasCheck | None:
         component = condensing_component(case, body, temperature, pressure)
         if component:
             return GasCheck(None, True, component)
-        return GasCheck(mixed_compressibility(case, body, temperature, pressure), False)
+        whole, half = (mixed_compressibility(case, body, temperature, p) for p in (pressure, 0.5 * pressure))
+        return GasCheck(whole, False, halfway=half)
     real = twin(case.record.bodies[body].substance, REAL)
     if real is None or temperature is None or pressure is None:
         return None
     if is_condensed(real, temperature, pressure):
         return GasCheck(None, True)
-    return GasCheck(compressibility(real, temperature, pressure), False)
+    whole, half = (compressibility(real, temperature, p) for p in (pressure, 0.5 * pressure))
+    return GasCheck(whole, False, halfway=half)
 
 
 def gas_checks(case: Case, body: str) -> dict[str, GasCheck | None]:
@@ -62,12 +75,16 @@ def gas_checks(case: Case, body: str) -> dict[str, GasCheck | None]:
     return {state: gas_check(case, state, body) for state in states_of(case, body)}
 
 
-def densest(checks: Mapping[str, GasCheck | None]) -> tuple[str, float] | None:
-    """Return the state in which Z is farthest from 1, and Z; None where no Z is known or the fluid is liquid."""
-    if any(check is not None and check.condensed for check in checks.values()):
-        return None
-    factors = [(s, c.factor) for s, c in checks.items() if c is not None and c.factor is not None]
-    return max(factors, key=lambda found: abs(found[1] - 1.0), default=None)
+def densest(checks: Mapping[str, GasCheck | None]) -> Dense | None:
+    """Return where Z of a body is farthest from 1; None where no Z is known or the fluid is liquid."""
+    found: list[Dense] = []
+    for state, check in checks.items():
+        if check is not None and check.condensed:
+            return None
+        if check is not None and check.factor is not None:
+            found.append(Dense(state, check.factor))
+            found += [] if check.halfway is None else [Dense(state, check.halfway, True)]
+    return max(found, key=lambda dense: abs(dense.factor - 1.0), default=None)
 
 
 def own_compressibility(case: Case, state: str, body: str) -> float | None:

@@ -267,3 +267,19 @@ def test_a_vapour_pressure_by_the_gas_law_is_told():
     record["states"]["hot"]["fluid"]["results"] = {"pressure": "3.846 bar"}
     (told,) = found(record, "calculated-as-one-phase")
     assert "p₁·T₂/T₁" in told.message
+
+
+def test_a_gas_whose_factor_happens_to_be_one_is_still_dense():
+    """Nitrogen at 105 bar and 20 °C has Z of about 1 and lets go of 20 kJ/kg of attraction when it expands freely."""
+    record = vessel(
+        "Nitrogen",
+        {"mass": "1.000 kg"},
+        {"temperature": "20.0 °C", "pressure": "105.0 bar"},
+        {"temperature": "20.0 °C", "pressure": "1.000 bar"},
+        model="ideal gas",
+        path="end states only",
+    )
+    record["processes"][0]["results"] = {"internal_energy_change": "0.00 kJ", "entropy_change": "1.381 kJ/K"}
+    (told,) = found(record, *MODELS)
+    assert "at half the pressure of state cold" in told.message
+    assert told.grade is Grade.QUERY
