@@ -59,7 +59,8 @@ def _has_own_constant(case: Case, s: Statement) -> bool:
     if parts[0] != "bodies" or parts[2] not in CONSTANTS:
         return False
     own = case.plan.substances.get(parts[1])
-    return own is not None and own.model in (REAL, IDEAL)
+    of_solution = own is not None and own.incompressible and parts[2] == "mass_fraction"
+    return own is not None and own.model in (REAL, IDEAL) and not of_solution
 
 
 def without_source(case: Case) -> tuple[Statement, ...]:

@@ -8,7 +8,7 @@ where the library has one trustworthy root, else by scanning a curve over the su
 """
 
 from checker.substances.coolprop import property_library_version
-from checker.substances.factory import make_substance
+from checker.substances.factory import knows_substance, make_substance
 from checker.substances.interface import ModelUncertainty, Phase, PropertyState, Substance, ValidRange
 from checker.substances.names import knows_fluid, nearest_fluids
 
@@ -19,6 +19,7 @@ __all__ = [
     "Substance",
     "ValidRange",
     "knows_fluid",
+    "knows_substance",
     "make_substance",
     "nearest_fluids",
     "property_library_version",

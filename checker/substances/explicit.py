@@ -28,7 +28,6 @@ from checker.substances.properties import (
 from checker.substances.search import bracketed_root
 from checker.substances.without_phases import WithoutPhases
 
-_STARTS: Final = (0.25, 0.5, 0.12, 0.75, 0.04, 0.9, 0.01)
 _GROWTH: Final = 1.6
 _FIRST_STEP: Final = 0.05
 _STRIDES: Final = 40
@@ -43,6 +42,8 @@ class Explicit(WithoutPhases):
     """The states of a model that gives p, u and s from T and v."""
 
     incompressible: ClassVar[bool] = False
+    starts: ClassVar[tuple[float, ...]] = (0.25, 0.5, 0.12, 0.75, 0.04, 0.9, 0.01)
+    """Where a search over temperature may start, as shares of the range; the first that the model has is taken."""
 
     @property
     def name(self) -> str:
@@ -120,7 +121,7 @@ class Explicit(WithoutPhases):
     def _over_temperature(self, curve: Curve, name: str, value: float) -> PropertyState:
         span = self.valid_range
         low, high = span.temperature_min, span.temperature_max
-        return self._sought(curve, (low, high), name, value, _STARTS)
+        return self._sought(curve, (low, high), name, value, self.starts)
 
     def _sought(
         self,

@@ -11,7 +11,7 @@ from __future__ import annotations
 import math
 from collections.abc import Mapping
 from dataclasses import dataclass
-from typing import Final, NamedTuple
+from typing import ClassVar, Final, NamedTuple
 
 from checker.outcomes import NotEvaluable
 from checker.substances.explicit import Explicit
@@ -30,6 +30,10 @@ _HOTTEST: Final = 1273.15
 _HIGHEST: Final = 10e6
 _ROUNDS: Final = 60
 _SETTLED: Final = 1e-13
+_JUST_SATURATED: Final = 1e-8
+"""By how much vapour over ice may be denser than saturated: what rounding leaves of a relative humidity of 1."""
+_NOTHING: Final = 1e-20
+"""Mass of vapour in a kilogram below which there is none: its specific volume would soon be no number."""
 _EQUATIONS: Final = {
     "ideal gas": "dry air as an ideal gas with c_p(T), water by IAPWS-95 at its partial density (Dalton)",
     "real fluid": "dry air by Lemmon et al., J. Phys. Chem. Ref. Data 29, 2000, 331, water by IAPWS-95, second cross "
@@ -88,6 +92,12 @@ class MoistAir(Explicit):
 
     model: str
     water_content: float
+
+    # Wet air has states of low entropy only close to the freezing point.
+    starts: ClassVar[tuple[float, ...]] = tuple(
+        (temperature - _COLDEST) / (_HOTTEST - _COLDEST)
+        for temperature in (400.0, 310.0, 285.0, 277.0, 274.0, 273.2, 600.0, 250.0, 900.0, 200.0)
+    )
 
     @property
     def name(self) -> str:
@@ -167,6 +177,8 @@ class MoistAir(Explicit):
         if total <= limit * volume:
             return _Split(total, 0.0, volume)
         if alone is None or alone.liquid_volume is None:
+            if total <= limit * volume * (1.0 + _JUST_SATURATED):
+                return _Split(total, 0.0, volume)
             raise NotEvaluable(
                 f"the vapour of moist air would form frost at {temperature:.6g} K; ice is not part of its model",
                 "outside-range",
@@ -183,7 +195,7 @@ class MoistAir(Explicit):
         air = self._gas.air(temperature, split.gas_volume / air_mass)
         pressure, energy, entropy = air.pressure, air_mass * air.energy, air_mass * air.entropy
         humidity: float | None = 0.0
-        if split.vapour > 0.0:
+        if split.vapour > _NOTHING:
             vapour = water().vapour(temperature, split.gas_volume / split.vapour)
             density = split.vapour / split.gas_volume
             between = self._gas.interaction(temperature, air_mass / split.gas_volume, density)
@@ -209,10 +221,16 @@ class MoistAir(Explicit):
         )
 
     def _at_pressure(self, temperature: float, pressure: float) -> PropertyState:
-        """Return the state at a temperature and pressure: v is corrected by p(v)/p until it settles."""
+        """Return the state at a temperature and pressure: v is corrected by p(v)/p until it settles.
+
+        Where it does not, or passes a state that the model refuses, the slower search decides.
+        """
         volume = self.gas_constant * temperature / pressure
         for _ in range(_ROUNDS):
-            found = self.at(temperature, volume)
+            try:
+                found = self.at(temperature, volume)
+            except NotEvaluable:
+                break
             assert found.pressure is not None
             if abs(found.pressure / pressure - 1.0) < _SETTLED:
                 return found

@@ -12,6 +12,8 @@ from checker.substances.properties import PRESSURE, TEMPERATURE, VOLUME, checked
 
 _ROUNDS: Final = 40
 _SETTLED: Final = 1e-13
+_NOTHING: Final = 1e-15
+"""Below this humidity there is no vapour: its volume would soon be no number."""
 
 
 def water_content_at_pressure(
@@ -95,7 +97,7 @@ def _vapour_density(
     relative_humidity: float,
 ) -> float:
     """Return the density of vapour of a relative humidity in air of this density. [kg/m³]"""
-    if relative_humidity == 0.0:
+    if relative_humidity < _NOTHING:
         return 0.0
     density = gas.enhancement(temperature, air_density, alone) / alone.vapour_volume
     return 1.0 / vapour_volume(temperature, relative_humidity * _pressure(temperature, density))

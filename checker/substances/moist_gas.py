@@ -16,8 +16,8 @@ MOLAR_GAS_CONSTANT: Final = 8.314462618
 _WATER_MOLAR_MASS: Final = 0.018015268
 _DATUM: Final = (273.15, 101325.0)  # K, Pa: h = 0 and s = 0 of dry air, as in psychrometric tables
 _CROSS: Final = ((66.5687e-6, -0.237), (-238.834e-6, -1.048), (-176.755e-6, -3.183))  # m³/mol, of T/100 K
-_TOLERANCE: Final = 1e-13
-_ROUNDS: Final = 40
+_LARGEST_EXPONENT: Final = 5.0
+"""Far beyond the range of the model, where a search may pass, vapour in air is no more than this dense."""
 
 
 class AirPart(NamedTuple):
@@ -136,7 +136,8 @@ class RealAir:
         gas_constant = MOLAR_GAS_CONSTANT / _WATER_MOLAR_MASS
         # The liquid is under the pressure of saturated vapour and air: what the air adds presses it.
         pressed = volume * self.air(temperature, 1.0 / air_density).pressure / (gas_constant * temperature)
-        return math.exp((pressed - attraction) / alone.slope)
+        exponent = (pressed - attraction) / alone.slope
+        return math.exp(max(-_LARGEST_EXPONENT, min(_LARGEST_EXPONENT, exponent)))
 
 
 GASES: Final[Mapping[str, Gas]] = {"ideal gas": IdealAir(), "real fluid": RealAir()}

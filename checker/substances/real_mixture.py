@@ -14,7 +14,7 @@ from checker.substances.explicit import Explicit
 from checker.substances.interface import ModelUncertainty, PropertyState, ValidRange
 from checker.substances.library_mixture import component_constants, mixture_library
 
-DEW_MARGIN: Final = 0.7
+DEW_MARGIN: Final = 0.9
 """Highest pressure as a share of the lowest dew pressure that is taken. Raoult's law gives that dew pressure; real
 gases carry more (the enhancement factor is above 1), so it errs to the safe side except for liquids that attract each
 other."""

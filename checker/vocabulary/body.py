@@ -41,7 +41,6 @@ BODY: Final[tuple[Term, ...]] = (
         dim.NONE,
         "",
         "mass of water in moist air, condensed water included, per mass of dry air",
-        allowance=Allowance.FRACTION,
     ),
     Term(
         "heat_transfer_coefficient",
