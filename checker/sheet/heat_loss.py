@@ -12,6 +12,7 @@ from __future__ import annotations
 
 from collections.abc import Callable, Iterator, Sequence
 
+from checker.outcomes import NotEvaluable
 from checker.sheet.approach import Exchange, Profile, exponential_end, exponential_time
 from checker.sheet.balances import same_value, sum_text
 from checker.sheet.context import ProcessContext
@@ -25,9 +26,10 @@ from checker.sheet.heater import (
 )
 from checker.sheet.keys import clue, given, process_key, state_key
 from checker.sheet.loss_plan import COEFFICIENT, LossPlan, Unknown
-from checker.sheet.marching import march
+from checker.sheet.marching import march, settle
 from checker.sheet.states import Clue
 from checker.sheet.step import Step
+from checker.sheet.storage import Stored
 
 STEADY = "steady_temperature"
 MEAN, HARMONIC = "mean_temperature", "harmonic_mean_temperature"
@@ -96,7 +98,7 @@ def loss_clue(ctx: ProcessContext, body: str, known: str, sought: str) -> tuple[
         span = duration if forward else -duration
         if storage.is_constant:
             return (exponential_end(own.heat_capacity(), own.temperature, span, flow),)
-        return (march(lambda energy: flow.net(own.temperature_of(energy)) / own.mass, own.energy, span),)
+        return (_energy_after(own, flow, span),)
 
     symbol = "h" if plan.at_pressure else "u"
     step = Step(
@@ -109,6 +111,19 @@ def loss_clue(ctx: ProcessContext, body: str, known: str, sought: str) -> tuple[
         else f"m·d{symbol}/dt = ΣUA·(T_∞ − T), followed over t",
     )
     return Clue(name, made), step
+
+
+def _energy_after(own: Stored, flow: Exchange, span: float) -> float:
+    """Return the energy per mass [J/kg] after a time [s] (before it, if negative)."""
+
+    def rate(energy: float) -> float:
+        return flow.net(own.temperature_of(energy)) / own.mass
+
+    try:
+        rest = own.energy_at(flow.steady)
+    except NotEvaluable:  # the model ends before the body would settle
+        return march(rate, own.energy, span)
+    return settle(rate, own.energy, rest, span)
 
 
 def _outside(ctx: ProcessContext, item: str) -> Step:

@@ -106,10 +106,15 @@ def _sources(ctx: ProcessContext, losses: tuple[str, ...]) -> tuple[Source, ...]
         if i.kind != "boundary"
     ]
     found = []
+    whole = ctx.key("mean_power")
     for kind, item, key, sign in (*heats, *works):
         base = ctx.item_base(kind, item)
-        power = f"{base}/mean_power"
+        alone = kind == "work" and len(heats) + len(works) == 1 and ctx.is_given(whole)
+        power = whole if alone else f"{base}/mean_power"
         constant = ctx.is_given(power) and not ctx.is_given(f"{base}/duration")
+        sign = (
+            1.0 if alone else sign
+        )  # the mean power of a whole process is a magnitude, of what it is supplied with
         found.append(
             Source(key, sign, given(power) if constant else "", given(key) if ctx.is_given(key) else "")
         )

@@ -5,6 +5,7 @@ Runge-Kutta pair of order 5 and 4, coefficients of J. R. Dormand and P. J. Princ
 
 from __future__ import annotations
 
+import math
 from collections.abc import Callable
 from typing import Final
 
@@ -24,9 +25,38 @@ ACCURACY: Final = 1e-9
 """Largest error of a step, relative to the energy that the whole time could bring (chosen)."""
 MOST_STEPS: Final = 2000
 SMALLEST: Final = 1e-12
+SETTLED: Final = 1e-9
+"""Part of the way to its rest at which a body has settled (chosen)."""
 
 
-def march(rate: Callable[[float], float], start: float, duration: float) -> float:
+def settle(rate: Callable[[float], float], start: float, rest: float, duration: float) -> float:
+    """Return the energy per mass [J/kg] after a duration [s] of a body that settles at an energy per mass.
+
+    The logarithm of the way that is left falls nearly evenly, so that even very long times take few steps.
+
+    Parameters
+    ----------
+    rate : callable
+        As for ``march``.
+    start, rest : float
+        Where the body is, and where it would come to rest. [J/kg]
+    duration : float
+        [s]
+    """
+    way = rest - start
+    if abs(way) <= SMALLEST * max(abs(rest), abs(start)):
+        return start
+    whole = math.log(abs(way))
+    floor = whole + math.log(SETTLED)
+
+    def left(logarithm: float) -> float:
+        return math.copysign(math.exp(max(logarithm, floor)), way)
+
+    last = march(lambda logarithm: -rate(rest - left(logarithm)) / left(logarithm), whole, duration, floor)
+    return rest - left(last)
+
+
+def march(rate: Callable[[float], float], start: float, duration: float, floor: float = -math.inf) -> float:
     """Return the energy per mass [J/kg] after a duration [s], which may be negative.
 
     Parameters
@@ -37,6 +67,8 @@ def march(rate: Callable[[float], float], start: float, duration: float) -> floa
         Energy per mass at the start. [J/kg]
     duration : float
         [s]
+    floor : float
+        Where to stop, if it is reached before.
 
     Raises
     ------
@@ -61,7 +93,7 @@ def march(rate: Callable[[float], float], start: float, duration: float) -> floa
         off = abs(error) / (ACCURACY * scale)
         if off <= 1.0:
             energy, first, done = moved, last, done + step
-            if abs(duration - done) < SMALLEST * abs(duration):
+            if abs(duration - done) < SMALLEST * abs(duration) or energy <= floor:
                 return energy
         step *= min(4.0, max(0.2, 0.9 * (off + 1e-12) ** -0.2))
     raise refused

@@ -8,7 +8,6 @@ from dataclasses import dataclass
 from checker.outcomes import NotEvaluable
 from checker.sheet.keys import body_key, state_key
 from checker.sheet.models import BodyModel
-from checker.substances.interface import Substance
 
 
 @dataclass(frozen=True, slots=True)
@@ -21,8 +20,8 @@ class Stored:
         [kg], [K], and per mass [J/kg].
     heat_capacity : callable
         Returns the heat capacity of a body for which it is constant. [J/K]
-    temperature_of : callable
-        Temperature [K] at an energy per mass [J/kg].
+    temperature_of, energy_at : callable
+        Temperature [K] at an energy per mass [J/kg], and the reverse.
     """
 
     mass: float
@@ -30,6 +29,7 @@ class Stored:
     energy: float
     heat_capacity: Callable[[], float]
     temperature_of: Callable[[float], float]
+    energy_at: Callable[[float], float]
 
 
 @dataclass(frozen=True, slots=True)
@@ -73,18 +73,18 @@ class Storage:
             raise NotEvaluable("the mass must be positive")
         fixed = {self.held: rest.pop(0)} if self.held else {}
         substance = self.model.substance(rest)
+
+        def energy_at(wanted: float) -> float:
+            found: float | None = getattr(substance.state({**fixed, "temperature": wanted}), self.energy)
+            if found is None:
+                raise NotEvaluable("the model states no density", "missing")
+            return found
+
         return Stored(
             mass,
             temperature,
             energy,
-            lambda: mass * self._per_kelvin(substance, fixed, temperature),
+            lambda: mass * (energy_at(temperature + 1.0) - energy_at(temperature)),
             lambda wanted: substance.state({**fixed, self.energy: wanted}).temperature,
+            energy_at,
         )
-
-    def _per_kelvin(self, substance: Substance, fixed: dict[str, float], temperature: float) -> float:
-        one, two = (
-            getattr(substance.state({**fixed, "temperature": t}), self.energy)
-            for t in (temperature, temperature + 1.0)
-        )
-        rise: float = two - one
-        return rise

@@ -77,6 +77,15 @@ def test_a_duration_that_is_one_input_too_many_is_held_against_the_others(last, 
     assert compared(found, f"{BASE}/duration").outcome is expected
 
 
+def test_the_power_of_the_process_is_that_of_its_only_source():
+    """Stated of the process, as input or as result, the mean power is that of the heater beside the losses."""
+    found = case(tank(heater={}, inputs={"mean_power": "3.000 kW"}, results={"duration": "5.343 h"}))
+    assert compared(found, f"{BASE}/duration").outcome is Outcome.AGREES
+    assert found.value(f"{BASE}/electrical_work") == pytest.approx(-57.703e6, rel=1e-4)
+    found = case(tank(heater={}, inputs={"duration": "5.343 h"}, results={"mean_power": "3.000 kW"}))
+    assert compared(found, f"{BASE}/mean_power").outcome is Outcome.AGREES
+
+
 def test_power_of_one_and_energy_of_another_source():
     """A coil of given energy beside a heater of given power: with the duration both are powers."""
     coil = {"id": "coil", "boundary_temperature": "80.00 °C", "inputs": {"energy": "10.00 MJ"}}
