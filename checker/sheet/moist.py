@@ -2,13 +2,14 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+import math
+from collections.abc import Callable, Iterator
 from dataclasses import dataclass
 from typing import Final
 
 from checker.outcomes import NotEvaluable
 from checker.sheet.keys import body_key, given, state_key
-from checker.sheet.step import Step
+from checker.sheet.step import Function, Step
 from checker.submission import Body, Record, Role
 from checker.substances.moist_air import is_moist_air
 from checker.substances.moist_content import water_content_at_pressure, water_content_at_volume
@@ -79,11 +80,24 @@ def _of_state(record: Record, body: Body, state: str) -> Iterator[WaterSource]:
             f"Water content of {body.id}, from state {state}",
             (body_key(body.id, WATER_CONTENT),),
             keys,
-            lambda t, x, phi, content=content: (content(body.model, t, x, phi),),
+            _content_of(content, body.model, relative),
             f"p_w = φ·p_s(T), w = ρ_w(T, p_w)/ρ_a(T, {symbol}), without condensate",
             "T = {0}, " + ("p" if name == "pressure" else "v") + " = {1}, φ = {2}",
         )
         yield WaterSource(step, (temperature, size, relative))
+
+
+def _content_of(content: Callable[[str, float, float, float], float], model: str, stated: float) -> Function:
+    """Return the function of a step from T, p or v, and relative humidity.
+
+    The last digit of a humidity of 100 % reaches above saturation, where no equilibrium is; it ends there.
+    """
+    most = 1.0 if stated <= 1.0 else math.inf
+
+    def find(temperature: float, size: float, relative: float) -> tuple[float]:
+        return (content(model, temperature, size, min(relative, most)),)
+
+    return find
 
 
 def _taken_over(body: Body, key: str, value: float, formula: str) -> WaterSource:

@@ -10,6 +10,7 @@ from checker.outcomes import NotEvaluable
 from checker.sheet.keys import STATE_OUTPUTS, clue, given, state_key
 from checker.sheet.melting import FRACTION, MeltingState
 from checker.sheet.models import BodyModel, outputs_of
+from checker.sheet.moist import WATER_CONTENT
 from checker.sheet.step import Function, Step, Value
 from checker.substances.interface import Phase
 
@@ -167,6 +168,8 @@ def state_step(plan: StatePlan, pair: tuple[Clue, ...]) -> Step:
     word = f", {plan.phase}" if plan.phase else ""
     hidden = names if plan.melting is not None else (*names, FRACTION)
     others = [SYMBOLS[name] for name in SYMBOLS if name not in hidden]
+    if WATER_CONTENT in plan.model.constants:
+        others = [*(symbol for symbol in others if symbol != SYMBOLS["quality"]), "φ", "W"]
     return Step(
         title=f"State {plan.state} of {plan.body}",
         outputs=plan.outputs,

@@ -93,3 +93,17 @@ def test_the_step_reads_as_an_engineer_writes_it() -> None:
     step = found.plan.sheet.made_by["bodies/air/water_content"]
     assert step.title == "Water content of air, from state warm"
     assert "p_w = φ·p_s(T)" in step.formula
+
+
+def test_the_last_digit_of_saturation_reaches_no_supersaturation() -> None:
+    """A stated 100 % can only be less by its last digit, so the mass (2.291 kg by hand) keeps a tolerance."""
+    found = case(vessel({"relative_humidity": "100 %"}, results={"mass": "2.291 kg"}))
+    mass = compared(found, "bodies/air/mass")
+    assert mass.outcome is Outcome.AGREES
+    assert mass.tolerance == pytest.approx(0.005 * 2.3, rel=0.1)
+
+
+def test_states_of_moist_air_say_that_their_humidity_was_found() -> None:
+    """The formula of a state lists φ and W, and no quality."""
+    found = case(vessel({"relative_humidity": "45.0 %"}))
+    assert found.plan.sheet.made_by["states/warm/air/temperature"].formula == "v, u, h, s, φ, W = f(T, p)"
