@@ -223,7 +223,12 @@ class ProcessContext:
 
     def power_source(self) -> str | None:
         """Return the one energy to which a mean power of the whole process can refer, or None."""
-        heats = self.external_heats or ()
+        timed = self.losses is not None
+        heats = [
+            item
+            for item in self.external_heats or ()
+            if not (timed and self.loses_by_coefficient(self.item_base("heat", item.id)))
+        ]
         works = [item for item in self.process.work_transfers or () if item.kind in ("shaft", "electrical")]
         if works and not heats:
             return self.key("shaft_work" if all(w.kind == "shaft" for w in works) else "electrical_work")

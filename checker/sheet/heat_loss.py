@@ -14,7 +14,7 @@ from collections.abc import Callable, Iterator, Sequence
 
 from checker.outcomes import NotEvaluable
 from checker.sheet.approach import Exchange, Profile, exponential_end, exponential_time
-from checker.sheet.balances import same_value, sum_text
+from checker.sheet.balances import same_value, sum_text, zero
 from checker.sheet.context import ProcessContext
 from checker.sheet.heater import (
     OUTSIDE,
@@ -25,7 +25,7 @@ from checker.sheet.heater import (
     supplied_steps,
 )
 from checker.sheet.keys import clue, given, process_key, state_key
-from checker.sheet.loss_plan import COEFFICIENT, LossPlan, Unknown
+from checker.sheet.loss_plan import COEFFICIENT, LossPlan, Unknown, missing_powers
 from checker.sheet.marching import march, settle
 from checker.sheet.states import Clue
 from checker.sheet.step import Step
@@ -40,6 +40,9 @@ def loss_steps(ctx: ProcessContext) -> Iterator[Step]:
     """Yield the time, the means and the losses of a process whose body exchanges heat by UA·ΔT."""
     plan = ctx.losses
     if plan is None:
+        lacking = missing_powers(ctx)
+        if lacking:  # never applies: names what is missing for the time
+            yield Step(f"Duration, {ctx.process.id}", (ctx.key("duration"),), lacking, zero, "")
         return
     p = ctx.process.id
     for item in plan.losses:

@@ -29,13 +29,14 @@ class Unknown(Enum):
 class Source:
     """A transfer beside the losses: the key of its energy, and the sign that makes it positive into the body.
 
-    ``power`` is its given power, or empty; ``energy`` its given energy, or empty.
+    ``power`` and ``energy`` are keys of what is given of it, ``base`` is its pointer; empty where there is none.
     """
 
     key: str
     sign: float
     power: str = ""
     energy: str = ""
+    base: str = ""
 
 
 @dataclass(frozen=True, slots=True)
@@ -74,7 +75,7 @@ def loss_plan(ctx: ProcessContext) -> LossPlan | None:
         return None
     sources = _sources(ctx, losses)
     timed = ctx.is_given(ctx.key("duration"))
-    open_sources = tuple(s for s in sources if not s.power and not (timed and s.energy))
+    open_sources = _open(sources, timed)
     if len(open_sources) > 1:
         return None
     sought = open_sources[0] if open_sources else None
@@ -85,6 +86,21 @@ def loss_plan(ctx: ProcessContext) -> LossPlan | None:
     else:
         return None
     return LossPlan(body, not solid and "constant pressure" in kinds, losses, sources, unknown, sought)
+
+
+def _open(sources: tuple[Source, ...], timed: bool) -> tuple[Source, ...]:
+    """Return the sources without a power."""
+    return tuple(s for s in sources if not s.power and not (timed and s.energy))
+
+
+def missing_powers(ctx: ProcessContext) -> tuple[str, ...]:
+    """Return the keys of the powers for want of which losses tell no time; none where they do."""
+    bases = [ctx.item_base("heat", i.id) for i in ctx.process.heat_transfers or ()]
+    losses = tuple(base.rsplit("/", 1)[-1] for base in bases if ctx.loses_by_coefficient(base))
+    if not losses or ctx.losses is not None:
+        return ()
+    found = _open(_sources(ctx, losses), ctx.is_given(ctx.key("duration")))
+    return tuple(given(f"{source.base}/mean_power") for source in found if source.base)
 
 
 def _is_moved(ctx: ProcessContext) -> bool:
@@ -116,7 +132,7 @@ def _sources(ctx: ProcessContext, losses: tuple[str, ...]) -> tuple[Source, ...]
             1.0 if alone else sign
         )  # the mean power of a whole process is a magnitude, of what it is supplied with
         found.append(
-            Source(key, sign, given(power) if constant else "", given(key) if ctx.is_given(key) else "")
+            Source(key, sign, given(power) if constant else "", given(key) if ctx.is_given(key) else "", base)
         )
     listed = {source.key for source in found}
     for name in ctx.other_work_kinds:
