@@ -16,8 +16,9 @@ from checker.substances.interface import Substance
 
 OF_DIFFUSION: Final = ("characteristic_length", "thermal_conductivity", "density", "specific_heat")
 """What the diffusion time takes."""
-STEP: Final = 1e-3
-"""Part of the specific volume by which an isentrope is followed to find the speed of sound."""
+STEP: Final = 1e-5
+"""Part of the specific volume by which an isentrope is followed to find the speed of sound: a liquid of 1200 m/s moves
+by some 10 kPa, which keeps it off its saturation line."""
 
 
 @dataclass(frozen=True, slots=True)
