@@ -66,7 +66,9 @@ def loss_plan(ctx: ProcessContext) -> LossPlan | None:
         for i in ctx.process.heat_transfers or ()
         if ctx.loses_by_coefficient(ctx.item_base("heat", i.id))
     )
-    if not losses or len(ctx.bodies) != 1 or "friction_work" in ctx.other_work_kinds or _is_moved(ctx):
+    if not losses or len(ctx.bodies) != 1 or "friction_work" in ctx.other_work_kinds:
+        return None
+    if _is_moved(ctx) or _has_parts(ctx):
         return None
     body = ctx.bodies[0]
     kinds = {path.kind for path in ctx.paths_of(body)}
@@ -86,6 +88,13 @@ def loss_plan(ctx: ProcessContext) -> LossPlan | None:
     else:
         return None
     return LossPlan(body, not solid and "constant pressure" in kinds, losses, sources, unknown, sought)
+
+
+def _has_parts(ctx: ProcessContext) -> bool:
+    """Say whether a transfer lasts for a part of the process only, so that the powers are not constant."""
+    items = [("heat", i.id) for i in ctx.process.heat_transfers or ()]
+    items += [("work", i.id) for i in ctx.process.work_transfers or ()]
+    return any(ctx.is_given(f"{ctx.item_base(kind, item)}/duration") for kind, item in items)
 
 
 def _open(sources: tuple[Source, ...], timed: bool) -> tuple[Source, ...]:
@@ -127,12 +136,17 @@ def _sources(ctx: ProcessContext, losses: tuple[str, ...]) -> tuple[Source, ...]
         base = ctx.item_base(kind, item)
         alone = kind == "work" and len(heats) + len(works) == 1 and ctx.is_given(whole)
         power = whole if alone else f"{base}/mean_power"
-        constant = ctx.is_given(power) and not ctx.is_given(f"{base}/duration")
         sign = (
             1.0 if alone else sign
         )  # the mean power of a whole process is a magnitude, of what it is supplied with
         found.append(
-            Source(key, sign, given(power) if constant else "", given(key) if ctx.is_given(key) else "", base)
+            Source(
+                key,
+                sign,
+                given(power) if ctx.is_given(power) else "",
+                given(key) if ctx.is_given(key) else "",
+                base,
+            )
         )
     listed = {source.key for source in found}
     for name in ctx.other_work_kinds:

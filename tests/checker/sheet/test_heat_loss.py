@@ -116,6 +116,21 @@ def test_the_balance_closes_a_loss_whose_time_is_not_known():
     assert case(record).value(f"{BASE}/heat_transfers/shell/energy") == pytest.approx(-1.19e6, rel=1e-3)
 
 
+def test_a_heater_that_works_for_a_part_of_the_time_is_no_constant_power():
+    """5.3 h of heating within a day: the loss follows from the balance and not from an exponential approach."""
+    record = tank(heater={"mean_power": "3.000 kW", "duration": "5.343 h"}, inputs={"duration": "24.00 h"})
+    loss = case(record).value(f"{BASE}/heat")
+    assert loss == pytest.approx(300.0 * 4186.0 * 45.0 - 3000.0 * 5.343 * 3600.0)
+
+
+def test_heat_that_crosses_at_a_stated_temperature():
+    """At 25 °C, where the insulation meets the air, the same loss carries Q/298.15 K."""
+    record = tank()
+    record["processes"][0]["heat_transfers"][0]["boundary_temperature"] = "25.00 °C"
+    found = case(record)
+    assert found.value(f"{BASE}/entropy_transfer") == pytest.approx(found.value(f"{BASE}/heat") / 298.15)
+
+
 def test_a_gas_on_another_path_is_not_followed():
     """Along a polytropic path the energy alone does not tell the temperature: no duration, and no wrong one."""
     record = tank(results={"duration": "5.343 h"})
