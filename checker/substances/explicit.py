@@ -33,7 +33,7 @@ _FIRST_STEP: Final = 0.05
 _STRIDES: Final = 40
 _EDGE_STEPS: Final = 40
 _REPRODUCED: Final = 1e-7
-_WIDEST: Final = (1e-4, 1e7)  # m³/kg
+_WIDEST: Final = (1e-4, 1e9)  # m³/kg
 _ROUNDING: Final = 1e-9
 Curve = Callable[[float], PropertyState]
 
@@ -160,6 +160,14 @@ class Explicit(WithoutPhases):
         if name in (ENERGY, ENTHALPY):
             return self.gas_constant * 300.0
         return self.gas_constant if name == ENTROPY else 0.0
+
+    def refuse_volume(self, volume: float) -> None:
+        """Raise NotEvaluable (outside-range) for a specific volume [m³/kg] at which nothing can be calculated."""
+        if not _WIDEST[0] <= volume <= _WIDEST[1]:
+            raise NotEvaluable(
+                f"a specific volume of {volume:.6g} m³/kg is outside the range of the model of {self.name}",
+                "outside-range",
+            )
 
     def _refuse_temperature(self, temperature: float) -> None:
         checked_value(TEMPERATURE, temperature)

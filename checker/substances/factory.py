@@ -18,12 +18,12 @@ from checker.substances.melting import make_melting
 from checker.substances.melting_body import Melting
 from checker.substances.mixtures import make_mixture
 from checker.substances.moist_air import is_moist_air, make_moist_air
-from checker.substances.names import fluid_of, knows_fluid
+from checker.substances.names import Fluid, fluid_of, knows_fluid
 from checker.substances.perturbed import PerturbedSubstance
 from checker.substances.properties import MOLAR_GAS_CONSTANT as MOLAR_GAS_CONSTANT
 from checker.substances.properties import positive_constant
 from checker.substances.real_fluid import IndustrialWater, RealFluid
-from checker.substances.solutions import is_solution, make_solution
+from checker.substances.solutions import is_solution, make_solution, nearest_solutions
 from checker.substances.tabulated import make_tabulated
 
 _INDUSTRIAL: Final = "industrial"
@@ -143,7 +143,7 @@ def _mixture(
 
 @lru_cache(maxsize=256)
 def _real(substance: str, property_source: str) -> Substance:
-    fluid = fluid_of(substance)
+    fluid = _fluid_or_hint(substance)
     if property_source == _REFERENCE:
         return RealFluid(fluid)
     if property_source != _INDUSTRIAL:
@@ -153,6 +153,16 @@ def _real(substance: str, property_source: str) -> Substance:
             f"the industrial formulation is one for water, not for {fluid.name}", "not-supported"
         )
     return IndustrialWater(fluid)
+
+
+def _fluid_or_hint(substance: str) -> Fluid:
+    """Return the fluid of a name. Raises NotEvaluable, with the solutions that may have been meant."""
+    try:
+        return fluid_of(substance)
+    except NotEvaluable as outcome:
+        solutions = nearest_solutions(substance)
+        hint = f"; solutions and heat transfer liquids: {', '.join(solutions)}" if solutions else ""
+        raise NotEvaluable(outcome.reason + hint, outcome.kind) from None
 
 
 @lru_cache(maxsize=256)

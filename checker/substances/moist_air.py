@@ -154,6 +154,7 @@ class MoistAir(Explicit):
         NotEvaluable
             Frost would form, or liquid fills the volume.
         """
+        self.refuse_volume(volume)
         alone = saturated(temperature)
         limit = math.inf
         if alone is not None and self._water_mass > 0.0:

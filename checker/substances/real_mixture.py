@@ -12,7 +12,7 @@ from checker.substances.composition import Composition
 from checker.substances.coolprop import HELMHOLTZ, Constants, library_of
 from checker.substances.explicit import Explicit
 from checker.substances.interface import ModelUncertainty, PropertyState, ValidRange
-from checker.substances.library_mixture import component_constants, mixture_library
+from checker.substances.library_mixture import GasPoint, component_constants, mixture_library
 
 DEW_MARGIN: Final = 0.9
 """Highest pressure as a share of the lowest dew pressure that is taken. Raoult's law gives that dew pressure; real
@@ -23,6 +23,11 @@ HIGHEST_PRESSURE: Final = 30e6
 _HOTTEST: Final = 700.0
 """[K] End of the extended range of GERG-2008; a mixture model says little where nothing was measured."""
 _ABOVE_CRITICAL: Final = 1.02
+_FAR_BEYOND: Final = 2.0
+"""Searches may pass pressures above the range, but not where the equation means nothing."""
+_LIQUID_LIKE: Final = 0.25
+"""Z below which a state under the dew pressure is on the liquid's side: gas there has more than at its critical point
+(about 0.3), liquid less."""
 _UNCERTAINTY: Final = ModelUncertainty(
     0.002,
     0.015,
@@ -106,16 +111,29 @@ class RealMixture(Explicit):
         NotEvaluable
             A two-phase region is near, or the state is outside the range.
         """
+        self.refuse_volume(volume)
         found = mixture_library(self.composition).gas(temperature, volume)
-        if found.pressure <= 0.0 or found.slope <= 0.0:
-            raise self._near(temperature, "it has no stable gas of this density")
-        highest = DEW_MARGIN * self.dew_pressure(temperature)
-        if found.pressure > highest:
-            raise self._near(temperature, f"its dew pressure may be as low as {highest / DEW_MARGIN:.4g} Pa")
+        if found.pressure > _FAR_BEYOND * HIGHEST_PRESSURE:
+            raise NotEvaluable(
+                f"{found.pressure:.6g} Pa is above {HIGHEST_PRESSURE:.6g} Pa, where the mixture model ends",
+                "outside-range",
+            )
+        self._refuse_condensing(temperature, volume, found)
         product = found.pressure * volume
         return PropertyState(
             temperature, found.pressure, volume, found.energy, found.energy + product, found.entropy
         )
+
+    def _refuse_condensing(self, temperature: float, volume: float, found: GasPoint) -> None:
+        """Refuse what is no stable gas, and what may condense. Raises NotEvaluable."""
+        if found.pressure <= 0.0 or found.slope <= 0.0:
+            raise self._near(temperature, "it has no stable gas of this density")
+        dew = self.dew_pressure(temperature)
+        if found.pressure > DEW_MARGIN * dew:
+            raise self._near(temperature, f"its dew pressure may be as low as {dew:.4g} Pa")
+        factor = found.pressure * volume / (self.gas_constant * temperature)
+        if math.isfinite(dew) and factor < _LIQUID_LIKE:
+            raise self._near(temperature, "this density is that of a liquid")
 
     def _near(self, temperature: float, why: str) -> NotEvaluable:
         return NotEvaluable(

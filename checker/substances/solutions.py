@@ -30,6 +30,7 @@ _SOURCES: Final = {
 _HOTTEST: Final = {"LiqNa": 1156.0}
 """[K] Where the library's range ends later than the use: sodium boils at 1 atm."""
 _SLACK: Final = 1e-6  # K
+_NEAREST: Final = 3
 _REPRODUCED: Final = 1e-9
 
 
@@ -63,6 +64,16 @@ def all_solutions() -> tuple[Solution, ...]:
 def is_solution(substance: str) -> bool:
     """Say whether a substance is a brine, a glycol or a heat transfer liquid of the table."""
     return fold(substance) in _table()
+
+
+def nearest_solutions(name: str) -> tuple[str, ...]:
+    """Return up to three names of the table that a name is a part of, or that look most like it."""
+    from difflib import get_close_matches
+
+    folded = fold(name)
+    parts = [key for key in _table() if folded and folded in key]
+    close = get_close_matches(folded, list(_table()), n=_NEAREST, cutoff=0.7)
+    return tuple(dict.fromkeys(_table()[key].name for key in (*parts, *close)))[:_NEAREST]
 
 
 def make_solution(substance: str, constants: Mapping[str, float]) -> Substance:

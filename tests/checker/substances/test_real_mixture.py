@@ -9,7 +9,7 @@ from hypothesis import given, settings
 from hypothesis import strategies as st
 
 from checker.outcomes import NotEvaluable
-from checker.substances import make_substance
+from checker.substances import Substance, make_substance
 from checker.substances.properties import ORDER
 
 T, P, V = "temperature", "pressure", "specific_volume"
@@ -115,3 +115,25 @@ def test_beyond_the_range_of_the_mixture_model_it_is_refused() -> None:
         with pytest.raises(NotEvaluable) as refusal:
             mixture().state(known)
         assert refusal.value.kind == "outside-range"
+
+
+def test_the_density_of_a_liquid_is_never_taken_for_gas() -> None:
+    """Between gas and liquid, and on the liquid's side, no temperature and volume give a state."""
+    gas = mixture((("propane", 0.5), ("n-butane", 0.5)))
+    found = [_kind_or_factor(gas, 0.1 * 0.985**step) for step in range(400)]
+    factors = [one for one in found if isinstance(one, float)]
+    assert all(factor > 0.8 for factor in factors)
+    assert found[: len(factors)] == factors
+    assert {one for one in found if isinstance(one, str)} <= {"near-saturation", "outside-range"}
+    assert len(found) - len(factors) > 50
+
+
+def _kind_or_factor(gas: Substance, volume: float) -> str | float:
+    """Return Z at 20 °C, or the kind of refusal."""
+    try:
+        state = gas.state({T: 293.15, V: volume})
+    except NotEvaluable as refusal:
+        return refusal.kind
+    assert state.pressure is not None
+    assert gas.gas_constant is not None
+    return state.pressure * volume / (gas.gas_constant * 293.15)

@@ -113,3 +113,9 @@ def test_every_name_of_the_table_means_one_liquid_and_no_fluid() -> None:
     spellings = [name.strip() for row in table_rows("solutions.txt") for name in (row[1], *row[7].split(";"))]
     assert len(spellings) == len(set(spellings))
     assert all(is_solution(name) and not knows_fluid(name) for name in spellings)
+
+
+def test_the_name_of_the_solute_alone_leads_to_its_solution() -> None:
+    """Glycol is no fluid of the table of pure fluids; the reason names the solution."""
+    with pytest.raises(NotEvaluable, match="heat transfer liquids: ethylene glycol solution"):
+        make_substance("ethylene glycol", "real fluid", {"mass_fraction": 0.3})
