@@ -120,6 +120,15 @@ def adiabatic_with_heat(case: Case, process: str) -> Yielded:
                 statement=next(iter(case.stated(pointer, Role.INPUT)), None),
                 suggestion="Remove the heat, or declare the path that the body really follows.",
             )
+    for item in ctx.process.heat_transfers or ():
+        pointer = f"{ctx.item_base('heat', item.id)}/heat_loss_coefficient"
+        for s in case.stated(pointer, Role.INPUT):
+            yield Raised(
+                f"The process is {ctx.no_heat}, and heat transfer {item.id} has a loss coefficient of "
+                f"{s.quantity.text}.",
+                statement=s,
+                suggestion="Remove the loss coefficient, or declare the path that the body really follows.",
+            )
 
 
 def free_expansion_with_work(case: Case, process: str) -> Yielded:

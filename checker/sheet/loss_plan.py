@@ -68,7 +68,7 @@ def loss_plan(ctx: ProcessContext) -> LossPlan | None:
     )
     if not losses or len(ctx.bodies) != 1 or "friction_work" in ctx.other_work_kinds:
         return None
-    if _is_moved(ctx) or _has_parts(ctx):
+    if ctx.no_heat or _is_moved(ctx) or _has_parts(ctx):
         return None
     body = ctx.bodies[0]
     kinds = {path.kind for path in ctx.paths_of(body)}

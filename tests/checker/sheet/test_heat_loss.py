@@ -168,6 +168,13 @@ def test_a_heater_that_is_too_small_is_one_finding():
     assert "result-not-recomputed" not in found
 
 
+def test_an_insulated_store_has_no_loss_coefficient():
+    """`insulated` and a loss coefficient contradict one another; that is told, and no loss is calculated."""
+    record = tank(insulated="yes", lost={"energy": "0 MJ"})
+    assert "adiabatic-with-heat" in rules(record)
+    assert case(record).value(f"{BASE}/heat") == 0.0
+
+
 def test_a_temperature_that_powers_and_losses_do_not_hold():
     """15 °C at both ends with 3 kW: it is never held."""
     record = tank("15.00 °C", inputs={"duration": "1.000 h"})
