@@ -82,7 +82,7 @@ def _results(case: Case, found: tuple[Moved, ...], better: str, own: str, off: f
         for m in beyond[:MOST_SHOWN]
     ]
     more = f"; and {len(beyond) - MOST_SHOWN} more" if len(beyond) > MOST_SHOWN else ""
-    return f"Redone {better} and not {own}: {'; '.join(words)}{more}."
+    return f"Done again {better} and not {own}, the record gives {'; '.join(words)}{more}."
 
 
 def condenses(case: Case, item: str) -> Yielded:

@@ -22,6 +22,8 @@ CROSSINGS: Final = 10.0
 """How often a pressure wave must cross a body while a process lasts (chosen: piston at a tenth of the sound)."""
 SLOWEST: Final = 1.0
 """Fourier number below which heat has not reached the core of a body (L²/α: chosen)."""
+ICE_POINT: Final = 273.15
+"""[K]"""
 OWN_EQUATION: Final = "equation of state of the named fluid, as printed with the models of the record"
 
 
@@ -54,6 +56,11 @@ def _answered(case: Case, found: LiquidFull) -> bool:
     return bound is not None and found.pressure <= bound[1].value
 
 
+def _warm(case: Case, pointer: str, kelvin: float) -> str:
+    """Return a temperature that was found, to a tenth of a degree."""
+    return case.show(pointer, round(kelvin - ICE_POINT, 1) + ICE_POINT)
+
+
 def _full_words(case: Case, found: LiquidFull) -> str:
     w, name = found.warming, case.record.bodies[found.warming.body].substance
     pressure = f"states/{w.last}/{w.body}/pressure"
@@ -65,7 +72,7 @@ def _full_words(case: Case, found: LiquidFull) -> str:
             f"out; {name} itself would go to {end}, {slope} for every kelvin."
         )
     elif found.full_at > w.cold:
-        full = case.show(f"states/{w.last}/{w.body}/temperature", found.full_at)
+        full = _warm(case, f"states/{w.last}/{w.body}/temperature", found.full_at)
         words = f"Liquid {name} fills its closed volume from {full} on: it goes to {end}, {slope} for every kelvin."
     else:
         words = (
@@ -105,10 +112,20 @@ def _holds_when_full(case: Case, found: VapourSpace) -> bool:
     return pressure is not None and pressure <= bound[1].value
 
 
+def _pressure_when_full(case: Case, found: VapourSpace) -> str:
+    """Return what the pressure is at the highest temperature that is allowed, as the end of a sentence."""
+    w = found.warming
+    if found.allowed is None or w.volume is None:
+        return ""
+    pressure = fill.pressure_at(case, w.body, found.allowed, w.volume)
+    pointer = f"states/{w.last}/{w.body}/pressure"
+    return "" if pressure is None else f", which takes {case.show(pointer, float(f'{pressure:.3g}'))}"
+
+
 def _space_words(case: Case, found: VapourSpace) -> str:
     w = found.warming
     pointer = f"states/{w.last}/{w.body}/temperature"
-    cold, hot, full = (case.show(pointer, value) for value in (w.cold, w.hot, found.full_at))
+    cold, hot, full = (_warm(case, pointer, value) for value in (w.cold, w.hot, found.full_at))
     words = (
         f"Liquid {case.record.bodies[w.body].substance} fills {100.0 * found.cold:.1f} % of the vessel at {cold} and "
         f"{100.0 * found.hot:.1f} % at {hot}, and all of it from {full} on"
@@ -116,8 +133,10 @@ def _space_words(case: Case, found: VapourSpace) -> str:
     if found.allowed is None:
         return f"{words}."
     allowed = case.show(pointer, found.allowed)
-    if found.full_within_limit or found.limit is None:
-        return f"{words}; the limits let it come to {allowed}."
+    if found.full_within_limit:
+        return f"{words}; the limits let it come to {allowed}{_pressure_when_full(case, found)}."
+    if found.limit is None:
+        return f"{words}."
     return f"{words}; at {allowed}, which the limits allow, {100.0 * found.limit:.1f} %."
 
 
