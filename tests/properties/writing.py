@@ -90,6 +90,7 @@ ENTROPIES: Final = (
 )
 MOTIONS: Final = ("kinetic_energy_change", "potential_energy_change", "energy_change")
 TEMPERATURE_SCALE: Final = 50.0
+TEST_PRESSURE: Final = 2.0e8
 
 
 @dataclass(frozen=True, slots=True)
@@ -176,10 +177,18 @@ class Writer:
             "states": states,
             "processes": [self._process(name, *leg) for name, leg in legs.items()],
         }
+        if change.leg.kind == "constant volume" and change.body.model == "real fluid":
+            record["limits"] = [self._test_pressure()]
         if self.style.sequence:
             claims = self._claims("sequences/total", change.leg)
             record["sequences"] = [{"id": "total", "processes": list(legs), "results": claims}]
         return record
+
+    def _test_pressure(self) -> dict[str, str]:
+        """Return a limit far above every pressure: a liquid that is blocked in without one is asked about."""
+        highest = self.given(TEST_PRESSURE, "pressure")
+        quantity = "states/last/matter/pressure"
+        return {"id": "test", "quantity": quantity, "at_most": highest, "claim": "met", "basis": "name plate"}
 
     def _body(self) -> dict[str, Any]:
         body, first = self.change.body, self.change.leg.first
