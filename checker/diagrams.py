@@ -2,12 +2,13 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Iterator, Sequence
 
 from checker.case import Case
-from checker.findings import Curve, Diagram, Marker
+from checker.figures import Curve, Diagram, Marker
 from checker.outcomes import NotEvaluable
 from checker.sheet.context import ProcessContext
+from checker.sheet.cycles import is_cycle
 from checker.sheet.keys import state_key
 from checker.sheet.paths import Path
 from checker.substances.interface import PropertyState, Substance
@@ -32,7 +33,9 @@ def _of_body(case: Case, body: str) -> Iterator[Diagram]:
     if not states:
         return
     dome = _dome(substance, list(states.values()))
-    paths = [(f"{ctx.process.id}", list(_along(ctx, body, substance, states))) for ctx in case.plan.contexts]
+    contexts = in_chain(case.plan.contexts)
+    paths = [(ctx.process.id, list(_along(ctx, body, substance, states))) for ctx in contexts]
+    closed = is_cycle(case.record) and len(paths) > 1 and all(len(points) > 2 for _, points in paths)
     for kind, x_label, y_label in (("p-v", "v in m³/kg", "p in bar"), ("T-s", "s in kJ/(kg·K)", "T in °C")):
         curves = [Curve("saturation", "dome", tuple(_point(kind, s) for s in dome))] if dome else []
         for label, points in paths:
@@ -41,9 +44,20 @@ def _of_body(case: Case, body: str) -> Iterator[Diagram]:
                 curves.append(Curve(label, style, tuple(_point(kind, s) for s in points)))
         markers = [Marker(name, "recomputed", *_point(kind, s)) for name, s in states.items()]
         markers += list(_stated_markers(case, kind, body, states))
-        yield Diagram(
-            kind, body, x_label, y_label, kind == "p-v", kind == "p-v", tuple(curves), tuple(markers)
-        )
+        log = kind == "p-v"
+        yield Diagram(kind, body, x_label, y_label, log, log, tuple(curves), tuple(markers), closed)
+
+
+def in_chain(contexts: Sequence[ProcessContext]) -> list[ProcessContext]:
+    """Return the processes so that each begins where the one before ended, as far as they do."""
+    left = list(contexts)
+    ordered: list[ProcessContext] = []
+    while left:
+        end = ordered[-1].process.to_state if ordered else None
+        following = next((ctx for ctx in left if ctx.process.from_state == end), left[0])
+        left.remove(following)
+        ordered.append(following)
+    return ordered
 
 
 def _state(case: Case, state: str, body: str) -> PropertyState | None:

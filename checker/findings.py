@@ -6,6 +6,8 @@ import hashlib
 from dataclasses import dataclass
 from enum import StrEnum
 
+from checker.figures import Diagram, FlowDiagram
+
 
 class Grade(StrEnum):
     """How a finding must be treated."""
@@ -50,11 +52,12 @@ class Location:
 
 @dataclass(frozen=True, slots=True)
 class Cause:
-    """A slip that reproduces the stated digits."""
+    """A slip that reproduces the stated digits; ``likely`` is false where chance may do so as well."""
 
     slip: str
     value: float
     statement: str
+    likely: bool = True
 
 
 @dataclass(frozen=True, slots=True)
@@ -197,6 +200,7 @@ class StateRow:
 class LedgerLine:
     """One term of a ledger: ``side`` is ``change``, ``transfer`` or ``generation``.
 
+    Beside the sums, with sign 0, stand ``share`` (a body's part of a change) and ``internal`` (between bodies).
     ``sign`` is its sign in the sum of its side, for the sign in which its amounts are written: ΔU +1, heat in
     +1, work out −1 (+1 where the originator writes work as positive in).
     """
@@ -227,36 +231,42 @@ class Ledger:
 
 
 @dataclass(frozen=True, slots=True)
-class Curve:
-    """A curve in a diagram: a label and (x, y) points; ``style`` is ``dome``, ``path`` or ``chord``."""
+class Pair:
+    """One number as stated and as recomputed."""
 
-    label: str
-    style: str
-    points: tuple[tuple[float, float], ...]
-
-
-@dataclass(frozen=True, slots=True)
-class Marker:
-    """A state in a diagram; ``style`` is ``recomputed`` or ``stated``."""
-
-    label: str
-    style: str
-    x: float
-    y: float
+    stated: Amount | None
+    recomputed: Amount | None
 
 
 @dataclass(frozen=True, slots=True)
-class Diagram:
-    """A p–v or T–s diagram, in the units of its axis labels."""
+class TotalsRow:
+    """One process, or all of them, in a table of totals: one pair for each column."""
 
-    kind: str  # "p-v" | "T-s"
-    body: str
-    x_label: str
-    y_label: str
-    log_x: bool
-    log_y: bool
-    curves: tuple[Curve, ...]
-    markers: tuple[Marker, ...]
+    label: str
+    cells: tuple[Pair, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class TotalsFact:
+    """A result of several processes beside their sums; ``limit`` is what the second law allows at most, if anything."""
+
+    label: str
+    symbol: str
+    pair: Pair
+    limit: Amount | None = None
+    limit_basis: str = ""
+
+
+@dataclass(frozen=True, slots=True)
+class Totals:
+    """What the processes of a cycle or of a sequence add up to; heat in, work out. ``columns``: (symbol, unit)."""
+
+    name: str
+    kind: str  # "cycle" | "sequence"
+    columns: tuple[tuple[str, str], ...]
+    rows: tuple[TotalsRow, ...]
+    sum: TotalsRow
+    facts: tuple[TotalsFact, ...]
 
 
 @dataclass(frozen=True, slots=True)
@@ -275,6 +285,9 @@ class RecordReview:
     ledgers: tuple[Ledger, ...] = ()
     sheet: tuple[SheetLine, ...] = ()
     diagrams: tuple[Diagram, ...] = ()
+    totals: tuple[Totals, ...] = ()
+    flows: tuple[FlowDiagram, ...] = ()
+    noted: tuple[str, ...] = ()
 
 
 @dataclass(frozen=True, slots=True)

@@ -7,12 +7,13 @@ from collections.abc import Iterator, Sequence
 from checker.case import Case
 from checker.comparison.compare import Compared
 from checker.display import as_text, stated_amount
+from checker.facts.extent import without_extent
 from checker.facts.materials import taken_from_table
 from checker.facts.phases import claims_of, phase_found, possible_phases
+from checker.figures import Diagram
 from checker.findings import (
     Amount,
     Checked,
-    Diagram,
     NotChecked,
     Outcome,
     RecordReview,
@@ -22,17 +23,20 @@ from checker.findings import (
     StateCell,
     StateRow,
 )
+from checker.flows import flows
 from checker.ledgers import ledgers
 from checker.locate import Locator
 from checker.sheet.keys import plain, state_key, term_for
 from checker.sheet.step import Found, Step
 from checker.submission import Role, Statement
+from checker.totals import totals
 
 TABLE = (
     "temperature",
     "pressure",
     "specific_volume",
     "quality",
+    "melted_fraction",
     "specific_internal_energy",
     "specific_enthalpy",
     "specific_entropy",
@@ -40,7 +44,7 @@ TABLE = (
     "elevation",
     "exergy",
 )
-"""Columns of the state table; the last three only where stated."""
+"""Columns of the state table; the last three only where stated, a melted fraction only of what melts."""
 WHERE_STATED = frozenset({"velocity", "elevation", "exergy"})
 HIDDEN_STEPS = ("Dead state",)
 
@@ -72,6 +76,9 @@ def record_review(
         ledgers=tuple(ledgers(case)),
         sheet=tuple(_sheet_lines(case)) if sheet else (),
         diagrams=drawn,
+        totals=tuple(totals(case)),
+        flows=tuple(flows(case)),
+        noted=tuple(without_extent(case)),
     )
 
 
@@ -171,6 +178,8 @@ def _cell(case: Case, pointer: str, name: str, compared: dict[str, Compared]) ->
     if name in WHERE_STATED and not statements:
         return None
     value = case.value(pointer)
+    if name == "melted_fraction" and value is None:
+        return None
     statement = statements[0] if statements else None
     c = compared.get(pointer)
     if statement is None and value is None:
@@ -251,6 +260,6 @@ def _substituted(case: Case, step: Step) -> str:
     listed = [
         f"{term.symbol} = {part}"
         for key, part in zip(step.parents, parts, strict=True)
-        if (term := term_for(key)) is not None and not key.startswith("model/")
+        if (term := term_for(key)) is not None and not key.startswith("model/") and part != "…"
     ]
-    return ", ".join(listed)
+    return ", ".join(dict.fromkeys(listed))  # several bodies at rest have one ΔKE = 0

@@ -1,6 +1,6 @@
 """The review as JSON, for other programs; `review_schema` describes every field.
 
-Diagrams are left out: they are drawings of numbers that the state table already holds.
+Diagrams of states are left out: they are drawings of numbers that the state table already holds.
 """
 
 from __future__ import annotations
@@ -8,6 +8,7 @@ from __future__ import annotations
 from dataclasses import fields
 from typing import BinaryIO
 
+from checker.figures import FlowDiagram
 from checker.findings import (
     Amount,
     Checked,
@@ -15,10 +16,13 @@ from checker.findings import (
     Grade,
     Ledger,
     PackageNote,
+    Pair,
     RecordReview,
     Review,
     SheetLine,
     StateRow,
+    Totals,
+    TotalsRow,
 )
 from reports.jsontext import finite, write_json_text
 
@@ -55,8 +59,11 @@ def _record(review: Review, record: RecordReview) -> Tree:
         "rules_held": list(record.rules_held),
         "not_checked": [{"what": item.what, "missing": item.missing} for item in record.not_checked],
         "assumed": list(record.assumed),
+        "noted": list(record.noted),
         "states": [_state(row) for row in record.states],
         "ledgers": [_ledger(ledger) for ledger in record.ledgers],
+        "totals": [_totals(table) for table in record.totals],
+        "flows": [_flow_diagram(diagram) for diagram in record.flows],
         "sheet": [_step(line) for line in record.sheet],
     }
 
@@ -86,7 +93,8 @@ def _finding(finding: Finding) -> Tree:
         "inherits_from": list(finding.inherits_from),
         "spoils": list(finding.spoils),
         "causes": [
-            {"slip": c.slip, "value": finite(c.value), "statement": c.statement} for c in finding.causes
+            {"slip": c.slip, "value": finite(c.value), "statement": c.statement, "likely": c.likely}
+            for c in finding.causes
         ],
         "message": finding.message,
         "suggestion": finding.suggestion,
@@ -153,6 +161,57 @@ def _ledger(ledger: Ledger) -> Tree:
         "residual_recomputed": finite(ledger.residual_recomputed),
         "closes_stated": ledger.closes_stated,
         "closes_recomputed": ledger.closes_recomputed,
+    }
+
+
+def _totals(table: Totals) -> Tree:
+    return {
+        "name": table.name,
+        "kind": table.kind,
+        "columns": [{"symbol": symbol, "unit": unit} for symbol, unit in table.columns],
+        "rows": [_totals_row(row) for row in table.rows],
+        "sum": _totals_row(table.sum),
+        "facts": [
+            {
+                "label": fact.label,
+                "symbol": fact.symbol,
+                **_pair(fact.pair),
+                "limit": _amount(fact.limit),
+                "limit_basis": fact.limit_basis,
+            }
+            for fact in table.facts
+        ],
+    }
+
+
+def _totals_row(row: TotalsRow) -> Tree:
+    return {"label": row.label, "values": [_pair(pair) for pair in row.cells]}
+
+
+def _pair(pair: Pair) -> Tree:
+    return {"stated": _amount(pair.stated), "recomputed": _amount(pair.recomputed)}
+
+
+def _flow_diagram(diagram: FlowDiagram) -> Tree:
+    return {
+        "process": diagram.process,
+        "kind": diagram.kind,
+        "unit": diagram.unit,
+        "boxes": [
+            {"name": box.name, "label": box.label, "kind": box.kind, "change": finite(box.change)}
+            for box in diagram.boxes
+        ],
+        "flows": [
+            {
+                "source": flow.source,
+                "target": flow.target,
+                "label": flow.label,
+                "kind": flow.kind,
+                "leaves": finite(flow.leaves),
+                "arrives": finite(flow.arrives),
+            }
+            for flow in diagram.flows
+        ],
     }
 
 

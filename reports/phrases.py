@@ -5,9 +5,20 @@ from __future__ import annotations
 from collections.abc import Iterable
 from typing import Final
 
-from checker.findings import Cause, Checked, Finding, Grade, Location, Outcome, RecordReview, Verdict
+from checker.figures import FlowDiagram
+from checker.findings import (
+    Cause,
+    Checked,
+    Finding,
+    Grade,
+    Location,
+    Outcome,
+    RecordReview,
+    Totals,
+    Verdict,
+)
 from reports import numbers
-from reports.numbers import MISSING, rounded, shown
+from reports.numbers import MISSING, rounded, shown, signed
 
 VERDICT_MEANS: Final = {
     Verdict.ACCEPT: "Every stated result was recomputed and agrees.",
@@ -95,3 +106,29 @@ def deviation(finding: Finding) -> str:
         return ""
     tolerance = numbers.tolerance(finding.tolerance, finding.stated)
     return text if tolerance == MISSING else f"{text}; tolerance {tolerance}"
+
+
+def bodies_line(diagram: FlowDiagram) -> str:
+    """Return the changes of the bodies of a process in one line, such as ``energy, quenching: ring −3382 kJ``."""
+    parts = [
+        f"{box.label} {signed(box.change, 4)} {diagram.unit}".rstrip()
+        for box in diagram.boxes
+        if box.kind == "body" and box.change is not None
+    ]
+    return f"Change of {diagram.kind}, {diagram.process}: {', '.join(parts)}." if parts else ""
+
+
+def totals_line(table: Totals) -> str:
+    """Return the sums and the results of a cycle or a sequence in one line, as recomputed."""
+    sums = [
+        f"{symbol} {shown(cell.recomputed)}"
+        for (symbol, _), cell in zip(table.columns, table.sum.cells, strict=False)
+    ]
+    facts = [
+        f"{fact.label} {shown(fact.pair.recomputed)}"
+        + (f" (at most {shown(fact.limit)}, {fact.limit_basis})" if fact.limit else "")
+        for fact in table.facts
+        if fact.pair.recomputed
+    ]
+    name = "the cycle" if table.kind == "cycle" else f"sequence {table.name}"
+    return f"Sums of {name}, recomputed: {'; '.join((*sums, *facts))}."

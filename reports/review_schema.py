@@ -114,8 +114,11 @@ def _record() -> Schema:
         rules_held=_list("Rules that applied and found nothing.", _text("Name of a rule.")),
         not_checked=_list("What was not checked.", _not_checked()),
         assumed=_list("What the review itself assumed.", _text("One assumption.")),
+        noted=_list("What else the recomputation found, such as a stop never reached.", _text("One note.")),
         states=_list("The state table, one body in one state each.", _state()),
         ledgers=_list("The balances.", _ledger()),
+        totals=_list("What the processes of a cycle or a sequence add up to.", _totals()),
+        flows=_list("Flows between several bodies, recomputed.", _flow_diagram()),
         sheet=_list("The alternate calculation, step by step.", _step()),
     )
 
@@ -169,8 +172,10 @@ def _ledger() -> Schema:
         "One term of the balance.",
         label=_text("What the term is."),
         symbol=_text("Its symbol."),
-        side=_text("change, transfer or generation."),
-        sign={"type": "integer", "description": "Sign in the sum of its side."},
+        side=_text(
+            "change, transfer or generation; beside the sums share, a body's part, or internal, between bodies."
+        ),
+        sign={"type": "integer", "description": "Sign in the sum of its side; 0 beside the sums."},
         stated=_maybe_amount("What the originator stated."),
         recomputed=_maybe_amount("From the inputs alone."),
     )
@@ -184,6 +189,70 @@ def _ledger() -> Schema:
         residual_recomputed=_number("The same of the recomputed terms."),
         closes_stated=_truth("Whether the stated terms balance; null where one is missing."),
         closes_recomputed=_truth("Whether the recomputed terms balance; null where one is missing."),
+    )
+
+
+def _totals() -> Schema:
+    column = _object(
+        "One column of the table.",
+        symbol=_text("Symbol of what is summed: Q is heat in, W is work out."),
+        unit=_text("Unit of the column."),
+    )
+    fact = _object(
+        "One result of all processes together.",
+        label=_text("What it is."),
+        symbol=_text("Its symbol."),
+        stated=_maybe_amount("What the originator stated."),
+        recomputed=_maybe_amount("From the inputs alone."),
+        limit=_maybe_amount("What the second law allows at most."),
+        limit_basis=_text("What the limit rests on."),
+    )
+    return _object(
+        "Several processes and their sums.",
+        name=_text("Identifier of the sequence, or cycle."),
+        kind=_text("cycle or sequence."),
+        columns=_list("What is summed.", column),
+        rows=_list("The processes in their order.", _totals_row("One process.")),
+        sum=_totals_row("All processes together."),
+        facts=_list("Results that are no sums, such as an efficiency.", fact),
+    )
+
+
+def _totals_row(description: str) -> Schema:
+    pair = _object(
+        "One number.",
+        stated=_maybe_amount("What the originator stated."),
+        recomputed=_maybe_amount("From the inputs alone."),
+    )
+    return _object(
+        description, label=_text("Name of the process, or Sum."), values=_list("One for each column.", pair)
+    )
+
+
+def _flow_diagram() -> Schema:
+    box = _object(
+        "A body, or what is around it.",
+        name=_text("Name in this diagram."),
+        label=_text("Name for a reader."),
+        kind=_text("body, outside, meeting or generation."),
+        change=_number("Change of the body; null for other boxes."),
+    )
+    flow = _object(
+        "What passes from one box to another.",
+        source=_text("Name of the box that it leaves."),
+        target=_text("Name of the box that it reaches."),
+        label=_text("Name of the transfer, else its kind."),
+        kind=_text("heat, work, energy (both together) or entropy."),
+        leaves=_number("How much leaves the source."),
+        arrives=_number("How much reaches the target: more, where entropy is generated on the way."),
+    )
+    return _object(
+        "One process of several bodies.",
+        process=_text("Name of the process."),
+        kind=_text("energy or entropy."),
+        unit=_text("Unit of all numbers of the diagram."),
+        boxes=_list("What is joined.", box),
+        flows=_list("What passes.", flow),
     )
 
 
@@ -240,6 +309,7 @@ def _cause() -> Schema:
         slip=_text("Name of the slip."),
         value=_number("What the slip gives, in the stated unit."),
         statement=_text("The slip in a sentence."),
+        likely={"type": "boolean", "description": "False where chance may give the stated digits as well."},
     )
 
 

@@ -16,6 +16,7 @@ from reports.numbers import shown
 from reports.order import Comment, Group, grouped
 from reports.phrases import (
     VERDICT_MEANS,
+    bodies_line,
     cause,
     counted,
     deviation,
@@ -25,6 +26,7 @@ from reports.phrases import (
     origin,
     place,
     spoiled,
+    totals_line,
 )
 from reports.plain import capped, neutral
 
@@ -129,7 +131,7 @@ def _particulars(finding: Finding, values: Mapping[str, Checked]) -> Iterator[tu
     yield "formula", finding.formula
     yield "origin", origin(finding)
     for item in finding.causes:
-        yield "likely cause", cause(item, finding)
+        yield "likely cause" if item.likely else "possible cause", cause(item, finding)
     for quantity in finding.spoils:
         held_back = values.get(quantity)
         if held_back is not None and held_back.recomputed is None:
@@ -177,6 +179,12 @@ def _account(record: RecordReview, page: _Page) -> Iterator[str]:
         if missing.what in told:
             continue
         yield from page.flow(f"Not checked: {missing.what}; missing: {missing.missing}.", 2, 4)
+    for diagram in record.flows:
+        yield from page.flow(bodies_line(diagram), 2, 4)
+    for table in record.totals:
+        yield from page.flow(totals_line(table), 2, 4)
+    for noted in record.noted:
+        yield from page.flow(f"Noted: {noted}.", 2, 4)
     for assumed in record.assumed:
         yield from page.flow(f"Assumed: {assumed}.", 2, 4)
 

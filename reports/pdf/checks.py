@@ -71,6 +71,7 @@ def account(record: RecordReview, common: Sequence[str]) -> Any:
         if item.outcome is Outcome.NOT_EVALUABLE:
             rows.append(("Not evaluable", f"{item.quantity}: {item.reason}"))
     rows += [("Not checked", f"{item.what}. Missing: {item.missing}") for item in record.not_checked]
+    rows += [("Noted", text) for text in record.noted]
     rows += [("Assumed", text) for text in record.assumed]
     if record.rules_held:
         rows.append(("Rules that found nothing", _rules(record.rules_held, common)))

@@ -7,12 +7,13 @@ from typing import Any, Final
 
 from reportlab.platypus import Table, TableStyle
 
-from checker.findings import Diagram
+from checker.figures import Diagram
+from reports.pdf.directions import arrow_heads, enclosed
 from reports.pdf.fonts import BOLD, REGULAR
 from reports.pdf.labels import Box, around, place_labels
-from reports.pdf.picture import LETTERS, Element, Pen, Picture, Sign, Stroke, Words, words_width
+from reports.pdf.picture import LETTERS, Area, Element, Pen, Picture, Sign, Stroke, Words, words_width
 from reports.pdf.plot import FRAME, WIDTH, Plot, plot, sampled
-from reports.pdf.styles import FAINT, MUTED, TEXT_WIDTH
+from reports.pdf.styles import FAINT, INK, MUTED, SHADE, TEXT_WIDTH
 from reports.pdf.tables import TABLE_FONT
 from reports.pdf.text import fitting
 
@@ -49,7 +50,10 @@ def draw(diagram: Diagram) -> Picture | None:
     below = _LEGEND_ROW * ((len(legend) + 1) // 2)
     curves = [Stroke(piece, pens[c.label, c.style]) for c, pieces in shown.curves for piece in pieces]
     signs = [Sign(marker.style, x, y) for marker, (x, y) in shown.marks]
-    elements = [*_frame(shown, diagram), *curves, *signs, *_labels(shown)]
+    inside = enclosed(shown.curves) if diagram.closed else []
+    area = [Area(inside, SHADE)] if inside else []
+    arrows = [Area(head, INK) for head in arrow_heads(shown.curves)]
+    elements = [*area, *_frame(shown, diagram), *curves, *arrows, *signs, *_labels(shown)]
     for place, (sample, text) in enumerate(legend):
         elements += _entry(place, sample, text)
     return Picture(WIDTH, _TOP, below, elements)
@@ -111,6 +115,7 @@ def _taken(shown: Plot) -> list[Box]:
     boxes = [around(x, y, 4.5) for _, (x, y) in shown.marks]
     for _, pieces in shown.curves:
         boxes += [around(x, y, 1.5) for piece in pieces for x, y in sampled(piece)]
+    boxes += [around(*head[0], 4.0) for head in arrow_heads(shown.curves)]
     return boxes
 
 

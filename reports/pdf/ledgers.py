@@ -22,8 +22,10 @@ _VALUE: Final = 40 * mm
 _SYMBOL: Final = 28 * mm
 _SIDES: Final = (
     ("change", "Change of the system"),
+    ("share", "Shares of the bodies in it"),
     ("transfer", "Transfers across the boundary"),
     ("generation", "Generated in the system"),
+    ("internal", "Between the bodies, beside the sums"),
 )
 _PLAIN: Final = re.compile(r"[-+−]?[0-9]+(\.[0-9]*)?")
 _LARGEST: Final = 1e7
@@ -55,7 +57,7 @@ def _table(ledger: Ledger) -> Any:
                 [Symbol(line.label), _symbol(line), shown(line.stated), shown(line.recomputed)]
                 for line in lines
             ]
-        if len(lines) > 1:
+        if len(lines) > 1 and any(line.sign for line in lines):
             rows.append([bold("Sum"), "", *(_sum(lines, of, ledger.unit) for of in _BOTH)])
     return ruled_table(columns, [*rows, *_closing(ledger)])
 
@@ -64,7 +66,8 @@ _BOTH: Final[tuple[Side, Side]] = (lambda line: line.stated, lambda line: line.r
 
 
 def _symbol(line: LedgerLine) -> Symbol:
-    return Symbol(f"{'−' if line.sign < 0 else '+'} {line.symbol}")
+    sign = {-1: "− ", 0: "", 1: "+ "}.get(line.sign, "")
+    return Symbol(f"{sign}{line.symbol}")
 
 
 def _sum(lines: Sequence[LedgerLine], of: Side, unit: str) -> Any:

@@ -52,6 +52,29 @@ class Stroke:
 
 
 @dataclass(frozen=True, slots=True)
+class Area:
+    """A filled figure through points, with or without an edge."""
+
+    points: Sequence[Point]
+    fill: Color
+    edge: Pen | None = None
+
+    def draw(self, canvas: Any) -> None:
+        """Draw it."""
+        canvas.setFillColor(self.fill)
+        if self.edge is not None:
+            canvas.setStrokeColor(self.edge.colour)
+            canvas.setLineWidth(self.edge.width)
+            canvas.setDash(list(self.edge.dash))
+        path = canvas.beginPath()
+        path.moveTo(*self.points[0])
+        for point in self.points[1:]:
+            path.lineTo(*point)
+        path.close()
+        canvas.drawPath(path, stroke=int(self.edge is not None), fill=1)
+
+
+@dataclass(frozen=True, slots=True)
 class Sign:
     """The sign of a state: a dot where it was recomputed, an open square where it was stated."""
 
@@ -101,7 +124,7 @@ def words_width(text: str, font: str = REGULAR) -> float:
     return sum(width(part, font, _RAISED_LETTERS if raised else LETTERS) for part, raised in parts)
 
 
-Element = Stroke | Sign | Words
+Element = Stroke | Area | Sign | Words
 
 
 class Picture(Flowable):  # type: ignore[misc]  # reportlab has no types

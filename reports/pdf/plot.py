@@ -8,7 +8,7 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 from typing import Final
 
-from checker.findings import Curve, Diagram, Marker
+from checker.figures import Curve, Diagram, Marker
 from reports.pdf.axes import Axis, axis, extent, usable
 from reports.pdf.clipping import Point, clipped, thinned
 from reports.pdf.labels import Box

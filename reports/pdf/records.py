@@ -13,12 +13,14 @@ from reports.order import Group
 from reports.pdf.checks import account, checked_table
 from reports.pdf.diagrams import diagram_rows
 from reports.pdf.findings import finding_blocks
+from reports.pdf.flows import flow_blocks
 from reports.pdf.keys import part_key, record_key
 from reports.pdf.ledgers import ledger_blocks
 from reports.pdf.sheet import calculation_sheet
 from reports.pdf.states import state_table
 from reports.pdf.styles import BODY, HEADING, SUBHEADING
 from reports.pdf.text import Heading, bold, paragraph
+from reports.pdf.totals import totals_blocks
 from reports.phrases import grade_counts
 
 _ROOM_FOR_A_START: Final = 36 * mm
@@ -40,7 +42,10 @@ def record_section(
     parts = [
         _blocks(number, "findings", "Findings", finding_blocks(group.comments)),
         _table(number, "states", "States", state_table(record)),
-        _blocks(number, "balances", "Balances", ledger_blocks(record.ledgers)),
+        _blocks(
+            number, "balances", "Balances", [*totals_blocks(record.totals), *ledger_blocks(record.ledgers)]
+        ),
+        _blocks(number, "flows", "Flows between the bodies", flow_blocks(record.flows)),
         _blocks(number, "diagrams", "Diagrams", diagram_rows(record.diagrams)),
         _table(number, "checked", "Results held against the recomputation", checked_table(record)),
         _table(number, "account", "Not checked, assumed, models", account(record, common)),

@@ -5,7 +5,7 @@ The numbers come from the reference equations of the two fluids, rounded to four
 
 from __future__ import annotations
 
-from checker.findings import Curve, Diagram, Marker
+from checker.figures import Curve, Diagram, Marker
 
 # (temperature °C, saturation pressure bar, v' m³/kg, v" m³/kg, s' kJ/(kg·K), s" kJ/(kg·K))
 WATER = (

@@ -8,7 +8,7 @@ from dataclasses import replace
 import pytest
 from hypothesis import given
 
-from checker.findings import Curve, Diagram, Marker
+from checker.figures import Curve, Diagram, Marker
 from reports.pdf.diagrams import diagram_rows, draw
 from reports.pdf.picture import Picture, Sign, Stroke, Words
 from reports.pdf.plot import FRAME, plot
