@@ -7,7 +7,7 @@ from dataclasses import dataclass
 from typing import Final
 
 from checker.case import Case
-from checker.facts.mixed import condensing_component, is_mixed, mixed_compressibility
+from checker.facts.mixed import condensing_component, ideal_mixture, is_mixed, mixed_compressibility
 from checker.facts.twins import (
     CONSTANT,
     IDEAL,
@@ -104,6 +104,8 @@ def states_of(case: Case, body: str) -> tuple[str, ...]:
 
 def better_heat(case: Case, body: str) -> Substance | None:
     """Return the model with which a constant specific heat is compared: ideal gas, or the real liquid."""
+    if (mixture := ideal_mixture(case, body)) is not None:
+        return mixture
     substance = case.record.bodies[body].substance
     return twin(substance, IDEAL if is_gas(case, body) else REAL)
 

@@ -139,5 +139,5 @@ class RealMixture(Explicit):
         return NotEvaluable(
             f"{self.name} as a real mixture is calculated as a gas only, and a two-phase region is near: {why} at "
             f"{temperature:.6g} K",
-            "near-saturation",
+            "outside-range",
         )

@@ -6,7 +6,7 @@ from typing import Any
 
 import pytest
 
-from checker.facts.adequacy import gas_check
+from checker.facts.adequacy import better_heat, gas_check
 from tests.checker.cases import case
 
 
@@ -65,3 +65,27 @@ def test_moist_air_is_held_against_real_moist_air_of_the_same_water() -> None:
     found = gas_check(case(record("moist air", "60.0 °C", "5.000 bar", **wet)), "now", "gas")
     assert found is not None
     assert found.factor == pytest.approx(1.0, abs=0.005)
+
+
+def test_a_composition_beside_constant_heats_tells_what_condenses() -> None:
+    """Flue gas of constant specific heat is held against its own components."""
+    stated = record("flue gas", "40.0 °C", "1.000 bar", composition=FLUE_GAS)
+    stated["bodies"]["gas"] |= {
+        "model": "constant specific heat",
+        "inputs": {"volume": "1.000 m³", "cv": "0.780 kJ/(kg·K)"},
+    }
+    found = gas_check(case(stated), "now", "gas")
+    assert found is not None
+    assert found.component == "Water"
+
+
+def test_constant_heats_of_a_mixture_are_held_against_those_of_its_components() -> None:
+    """The better model is the mixture of ideal gases with c(T)."""
+    stated = record("flue gas", "400.0 °C", "1.000 bar", composition=FLUE_GAS)
+    stated["bodies"]["gas"] |= {
+        "model": "constant specific heat",
+        "inputs": {"volume": "1.000 m³", "cv": "0.780 kJ/(kg·K)"},
+    }
+    better = better_heat(case(stated), "gas")
+    assert better is not None
+    assert better.model == "ideal gas"
