@@ -150,7 +150,7 @@ def _rule(name: str, note: RuleNote | None) -> Tree:
 
 def _message(finding: Finding) -> str:
     """Return the message with its numbers, since a reader of results may see nothing else."""
-    causes = (f"Likely cause: {cause.statement}." for cause in finding.causes)
+    causes = (f"Likely cause: {cause.statement}." for cause in finding.causes if cause.likely)
     sentences = (finding.message, numbers_not_told(finding), *causes, finding.suggestion)
     return " ".join(sentence for sentence in sentences if sentence)
 

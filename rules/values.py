@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections import defaultdict
+from collections.abc import Iterator
 from typing import Final
 
 from checker.case import Case, Raised, Yielded
@@ -10,30 +11,54 @@ from checker.comparison.compare import Compared
 from checker.facts.gaps import unexplained
 from checker.facts.mass import contradicts_mass
 from checker.facts.naming import name_of
-from checker.facts.origins import is_impossible, origins, spoiled_by
+from checker.facts.origins import group_of, is_impossible, origins, spoiled_by
 from checker.facts.paths import any_follows
 from checker.facts.use import untraceable
 from checker.findings import Grade, Outcome, Standing
+from checker.slips import Diagnosis, diagnose
 from checker.submission import Role
 from rules.rule import Rule, Scope
 
 
 def disagrees(case: Case) -> Yielded:
     """Yield one finding per origin, with everything that it spoiled."""
-    for group in origins(case):
-        firm = [c for c in group if not c.explained_by_digits]
-        if not firm or is_impossible(case, firm[0]):
-            continue
+    diagnoses = diagnose(case)
+    elsewhere = {pointer for diagnosis in diagnoses.values() for pointer in diagnosis.explains}
+    groups = {group[0].statement.pointer: group for group in _firm(case)}
+    for pointer, firm in groups.items():
         first = firm[0]
-        spoiled = spoiled_by(case, group, first)
+        if is_impossible(case, first) or pointer in elsewhere:
+            continue
+        diagnosis = diagnoses.get(pointer, Diagnosis())
+        spoiled = spoiled_by(case, group_of(case, first), first)
+        for other in diagnosis.explains:
+            spoiled = (*spoiled, other, *spoiled_by(case, group_of(case, groups[other][0]), groups[other][0]))
+        spoiled = tuple(dict.fromkeys(spoiled))
         yield Raised(
-            _message(case, first),
+            " ".join((_message(case, first), *_cause_told(diagnosis))),
             compared=first,
             theme=first.statement.term.theme,
             origin=None if first.standing is Standing.ORIGIN_UNKNOWN else True,
             spoils=spoiled,
+            causes=diagnosis.causes,
             suggestion=_suggestion(first, spoiled),
         )
+
+
+def _firm(case: Case) -> Iterator[list[Compared]]:
+    """Yield for every origin what open digits do not explain of it."""
+    for group in origins(case):
+        if firm := [c for c in group if not c.explained_by_digits]:
+            yield firm
+
+
+def _cause_told(diagnosis: Diagnosis) -> Iterator[str]:
+    """Yield what the message says of the cause."""
+    if diagnosis.causes and not diagnosis.note:
+        first = diagnosis.causes[0].statement
+        yield f"This slip gives the stated digits: {first}."
+    elif diagnosis.note:
+        yield f"Cause: {diagnosis.note}."
 
 
 def digits_explain(case: Case) -> Yielded:

@@ -19,7 +19,7 @@ from checker.sheet.on_path import positive_pressure, state_on
 from checker.sheet.paths import Parameters, Path
 from checker.sheet.search import around, between, find_state
 from checker.sheet.states import SYMBOLS, Clue, StatePlan
-from checker.sheet.step import Step, Value
+from checker.sheet.step import SEARCH_COST, Step, Value
 from checker.substances.interface import PropertyState, Substance
 
 NEIGHBOUR = (
@@ -238,6 +238,7 @@ def _on_curve_step(near: Neighbour, plan: StatePlan, path: Path, one: Clue) -> S
         find,
         "p = p(v) along the path" if one.name == "pressure" else f"p = p(v) along the path, with {symbol}",
         f"{symbol} = {{{count}}}",
+        cost=SEARCH_COST,
     )
 
 
@@ -308,6 +309,7 @@ def _search_step(
         find,
         f"{formula} along the path",
         f"Q or W = {{{count + 1}}}",
+        cost=SEARCH_COST,
     )
 
 

@@ -18,6 +18,8 @@ Value = float | str | None
 Found = Value | NotEvaluable
 Values = dict[str, Found]
 Function = Callable[..., tuple[Value, ...]]
+SEARCH_COST = 100
+"""What a step that searches for a state costs, about, in property states."""
 _NO_LINK = NotEvaluable("the linked record gives no value for it", "missing")
 
 
@@ -43,6 +45,8 @@ class Step:
         The function accepts a parent that the model does not have (a solid without a density).
     trivial : bool
         It only takes an input over and need not be printed.
+    cost : int
+        What evaluating it costs, about, in property states.
     """
 
     title: str
@@ -54,6 +58,7 @@ class Step:
     assumes: str = ""
     takes_none: bool = False
     trivial: bool = False
+    cost: int = 1
 
 
 @dataclass(frozen=True, slots=True)

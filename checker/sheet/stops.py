@@ -20,7 +20,7 @@ from checker.sheet.keys import body_key, clue, given, state_key
 from checker.sheet.models import BodyModel
 from checker.sheet.paths import Path
 from checker.sheet.states import SYMBOLS, StatePlan
-from checker.sheet.step import Step, Value
+from checker.sheet.step import SEARCH_COST, Step, Value
 from checker.submission import SequenceOfProcesses
 from checker.substances.interface import PropertyState
 
@@ -149,7 +149,7 @@ def _step(sequence: SequenceOfProcesses, legs: Sequence[Leg], body: str, target:
     symbol = {"heat": "ΣQ", "work": "ΣW"}.get(target.name) or SYMBOLS[target.name]
     title = f"States of {body} along sequence {sequence.id}, with stops"
     formula = f"each path up to its stop (p_l or V_s), until {symbol} is reached"
-    return Step(title, outputs, parents, find, formula)
+    return Step(title, outputs, parents, find, formula, cost=SEARCH_COST)
 
 
 def _walk(

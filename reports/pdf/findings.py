@@ -90,7 +90,7 @@ def _particulars(finding: Finding) -> Iterator[tuple[str, str]]:
     if text := origin(finding):
         yield "Origin", text
     for item in finding.causes:
-        yield "Likely cause", cause(item, finding)
+        yield "Likely cause" if item.likely else "Possible cause", cause(item, finding)
     if finding.spoils:
         yield "Spoils", ", ".join(finding.spoils)
     if finding.suggestion:

@@ -9,7 +9,7 @@ from typing import Final
 
 from checker.sheet.closing import balances, relations
 from checker.sheet.closing.block import System, Unknown, block_step
-from checker.sheet.closing.charts import TEMPERATURE, Chart, chart_of, usable_clues
+from checker.sheet.closing.charts import PRESSURE, TEMPERATURE, Chart, chart_of, usable_clues
 from checker.sheet.closing.structure import blocks, match, undetermined
 from checker.sheet.closing.world import PROPERTIES, Equation, Spot
 from checker.sheet.context import ProcessContext
@@ -32,6 +32,10 @@ class Scene:
     contexts: tuple[ProcessContext, ...]
     substances: Mapping[str, Substance]
     first_state: Callable[[str], str | None]
+
+    def has_pressure(self, body: str) -> bool:
+        """Say whether a body's pressure tells something of its state: that of an incompressible body does not."""
+        return body in self.substances and not self.substances[body].incompressible
 
 
 def closing_steps(scene: Scene, open_states: Sequence[StatePlan], known: set[str]) -> Iterator[Step]:
@@ -106,7 +110,8 @@ class Problem:
         }
         spots |= {self.leaders[spot] for spot in tuple(spots) if spot in self.leaders}
         charts = {spot: self.charts[spot] for spot in sorted(spots)}
-        return System(unknowns, equations, charts, self.leaders, self.near, self.known)
+        held = {(spot, c.fixed.name): c.fixed.key for spot, c in self.charts.items() if c.fixed is not None}
+        return System(unknowns, equations, charts, self.leaders, self.near, self.known, held)
 
     def _within(self, spot: Spot, spots: set[Spot]) -> bool:
         """Say whether a state's coordinates are among those sought, itself or through its leader."""
@@ -141,7 +146,8 @@ def assemble(scene: Scene, open_states: Sequence[StatePlan], known: set[str]) ->
     if not charts:
         return None
     groups = dict(_equilibria(scene))
-    leaders, shared = _temperatures(charts, groups.values())
+    warmed = [group for title, group in groups.items() if title.endswith(f" {TEMPERATURE}")]
+    leaders, shared = _temperatures(charts, warmed)
     unknowns, at = _unknowns(charts, leaders, shared, known)
     equations = [
         e
@@ -174,7 +180,9 @@ def _equilibria(scene: Scene) -> Iterator[tuple[str, tuple[str, tuple[str, ...]]
             for name in ctx.together(state):
                 title = f"{state} {name}"
                 bodies = tuple(
-                    b for b in sorted(scene.record.bodies) if (state, b) in scene.record.body_states
+                    b
+                    for b in sorted(scene.record.bodies)
+                    if (state, b) in scene.record.body_states and (name != PRESSURE or scene.has_pressure(b))
                 )
                 if title not in seen and len(bodies) > 1:
                     seen.add(title)

@@ -9,12 +9,12 @@ from typing import Final
 
 from checker.outcomes import NotEvaluable
 from checker.sheet.closing.charts import ENERGY, ENTHALPY, TEMPERATURE, VOLUME, Chart
-from checker.sheet.closing.guesses import guess, span
+from checker.sheet.closing.guesses import caloric, guess, span, warmth
 from checker.sheet.closing.world import PROPERTIES, Equation, Spot, World
 from checker.sheet.keys import body_key, clue, state_key
 from checker.sheet.roots import roots_on, system_roots
 from checker.sheet.states import SYMBOLS
-from checker.sheet.step import Step, Value
+from checker.sheet.step import SEARCH_COST, Step, Value
 from checker.substances.interface import PropertyState, Substance
 
 LINEAR: Final = {ENERGY: 1e5, ENTHALPY: 1e5}
@@ -22,7 +22,7 @@ LINEAR: Final = {ENERGY: 1e5, ENTHALPY: 1e5}
 SCAN: Final = 64
 """Steps of the scan for the roots of one unknown."""
 FACTORS: Final = ((1.0, 1.0), (1.15, 1.0), (0.87, 1.0), (1.0, 3.0), (1.0, 0.33), (1.3, 10.0), (0.75, 0.1))
-"""Where a system is started: the guess, times these factors on temperatures and on volumes and masses."""
+"""Where a system is started beside the guess: at these factors on temperatures and on volumes and masses."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -54,7 +54,8 @@ class System:
     """What a block needs: its unknowns, its equations, and the charts and leaders of the states that they touch.
 
     ``leaders`` maps a state that takes its temperature from another to that other; ``near`` maps a state to a known
-    one of the same body to start from.
+    one of the same body to start from. ``held`` has the key of what is known of an unknown state, so that an equation
+    that needs no more of it does not wait for the rest.
     """
 
     unknowns: tuple[Unknown, ...]
@@ -63,6 +64,7 @@ class System:
     leaders: Mapping[Spot, Spot]
     near: Mapping[Spot, Spot]
     known: frozenset[str]
+    held: Mapping[tuple[Spot, str], str]
 
 
 def block_step(system: System) -> Step:
@@ -70,7 +72,7 @@ def block_step(system: System) -> Step:
     parents = tuple(dict.fromkeys(_parents(system)))
 
     def solve(*values: Value) -> tuple[Value, ...]:
-        return _solved(system, World(dict(zip(parents, values, strict=True))))
+        return _solved(system, World(dict(zip(parents, values, strict=True)), system.held))
 
     words = "; ".join(unknown.words for unknown in system.unknowns)
     names = dict.fromkeys(f"{equation.formula} ({equation.name})" for equation in system.equations)
@@ -81,6 +83,7 @@ def block_step(system: System) -> Step:
         solve,
         "; ".join(names),
         takes_none=True,
+        cost=SEARCH_COST,
     )
 
 
@@ -89,8 +92,12 @@ def _parents(system: System) -> Iterator[str]:
     sought = {unknown.body for unknown in system.unknowns if not unknown.spots}
     for equation in system.equations:
         yield from equation.parents
-        for spot in equation.uses:
-            if spot not in tried:
+        for spot, names in equation.uses.items():
+            if spot in tried:
+                continue
+            if all((spot, name) in system.held for name in names):
+                yield from (system.held[spot, name] for name in sorted(names))
+            else:
                 yield from (state_key(*spot, name) for name in PROPERTIES)
         yield from (body_key(body, "mass") for body in sorted(equation.masses - sought))
     for spot, chart in system.charts.items():
@@ -186,13 +193,22 @@ class _Search:
         return math.log(ends[0] / centre), math.log(ends[1] / centre)
 
     def _starts(self) -> Iterator[tuple[float, ...]]:
+        """Yield the guess, then common temperatures of all bodies: u and h tell none where a body boils or melts."""
+        yield (0.0,) * len(self.centre)
+        level = warmth([spot for u in self.system.unknowns for spot in u.spots], self.system, self.world)
         for warm, wide in FACTORS:
             yield tuple(
-                math.log(warm) * (3.0 if u.name in LINEAR else 1.0)
-                if u.name in (TEMPERATURE, *LINEAR)
-                else math.log(wide)
-                for u in self.system.unknowns
+                self._at_level(index, level * warm) if u.name in (TEMPERATURE, *LINEAR) else math.log(wide)
+                for index, u in enumerate(self.system.unknowns)
             )
+
+    def _at_level(self, index: int, temperature: float) -> float:
+        """Return a scaled T, u or h at a temperature; the guess where there is no such state."""
+        unknown, centre = self.system.unknowns[index], self.centre[index]
+        if unknown.name not in LINEAR:
+            return math.log(temperature / centre)
+        at = caloric(unknown.name, unknown.spots[0], temperature, self.system, self.world, self.models)
+        return 0.0 if at is None else (at - centre) / LINEAR[unknown.name]
 
     def _made(self, trial: World, spot: Spot) -> PropertyState:
         """Return the state of a chart from its fixed clue and its coordinates."""

@@ -39,7 +39,14 @@ def guess(
     if name == VOLUME:
         return _volume(spots[0], near, world, models)
     own: float | None = getattr(near[0], name) if near else None
-    return own if own is not None else _caloric(name, spots[0], system, world, models)
+    if own is None:
+        own = caloric(name, spots[0], _warmth((), world), system, world, models)
+    return 0.0 if own is None else own
+
+
+def warmth(spots: Sequence[Spot], system: System, world: World) -> float:
+    """Return the mean temperature of what is known of some bodies. [K]"""
+    return _warmth([state for spot in spots if (state := _near(spot, system, world)) is not None], world)
 
 
 def _near(spot: Spot, system: System, world: World) -> PropertyState | None:
@@ -69,17 +76,19 @@ def _volume(
         return model.critical_point[2] if model.critical_point else 1.0
 
 
-def _caloric(name: str, spot: Spot, system: System, world: World, models: Mapping[Spot, Substance]) -> float:
-    """Return u or h at the warmth of what is known."""
-    known = {TEMPERATURE: _warmth((), world)}
+def caloric(
+    name: str, spot: Spot, temperature: float, system: System, world: World, models: Mapping[Spot, Substance]
+) -> float | None:
+    """Return u or h of an unknown state at a temperature, or None where the model has no such state. [J/kg]"""
+    known = {TEMPERATURE: temperature}
     fixed = system.charts[spot].fixed
     if fixed is not None:
         known[fixed.name] = world.value(fixed.key)
     try:
         value: float | None = getattr(models[spot].state(known), name)
     except NotEvaluable:
-        value = None
-    return 0.0 if value is None else value
+        return None
+    return value
 
 
 def _mass(body: str, system: System, world: World) -> float:

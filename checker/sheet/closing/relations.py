@@ -24,14 +24,31 @@ def clue_equation(spot: Spot, one: Clue) -> Equation:
 
     def residual(world: World) -> tuple[float, float]:
         own, wanted = world.property(spot, one.name), world.value(one.key)
-        return own - wanted, max(abs(own), abs(wanted), scale)
+        return _apart(own, wanted, scale)
 
     symbol = SYMBOLS[one.name]
-    where = f"{spot[1]}, {spot[0]}"
-    name = f"{symbol} of {where}"
-    return Equation(
-        name, f"{symbol} as known", {spot: frozenset({one.name})}, frozenset(), (one.key,), residual
-    )
+    uses, other = {spot: frozenset({one.name})}, _spot_of(one.key)
+    equal = frozenset() if other is None else frozenset((spot, other))
+    title = f"{symbol} of {spot[1]}, {spot[0]}"
+    return Equation(title, f"{symbol} as known", uses, frozenset(), (one.key,), residual, equal)
+
+
+def _spot_of(key: str) -> Spot | None:
+    """Return the state whose property a key is, as where a path holds it; None for any other key."""
+    parts = key.split("/")
+    return (parts[1], parts[2]) if parts[0] == "states" and len(parts) == 4 else None
+
+
+def _apart(one: float, other: float, scale: float) -> tuple[float, float]:
+    """Return how far two values of one quantity are apart, and their size.
+
+    Of positive quantities that is size times the logarithm of their ratio: the same where they are close, and, where
+    they are decades apart, it still says which way leads to the other.
+    """
+    size = max(abs(one), abs(other), scale)
+    if scale == 0.0 and one > 0.0 and other > 0.0:
+        return size * math.log(one / other), size
+    return one - other, size
 
 
 def _scale_of(name: str) -> float:
@@ -68,7 +85,7 @@ def _curve(ctx: ProcessContext, body: str, path: Path, known: set[str]) -> Itera
         parameters = assemble(*(world.value(key) for key in keys))
         own = world.property(last, "pressure")
         wanted = curve(world.state(first), parameters)(world.property(last, "specific_volume"))
-        return own - wanted, max(abs(own), abs(wanted))
+        return _apart(own, wanted, 0.0)
 
     both = frozenset({"pressure", "specific_volume"})
     name = f"{path.kind} path of {process.id}"
@@ -81,7 +98,7 @@ def equality(name: str, one: Spot, other: Spot, title: str) -> Equation:
 
     def residual(world: World) -> tuple[float, float]:
         a, b = world.property(one, name), world.property(other, name)
-        return a - b, max(abs(a), abs(b), scale)
+        return _apart(a, b, scale)
 
     symbol = SYMBOLS[name]
     uses = {one: frozenset({name}), other: frozenset({name})}
@@ -110,7 +127,7 @@ def volume_equations(ctx: ProcessContext) -> Iterator[Equation]:
 
     def residual(world: World) -> tuple[float, float]:
         first, last = (_total(world, state, bodies) for state in ends)
-        return last - first, max(first, last)
+        return _apart(last, first, 0.0)
 
     uses = {(state, body): frozenset({"specific_volume"}) for state in ends for body in bodies}
     name = f"total volume of {ctx.process.id}"
@@ -123,8 +140,7 @@ def _total(world: World, state: str, bodies: Sequence[str]) -> float:
 
 def _sum_of_volumes(ctx: ProcessContext, bodies: Sequence[str], state: str, volume: str) -> Equation:
     def residual(world: World) -> tuple[float, float]:
-        own, wanted = _total(world, state, bodies), world.value(volume)
-        return own - wanted, max(own, wanted)
+        return _apart(_total(world, state, bodies), world.value(volume), 0.0)
 
     uses = {(state, body): frozenset({"specific_volume"}) for body in bodies}
     name = f"total volume of {ctx.process.id} in {state}"
@@ -153,7 +169,7 @@ def _volume_of(state: str, body: str, key: str) -> Equation:
         wanted = world.value(key)
         if wanted <= 0.0:
             raise NotEvaluable("a volume must be positive")
-        return own - wanted, max(abs(own), wanted)
+        return _apart(own, wanted, 0.0)
 
     uses = {(state, body): frozenset({"specific_volume"})}
     return Equation(f"volume of {body} in {state}", "m·v = V", uses, frozenset({body}), (key,), residual)

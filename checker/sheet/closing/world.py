@@ -31,10 +31,12 @@ StateOf = Callable[["World", Spot], PropertyState]
 class World:
     """The values of a step's parents by key, with the coordinates and masses of one trial laid over them.
 
-    ``tried`` makes the states that are sought from their coordinates; a state is made once in a trial.
+    ``tried`` makes the states that are sought from their coordinates; a state is made once in a trial. ``held`` has
+    the key of a property that is known of a state which is not.
     """
 
     values: Mapping[str, Value]
+    held: Mapping[tuple[Spot, str], str] = field(default_factory=dict)
     tried: Mapping[Spot, StateOf] = field(default_factory=dict)
     coordinates: Mapping[tuple[Spot, str], float] = field(default_factory=dict)
     masses: Mapping[str, float] = field(default_factory=dict)
@@ -48,7 +50,7 @@ class World:
         tried: Mapping[Spot, StateOf],
     ) -> World:
         """Return a new trial on the same known values."""
-        return World(self.values, tried, coordinates, masses, self.known)
+        return World(self.values, self.held, tried, coordinates, masses, self.known)
 
     def state(self, spot: Spot) -> PropertyState:
         """Return a body's state: the one tried, or the known one. Raises NotEvaluable."""
@@ -71,6 +73,8 @@ class World:
         """Return one property of a body's state. Raises NotEvaluable where the model has none."""
         if (spot, name) in self.coordinates:
             return self.coordinates[spot, name]
+        if (spot, name) in self.held:
+            return self.value(self.held[spot, name])
         value: float | None = getattr(self.state(spot), name)
         if value is None:
             raise NotEvaluable(
