@@ -178,8 +178,17 @@ class _Builder:
                 continue
             for name in ctx.together(state):
                 for other in sorted(self.record.bodies):
-                    if other != body and (state, other) in self.record.body_states:
+                    if (
+                        other != body
+                        and (state, other) in self.record.body_states
+                        and self._tells(other, name)
+                    ):
                         yield Clue(name, state_key(state, other, name))
+
+    def _tells(self, body: str, name: str) -> bool:
+        """Say whether others can take a property from a body: an incompressible one has no pressure of its own."""
+        found = self.substances.get(body)
+        return name != "pressure" or (found is not None and not found.incompressible)
 
     def _volume_clue(self, state: str, body: str) -> Iterator[Clue]:
         """Yield v = V/m from the body's own volume and mass, in the state in which that volume applies."""
