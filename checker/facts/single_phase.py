@@ -76,13 +76,12 @@ def _changes(case: Case) -> Iterator[_Change]:
 
 def _formulas(case: Case, change: _Change, claim: Compared) -> Iterator[tuple[str, float]]:
     """Yield the formulas of one phase for the quantity of a claim, with their values."""
-    parts = claim.key.split("/")
-    if parts[:2] == ["processes", change.process] and parts[-1] in CALORIC:
+    if claim.key in {_share(case, change, name) for name in CALORIC}:
         end = _claimed_end(case, change)
         for name, heat in _heats(change):
             yield f"m·{name}·ΔT", change.mass * heat * (end - change.cold)
     elif claim.key == f"states/{change.last}/{change.body}/temperature":
-        supplied = case.value(f"processes/{change.process}/heat")
+        supplied = case.value(_share(case, change, "heat"))
         for name, heat in _heats(change):
             if supplied is not None:
                 yield f"T₁ + Q/(m·{name})", change.cold + supplied / (change.mass * heat)
@@ -91,6 +90,11 @@ def _formulas(case: Case, change: _Change, claim: Compared) -> Iterator[tuple[st
         start = case.value(f"states/{first.process.from_state}/{change.body}/pressure") if first else None
         if start is not None:
             yield "p₁·T₂/T₁", start * change.hot / change.cold
+
+
+def _share(case: Case, change: _Change, name: str) -> str:
+    """Return the key of the body's own share: the total, where it is alone."""
+    return case.key(f"processes/{change.process}/bodies/{change.body}/{name}")
 
 
 def _claimed_end(case: Case, change: _Change) -> float:

@@ -283,3 +283,28 @@ def test_a_gas_whose_factor_happens_to_be_one_is_still_dense():
     (told,) = found(record, *MODELS)
     assert "at half the pressure of state cold" in told.message
     assert told.grade is Grade.QUERY
+
+
+@pytest.mark.parametrize(
+    ("temperature", "pressure", "count"),
+    [
+        ("308.0 K", "80.0 bar", 1),
+        ("308.0 K", "82.0 bar", 0),
+        ("300.0 K", "68.0 bar", 1),
+        ("295.0 K", "61.0 bar", 0),
+    ],
+)
+def test_the_critical_region_ends_at_two_per_cent_and_ten_per_cent(temperature, pressure, count):
+    """Carbon dioxide, T_c = 304.13 K and p_c = 73.77 bar: both have to be close."""
+    inputs = {"temperature": temperature, "pressure": pressure}
+    record = vessel("CarbonDioxide", {"mass": "1.000 kg"}, inputs, {"temperature": "350 K"})
+    assert len(found(record, "near-critical")) == count
+
+
+@pytest.mark.parametrize(("last", "count"), [("-5.0 °C", 1), ("5.0 °C", 0)])
+def test_real_water_that_would_freeze_is_asked_about(last, count):
+    """At 1 bar water is ice below 0 °C, where the equation of the fluid ends."""
+    first = {"temperature": "20.0 °C", "pressure": "1.000 bar"}
+    record = vessel("Water", {"mass": "1.000 kg"}, first, {"temperature": last}, path="constant pressure")
+    record["processes"][0]["results"] = {"heat": "-100 kJ"}
+    assert len(found(record, "outside-range")) == count

@@ -9,7 +9,7 @@ import pytest
 from checker.facts.idealised import by_real_gas, by_real_heat
 from checker.facts.redone import in_words, moved, redone, results_that_matter
 from checker.facts.twins import IDEAL, REAL, twin
-from tests.checker.cases import case, gas_bottle
+from tests.checker.cases import case, cases, gas_bottle
 
 
 def _bottle(substance: str, pressure: str, **hot: str) -> dict[str, Any]:
@@ -113,6 +113,23 @@ def test_results_with_a_datum_and_constants_do_not_count() -> None:
         "states/hot/gas/temperature",
         "processes/warming/heat",
     }
+
+
+def test_a_linked_state_starts_from_the_other_record() -> None:
+    """A bottle that goes on from another record has that record's T and v, and its own model from there on."""
+    second = _bottle("Nitrogen", "1 bar")
+    second["id"] = "second"
+    second["states"]["cold"]["gas"] = {"same_as": "records/bottle/states/hot/gas"}
+    second["states"]["hot"]["gas"]["inputs"] = {"temperature": "90.0 °C"}
+    del second["bodies"]["gas"]["inputs"]["volume"]
+    found = cases(_bottle("Nitrogen", "200.0 bar"), second)
+    again = redone(found["second"], "gas", REAL)
+    real = twin("Nitrogen", REAL)
+    assert real is not None
+    volume = found["bottle"].value("states/hot/gas/specific_volume")
+    assert volume is not None
+    last = real.state({"temperature": 363.15, "specific_volume": volume})
+    assert again["states/hot/gas/pressure"] == pytest.approx(last.pressure, rel=1e-6)
 
 
 def test_what_only_one_evaluation_knows_is_left_out() -> None:
