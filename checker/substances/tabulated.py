@@ -6,6 +6,7 @@ import math
 from bisect import bisect_right
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
+from functools import lru_cache
 from typing import ClassVar, Final
 
 from checker.outcomes import NotEvaluable
@@ -160,11 +161,17 @@ def make_tabulated(substance: str, constants: Mapping[str, float], table: Sequen
             f"{substance[:40]}: {', '.join(strange)} is stated beside a table, which says it for every temperature",
             "not-supported",
         )
-    columns = read_columns(substance, table)
+    columns = _columns(substance, tuple(tuple(row) for row in table))
     condensed = "density" in stated or columns.volumes is not None or columns.kind == HEAT
     if condensed or not any(name in stated for name in _GAS):
         return _condensed(substance, stated, columns)
     return _gas(substance, stated, columns)
+
+
+@lru_cache(maxsize=64)
+def _columns(substance: str, table: tuple[tuple[tuple[str, float], ...], ...]) -> Columns:
+    """Return the columns of a table, which is asked for at every evaluation of a state. Raises NotEvaluable."""
+    return read_columns(substance, table)
 
 
 def _condensed(substance: str, stated: Mapping[str, float], columns: Columns) -> TabulatedCondensed:
