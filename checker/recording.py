@@ -38,13 +38,16 @@ TABLE = (
     "quality",
     "melted_fraction",
     "specific_internal_energy",
+    "relative_humidity",
+    "humidity_ratio",
     "specific_enthalpy",
     "specific_entropy",
     "velocity",
     "elevation",
     "exergy",
 )
-"""Columns of the state table; the last three only where stated, a melted fraction only of what melts."""
+"""Columns of the state table; the last three only where stated, a melted fraction only of what melts, humidity only of
+moist air."""
 WHERE_STATED = frozenset({"velocity", "elevation", "exergy"})
 HIDDEN_STEPS = ("Dead state",)
 

@@ -55,3 +55,17 @@ def test_a_phase_of_a_state_that_is_not_found_is_not_checked():
     found = review(package(record)).records[0]
     assert "states/hot/gas/phase" not in {item.quantity for item in found.checked}
     assert "phase of hot/gas" in {item.what for item in found.not_checked}
+
+
+def test_states_of_moist_air_list_their_humidity():
+    """Relative humidity and humidity ratio stand among the properties of the state; of helium they do not."""
+    vessel = gas_bottle()
+    vessel["bodies"]["gas"] = {
+        "substance": "moist air",
+        "model": "ideal gas",
+        "inputs": {"mass": "0.1000 kg", "water_content": "0.0100"},
+    }
+    for record, listed in ((vessel, {"relative_humidity", "humidity_ratio"}), (gas_bottle(), set())):
+        found = review(package(record), name="trial.json")
+        names = {cell.name for cell in found.records[0].states[0].cells}
+        assert names & {"relative_humidity", "humidity_ratio"} == listed
