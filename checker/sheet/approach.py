@@ -151,47 +151,74 @@ def _gauss(function: Callable[[float], float], low: float, high: float) -> float
     return half * sum(weight * function(centre + place * half) for place, weight in places)
 
 
-def power_for(profile: Profile, losses: Exchange, meets: Callable[[float, float], float]) -> float:
-    """Return the constant power [W] for which the time is as asked.
+def power_for(
+    time: Callable[[Exchange], float],
+    ends: tuple[float, float],
+    losses: Exchange,
+    surplus: Callable[[float, float], float],
+) -> float:
+    """Return the constant power [W] with which the time is as asked.
 
     Parameters
     ----------
-    profile : Profile
-        The path.
+    time : callable
+        Time [s] between the ends with an exchange; raises NotEvaluable where the last end is out of reach.
+    ends : tuple of float
+        First and last temperature. [K]
     losses : Exchange
         The exchange without the power that is sought.
-    meets : callable
-        Takes the power and its time [s]; falls below zero where the process is too slow, that is for a power too
-        close to the one at which the end is never reached.
+    surplus : callable
+        Takes a power and one over its time [1/s], zero where the end is never reached; below zero where the power
+        is too little, above zero where it is too much.
 
-    Notes
-    -----
-    The time falls steadily as the power moves away from the least that reaches the end, so that halving finds the
-    one power.
+    Raises
+    ------
+    NotEvaluable
+        No power does it.
     """
-    ends = [losses.net(profile.temperature(energy)) for energy in (profile.first, profile.last)]
-    if profile.first == profile.last:
-        return -ends[0]
-    way = math.copysign(1.0, profile.last - profile.first)
-    slow = way * max(-way * net for net in ends)
+    nets = [losses.net(temperature) for temperature in ends]
+    if ends[0] == ends[1]:
+        return -nets[0]
+    way = math.copysign(1.0, ends[1] - ends[0])
+    slow = way * max(-way * net for net in nets)
 
     def value(beyond: float) -> float:
         power = slow + way * beyond
         try:
-            return meets(power, profile.time(Exchange(losses.coefficient, losses.drive + power)))
+            rate = 1.0 / time(Exchange(losses.coefficient, losses.drive + power))
         except NotEvaluable:
-            return -math.inf
+            rate = 0.0
+        return surplus(power, rate)
 
     low, high = 0.0, max(abs(slow), losses.coefficient)
+    if value(low) >= 0.0:
+        raise NotEvaluable("no power between these temperatures does that")
     for _ in range(60):
         if value(high) >= 0.0:
-            break
+            return slow + way * _zero(value, low, high)
         low, high = high, 4.0 * high
-    else:
-        raise NotEvaluable("no power takes the body there in this time")
-    for _ in range(80):
-        middle = 0.5 * (low + high)
-        if middle in (low, high):
+    raise NotEvaluable("no power between these temperatures does that")
+
+
+def _zero(function: Callable[[float], float], low: float, high: float) -> float:
+    """Return where a function that is below zero at one end and not at the other vanishes (Illinois rule)."""
+    below, above, side = function(low), function(high), 0
+    enough = 1e-13 * (above - below)
+    for count in range(200):
+        middle = (low * above - high * below) / (above - below)
+        if count % 3 == 2:  # the root may lie orders of magnitude closer to the low end than any line leads
+            middle = math.sqrt(low * high) if low > 0.0 else 1e-4 * high
+        if not low < middle < high or high - low <= 1e-15 * high:
             break
-        low, high = (middle, high) if value(middle) < 0.0 else (low, middle)
-    return slow + way * high
+        found = function(middle)
+        if abs(found) <= enough:
+            return middle
+        if found < 0.0:
+            low, below = middle, found
+            above = 0.5 * above if side < 0 else above
+            side = -1
+        else:
+            high, above = middle, found
+            below = 0.5 * below if side > 0 else below
+            side = 1
+    return high

@@ -13,7 +13,7 @@ from __future__ import annotations
 from collections.abc import Callable, Iterator, Sequence
 
 from checker.outcomes import NotEvaluable
-from checker.sheet.approach import Exchange, Profile, exponential_end, exponential_time
+from checker.sheet.approach import Exchange, exponential_end
 from checker.sheet.balances import same_value, sum_text, zero
 from checker.sheet.context import ProcessContext
 from checker.sheet.heater import (
@@ -23,6 +23,7 @@ from checker.sheet.heater import (
     sought_energy_step,
     storage_of,
     supplied_steps,
+    time_function,
 )
 from checker.sheet.keys import clue, given, process_key, state_key
 from checker.sheet.loss_plan import COEFFICIENT, LossPlan, Unknown, missing_powers
@@ -165,12 +166,8 @@ def _time(
     n = len(parents)
 
     def time(values: Sequence[float]) -> float:
-        own, last, end = storage.read(values[:n]), values[n], values[n + 1]
-        flow = build(values[n + 2 :])
-        if storage.is_constant and end != own.temperature:
-            capacity = own.mass * (last - own.energy) / (end - own.temperature)
-            return exponential_time(capacity, own.temperature, end, flow)
-        return Profile(own.mass, own.temperature_of, own.energy, last).time(flow)
+        between = time_function(storage, storage.read(values[:n]), values[n], values[n + 1])
+        return between(build(values[n + 2 :]))
 
     coefficients = sum_text(len(plan.losses), n + 3)
     exact = (

@@ -4,13 +4,13 @@ from __future__ import annotations
 
 from collections.abc import Callable, Iterator, Sequence
 
-from checker.sheet.approach import Exchange, Profile, power_for
+from checker.sheet.approach import Exchange, Profile, exponential_time, power_for
 from checker.sheet.balances import constant
 from checker.sheet.context import ProcessContext
 from checker.sheet.keys import given, process_key
 from checker.sheet.loss_plan import COEFFICIENT, LossPlan, Source, Unknown
 from checker.sheet.step import Step
-from checker.sheet.storage import Storage
+from checker.sheet.storage import Storage, Stored
 
 SUPPLIED, OUTSIDE = "supplied_power", "outside_temperature"
 """Names of quantities that only the sheet knows."""
@@ -58,13 +58,18 @@ def _found_power(ctx: ProcessContext, plan: LossPlan, sought: Source, key: str, 
     storage, timed = storage_of(ctx, plan), plan.unknown is Unknown.POWER
     parents = storage.parents(ctx.process.from_state)
     exchange, build = losses_of(ctx, plan)
-    first, last = len(parents) + 1, len(parents) + 1 + len(exchange)
+    first, last = len(parents) + 2, len(parents) + 2 + len(exchange)
 
     def power(wanted: float, *values: float) -> tuple[float]:
-        own, end = storage.read(values[: len(parents)]), values[len(parents)]
+        own, energy, end = (
+            storage.read(values[: len(parents)]),
+            values[len(parents)],
+            values[len(parents) + 1],
+        )
         flow, beside = build(values[first:last], 0.0), sum(read(values[last:]))
-        profile = Profile(own.mass, own.temperature_of, own.energy, end)
-        return (power_for(profile, flow, _meeting(timed, wanted if timed else sought.sign * wanted, beside)),)
+        time = time_function(storage, own, energy, end)
+        surplus = _surplus(timed, wanted if timed else sought.sign * wanted, beside)
+        return (power_for(time, (own.temperature, end), flow, surplus),)
 
     return Step(
         title,
@@ -73,6 +78,7 @@ def _found_power(ctx: ProcessContext, plan: LossPlan, sought: Source, key: str, 
             ctx.key("duration") if timed else sought.energy,
             *parents,
             storage.energy_in(ctx.process.to_state),
+            storage.temperature_in(ctx.process.to_state),
             *exchange,
             *known,
         ),
@@ -84,9 +90,11 @@ def _found_power(ctx: ProcessContext, plan: LossPlan, sought: Source, key: str, 
     )
 
 
-def _meeting(timed: bool, wanted: float, beside: float) -> Callable[[float, float], float]:
-    """Return what is above zero where a power is more than enough: time to spare, or energy to spare."""
-    return lambda power, time: wanted - (time if timed else (power - beside) * time)
+def _surplus(timed: bool, wanted: float, beside: float) -> Callable[[float, float], float]:
+    """Return what is above zero where a power is more than enough for a time [s], or for an energy [J] in its time."""
+    if timed:
+        return lambda _, rate: rate - 1.0 / wanted
+    return lambda power, rate: wanted * rate - (power - beside)
 
 
 def sought_energy_step(ctx: ProcessContext, plan: LossPlan, sought: Source) -> Step:
@@ -124,3 +132,11 @@ def losses_of(
     return tuple(
         key for base in bases for key in (given(f"{base}/{COEFFICIENT}"), f"{base}/{OUTSIDE}")
     ), build
+
+
+def time_function(storage: Storage, own: Stored, energy: float, end: float) -> Callable[[Exchange], float]:
+    """Return the time [s] with an exchange from a state to an energy per mass [J/kg] at a temperature [K]."""
+    if storage.is_constant and end != own.temperature:
+        capacity = own.mass * (energy - own.energy) / (end - own.temperature)
+        return lambda flow: exponential_time(capacity, own.temperature, end, flow)
+    return Profile(own.mass, own.temperature_of, own.energy, energy).time

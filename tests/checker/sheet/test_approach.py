@@ -62,7 +62,7 @@ def test_power_for_a_time_takes_that_time(first, rise, power):
         asked = profile.time(heated(power))
     except NotEvaluable:
         return
-    found = power_for(profile, LOSSES, lambda _, time: asked - time)
+    found = power_for(profile.time, (first, first + rise), LOSSES, lambda _, rate: rate - 1.0 / asked)
     assert profile.time(heated(found)) == pytest.approx(asked, rel=1e-6)
 
 
@@ -70,13 +70,37 @@ def test_power_that_cools_faster_than_the_losses():
     """To cool in half the time that the losses need takes a negative power."""
     profile = even(350.0, 310.0)
     alone = profile.time(LOSSES)
-    assert power_for(profile, LOSSES, lambda _, time: 0.5 * alone - time) < 0.0
-    assert power_for(profile, LOSSES, lambda _, time: 2.0 * alone - time) > 0.0
+    faster, slower = (
+        power_for(
+            profile.time, (350.0, 310.0), LOSSES, lambda _, rate, part=part: rate - 1.0 / (part * alone)
+        )
+        for part in (0.5, 2.0)
+    )
+    assert faster < 0.0 < slower
 
 
 def test_power_that_holds_a_temperature_is_the_loss():
     """5 W/K over 50 K."""
-    assert power_for(even(343.0, 343.0), LOSSES, lambda *_: 0.0) == pytest.approx(250.0)
+    assert power_for(lambda _: 0.0, (343.0, 343.0), LOSSES, lambda *_: 0.0) == pytest.approx(250.0)
+
+
+@given(st.floats(0.01, 30.0))
+def test_power_for_any_number_of_time_constants(count):
+    """From far below one time constant, where it is C·ΔT/t, to many, where it is the loss at the end."""
+    span = count * CAPACITY / LOSSES.coefficient
+
+    def time(flow: Exchange) -> float:
+        return exponential_time(CAPACITY, 300.0, 330.0, flow)
+
+    found = power_for(time, (300.0, 330.0), LOSSES, lambda _, rate: rate - 1.0 / span)
+    fading = math.exp(-count)
+    assert found == pytest.approx(5.0 * ((330.0 - 300.0 * fading) / (1.0 - fading) - 293.0), rel=1e-7)
+
+
+def test_no_heater_can_do_what_takes_cooling():
+    """A heater's energy between 273 K and 226 K with surroundings at 293 K: no power makes it."""
+    with pytest.raises(NotEvaluable, match="no power"):
+        power_for(even(273.0, 226.0).time, (273.0, 226.0), LOSSES, lambda power, rate: 1e5 * rate - power)
 
 
 @pytest.mark.parametrize("last", [343.0, 343.1, 400.0, 290.0])
