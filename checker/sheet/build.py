@@ -14,6 +14,7 @@ from checker.sheet.closing.assembly import Scene, closing_steps, shortage
 from checker.sheet.context import ProcessContext
 from checker.sheet.datum import Offset, declared_offset
 from checker.sheet.endstates import Neighbour, curve_steps, path_clues
+from checker.sheet.humidity import humidity_clues
 from checker.sheet.keys import body_key, clue, given, plain, state_key, term_for
 from checker.sheet.leaves import Leaves, collect
 from checker.sheet.links import link_clues
@@ -169,6 +170,9 @@ class _Builder:
         barred = self._barred(state, body, phase)
         return StatePlan(state, body, model, tuple(clues), phase, barred, solid, melting)
 
+        for one, made_by in humidity_clues(self.record, bare, tuple(clues)):
+            clues.append(one)
+            self.candidates.append(made_by)
     def _shared_clues(self, state: str, body: str) -> Iterator[Clue]:
         """Yield what a closing finds, and what bodies in equilibrium take from each other."""
         for name in SYMBOLS:

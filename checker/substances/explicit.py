@@ -135,7 +135,7 @@ class Explicit(WithoutPhases):
         """Return the state on a curve where a property that rises (or falls) along it takes a value."""
         index = INDEX[name]
         scale = max(abs(value), self._scale(name))
-        search = _Search(curve, span)
+        search = Search(curve, span)
 
         def residual(x: float) -> float:
             found = search.state(x)
@@ -202,7 +202,7 @@ def _property(state: PropertyState, index: int) -> float:
     return math.nan if found is None else found
 
 
-class _Search:
+class Search:
     """One search for the root of a rising function; it remembers why the model refused a state on the way."""
 
     def __init__(self, curve: Curve, span: tuple[float, float]) -> None:

@@ -14,7 +14,7 @@ from dataclasses import dataclass
 from typing import ClassVar, Final, NamedTuple
 
 from checker.outcomes import NotEvaluable
-from checker.substances.explicit import Explicit
+from checker.substances.explicit import Explicit, Search
 from checker.substances.interface import ModelUncertainty, PropertyState, Substance, ValidRange
 from checker.substances.moist_gas import GASES, Gas
 from checker.substances.moist_water import Saturated, saturated, water
@@ -30,6 +30,7 @@ _HOTTEST: Final = 1273.15
 _HIGHEST: Final = 10e6
 _ROUNDS: Final = 60
 _SETTLED: Final = 1e-13
+_REACHED: Final = 1e-7
 _JUST_SATURATED: Final = 1e-8
 """By how much vapour over ice may be denser than saturated: what rounding leaves of a relative humidity of 1."""
 _NOTHING: Final = 1e-20
@@ -220,6 +221,37 @@ class MoistAir(Explicit):
             relative_humidity=humidity,
             humidity_ratio=ratio,
         )
+
+    def temperature_of_humidity(self, name: str, value: float, relative_humidity: float) -> float:
+        """Return the temperature [K] at which a relative humidity is reached at a pressure or a specific volume.
+
+        At 1 it is the dew point. Humidity falls with temperature; with condensate, what is condensed counts as if it
+        were vapour, so that the dew point is where the last of it has gone.
+
+        Raises
+        ------
+        NotEvaluable
+            The humidity is not above 0 and at most 1, or is reached nowhere in the range (frost included).
+        """
+        if not (0.0 < relative_humidity <= 1.0 and self.water_content > 0.0):
+            raise NotEvaluable(f"a relative humidity of {relative_humidity:.6g} tells no temperature here")
+        span = self.valid_range
+        search = Search(
+            lambda t: self._on_isotherm(t, name, value), (span.temperature_min, span.temperature_max)
+        )
+
+        def residual(temperature: float) -> float:
+            found = search.state(temperature)
+            if found is None or found.relative_humidity is None or not found.humidity_ratio:
+                return math.nan
+            return relative_humidity - found.relative_humidity * self.water_content / found.humidity_ratio
+
+        root = search.root(residual, self.starts)
+        if root is None or not abs(residual(root)) <= _REACHED:
+            raise search.refusal or NotEvaluable(
+                f"moist air of this water content has a relative humidity of {relative_humidity:.6g} nowhere"
+            )
+        return root
 
     def _at_pressure(self, temperature: float, pressure: float) -> PropertyState:
         """Return the state at a temperature and pressure: v is corrected by p(v)/p until it settles.

@@ -107,3 +107,15 @@ def test_states_of_moist_air_say_that_their_humidity_was_found() -> None:
     """The formula of a state lists φ and W, and no quality."""
     found = case(vessel({"relative_humidity": "45.0 %"}))
     assert found.plan.sheet.made_by["states/warm/air/temperature"].formula == "v, u, h, s, φ, W = f(T, p)"
+
+
+def test_a_given_humidity_of_a_later_state_is_where_it_is_reached() -> None:
+    """Cooled at constant volume until φ = 1: the dew point, 16.04 °C by p_s(T)/T = 0.45·p_s(30 °C)/303.15 K."""
+    record = vessel({"relative_humidity": "45.0 %"})
+    record["states"]["cold"]["air"] = {
+        "inputs": {"relative_humidity": "100 %"},
+        "results": {"temperature": "16.04 °C", "humidity_ratio": "0.01197"},
+    }
+    found = case(record)
+    assert compared(found, "states/cold/air/temperature").outcome is Outcome.AGREES
+    assert compared(found, "states/cold/air/humidity_ratio").outcome is Outcome.AGREES

@@ -11,6 +11,7 @@ from hypothesis import strategies as st
 
 from checker.outcomes import NotEvaluable
 from checker.substances import PropertyState, Substance, make_substance
+from checker.substances.moist_air import MoistAir
 from checker.substances.moist_content import water_content_at_pressure, water_content_at_volume
 from checker.substances.moist_water import saturated
 from checker.substances.properties import ORDER
@@ -201,3 +202,23 @@ def test_vapour_that_alone_exceeds_the_pressure_is_refused() -> None:
     """Saturated vapour at 120 °C does not leave room for air at 1 bar."""
     with pytest.raises(NotEvaluable, match="alone exceeds the pressure"):
         water_content_at_pressure("ideal gas", 393.15, 1e5, 1.0)
+
+
+@pytest.mark.parametrize("model", MODELS)
+@settings(max_examples=30, deadline=None)
+@given(temperature=st.floats(275.0, 360.0), humidity=st.floats(0.05, 1.0))
+def test_a_humidity_tells_the_temperature_again(model: str, temperature: float, humidity: float) -> None:
+    """At the pressure or the volume of a state, its relative humidity belongs to its temperature alone."""
+    content = water_content_at_pressure(model, temperature, 2e5, humidity)
+    air = MoistAir(model, content)
+    state = air.state({T: temperature, P: 2e5})
+    for name, value in ((P, 2e5), (V, state.specific_volume)):
+        found = air.temperature_of_humidity(name, value, humidity)
+        assert found == pytest.approx(temperature, abs=1e-5)
+
+
+@pytest.mark.parametrize("humidity", [0.0, -0.5, 1.5, math.nan])
+def test_a_humidity_that_tells_no_temperature_is_refused(humidity: float) -> None:
+    """Only what lies above 0 and at most at 1 is reached somewhere."""
+    with pytest.raises(NotEvaluable, match="tells no temperature"):
+        MoistAir("ideal gas", 0.01).temperature_of_humidity(P, 1e5, humidity)

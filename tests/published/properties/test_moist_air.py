@@ -7,6 +7,7 @@ import pytest
 from CoolProp.HumidAirProp import HAPropsSI
 
 from checker.substances import PropertyState, make_substance
+from checker.substances.moist_air import MoistAir
 from checker.substances.moist_content import water_content_at_pressure
 from checker.substances.moist_gas import cross_virial
 from checker.substances.moist_water import sublimation_pressure
@@ -140,3 +141,14 @@ def test_an_autoclave_with_air_and_steam_has_the_sum_of_their_pressures() -> Non
     # 2.05046 bar at 121 °C from memory; the volume of the condensate is below 1 % of the vessel.
     assert hot.pressure == pytest.approx(2.0505e5 + 1e5 * 394.15 / 293.15, rel=1e-3)
     assert hot.relative_humidity == 1.0
+
+
+@pytest.mark.parametrize(("celsius", "humidity"), [(30.0, 0.45), (20.0, 0.6), (45.0, 0.9), (60.0, 0.2)])
+def test_the_dew_point_at_constant_pressure_is_that_of_the_perfect_gas_relations(
+    celsius: float, humidity: float
+) -> None:
+    """Within 0.05 K of Hyland and Wexler's vapour pressure."""
+    psychrolib.SetUnitSystem(psychrolib.SI)
+    content = water_content_at_pressure("ideal gas", celsius + 273.15, ATMOSPHERE, humidity)
+    dew = MoistAir("ideal gas", content).temperature_of_humidity("pressure", ATMOSPHERE, 1.0)
+    assert dew - 273.15 == pytest.approx(psychrolib.GetTDewPointFromRelHum(celsius, humidity), abs=0.05)
