@@ -98,7 +98,7 @@ class _Drawing:
         if generated and len(bodies) == 1 and len(takers) == 1:
             taker = next(iter(takers))
             self.arrow(bodies[0], taker, kind, kind, givers[bodies[0]], takers[taker])
-        elif len(givers) == 1 or len(takers) == 1:
+        elif (len(givers) == 1 or len(takers) == 1) and not self._mixes(kind, givers, takers):
             for giver, given in givers.items():
                 for taker, taken in takers.items():
                     self.arrow(giver, taker, kind, kind, min(given, taken))
@@ -110,6 +110,13 @@ class _Drawing:
         yield from (box.change or 0.0 for box in self.boxes.values())
         yield from (flow.arrives for flow in self.flows)
         yield from (value for gives in self.pool.values() for value in gives.values())
+
+    def _mixes(self, kind: str, givers: Iterable[str], takers: Iterable[str]) -> bool:
+        """Say whether entropy of several bodies meets on ways that only the heat between them tells."""
+        giving, taking = (
+            [name for name in names if self.boxes[name].kind == "body"] for names in (givers, takers)
+        )
+        return kind == "entropy" and bool(giving and taking) and len(giving) + len(taking) > 2
 
     def _through_meeting(self, kind: str, givers: dict[str, float], takers: dict[str, float]) -> None:
         name = f"{MEETING} {kind}"

@@ -90,7 +90,7 @@ def _changes(
     if all(told) or not any(case.stated(line.pointer) for line in totals):
         yield from shares
         return
-    yield from totals
+    yield from (t for t in totals if t is totals[0] or case.stated(t.pointer) or _weighs(case, t.pointer))
     yield from (Line(line.pointer, line.label, "share", 0) for line in shares)
 
 

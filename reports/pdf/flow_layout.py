@@ -13,15 +13,21 @@ from reports.pdf.styles import TEXT_WIDTH
 
 WIDTH: Final = TEXT_WIDTH
 BOX_WIDTH: Final = 92.0
+NARROW_BOX: Final = 76.0
+"""Width of a box where there are many columns. [pt]"""
 WIDEST: Final = 46.0
 """Width of the largest flow. [pt]"""
-ROOM: Final = 30.0
+ROOM: Final = 40.0
 """Least height beside a box for one arrow with its two lines of text. [pt]"""
 _LEAST_BOX: Final = 30.0
 _GAP: Final = 14.0
 _FARTHEST: Final = 290.0
 """From a column to the next. [pt]"""
 _MOST_COLUMNS: Final = 4
+_HIGHEST: Final = 560.0
+"""A page holds no higher picture with its heading. [pt]"""
+_LEAST, _MOST = 1e-15, 1e15
+"""Amounts beyond have no scale."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -54,17 +60,19 @@ class FlowPlan:
 
 
 def flow_plan(diagram: FlowDiagram) -> FlowPlan | None:
-    """Return the places, or None where nothing can be drawn: no flow, no finite number, boxes that are not there."""
+    """Return the places, or None where nothing can be drawn: no flow or number, boxes that are not there, no room."""
     boxes = {box.name: box for box in diagram.boxes}
     flows = [flow for flow in diagram.flows if _drawable(flow, boxes)]
     largest = max((max(flow.leaves, flow.arrives) for flow in flows), default=0.0)
-    if not flows or len(flows) < len(diagram.flows) or not largest > 0.0 or largest > 1e15:
+    if not flows or len(flows) < len(diagram.flows) or not _LEAST < largest < _MOST:
         return None
     columns = _columns(list(boxes), flows)
     if max(columns.values()) >= _MOST_COLUMNS:
         return None
     scale = WIDEST / largest
     places, height = _places(boxes, columns, flows, scale)
+    if height > _HIGHEST:
+        return None
     return FlowPlan(
         tuple(PlacedBox(boxes[name], place) for name, place in places.items()),
         tuple(_attached(flows, columns, places, scale)),
@@ -110,12 +118,13 @@ def _places(
     stacks = _untangled(stacks, flows)
     heights = [sum(sizes[name] for name in stack) + _GAP * (len(stack) - 1) for stack in stacks]
     total = max(heights)
-    step = min(_FARTHEST, (WIDTH - BOX_WIDTH) / max(1, len(used) - 1))
+    box = BOX_WIDTH if len(used) < _MOST_COLUMNS else NARROW_BOX
+    step = min(_FARTHEST, (WIDTH - box) / max(1, len(used) - 1))
     places: dict[str, Box] = {}
     for number, (stack, height) in enumerate(zip(stacks, heights, strict=True)):
         top = total - (total - height) / 2
         for name in stack:
-            places[name] = Box(number * step, top - sizes[name], number * step + BOX_WIDTH, top)
+            places[name] = Box(number * step, top - sizes[name], number * step + box, top)
             top -= sizes[name] + _GAP
     return places, total
 

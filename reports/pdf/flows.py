@@ -13,7 +13,7 @@ from reportlab.lib.colors import white
 
 from checker.figures import FlowBox, FlowDiagram
 from reports.numbers import rounded, signed
-from reports.pdf.flow_layout import BOX_WIDTH, FlowPlan, PlacedBox, PlacedFlow, flow_plan
+from reports.pdf.flow_layout import FlowPlan, PlacedBox, PlacedFlow, flow_plan
 from reports.pdf.fonts import BOLD, REGULAR
 from reports.pdf.picture import LETTERS, Area, Element, Pen, Picture, Stroke, Words, words_width
 from reports.pdf.styles import FAINT, MUTED, SHADE, TEXT_WIDTH
@@ -27,7 +27,7 @@ _THIN: Final = 7.0
 """An arrow narrower than this has a point that is wider than itself, so that it can be seen."""
 _BENDS: Final = 12
 _BEND: Final = 10.0
-"""A band whose ends differ by more in height bends so much that a text above it would lie on it. [pt]"""
+"""A band whose ends differ by more in height bends so much that a text above its middle would lie on it. [pt]"""
 _LINE: Final = 8.4
 _FILLS: Final = {"work": white, "generation": MUTED}
 _EDGES: Final = {"body": Pen(1.0), "outside": Pen(0.6, dash=(2.5, 2)), "meeting": Pen(0.6, dash=(1, 1.5))}
@@ -91,7 +91,7 @@ def _outline(placed: PlacedFlow, before: float, after: float) -> list[tuple[floa
 
 
 def _label(placed: PlacedFlow, unit: str) -> Iterator[Element]:
-    """Yield what flows and how much: inside a wide band, on paper across a thin one that bends, else above it."""
+    """Yield what flows and how much: inside a wide band, else above it, or below one that comes from above."""
     flow = placed.flow
     if flow.arrives > flow.leaves * (1 + 1e-9) > 0.0:
         yield from _growth(placed, unit)
@@ -100,10 +100,13 @@ def _label(placed: PlacedFlow, unit: str) -> Iterator[Element]:
     name = _WORDS.get(flow.kind, flow.kind) if flow.label == flow.kind else flow.label
     lines = [line for line in (name, _amount(flow.leaves, unit)) if line]
     tall, wide = _LINE * len(lines), (placed.start_width + placed.end_width) / 2
-    bends, inside = abs(y2 - y1) > _BEND, wide >= tall + 3
-    middle = (y1 + y2) / 2 + (0.0 if inside or bends else wide / 2 + tall / 2 + 2.5)
+    inside = wide >= tall + 3
+    off = wide / 2 + tall / 2 + 2.5
+    middle = (y1 + y2) / 2
+    if not inside:  # beside the end of a band that bends, on the side that it does not come from
+        middle = y2 - off if y1 - y2 > _BEND else max(y2, middle) + off
     dark = flow.source == "generation"
-    yield from _lines((x1 + x2) / 2, middle, lines, abs(x2 - x1) - 6, backed=dark or (bends and not inside))
+    yield from _lines((x1 + x2) / 2, middle, lines, abs(x2 - x1) - 6, backed=dark and inside)
 
 
 def _growth(placed: PlacedFlow, unit: str) -> Iterator[Element]:
@@ -156,7 +159,7 @@ def _box(placed: PlacedBox, diagram: FlowDiagram) -> Iterator[Element]:
     x, y = (place.left + place.right) / 2, (place.bottom + place.top) / 2 + _LINE * len(lines) / 2
     for number, line in enumerate(lines):
         font = BOLD if number == 0 and box.kind == "body" else REGULAR
-        text = fitting(line, font, LETTERS, BOX_WIDTH - 6)
+        text = fitting(line, font, LETTERS, place.right - place.left - 6)
         yield Words(x, y - _LINE * (number + 1) + 2.2, text, 0.5, font)
 
 
