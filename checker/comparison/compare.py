@@ -9,6 +9,7 @@ from dataclasses import dataclass, replace
 from checker.basis import Basis
 from checker.comparison.carried import Carried
 from checker.comparison.datums import NO_SHIFT, Shift
+from checker.comparison.lineage import Lineage
 from checker.comparison.moves import Moves
 from checker.comparison.references import References
 from checker.findings import Outcome, Standing
@@ -87,7 +88,8 @@ def compare_all(
         if statement.usable and not statement.term.text and _is_compared(statement, sheet, values)
     ]
     wrong = {c.key for c in found if c.outcome is Outcome.WRONG}
-    return _one_origin_per_step([_with_standing(c, sheet, carried, wrong) for c in found], sheet)
+    above = Lineage(sheet, wrong | {variant.state for variant in carried.variants})
+    return _one_origin_per_step([_with_standing(c, above, carried, wrong) for c in found], sheet)
 
 
 def _one_origin_per_step(found: list[Compared], sheet: Sheet) -> tuple[Compared, ...]:
@@ -220,11 +222,11 @@ def _judged(bare: Compared, references: References, broken: bool) -> Compared:
     )
 
 
-def _with_standing(c: Compared, sheet: Sheet, carried: Carried, wrong: set[str]) -> Compared:
+def _with_standing(c: Compared, lineage: Lineage, carried: Carried, wrong: set[str]) -> Compared:
     """Return the comparison with where its deviation comes from: the four cases of section 5."""
     if c.outcome is Outcome.NOT_EVALUABLE:
         return c
-    above = sheet.ancestors(c.key)
+    above = lineage.above(c.key)
     ancestors = sorted(above & wrong)
     c = replace(c, carried=carried.nearest(c.key, above, c.stated))
     near = abs(c.stated - c.carried) <= c.carried_tolerance if isinstance(c.carried, float) else None

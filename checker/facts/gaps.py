@@ -9,7 +9,7 @@ from typing import Final
 from checker.case import Case
 from checker.comparison.compare import Compared
 from checker.facts.exchange import NEVER_REACHED, unreachable
-from checker.facts.state_gaps import SEVERAL_BODIES, STATE_RULES, is_refused, state_gaps, unread
+from checker.facts.state_gaps import SEVERAL_BODIES, STATE_RULES, StateGap, is_refused, state_gaps, unread
 from checker.facts.twins import CONSTANT, IDEAL, REAL
 from checker.findings import Outcome
 from checker.outcomes import NotEvaluable
@@ -167,6 +167,7 @@ def _is_followed(case: Case, sequence: SequenceOfProcesses) -> bool:
 
 
 def _processes(case: Case) -> Iterator[Gap]:
+    open_states = state_gaps(case)
     for process in case.record.processes:
         ctx, base = case.context(process.id), f"processes/{process.id}"
         if ctx is not None and not ctx.bodies:
@@ -175,14 +176,14 @@ def _processes(case: Case) -> Iterator[Gap]:
             )
             yield Gap("body-missing-in-state", base, process.place, reason, ("",), f"{base}/")
             continue
-        yield from _several_bodies(case, process)
+        yield from _several_bodies(case, process, open_states)
         yield from _heats(case, process)
 
 
-def _several_bodies(case: Case, process: Process) -> Iterator[Gap]:
+def _several_bodies(case: Case, process: Process, open_states: Iterable[StateGap]) -> Iterator[Gap]:
     """Yield what several bodies lack to be closed together, once for each set of unknowns, at its first process."""
     ends = (process.from_state, process.to_state)
-    for gap in state_gaps(case):
+    for gap in open_states:
         if gap.rule == SEVERAL_BODIES and process is _first_process(case, gap.state) and gap.state in ends:
             base = f"processes/{process.id}"
             yield Gap(SEVERAL_BODIES, base, process.place, gap.reason, gap.marks)

@@ -84,6 +84,7 @@ class _Builder:
         self.record, self.models, self.substances = record, models, substances
         self.leaves, self.contexts = leaves, contexts
         self.candidates: list[Step] = []
+        self.first_states: dict[str, str | None] = {}
         self.short: dict[tuple[str, str], str] = {}
         self.neighbours: dict[tuple[str, str], list[Neighbour]] = defaultdict(list)
         for ctx in contexts:
@@ -141,6 +142,11 @@ class _Builder:
 
     def _first_state(self, body: str) -> str | None:
         """Return the state in which the body's stated volume applies."""
+        if body not in self.first_states:
+            self.first_states[body] = self._found_first(body)
+        return self.first_states[body]
+
+    def _found_first(self, body: str) -> str | None:
         later = {c.process.to_state for c in self.contexts if body in c.bodies}
         starts = [c.process.from_state for c in self.contexts if body in c.bodies]
         first = next((state for state in starts if state not in later), starts[0] if starts else None)

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 from typing import Final
 
 from checker.outcomes import NotEvaluable
@@ -24,12 +24,18 @@ ENDS: Final = {
 }
 
 
+def _taking_part(record: Record, process: Process) -> tuple[str, ...]:
+    """Return the bodies in both end states of a process."""
+    ends = (process.from_state, process.to_state)
+    return tuple(b for b in sorted(record.bodies) if all((s, b) in record.body_states for s in ends))
+
+
 @dataclass(frozen=True, slots=True)
 class ProcessContext:
     """One process of a record, with what the record gives and states.
 
     ``given_keys`` and ``stated_keys`` are calculation keys (aliases resolved) of inputs, and of inputs or
-    results.
+    results; ``bodies`` are those that take part, in a fixed order.
     """
 
     record: Record
@@ -38,6 +44,10 @@ class ProcessContext:
     same: Callable[[str], str]
     given_keys: frozenset[str]
     stated_keys: frozenset[str]
+    bodies: tuple[str, ...] = field(init=False)
+
+    def __post_init__(self) -> None:
+        object.__setattr__(self, "bodies", _taking_part(self.record, self.process))
 
     def key(self, name: str) -> str:
         """Return the key of a total of this process."""
@@ -113,14 +123,6 @@ class ProcessContext:
     def losses(self) -> LossPlan | None:
         """Return how time, powers and losses follow from one another, or None."""
         return loss_plan(self)
-
-    @property
-    def bodies(self) -> tuple[str, ...]:
-        """Bodies that take part: those in both end states, in a fixed order."""
-        ends = (self.process.from_state, self.process.to_state)
-        return tuple(
-            b for b in sorted(self.record.bodies) if all((s, b) in self.record.body_states for s in ends)
-        )
 
     def paths_of(self, body: str) -> tuple[Path, ...]:
         """Return the declared paths of a body."""
