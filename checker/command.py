@@ -18,6 +18,8 @@ if TYPE_CHECKING:
     from checker.outputs import Targets
 
 FORMATS: Final = ("pdf", "json", "sarif")
+CORRECTED: Final = "corrected"
+OUTPUTS: Final = (*FORMATS, CORRECTED)
 EXAMPLES: Final = """\
 examples:
   jouletally review package.yaml
@@ -116,6 +118,11 @@ def _parser() -> argparse.ArgumentParser:
             help=f"write the {name.upper()} report to F, a file or a folder; - is standard output",
         )
     review.set_defaults(action=_review)
+    review.add_argument(
+        "--corrected",
+        metavar="F",
+        help="write the package with its wrong results corrected to F; never over the package itself",
+    )
     rules = commands.add_parser("rules", help="list the rules, or explain one")
     rules.add_argument("name", nargs="?", metavar="NAME", help="name of a rule")
     rules.set_defaults(action=_rules)
@@ -139,7 +146,7 @@ def _review(arguments: argparse.Namespace, out: TextIO, err: TextIO) -> int:
     """Review every package named; a file that cannot be read does not keep the others from being reviewed."""
     from checker.outputs import OutputError, targets
 
-    wanted = {name: getattr(arguments, name) for name in FORMATS if getattr(arguments, name) is not None}
+    wanted = {name: getattr(arguments, name) for name in OUTPUTS if getattr(arguments, name) is not None}
     packages = [Path(name) for name in arguments.packages]
     try:
         reports = targets(packages, wanted, [Path(arguments.basis)] if arguments.basis else ())
@@ -149,13 +156,27 @@ def _review(arguments: argparse.Namespace, out: TextIO, err: TextIO) -> int:
     basis = _basis(arguments.basis, err)
     if basis is None:
         return Exit.NOTHING_REVIEWED
-    codes = []
+    codes: list[int] = []
     for package, files in zip(packages, reports, strict=True):
-        result = _reviewed(package, basis, "pdf" in files, err)
-        codes.append(Exit.NOTHING_REVIEWED if result is None else exit_status(result))
-        if result is not None:
-            _write_reports(result, files, not wanted, out, err)
+        data = _content(package, err)
+        if data is None:
+            codes.append(Exit.NOTHING_REVIEWED)
+            continue
+        result = _reviewed(data, package, basis, "pdf" in files, err)
+        codes.append(exit_status(result))
+        _write_reports(result, data, files, not wanted, out, err)
     return max(codes)
+
+
+def _content(path: Path, err: TextIO) -> bytes | None:
+    """Return what a file holds, or None where it cannot be read."""
+    from checker.document import content_of
+
+    try:
+        return content_of(path)
+    except OSError as error:
+        _complain(err, f"{path}: {error.strerror}")
+        return None
 
 
 def _basis(file: str | None, err: TextIO) -> Basis | None:
@@ -172,34 +193,30 @@ def _basis(file: str | None, err: TextIO) -> Basis | None:
         return None
 
 
-def _reviewed(path: Path, basis: Basis, diagrams: bool, err: TextIO) -> Review | None:
-    """Return the review of one package, or None where its file cannot be read."""
+def _reviewed(data: bytes, path: Path, basis: Basis, diagrams: bool, err: TextIO) -> Review:
+    """Return the review of one package."""
     from checker.api import review
-    from checker.document import content_of
     from checker.progress import record_progress
     from reports.plain import neutral
 
-    try:
-        data = content_of(path)
-    except OSError as error:
-        _complain(err, f"{path}: {error.strerror}")
-        return None
     with record_progress(err, neutral(path.name)) as progress:
         return review(data, name=str(path), basis=basis, diagrams=diagrams, progress=progress)
 
 
-def _write_reports(result: Review, files: Targets, prints: bool, out: TextIO, err: TextIO) -> None:
+def _write_reports(
+    result: Review, data: bytes, files: Targets, prints: bool, out: TextIO, err: TextIO
+) -> None:
     """Write the reports of one package, the findings printed first where that is asked for."""
     from checker.outputs import write_bytes
     from reports.plain import neutral
 
     if prints:
-        _print("text", result, out)
+        _put(_report("text", result, data), out)
     for name, target in files.items():
         if target is None:
-            _print(name, result, out)
+            _put(_report(name, result, data), out)
             continue
-        write_bytes(target, _report(name, result))
+        write_bytes(target, _report(name, result, data))
         with suppress(BrokenPipeError):
             if prints:
                 out.write(f"report: {neutral(str(target))}\n")
@@ -217,12 +234,11 @@ def exit_status(result: Review) -> int:
     return Exit.ACCEPTED if accepted else Exit.RETURNED
 
 
-def _print(name: str, result: Review, out: TextIO) -> None:
+def _put(data: bytes, out: TextIO) -> None:
     """Write a report to a text stream (its bytes, where it has a buffer).
 
     Who reads it may have seen enough before its end: the other reports are written all the same.
     """
-    data = _report(name, result)
     raw: BinaryIO | None = getattr(out, "buffer", None)
     with suppress(BrokenPipeError):
         if raw is None:
@@ -233,8 +249,12 @@ def _print(name: str, result: Review, out: TextIO) -> None:
             raw.flush()
 
 
-def _report(name: str, result: Review) -> bytes:
-    """Return a report in one format."""
+def _report(name: str, result: Review, data: bytes) -> bytes:
+    """Return a report in one format, or the corrected package."""
+    if name == CORRECTED:
+        from checker.correction import corrected_file
+
+        return corrected_file(data, (c for record in result.records for c in record.corrections))
     from reports import writer
 
     buffer = BytesIO()

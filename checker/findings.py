@@ -270,6 +270,17 @@ class Totals:
 
 
 @dataclass(frozen=True, slots=True)
+class Correction:
+    """What has to be written in place of a wrong result: ``because`` names the wrong results that it follows from."""
+
+    quantity: str
+    stated: str
+    corrected: str
+    because: tuple[str, ...]
+    location: Location
+
+
+@dataclass(frozen=True, slots=True)
 class RecordReview:
     """The review of one record."""
 
@@ -285,6 +296,7 @@ class RecordReview:
     ledgers: tuple[Ledger, ...] = ()
     sheet: tuple[SheetLine, ...] = ()
     diagrams: tuple[Diagram, ...] = ()
+    corrections: tuple[Correction, ...] = ()
     totals: tuple[Totals, ...] = ()
     flows: tuple[FlowDiagram, ...] = ()
     noted: tuple[str, ...] = ()

@@ -76,9 +76,18 @@ def _of(package: Path, wanted: Mapping[str, str], several: bool) -> Iterator[tup
         if text == STANDARD_OUTPUT:
             yield name, None
         elif several or target.is_dir():
-            yield name, target / f"{package.stem}-review.{name}"
+            yield name, target / _file_name(package, name)
         else:
             yield name, target
+
+
+def _file_name(package: Path, name: str) -> str:
+    """Return the name of one output of a package in a folder."""
+    return (
+        f"{package.stem}-corrected{package.suffix}"
+        if name == "corrected"
+        else f"{package.stem}-review.{name}"
+    )
 
 
 def _refuse_loss(packages: Sequence[Path], found: Sequence[Targets], inputs: Sequence[Path]) -> None:

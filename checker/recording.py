@@ -6,6 +6,7 @@ from collections.abc import Iterator, Sequence
 
 from checker.case import Case
 from checker.comparison.compare import Compared
+from checker.correction import corrections_of
 from checker.display import as_text, stated_amount
 from checker.facts.extent import without_extent
 from checker.facts.materials import taken_from_table
@@ -37,9 +38,9 @@ TABLE = (
     "specific_volume",
     "quality",
     "melted_fraction",
-    "specific_internal_energy",
     "relative_humidity",
     "humidity_ratio",
+    "specific_internal_energy",
     "specific_enthalpy",
     "specific_entropy",
     "velocity",
@@ -79,6 +80,7 @@ def record_review(
         ledgers=tuple(ledgers(case)),
         sheet=tuple(_sheet_lines(case)) if sheet else (),
         diagrams=drawn,
+        corrections=corrections_of(case, locator),
         totals=tuple(totals(case)),
         flows=tuple(flows(case)),
         noted=tuple(without_extent(case)),

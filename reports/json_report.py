@@ -12,9 +12,11 @@ from checker.figures import FlowDiagram
 from checker.findings import (
     Amount,
     Checked,
+    Correction,
     Finding,
     Grade,
     Ledger,
+    Location,
     PackageNote,
     Pair,
     RecordReview,
@@ -65,7 +67,22 @@ def _record(review: Review, record: RecordReview) -> Tree:
         "totals": [_totals(table) for table in record.totals],
         "flows": [_flow_diagram(diagram) for diagram in record.flows],
         "sheet": [_step(line) for line in record.sheet],
+        "corrections": [_correction(item) for item in record.corrections],
     }
+
+
+def _correction(item: Correction) -> Tree:
+    return {
+        "quantity": item.quantity,
+        "stated": item.stated,
+        "corrected": item.corrected,
+        "because": list(item.because),
+        "location": _location_of(item.location),
+    }
+
+
+def _location_of(place: Location) -> Tree:
+    return {"file": place.file, "line": place.line, "column": place.column, "pointer": place.pointer}
 
 
 def _amount(amount: Amount | None) -> Tree | None:

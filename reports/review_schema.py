@@ -120,6 +120,18 @@ def _record() -> Schema:
         totals=_list("What the processes of a cycle or a sequence add up to.", _totals()),
         flows=_list("Flows between several bodies, recomputed.", _flow_diagram()),
         sheet=_list("The alternate calculation, step by step.", _step()),
+        corrections=_list("What has to be written in place of every wrong result.", _correction()),
+    )
+
+
+def _correction() -> Schema:
+    return _object(
+        "One wrong result with the recomputed number, to the originator's own digits.",
+        quantity=_text("Pointer of the quantity."),
+        stated=_text("The text as stated."),
+        corrected=_text("The text to write."),
+        because=_list("Pointers of the wrong results that it follows from.", {"type": "string"}),
+        location=_location(),
     )
 
 

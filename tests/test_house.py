@@ -38,6 +38,7 @@ LAYERS = (
     {"ledger_unit"},
     {"facts", "evaluation", "diagrams", "flows", "ledgers", "rule_text"},
     {"locate", "slips", "totals"},
+    {"correction"},
     {"recording"},
     {"engine"},
     {"api"},
