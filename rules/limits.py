@@ -25,7 +25,7 @@ def exceeded(case: Case, item: str) -> Yielded:
                 case,
                 item,
                 margin,
-                lambda value, bound, claimed=claimed: f"{value} {bound}, {claimed}.",  # type: ignore[misc]
+                lambda value, bound, claimed=claimed: f"{value} {bound}, {claimed}.",  # type: ignore[misc]  # a lambda with defaults
                 _grade(limit.claim),
                 "Change the case until the limit is met, or say what is done about it.",
             )
@@ -47,7 +47,7 @@ def within_uncertainty(case: Case, item: str) -> Yielded:
                 case,
                 item,
                 margin,
-                lambda value, bound, u=spread: f"{value} {bound}, but it is known to within {u} only.",  # type: ignore[misc]
+                lambda value, bound, u=spread: f"{value} {bound}, but it is known to within {u} only.",  # type: ignore[misc]  # a lambda with defaults
                 None,
                 "Reduce the uncertainty, or keep a distance from the limit.",
             )

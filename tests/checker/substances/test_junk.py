@@ -58,7 +58,7 @@ NUMBERS = st.one_of(
 def model(name: str) -> Substance:
     """Return the substance of a key of MODELS."""
     substance, word, constants, more = MODELS[name]
-    return make_substance(substance, word, constants, **more)  # type: ignore[arg-type]
+    return make_substance(substance, word, constants, **more)  # type: ignore[arg-type]  # junk on purpose
 
 
 @pytest.mark.parametrize("name", sorted(MODELS))
@@ -101,7 +101,7 @@ def test_what_is_no_number_is_refused_by_every_model(name: str, known: dict[str,
     substance = model(name)
     for question in (substance.state, substance.states, substance.saturation):
         with pytest.raises(NotEvaluable):
-            question(known)  # type: ignore[operator]
+            question(known)  # type: ignore[operator]  # junk on purpose
 
 
 @settings(max_examples=100, deadline=None, derandomize=True)

@@ -185,7 +185,7 @@ def test_every_font_is_embedded(review: Review) -> None:
     """No page refers to a font that is not in the file."""
     seen = 0
     for page in read(review).pages:
-        for font in page["/Resources"]["/Font"].values():  # type: ignore[index]
+        for font in page["/Resources"]["/Font"].values():  # type: ignore[index]  # untyped dictionary
             seen += 1
             assert "/FontFile2" in font.get_object()["/FontDescriptor"]
     assert seen
@@ -234,7 +234,7 @@ def test_information_of_the_document(revise: PdfReader) -> None:
     assert revise.metadata.title == "Review of TC-0417, revision A"
     assert revise.metadata.subject == "Verdict: revise and resubmit"
     assert not revise.metadata.author
-    assert revise.trailer["/Root"]["/Lang"] == "en-GB"  # type: ignore[index]
+    assert revise.trailer["/Root"]["/Lang"] == "en-GB"  # type: ignore[index]  # untyped dictionary
 
 
 def test_what_cannot_be_laid_out_is_still_written(monkeypatch: pytest.MonkeyPatch) -> None:
