@@ -170,15 +170,15 @@ class _Builder:
                 clues.append(one)
                 if made_by is not None:
                     self.candidates.append(made_by)
+        for one, made_by in humidity_clues(self.record, bare, tuple(clues)):
+            clues.append(one)
+            self.candidates.append(made_by)
         solid = substance is not None and substance.incompressible
         melting = melting_state(self.record, state, body, substance, phase)
         clues = [one for one in clues if melting is not None or one.name != FRACTION]
         barred = self._barred(state, body, phase)
         return StatePlan(state, body, model, tuple(clues), phase, barred, solid, melting)
 
-        for one, made_by in humidity_clues(self.record, bare, tuple(clues)):
-            clues.append(one)
-            self.candidates.append(made_by)
     def _shared_clues(self, state: str, body: str) -> Iterator[Clue]:
         """Yield what a closing finds, and what bodies in equilibrium take from each other."""
         for name in SYMBOLS:
