@@ -52,6 +52,16 @@ class Bench:
         return frozenset(parent for step in self.steps for parent in step.parents)
 
     @cached_property
+    def _around(self) -> Values:
+        """The values that the hidden steps take; trying a slip needs no others."""
+        return {key: self.values[key] for key in self.parents if key in self.values}
+
+    @cached_property
+    def _instead(self) -> dict[str, float]:
+        """The stated values that stand in for calculated parents."""
+        return {k: v for k, v in self.stated.items() if k in self.parents and k != self.key}
+
+    @cached_property
     def inputs(self) -> tuple[Statement, ...]:
         """The inputs that the hidden steps start from, each once."""
         found: dict[str, Statement] = {}
@@ -115,9 +125,8 @@ class Bench:
         """Return the value of the origin under a change; None where it has none."""
         if self.key in change:
             return change[self.key]
-        values: Values = {**self.values, **change}
-        instead = {**self.stated, **change}
-        instead.pop(self.key, None)
+        values: Values = {**self._around, **change}
+        instead = {**self._instead, **change}
         touched = set(change)
         for step in self.steps:
             if touched.isdisjoint(step.parents):

@@ -17,7 +17,7 @@ from checker.slips.catalogue import CATALOGUE
 from checker.slips.slip import Candidate, Change, Slip
 from checker.submission import Role
 
-MOST_COST: Final = 5000
+MOST_COST: Final = 3000
 """What the search for the cause of one origin may cost, in property states; where more would be needed, the
 diagnosis says so. The simplest slips are tried first."""
 LEAST_CHANCE: Final = 0.03
@@ -26,6 +26,9 @@ ROUNDED: Final = 1.02
 """Half-widths within which a candidate agrees with the stated digits: a number on the edge may go either way."""
 NEAR: Final = math.log(2.0)
 """Candidates within this factor of the stated value (as a logarithm) tell how dense they lie there."""
+
+BARELY: Final = 0.25
+"""Part of the stated half-width below which it makes no difference whether the originator rounded early."""
 
 NONE_FITS: Final = "no slip of the catalogue reproduces the stated digits"
 BY_CHANCE: Final = "several or chance explanations"
@@ -115,10 +118,10 @@ class _Inquiry:
         found: list[tuple[Candidate, Bench]] = []
         left, capped = MOST_COST, False
         for cost, slip, change, bench in sorted(self._offers(), key=lambda offer: (offer[1].rank, offer[0])):
-            if cost > 1 and cost > left:
+            if cost > left:
                 capped = True
                 continue
-            left -= cost if cost > 1 else 0
+            left -= cost
             value = _value(bench, change)
             if value is not None:
                 found.append((Candidate(slip, change, value), bench))
@@ -220,6 +223,8 @@ def _benches(case: Case, lead: Compared) -> Iterator[Bench]:
     if not wrong & set(hidden):
         exact = {key: own for key in hidden if isinstance(own := case.values.get(key), float)}
         yield Bench(case, lead, case.values, exact)
+        if case.carried.spread(lead.key) <= BARELY * lead.statement.quantity.half_width:
+            return  # the digits of the parents could not move the result beyond its own
     if hidden:
         yield Bench(case, lead, case.carried.values, hidden)
 
