@@ -113,6 +113,7 @@ def loss_clue(ctx: ProcessContext, body: str, known: str, sought: str) -> tuple[
         "T₂ = T_∞ + (T₁ − T_∞)·exp(−ΣUA·t/C)"
         if storage.is_constant
         else f"m·d{symbol}/dt = ΣUA·(T_∞ − T), followed over t",
+        cost=storage.cost,
     )
     return Clue(name, made), step
 
@@ -188,6 +189,7 @@ def _duration(ctx: ProcessContext, plan: LossPlan) -> Step:
         lambda *values: (time(values),),
         "t = (C/ΣUA)·ln((T_∞ − T₁)/(T_∞ − T₂)), C = ΔE/ΔT" if text else "t = ∫dE/(ΣUA·(T_∞ − T))",
         text,
+        cost=storage_of(ctx, plan).cost,
     )
 
 
@@ -220,6 +222,7 @@ def _means(ctx: ProcessContext, plan: LossPlan) -> Step:
         f"T_mean = T_∞ − {'ΔH' if plan.at_pressure else 'ΔU'}/(ΣUA·t), T_harm = T_∞/(1 + ΔS/(ΣUA·t))",
         "",
         f"{p}: {powers}{body} has one temperature throughout at any time",
+        cost=1 if given_time else storage_of(ctx, plan).cost,
     )
 
 

@@ -87,6 +87,7 @@ def _found_power(ctx: ProcessContext, plan: LossPlan, sought: Source, key: str, 
         if timed
         else "P such that P·t = E, t = ∫dE/(P + ΣUA·(T_out − T))",
         "t = {0}" if timed else "E = {0}",
+        cost=storage.cost,
     )
 
 

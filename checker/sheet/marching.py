@@ -25,6 +25,8 @@ ACCURACY: Final = 1e-9
 """Largest error of a step, relative to the energy that the whole time could bring (chosen)."""
 MOST_STEPS: Final = 2000
 SMALLEST: Final = 1e-12
+EDGE: Final = 1e-6
+"""Part of the duration within which the edge of the model's range is found (chosen)."""
 SETTLED: Final = 1e-9
 """Part of the way to its rest at which a body has settled (chosen)."""
 
@@ -79,7 +81,7 @@ def march(rate: Callable[[float], float], start: float, duration: float, floor: 
         rate(start),
         NotEvaluable("the course of the temperature does not converge", "ill-conditioned"),
     )
-    energy, done, step = start, 0.0, duration / 16.0
+    energy, done, step, growth = start, 0.0, duration / 16.0, 4.0
     scale = max(abs(first * duration), 1e-9)
     for _ in range(MOST_STEPS):
         if abs(step) < SMALLEST * abs(duration):
@@ -88,14 +90,17 @@ def march(rate: Callable[[float], float], start: float, duration: float, floor: 
         try:
             moved, error, last = _trial(rate, energy, first, step)
         except NotEvaluable as outcome:  # a stage beyond the model's range, or the course itself
-            refused, step = outcome, 0.25 * step
+            refused, step, growth = outcome, 0.25 * step, 1.0
+            if abs(step) < EDGE * abs(duration):
+                break
             continue
         off = abs(error) / (ACCURACY * scale)
         if off <= 1.0:
             energy, first, done = moved, last, done + step
+            growth = min(4.0, 1.2 * growth)
             if abs(duration - done) < SMALLEST * abs(duration) or energy <= floor:
                 return energy
-        step *= min(4.0, max(0.2, 0.9 * (off + 1e-12) ** -0.2))
+        step *= min(growth, max(0.2, 0.9 * (off + 1e-12) ** -0.2))
     raise refused
 
 

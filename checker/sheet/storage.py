@@ -8,6 +8,7 @@ from dataclasses import dataclass
 from checker.outcomes import NotEvaluable
 from checker.sheet.keys import body_key, state_key
 from checker.sheet.models import BodyModel
+from checker.sheet.step import SEARCH_COST
 
 
 @dataclass(frozen=True, slots=True)
@@ -45,6 +46,11 @@ class Storage:
         """Whether the heat capacity is constant."""
         substance = self.model.at_nominal()
         return substance is not None and substance.model == "constant specific heat"
+
+    @property
+    def cost(self) -> int:
+        """What following the body along its path costs, about, in property states."""
+        return 1 if self.is_constant else SEARCH_COST
 
     def energy_in(self, state: str) -> str:
         """Return the key of the energy per mass in a state."""
