@@ -12,6 +12,7 @@ from typing import Final
 from rules import (
     adequacy,
     assumptions,
+    bodies,
     bookkeeping,
     energy,
     entropy,
@@ -35,6 +36,7 @@ RULEBOOK: Final[tuple[Rule, ...]] = (
     *values.RULES,  # do the stated results follow from the inputs
     *state.RULES,  # and is what they follow from possible
     *path.RULES,
+    *bodies.RULES,
     *energy.RULES,
     *entropy.RULES,
     *exergy.RULES,

@@ -74,12 +74,15 @@ def _none(case: Case, process: str, name: str) -> Stated | None:
 
 
 def items(case: Case, process: str, what: str, kind: str = "") -> Stated | None:
-    """Return the sum of the items of a process, all of them stated; None where one is not, or there is none."""
+    """Return the sum of the items of a process, all of them stated; None where one is not, or there is none.
+
+    Heat between bodies does not cross the boundary and is no part of the sum.
+    """
     ctx = case.context(process)
     if ctx is None:
         return None
     if what == "heat":
-        names = [item.id for item in ctx.process.heat_transfers or ()]
+        names = [item.id for item in ctx.external_heats or ()]
     else:
         names = [item.id for item in ctx.process.work_transfers or () if kind in ("", item.kind)]
     base = f"processes/{process}/{what}_transfers"
