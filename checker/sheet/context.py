@@ -13,6 +13,7 @@ from checker.sheet.models import BodyModel
 from checker.sheet.paths import PATHS, Path, WorkFormula
 from checker.sheet.step import Step
 from checker.submission import HeatTransfer, Process, Record
+from checker.substances.tabulated import TabulatedCondensed
 from checker.vocabulary import WORK_KINDS
 
 ENDS: Final = {
@@ -207,8 +208,9 @@ class ProcessContext:
         title = f"Boundary work{of}, {self.process.id}"
         incompressible = self.boundary_work_is_zero(body)
         for path in self.paths_of(body):
-            # At one temperature a body may melt, and its end state is then sought by the balance.
-            if path.work is not None and not (incompressible and path.kind == "isothermal"):
+            # Without change of volume there is no work, and neither p nor the end state need be known for it.
+            held = incompressible and path.kind in ("isothermal", "constant pressure") and not self._expands(body)
+            if path.work is not None and not held:
                 return _work_step(self, body, path.work, output, f"{title} ({path.kind})")
         if incompressible:
             return Step(title, output, (), lambda: (0.0,), "W_b = 0 (incompressible)", "0")
@@ -218,6 +220,11 @@ class ProcessContext:
         """Say whether the model itself excludes boundary work (incompressible)."""
         nominal = self.models[body].at_nominal() if body in self.models else None
         return nominal is not None and nominal.incompressible
+
+    def _expands(self, body: str) -> bool:
+        """Say whether the volume of a liquid or solid follows its temperature, by its stated table."""
+        nominal = self.models[body].at_nominal() if body in self.models else None
+        return isinstance(nominal, TabulatedCondensed) and nominal.columns.volumes is not None
 
     def is_quasi_static_for(self, body: str) -> bool:
         """Say whether a body passes through equilibrium states only, as far as its path and model tell."""

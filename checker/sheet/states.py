@@ -177,6 +177,7 @@ def state_step(plan: StatePlan, pair: tuple[Clue, ...]) -> Step:
         function=_evaluator(plan, names),
         formula=f"{', '.join(others)} = f({symbols}{word})",
         substitution="f(" + ", ".join(f"{{{i}}}" for i in range(len(names))) + f"{word})",
+        takes_none=plan.incompressible,
     )
 
 
@@ -188,7 +189,8 @@ def _evaluator(plan: StatePlan, names: tuple[str, ...]) -> Function:
 
     def evaluate_state(*values: float) -> tuple[Value, ...]:
         substance = plan.model.substance(values[count:])
-        known = dict(zip(names, values[:count], strict=True))
+        # A liquid or solid may have no pressure along a path of constant pressure, and needs none.
+        known = {name: value for name, value in zip(names, values, strict=False) if value is not None}
         if count == 1 and quality is not None and not plan.incompressible:
             known["quality"] = quality
         return outputs_of(substance.state(known, plan.phase))

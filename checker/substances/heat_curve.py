@@ -84,6 +84,13 @@ class Piece:
         )
 
 
+def _finite(value: float) -> float:
+    """Return a value that is a number. Raises NotEvaluable for what grew beyond all numbers."""
+    if not math.isfinite(value):
+        raise NotEvaluable("the stated constants lead to no finite energy or entropy")
+    return value
+
+
 @dataclass(frozen=True)
 class HeatCurve:
     """Pieces in the order of temperature, one beginning where the other ends."""
@@ -129,11 +136,11 @@ class HeatCurve:
 
     def energy(self, temperature: float) -> float:
         """Return u [J/kg]. Raises NotEvaluable outside the curve."""
-        return self.at(temperature).energy_at(temperature)
+        return _finite(self.at(temperature).energy_at(temperature))
 
     def entropy(self, temperature: float) -> float:
         """Return s [J/(kg·K)]. Raises NotEvaluable outside the curve."""
-        return self.at(temperature).entropy_at(temperature)
+        return _finite(self.at(temperature).entropy_at(temperature))
 
     def temperature_of_energy(self, energy: float) -> float:
         """Return the temperature [K] of an internal energy; within a jump, that of the jump. Raises NotEvaluable."""

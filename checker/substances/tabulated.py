@@ -133,7 +133,7 @@ class TabulatedGas(IdealLaw):
         first = self.curves.entropy.low
         at_unit_volume = self.gas_constant * math.log(self.gas_constant * first / DATUM_PRESSURE)
         entropy = self.curves.entropy.entropy(temperature) - at_unit_volume
-        return piece.energy_at(temperature), entropy, piece.heat_at(temperature)
+        return self.curves.energy.energy(temperature), entropy, piece.heat_at(temperature)
 
 
 def make_tabulated(substance: str, constants: Mapping[str, float], table: Sequence[Row]) -> Substance:

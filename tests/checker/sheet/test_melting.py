@@ -176,3 +176,13 @@ def test_a_fraction_of_another_model_is_no_clue() -> None:
         "inputs": {"mass": "1.000 kg"},
     }
     assert energy(case(package), "first") is not None
+
+
+def test_a_path_of_constant_pressure_needs_no_pressure() -> None:
+    """A solid heated at a pressure that nobody states has its end state, no boundary work, and its heat."""
+    package = record({T: "-20.0 °C"}, {"inputs": {T: "-10.0 °C"}})
+    package["processes"][0]["path"] = "constant pressure"
+    found = case(package)
+    assert energy(found, "last") == pytest.approx(-21e3)
+    assert found.value("processes/p/boundary_work") == 0.0
+    assert found.value("processes/p/heat") == pytest.approx(210e3)

@@ -65,3 +65,10 @@ def test_added_heat_is_that_of_a_constant() -> None:
         assert gain == pytest.approx(287.0 * temperature, rel=1e-12)
         own = more.entropy_at(temperature) - RISING.entropy_at(temperature)
         assert own == pytest.approx(287.0 * math.log(temperature / 300.0), abs=1e-10)
+
+
+def test_what_grows_beyond_all_numbers_is_no_energy() -> None:
+    """A piece of absurd extent is not evaluable rather than infinite."""
+    absurd = HeatCurve((Piece(1.0, 1e300, 1.0, 0.0, 0.0, 1e300),))
+    with pytest.raises(NotEvaluable, match="no finite energy"):
+        absurd.energy(1e200)
