@@ -16,6 +16,8 @@ from reports.phrases import words_of
 
 _VALUE: Final = 28 * mm
 _STANDING: Final = 19 * mm
+_LONG: Final = 150
+"""Characters of a formula beyond which it takes the whole width."""
 _COLUMNS: Final = (
     Column("Step", TEXT_WIDTH - 3 * _VALUE - _STANDING),
     Column("Independent", _VALUE, right=True),
@@ -31,7 +33,7 @@ def calculation_sheet(record: RecordReview) -> Any:
     rows: list[Row] = []
     for number, line in enumerate(record.sheet, 1):
         step = _step(number, line)
-        if len(line.outputs) == 1:  # the usual case: the step and its value in one row
+        if len(line.outputs) == 1 and len(_worked(line)) < _LONG:  # the usual case: step and value in one row
             rows.append([step, *_values(line.outputs[0], checked)])
         else:
             rows.append(Band(step))
@@ -41,13 +43,19 @@ def calculation_sheet(record: RecordReview) -> Any:
 
 def _step(number: int, line: SheetLine) -> Any:
     parts: list[str] = [bold(f"{number}  {line.title}")]
-    told = not line.substituted or line.formula.endswith(f"= {line.substituted}")
-    worked = line.formula if told else f"{line.formula} = {line.substituted}"
-    if worked:
+    if worked := _worked(line):
         parts += [line_break(), formula(worked)]
     if line.note:
         parts += [line_break(), line.note]
     return paragraph(CELL, *parts)
+
+
+def _worked(line: SheetLine) -> str:
+    """Return the formula with its numbers: substituted, or listed where they enter in no simple way."""
+    if not line.substituted or line.formula.endswith(f"= {line.substituted}"):
+        return line.formula
+    join = " with " if " = " in line.substituted else " = "
+    return f"{line.formula}{join}{line.substituted}"
 
 
 def _name(value: SheetValue) -> Symbol:

@@ -17,7 +17,10 @@ from reports.plain import capped
 
 _WORD: Final = 20 * mm
 _LABEL: Final = 33 * mm
-_FACT: Final = 34 * mm
+_NAME: Final = 42 * mm
+_SYMBOL: Final = 15 * mm
+_VALUE: Final = 30 * mm
+_LIMIT: Final = TEXT_WIDTH - _NAME - _SYMBOL - 2 * _VALUE
 _HEADS: Final = {"Q": "heat in", "W": "work out"}
 _LONGEST: Final = 40
 """Characters of a label."""
@@ -81,13 +84,14 @@ def _weighted(text: str, strong: bool) -> Any:
 
 
 def _facts(facts: Sequence[TotalsFact]) -> Any:
-    wide = TEXT_WIDTH - _LABEL - _WORD - 2 * _FACT
+    """Return the results beside the sums; a column for what is possible only where there is such a limit."""
+    limited = any(fact.limit for fact in facts)
     columns = (
-        Column("", _LABEL + 9 * mm),
-        Column("", _WORD - 9 * mm + 4 * mm),
-        Column("Stated", _FACT - 4 * mm, right=True),
-        Column("Recomputed", _FACT, right=True),
-        Column("At most by the second law", wide, right=True),
+        Column("", _NAME),
+        Column("", _SYMBOL),
+        Column("Stated", _VALUE, right=True),
+        Column("Recomputed", _VALUE, right=True),
+        Column("At most by the second law" if limited else "", _LIMIT, right=True),
     )
     return ruled_table(columns, [_fact(fact) for fact in facts])
 
