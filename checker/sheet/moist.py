@@ -13,6 +13,7 @@ from checker.sheet.step import Function, Step
 from checker.submission import Body, Record, Role
 from checker.substances.moist_air import is_moist_air
 from checker.substances.moist_content import water_content_at_pressure, water_content_at_volume
+from checker.substances.moist_gas import GASES
 
 WATER_CONTENT: Final = "water_content"
 _RELATIVE: Final = "relative_humidity"
@@ -35,8 +36,8 @@ class WaterSource:
 
 
 def needs_water_content(body: Body) -> bool:
-    """Say whether a body is moist air."""
-    return body.composition is None and is_moist_air(body.substance)
+    """Say whether a body is moist air by a model that follows its water."""
+    return body.composition is None and body.model in GASES and is_moist_air(body.substance)
 
 
 def water_source(record: Record, body: Body) -> WaterSource | None:

@@ -119,3 +119,11 @@ def test_a_given_humidity_of_a_later_state_is_where_it_is_reached() -> None:
     found = case(record)
     assert compared(found, "states/cold/air/temperature").outcome is Outcome.AGREES
     assert compared(found, "states/cold/air/humidity_ratio").outcome is Outcome.AGREES
+
+
+def test_moist_air_of_constant_specific_heat_needs_no_water_content() -> None:
+    """A gas by its constants is calculated as such, whatever humidity is noted beside it."""
+    inputs = {"volume": "2.000 m³", "cv": "0.730 kJ/(kg·K)", "gas_constant": "0.289 kJ/(kg·K)"}
+    found = case(vessel({"relative_humidity": "140 %"}, model="constant specific heat", inputs=inputs))
+    assert "bodies/air/water_content" not in found.values
+    assert isinstance(found.values["processes/cooling/heat"], float)
