@@ -72,7 +72,15 @@ class Piece:
             raise NotEvaluable("no temperature has this entropy", "outside-range")
         if low[1] >= 0.0 or high[1] <= 0.0:
             return self.low if low[1] >= 0.0 else self.high
-        return bracketed_root(lambda t: (self.entropy_at(t) - entropy) / scale, low, high)
+
+        def residual(temperature: float) -> float:
+            return (self.entropy_at(self._within(temperature)) - entropy) / scale
+
+        return self._within(bracketed_root(residual, low, high))
+
+    def _within(self, temperature: float) -> float:
+        """Return a temperature of the piece: between ends far apart, rounding alone may leave them."""
+        return min(max(temperature, self.low), self.high)
 
     def with_heat_added(self, heat: float, datum: float) -> Piece:
         """Return the piece with ``heat`` more specific heat, of which u = heat·T and s = heat·ln(T/datum)."""

@@ -72,3 +72,10 @@ def test_what_grows_beyond_all_numbers_is_no_energy() -> None:
     absurd = HeatCurve((Piece(1.0, 1e300, 1.0, 0.0, 0.0, 1e300),))
     with pytest.raises(NotEvaluable, match="no finite energy"):
         absurd.energy(1e200)
+
+
+def test_ends_far_apart_keep_the_search_between_them() -> None:
+    """Over sixteen decades of temperature the search for an entropy does not leave the piece by rounding."""
+    wide = HeatCurve((Piece(1.0, 1.801439850948199e16, 1.0, 0.0, 0.0, 1.0, 1e-30),))
+    assert wide.temperature_of_entropy(wide.entropy(5.0)) == pytest.approx(5.0, rel=1e-9)
+    assert 1.0 <= wide.temperature_of_entropy(9.9e-168) < 1.1
