@@ -108,7 +108,8 @@ def pressure_missed(
 
 
 def adiabatic_with_heat(case: Case, process: str) -> Yielded:
-    """Yield heat among the inputs of a process that has none by its own path."""
+    """Yield heat among the inputs of a process, or of one of its bodies, that has none by its own path."""
+    yield from _heat_of_adiabatic_body(case, process)
     ctx = case.context(process)
     if ctx is None or not ctx.no_heat:
         return
@@ -129,6 +130,16 @@ def adiabatic_with_heat(case: Case, process: str) -> Yielded:
                 statement=s,
                 suggestion="Remove the loss coefficient, or declare the path that the body really follows.",
             )
+
+
+def _heat_of_adiabatic_body(case: Case, process: str) -> Yielded:
+    for pointer, body, kind in paths.heats_against_paths(case, process):
+        yield Raised(
+            f"The path of {body} is {kind}, and {case.show(pointer, case.given(pointer) or 0.0)} of heat that meets it "
+            f"is an input.",
+            statement=next(iter(case.stated(pointer, Role.INPUT)), None),
+            suggestion="Name the body that the heat meets, or declare the path that this one really follows.",
+        )
 
 
 def free_expansion_with_work(case: Case, process: str) -> Yielded:

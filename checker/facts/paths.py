@@ -171,15 +171,26 @@ def end_pressures(case: Case, process: str, body: str) -> tuple[float, float] | 
     return None if first is None or last is None else (first, last)
 
 
+def heats_against_paths(case: Case, process: str) -> Iterator[tuple[str, str, str]]:
+    """Yield heat items among the inputs that meet a body whose own path has no heat: pointer, body and path."""
+    ctx = case.context(process)
+    for item in ctx.process.heat_transfers or () if ctx and len(ctx.bodies) > 1 else ():
+        pointer = f"processes/{process}/heat_transfers/{item.id}/energy"
+        for body in (item.body, item.from_body, item.to_body):
+            kind = next((path.kind for path in ctx.paths_of(body) if path.no_heat), "") if ctx and body else ""
+            if body and kind and case.given(pointer):
+                yield pointer, body, kind
+
+
 def heat_inputs(case: Case, process: str) -> Iterator[str]:
-    """Yield the pointers of the heat that the inputs of a process give: its total and its items."""
+    """Yield the pointers of the heat that the inputs of a process give: its total and its items from outside."""
     ctx = case.context(process)
     if ctx is None:
         return
     base = f"processes/{process}"
     pointers = [
         f"{base}/heat",
-        *(f"{base}/heat_transfers/{i.id}/energy" for i in ctx.process.heat_transfers or ()),
+        *(f"{base}/heat_transfers/{i.id}/energy" for i in ctx.external_heats or ()),
     ]
     seen: set[str] = set()
     for pointer in pointers:

@@ -18,10 +18,8 @@ SHARED: Final = (
     "energy_change",
     "heat",
     "work",
-    "entropy_generation",
-    "exergy_destruction",
 )
-"""Totals of a process that are the sums of its bodies' shares."""
+"""Totals of a process that are the sums of its bodies' shares; what heat generates between bodies is in no share."""
 CYCLE: Final = {"results/net_work": "work", "results/net_heat": "heat"}
 
 
