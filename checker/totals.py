@@ -122,12 +122,12 @@ def _limit(case: Case, name: str) -> tuple[float | None, str]:
     """Return the Carnot limit of a ratio, and between which temperatures."""
     if name == "coefficient_of_performance":
         limit = highest_performance(case)
-        return limit, "" if limit is None else "reversible cycle between the same places"
+        return limit, "" if limit is None else "reversible between the same places"
     found = extreme_temperatures(case)
     if name != "thermal_efficiency" or found is None:
         return None, ""
     cold, hot = (case.display.absolute("surroundings/temperature", value).text for value in found)
-    return highest_efficiency(case), f"reversible cycle between {cold} K and {hot} K"
+    return highest_efficiency(case), f"reversible between {cold} K and {hot} K"
 
 
 def _sequence_facts(case: Case, base: str, shown: frozenset[str]) -> Iterator[TotalsFact]:

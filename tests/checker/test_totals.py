@@ -42,7 +42,7 @@ def test_the_efficiency_stands_beside_the_carnot_limit() -> None:
     assert efficiency.limit is not None
     assert efficiency.pair.recomputed.value == pytest.approx(87 / 822)
     assert efficiency.limit.value == pytest.approx(1 - 290 / 1500)
-    assert efficiency.limit_basis == "reversible cycle between 290 K and 1500 K"
+    assert efficiency.limit_basis == "reversible between 290 K and 1500 K"
 
 
 def test_a_cooling_cycle_has_its_coefficient_of_performance_and_its_limit() -> None:

@@ -131,7 +131,7 @@ CYCLE = RecordReview(
                     "η",
                     Pair(amount("0.403"), amount("0.4028")),
                     amount("0.8067"),
-                    "reversible cycle between 290 K and 1500 K",
+                    "reversible between 290 K and 1500 K",
                 ),
             ),
         ),

@@ -31,7 +31,7 @@ def pages() -> str:
         "Balance of the cycle Process Q, heat in [kJ] W, work out [kJ] ΔU [kJ]",
         "rise recomputed 216.0 0 216.0 0.1 stated 216",
         "Sum recomputed 87.0 87.0 0 0.3 stated 86",
-        "thermal efficiency η 0.403 0.4028 0.8067, reversible cycle between 290 K and 1500 K",
+        "thermal efficiency η 0.403 0.4028 0.8067, reversible between 290 K and 1500 K",
         "ring: change of internal energy + ΔU – −400.0 kJ",
         "Between the bodies, beside the sums heat into-oil, from ring to oil E",
         "Flows between the bodies Energy flow of quenching, recomputed",
@@ -54,7 +54,7 @@ def test_the_terminal_has_a_line_for_bodies_cycle_and_notes() -> None:
     for expected in (
         "  Change of energy, quenching: ring −400.0 kJ, oil +400.0 kJ.",
         "  Sums of the cycle, recomputed: Q 87.0 kJ; W 87.0 kJ; ΔU 0 kJ; S_gen 0.3 kJ/K; "
-        "thermal efficiency 0.4028 (at most 0.8067, reversible cycle between 290 K and 1500 K).",
+        "thermal efficiency 0.4028 (at most 0.8067, reversible between 290 K and 1500 K).",
         "  Noted: process rising of sequence heating has no extent: the volume at the stop is not reached.",
     ):
         assert expected in text
