@@ -6,7 +6,7 @@ from collections.abc import Callable, Iterable, Iterator, Mapping
 from dataclasses import dataclass, replace
 from typing import NamedTuple
 
-from tests.benchmarks.seeded.units import Unit, half_width, stated_value, text_of
+from tests.benchmarks.seeded.units import Unit, decimals_for, decimals_of, half_width, stated_value, text_of
 
 Values = dict[str, float]
 Function = Callable[[Values], tuple[float, ...]]
@@ -47,16 +47,23 @@ class Claim:
 
     def text(self, value: float) -> str:
         """Return the value as it is written."""
-        return text_of(self.sign * value, self.unit, self.decimals)
+        return text_of(self.sign * value, self.unit, self._decimals(value))
+
+    def _decimals(self, value: float) -> int:
+        """Return the decimals: a value far smaller than the right one keeps three digits, a far larger one has ten."""
+        size = abs(value - self.unit.zero)
+        if self.kind == "temperature" or size <= 1e-7 * self.reference:
+            return self.decimals
+        least, most = (decimals_for(size, self.unit, digits) for digits in (3, 10))
+        return max(min(self.decimals, most), min(least, self.decimals + 6))
 
     def value(self, text: str) -> float:
         """Return what a reader takes from the text. [SI]"""
         return self.sign * stated_value(text, self.unit)
 
-    @property
-    def half_width(self) -> float:
-        """Return half a unit of the last place. [SI]"""
-        return half_width(self.unit, self.decimals)
+    def half_width(self, text: str) -> float:
+        """Return half a unit of the last place of a text. [SI]"""
+        return half_width(self.unit, decimals_of(text, self.unit))
 
 
 @dataclass(frozen=True)

@@ -38,8 +38,9 @@ class Draft:
         self.givens.append(Given(key, text, un.stated_value(text, unit), kind, unit))
         return text
 
-    def number(self, low: float, high: float, digits: int = 3) -> str:
-        """Return a random number as text with a number of digits of its upper end."""
+    def number(self, low: float, high: float, digits: int = 0) -> str:
+        """Return a random number as text with a number of digits of its upper end (three or four if none is said)."""
+        digits = digits or self.rng.choice((3, 4))
         decimals = un.decimals_for(high, un.NONE, digits)
         return un.number_text(self.rng.uniform(low, high), max(decimals, 0))
 

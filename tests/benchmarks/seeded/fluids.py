@@ -15,9 +15,13 @@ PAIRS = ("tp", "tx", "px", "tv", "pv", "uv", "sv", "hp", "ps", "pu")
 
 @dataclass(frozen=True)
 class RealFluid:
-    """A pure fluid; ``name`` is the one in ``equations.json``."""
+    """A pure fluid; ``name`` is the one in ``equations.json``.
+
+    ``datum`` is the (T [K], p [Pa]) where u and s are zero; without one the equation's own zeros hold.
+    """
 
     name: str
+    datum: tuple[float, float] | None = None
 
     @property
     def equation(self) -> Equation:
@@ -35,7 +39,18 @@ class RealFluid:
         pair = {"pt": "tp", "vu": "uv", "vs": "sv", "vp": "pv"}.get(pair, pair)
         if pair not in PAIRS or not all(math.isfinite(value) for value in known.values()):
             raise NoStateError(f"cannot take {pair}")
-        return _found(self.name, pair, *(known[name] for name in pair))
+        u0, s0 = self.zeros
+        shift = {"u": u0, "h": u0, "s": s0}
+        found = _found(self.name, pair, *(known[name] + shift.get(name, 0.0) for name in pair))
+        return found._replace(u=found.u - u0, s=found.s - s0)
+
+    @property
+    def zeros(self) -> tuple[float, float]:
+        """Return the equation's own u and s at the datum."""
+        if self.datum is None:
+            return 0.0, 0.0
+        there = _found(self.name, "tp", *self.datum)
+        return there.u, there.s
 
     def saturation_temperature(self, p: float) -> float:
         """Return T at a saturation pressure."""

@@ -123,8 +123,9 @@ class PolynomialGas(_Gas):
 
     def specific_heat(self, t: float) -> float:
         """Return c_p. [J/(kg·K)]"""
-        row = POLYNOMIALS[self.name][1 if t <= BREAK else 2]
-        return self.gas_constant * sum(a * t**k for k, a in enumerate(row))
+        _, below, above = POLYNOMIALS[self.name]
+        row = below if t <= BREAK else above
+        return self.gas_constant * sum(float(a * t**k) for k, a in enumerate(row))
 
     def energy(self, t: float) -> float:
         """Return u(T): the integral of c_p − R."""
@@ -169,6 +170,38 @@ class IdealPart(_Gas):
         alpha, slope = equation.ideal(equation.t_r / t)
         delta = P_REF / (self.gas_constant * t) / equation.rho_r
         return self.gas_constant * (slope - alpha - math.log(delta))
+
+
+@dataclass(frozen=True)
+class Melting:
+    """A body that melts at one temperature; u and s of its states in closed form, zero for the solid there. SI."""
+
+    melting: float
+    latent: float
+    solid: float
+    liquid: float
+
+    @property
+    def gas_constant(self) -> float:
+        """Return nan: it is no gas."""
+        return NAN
+
+    def at(self, **known: float) -> State:
+        """Return the state at t (off the melting temperature) or u; x is the molten fraction."""
+        u = known["u"] if "u" in known else self._energy(known["t"])
+        if u < 0.0:
+            t = self.melting + u / self.solid
+            return State(t, NAN, NAN, u, self.solid * math.log(t / self.melting), 0.0)
+        if u <= self.latent:
+            return State(self.melting, NAN, NAN, u, u / self.melting, u / self.latent)
+        t = self.melting + (u - self.latent) / self.liquid
+        s = self.latent / self.melting + self.liquid * math.log(t / self.melting)
+        return State(t, NAN, NAN, u, s, 1.0)
+
+    def _energy(self, t: float) -> float:
+        if t < self.melting:
+            return self.solid * (t - self.melting)
+        return self.latent + self.liquid * (t - self.melting)
 
 
 @dataclass(frozen=True)

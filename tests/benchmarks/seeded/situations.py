@@ -2,7 +2,9 @@
 
 from __future__ import annotations
 
+from tests.benchmarks.seeded.composites import equalised, melted, quench
 from tests.benchmarks.seeded.condensed import heated_store, heated_to, moving_body
+from tests.benchmarks.seeded.cycles import cycle, gas_chain, stopped_piston
 from tests.benchmarks.seeded.onebody import Maker, gas_process
 from tests.benchmarks.seeded.steam import WET, wet_process
 
@@ -39,5 +41,12 @@ SITUATIONS: dict[str, Maker] = (
         "store heated electrically with a loss": heated_store,
         "body heated by a given heat with a loss": heated_to,
         "moving and lifted body": moving_body,
+        "bodies quenched": quench,
+        "two vessels equalised": equalised,
+        "store that melts": melted,
+        "chain of processes with totals": gas_chain,
+        "power cycle": cycle(cooling=False),
+        "cooling cycle": cycle(cooling=True),
+        "piston with stops": stopped_piston,
     }
 )

@@ -105,7 +105,11 @@ def _wrong(
         state, fluid = found(values), real(values)
         if not math.isnan(state.x) or state.v < 1.5 / fluid.equation.rho_r:
             raise NoStateError("not a gas")
-        return IdealPart(fluid.name).at(**{name: values[key] for name, key in pair.items()})
+        u0, s0 = fluid.zeros
+        shift = {"u": u0, "h": u0, "s": s0}
+        known = {name: values[key] + shift.get(name, 0.0) for name, key in pair.items()}
+        near = IdealPart(fluid.name).at(**known)
+        return near._replace(u=near.u - u0, s=near.s - s0)
 
     def neighbour(shift: float) -> Callable[[Values], State]:
         def wrong(values: Values) -> State:
@@ -120,7 +124,9 @@ def _wrong(
 
     def elsewhere(values: Values) -> State:
         fluid = real(values)
-        return RealFluid(TABLES[fluid.name]).at(**{name: values[key] for name, key in pair.items()})
+        return RealFluid(TABLES[fluid.name], fluid.datum).at(
+            **{name: values[key] for name, key in pair.items()}
+        )
 
     def universal(values: Values) -> State:
         model, state = model_of(values), found(values)
@@ -187,7 +193,8 @@ def _mixed_up(
 
 
 def claim_state(draft: Draft, state: str, pointer: str, names: str = "tpvusx", absolute: bool = True) -> None:
-    """Say which properties of a state may be written."""
+    """Say which properties of a state may be written; u, h and s only where a datum tells what they mean."""
+    absolute = absolute and (draft.notes.get("fluid", "Water") == "Water" or "datum" in draft.notes)
     own = {given.key for given in draft.givens}
     words = {
         "t": ("temperature", "temperature", un.CELSIUS, "temperature"),

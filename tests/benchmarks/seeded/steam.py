@@ -40,7 +40,6 @@ def wet_process(situation: str, wet: Wet) -> Maker:
 
     def make(rng: random.Random) -> Draft:
         draft = Draft(rng, situation, wet.hard)
-        draft.notes["fluid"] = wet.fluid
         head_of(draft)
         adiabatic = wet.path == "isentropic"
         heat = "Q" if wet.known == "heat" else None
@@ -51,7 +50,7 @@ def wet_process(situation: str, wet: Wet) -> Maker:
         volume = rng.random() < 0.5
         skeleton(draft, wet.path, leg, volume)
         body, process = draft.tree["bodies"]["body"], draft.tree["processes"][0]
-        model_of = real_fluid(body, wet.fluid)
+        model_of = real_fluid(draft, body, wet.fluid)
         mass_or_volume(draft, body, 1.5, volume)
         _first(draft, wet, model_of)
         mass_step(draft, model_of)

@@ -168,7 +168,7 @@ def moved_claims(found: Written, slips: Sequence[Slip]) -> frozenset[str]:
         for claim in found.chain.claims
         if abs(claim.value(texts[claim.key]) - found.truth[claim.key])
         > MOVED_SHARE * _reference(claim.kind, claim.reference, found.truth[claim.key])
-        + MOVED_HALF_WIDTHS * claim.half_width
+        + MOVED_HALF_WIDTHS * claim.half_width(texts[claim.key])
     )
 
 
@@ -182,7 +182,7 @@ def moved_by(found: Written, slip: Slip, others: tuple[Slip, ...]) -> frozenset[
         for claim in found.chain.claims
         if abs(claim.value(along[claim.key]) - claim.value(without[claim.key]))
         > MOVED_SHARE * _reference(claim.kind, claim.reference, found.truth[claim.key])
-        + MOVED_HALF_WIDTHS * claim.half_width
+        + MOVED_HALF_WIDTHS * claim.half_width(along[claim.key])
     )
 
 

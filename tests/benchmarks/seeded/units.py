@@ -67,6 +67,11 @@ def half_width(unit: Unit, decimals: int) -> float:
     return float(0.5 * 10.0**-decimals * unit.size)
 
 
+def decimals_of(text: str, unit: Unit) -> int:
+    """Return the decimals of a text."""
+    return len(text.removesuffix(unit.text).strip().partition(".")[2])
+
+
 def decimals_for(size: float, unit: Unit, digits: int) -> int:
     """Return the decimals that write something of a size [SI, a difference] with a number of digits."""
     number = abs(size) / unit.size

@@ -23,6 +23,8 @@ DIGITS = {
 def input_slips(chain: Chain, walls: frozenset[str] = frozenset()) -> Iterator[Slip]:
     """Yield every way in which an input can be used wrongly; ``walls`` are keys of boundary temperatures."""
     for given in chain.givens:
+        if given.kind == "shared":
+            continue  # several bodies have it, each by a text of its own
         for kind, value in _of_kind(given, chain, walls):
             if value != given.value:
                 yield Slip(kind, given.key, value=value)

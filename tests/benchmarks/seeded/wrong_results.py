@@ -99,4 +99,4 @@ def _rewrites(claim: Claim, molar_mass: float | None, duration: str | None) -> I
     if kind in RATIOS:
         yield "reciprocal", lambda right, values: 1.0 / right
     if kind == "performance":
-        yield "heating for cooling", lambda right, values: right + values["cop sign"]
+        yield "heating for cooling", lambda right, values: right + 1.0
