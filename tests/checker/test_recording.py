@@ -9,6 +9,7 @@ import pytest
 from checker import review
 from checker.findings import Outcome
 from tests.checker.cases import gas_bottle, package
+from tests.checker.records_of_several import quench, stops
 
 
 def test_every_comparison_has_its_place_in_the_file():
@@ -69,3 +70,29 @@ def test_states_of_moist_air_list_their_humidity():
         found = review(package(record), name="trial.json")
         names = {cell.name for cell in found.records[0].states[0].cells}
         assert names & {"relative_humidity", "humidity_ratio"} == listed
+
+
+def test_a_process_without_extent_is_noted():
+    """50 kJ do not lift the piston: the review says so, beside what it assumed."""
+    record = review(package(stops("50 kJ"))).records[0]
+    assert record.noted == (
+        "process lifting of sequence all has no extent: the pressure that lifts the piston (150 kPa) is not reached",
+    )
+    assert [table.name for table in record.totals] == ["all"]
+
+
+def test_flows_are_recorded_without_diagrams():
+    """They cost no property, so that every report has them."""
+    record = review(package(quench()), diagrams=False).records[0]
+    assert [(flow.process, flow.kind) for flow in record.flows] == [
+        ("quenching", "energy"),
+        ("quenching", "entropy"),
+    ]
+
+
+def test_listed_numbers_are_told_once():
+    """Two bodies at rest have one ΔKE = 0 in the list of what the closing starts from, and no gaps."""
+    sheet = review(package(quench())).records[0].sheet
+    closing = next(line.substituted for line in sheet if line.title.startswith("Closing"))
+    assert closing.count("ΔKE = 0 kJ") == 1
+    assert "…" not in closing
