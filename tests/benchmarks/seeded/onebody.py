@@ -141,14 +141,16 @@ def boundary(
 Maker = Callable[[random.Random], Draft]
 
 
-def gas_process(situation: str, path: str, kind: str, fluid: str | None = None) -> Maker:
-    """Return the maker of a situation: a gas (or real fluid) along a path."""
+def gas_process(
+    situation: str, path: str, kind: str, fluid: str | None = None, reversible: bool = False
+) -> Maker:
+    """Return the maker of a gas or fluid along a path; ``reversible`` with a wall as warm as the gas."""
 
     def make(rng: random.Random) -> Draft:
-        draft = Draft(rng, situation)
+        draft = Draft(rng, situation, hard=reversible)
         head_of(draft)
         adiabatic = path in ADIABATIC
-        reservoir = not adiabatic and rng.random() < 0.6
+        reservoir = not adiabatic and not reversible and rng.random() < 0.6
         leg = Leg(
             "change",
             "1",
@@ -165,7 +167,14 @@ def gas_process(situation: str, path: str, kind: str, fluid: str | None = None) 
         mass_or_volume(draft, body, 1.0, volume)
         _two_states(draft, leg, model_of, kind)
         add_process(draft, leg, model_of)
-        _finish(draft, leg, process)
+        if reversible:
+            first = next(given for given in draft.givens if given.key == "1.t")
+            text = draft.given(
+                "tb", "temperature", first.text.removesuffix(first.unit.text).strip(), first.unit
+            )
+            process["heat_transfers"][0]["boundary_temperature"] = text
+        else:
+            _finish(draft, leg, process)
         return draft
 
     return make

@@ -29,7 +29,7 @@ def written_chain(draft: Draft) -> Chain:
     for claim in draft.claims:
         value = values.get(claim.key, math.nan)
         reference = references.get(claim.key, abs(value))
-        if not math.isfinite(value) or reference <= 0.0:
+        if not math.isfinite(value) or reference <= 1e-12:
             continue
         kept = rng.random() < share
         claims.append((kept, rounded(claim, value, reference, digits, early, units, draft.groups, rng)))
@@ -56,9 +56,12 @@ def references_of(draft: Draft, values: Mapping[str, float]) -> dict[str, float]
             name_of = {"u": "uh", "s": "s"}[name]
             same = [v for k, v in values.items() if k.split(".")[-1] in name_of and k[:1].isdigit()]
             sizes = [v for v in same if math.isfinite(v)]
-            size = max(sizes) - min(sizes) or size
+            size = max(max(sizes) - min(sizes), 0.02 * size)
         if name == "quality":
             size = 1.0
+        if name == "entropy" and size < 1e-9:  # an isentropic change: its energies tell what is small
+            energies = draft.references.get(group.replace("entropy", "energy"), [])
+            size = max((abs(values[key]) for key in energies if key in values), default=0.0) / 300.0
         found.update(dict.fromkeys(keys, size))
     return found
 
@@ -79,7 +82,11 @@ def rounded(
         choice = ENERGIES if kind == "energy" else ENTROPIES
         unit = units.setdefault(groups.get(claim.key, claim.key), fitting(reference, choice))
         coarse = decimals_for(reference, unit, digits)
-        decimals = max(coarse, min(decimals_for(value, unit, digits), coarse + 3)) if value else coarse
+        decimals = (
+            max(coarse, min(decimals_for(value, unit, digits), coarse + 3))
+            if abs(value) > 1e-9 * reference
+            else coarse
+        )
     elif kind == "temperature":
         decimals = 2 if early else rng.choice((1, 1, 1, 2, 0)) if digits < 5 else 2
     elif kind in ("specific energy", "specific entropy"):

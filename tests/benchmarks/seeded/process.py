@@ -167,11 +167,14 @@ def _work(draft: Draft, leg: Leg, model_of: ModelOf) -> None:
         function = lambda v: (v[a + "p"] * swept(v),)  # noqa: E731
         parents = (m, a + "p", a + "v", b + "v")
     elif leg.path == "isothermal":
-        log: Callable[[Values], float] = lambda v: math.log(v[b + "v"] / v[a + "v"])  # noqa: E731
-        function = lambda v: (v[m] * v[a + "p"] * v[a + "v"] * log(v),)  # noqa: E731
+
+        def logarithm(v: Values) -> float:
+            return v[m] * model_of(v).gas_constant * v[a + "t"] * math.log(v[b + "v"] / v[a + "v"])
+
+        function, parents = (lambda v: (logarithm(v),)), (m, a + "t", a + "v", b + "v")
         slips = [
-            ("decimal logarithm", lambda v: (v[m] * v[a + "p"] * v[a + "v"] * log(v) / math.log(10.0),)),
-            ("ratio inverted", lambda v: (-v[m] * v[a + "p"] * v[a + "v"] * log(v),)),
+            ("decimal logarithm", lambda v: (logarithm(v) / math.log(10.0),)),
+            ("ratio inverted", lambda v: (-logarithm(v),)),
         ]
     elif leg.path == "isentropic":
         du = leg.key("du")
@@ -289,8 +292,10 @@ def _entropy_change(draft: Draft, leg: Leg, model_of: ModelOf) -> None:
         model = model_of(v)
         if isinstance(model, Solid):
             return v[m] * model.heat * math.log(ratio)
-        r = constant(v).constant
-        return v[m] * ((constant(v).cv + r) * math.log(ratio) - r * math.log(v[b + "p"] / v[a + "p"]))
+        r, cv = constant(v).constant, constant(v).cv
+        if leg.path == "constant volume":
+            return v[m] * cv * math.log(ratio)
+        return v[m] * ((cv + r) * math.log(ratio) - r * math.log(v[b + "p"] / v[a + "p"]))
 
     def warm(v: Values) -> float:
         return v[b + "t"] / v[a + "t"]
@@ -323,6 +328,8 @@ def _entropy_change(draft: Draft, leg: Leg, model_of: ModelOf) -> None:
         ("states swapped", lambda v: (-change(v),)),
         ("mass left out", lambda v: (change(v) / v[m],)),
     ]
+    if leg.path == "isentropic":
+        slips = []  # zero by its name; nobody works it out
     if leg.wall and leg.path != "isentropic":
         q = leg.key("q")
         mean: Function = lambda v: (v[q] / (0.5 * (v[a + "t"] + v[b + "t"])),)  # noqa: E731

@@ -41,6 +41,9 @@ SITUATIONS: dict[str, Maker] = (
         "store heated electrically with a loss": heated_store,
         "body heated by a given heat with a loss": heated_to,
         "moving and lifted body": moving_body,
+        "reversible isothermal gas": gas_process(
+            "reversible isothermal gas", "isothermal", "constant", reversible=True
+        ),
         "bodies quenched": quench,
         "two vessels equalised": equalised,
         "store that melts": melted,
