@@ -98,6 +98,8 @@ class Case:
         value = self.values.get(key)
         if isinstance(value, NotEvaluable):
             return value.reason
+        if key in self.moves.unsettled:
+            return "the uncertainty of what it is made from reaches where it has no value"
         return self.plan.sheet.missing.get(key, "it follows from no input")
 
     def failure(self, pointer: str) -> NotEvaluable | None:
@@ -108,6 +110,15 @@ class Case:
     def uncertainty(self, pointer: str) -> float:
         """Return the expanded uncertainty of the independent value. [SI]"""
         return self.moves.uncertainty.get(self.key(pointer), 0.0)
+
+    def uncertainty_towards_zero(self, pointer: str) -> float:
+        """Return the expanded uncertainty of the independent value on the side on which zero lies. [SI]"""
+        below, above = self.moves.sides(self.key(pointer))
+        return below if (self.value(pointer) or 0.0) > 0.0 else above
+
+    def is_unsettled(self, pointer: str) -> bool:
+        """Say whether the uncertainty of what a value is made from reaches where it has none."""
+        return self.key(pointer) in self.moves.unsettled
 
     def digit_move(self, pointer: str) -> float:
         """Return what the last digits of the inputs would move. [SI]"""

@@ -10,6 +10,7 @@ from checker.case import Case
 from checker.comparison.carried import carry
 from checker.comparison.compare import compare_all
 from checker.comparison.datums import shifts_of
+from checker.comparison.effects import Linked
 from checker.comparison.moves import moves_of
 from checker.comparison.references import References
 from checker.display import display_of
@@ -28,7 +29,8 @@ def make_case(head: PackageHead, record: Record, basis: Basis, others: Mapping[s
     values = evaluate(sheet.steps, leaves)
     references = References(sheet, values, basis)
     shifts = shifts_of(record, plan, values, references)
-    moves = moves_of(record, sheet, values, plan.substances, basis)
+    linked_moves = _linked_moves(plan, others)
+    moves = moves_of(record, sheet, values, plan.substances, basis, references.allowance, linked_moves)
     carried_leaves = {**plan.leaves.values, **_linked(plan, others, carried=True)}
     carried = carry(followed, plan, carried_leaves, values, shifts)
     compared = compare_all(record, sheet, values, carried, moves, references, shifts, basis)
@@ -74,6 +76,15 @@ def _linked(plan: RecordPlan, others: Mapping[str, Case], carried: bool) -> dict
         if value is not None:
             found[link.key] = value
     return found
+
+
+def _linked_moves(plan: RecordPlan, others: Mapping[str, Case]) -> dict[str, Linked]:
+    """Return leaf → how the quantity of another record moves from which it comes."""
+    return {
+        link.key: Linked(case.moves, case.key(link.pointer))
+        for link in plan.sheet.links
+        if (case := others.get(link.record)) is not None
+    }
 
 
 def _value(case: Case, pointer: str, carried: bool) -> float | None:

@@ -27,7 +27,7 @@ TOP_LEVEL = {
 }
 
 LAYERS = (
-    {"quantity", "outcomes", "problems", "figures", "cautions", "tool", "progress", "outputs"},
+    {"quantity", "outcomes", "problems", "figures", "budget", "cautions", "tool", "progress", "outputs"},
     {"findings"},
     {"term", "document", "substances"},
     {"vocabulary"},
@@ -139,7 +139,7 @@ def test_rules_open_no_file():
 
 def test_reports_know_the_findings_only():
     """A writer gets a review; it needs nothing else of the checker, and no rules."""
-    known = ("checker.findings", "checker.figures")
+    known = ("checker.findings", "checker.figures", "checker.budget")
     stray = [i for i in from_package("reports") if own(i[1]) in ("checker", "rules") and i[1] not in known]
     assert stray == []
 

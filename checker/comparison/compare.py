@@ -7,11 +7,14 @@ from collections.abc import Mapping
 from dataclasses import dataclass, replace
 
 from checker.basis import Basis
+from checker.budget import Budget, Kind, Method
+from checker.comparison.budget import budget_of
 from checker.comparison.carried import Carried
 from checker.comparison.datums import NO_SHIFT, Shift
 from checker.comparison.lineage import Lineage
 from checker.comparison.moves import Moves
 from checker.comparison.references import References
+from checker.comparison.sources import standard_uncertainty
 from checker.findings import Outcome, Standing
 from checker.outcomes import NotEvaluable
 from checker.sheet.keys import again, given
@@ -41,7 +44,7 @@ class Compared:
     independent, carried : float, None or NotEvaluable
         Recomputed from inputs alone, and from the originator's own stated values.
     tolerance : float
-        Allowance + U (k = 2), which includes the half-width of the stated digits.
+        Allowance + U (k = 2) on the side of the deviation; U includes the half-width of the stated digits.
     digit_move : float
         What the last digits of the inputs would move.
     open_tolerance : float
@@ -50,6 +53,8 @@ class Compared:
         Beyond the tolerance, but the inputs' last digits or the stated value's open zeros explain it.
     inherits_from : tuple of str
         Keys of wrong stated ancestors.
+    budget : Budget
+        What the tolerance is made of.
     """
 
     statement: Statement
@@ -66,6 +71,7 @@ class Compared:
     outcome: Outcome
     standing: Standing
     shift: Shift
+    budget: Budget
     reason: str = ""
     explained_by_digits: bool = False
     inherits_from: tuple[str, ...] = ()
@@ -141,15 +147,14 @@ def _compare(
     shift = shifts.get(statement.pointer, NO_SHIFT)
     independent = _value_of(key, sheet, values, shift)
     stated = statement.value - shift.value
-    k = basis.coverage_factor
     size = independent if isinstance(independent, float) else stated
-    half_width = _half_width(statement, references.reference(key, size))
-    allowance = references.allowance(key, size)
-    propagated = moves.uncertainty.get(key, 0.0)
-    tolerance = allowance + _expanded(half_width, propagated, k)
+    half_width = _half_width(statement, references.reference(key, size), basis)
+    budget = budget_of(key, size, half_width, moves, references, basis)
+    deviation = stated - size
+    tolerance = budget.tolerance(deviation)
+    propagated = moves.sides(key)[deviation > 0.0]
     widest = max(statement.quantity.half_width, statement.quantity.open_half_width)
-    open_tolerance = allowance + _expanded(widest, propagated, k)
-    move = moves.digits.get(key, 0.0)
+    open_tolerance = budget.allowance + _expanded(widest, propagated, basis.coverage_factor)
     bare = Compared(
         statement,
         key,
@@ -157,25 +162,28 @@ def _compare(
         independent,
         carried.value(key),
         None,
-        allowance,
+        budget.allowance,
         tolerance,
         open_tolerance,
         tolerance + carried.spread(key),
-        move,
+        moves.digits.get(key, 0.0),
         Outcome.NOT_EVALUABLE,
         Standing.NOT_EVALUABLE,
         shift,
+        budget,
     )
     return _judged(bare, references, key in moves.broken)
 
 
-def _half_width(statement: Statement, reference: float) -> float:
+def _half_width(statement: Statement, reference: float, basis: Basis) -> float:
     """Return the half-width that counts for the tolerance.
 
     Inputs are exact as written unless they carry ±. A zero, and a quality or efficiency, whose digits are coarser
     than a tenth of the reference quantity is taken as written too: it is the claim of nothing, or of all.
     """
     quantity = statement.quantity
+    if statement.role is Role.INPUT and quantity.plus_minus is not None:
+        return math.sqrt(3.0) * standard_uncertainty(statement, basis)
     if quantity.plus_minus is not None:
         return quantity.half_width
     exact = quantity.value == 0.0 or statement.term.allowance is Allowance.FRACTION
@@ -207,8 +215,10 @@ def _judged(bare: Compared, references: References, broken: bool) -> Compared:
         return replace(bare, outcome=Outcome.WRONG, reason="it does not exist in this state")
     deviation = bare.stated - value
     bare = replace(bare, deviation=deviation)
-    if abs(deviation) <= bare.tolerance:
+    if abs(deviation) <= bare.tolerance and not _hangs_on_unsettled(bare.budget, deviation):
         return replace(bare, outcome=Outcome.AGREES)
+    if bare.budget.method is Method.UNSETTLED:
+        return replace(bare, reason="the uncertainty of what it is made from reaches where it has no value")
     limit = ILL_CONDITIONED * references.reference(bare.key, value)
     hidden = abs(deviation) <= bare.tolerance + CLEAR_OF_DIGITS * bare.digit_move
     if broken or (bare.digit_move > limit and hidden):
@@ -220,6 +230,12 @@ def _judged(bare: Compared, references: References, broken: bool) -> Compared:
         outcome=Outcome.WRONG,
         explained_by_digits=abs(deviation) <= max(bare.open_tolerance, bare.tolerance + bare.digit_move),
     )
+
+
+def _hangs_on_unsettled(budget: Budget, deviation: float) -> bool:
+    """Say whether only an uncertainty that could not be settled would let a deviation pass."""
+    certain = budget.allowance + budget.size_of(Kind.DIGITS)
+    return budget.method is Method.UNSETTLED and abs(deviation) > certain
 
 
 def _with_standing(c: Compared, lineage: Lineage, carried: Carried, wrong: set[str]) -> Compared:

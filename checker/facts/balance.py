@@ -38,13 +38,17 @@ def entropy_noise(case: Case, process: str) -> float:
 
 
 def generation(case: Case, process: str, name: str) -> Deviation | None:
-    """Return an entropy generation with its uncertainty alone: the second law knows no allowance."""
+    """Return an entropy generation with its own uncertainty alone: the second law knows no allowance.
+
+    The uncertainty is that of the generation, in which what two of its terms share moves both, on the side on which
+    zero lies. None where there is no value, or none that its uncertainty lets judge.
+    """
     pointer = f"processes/{process}/{name}"
     value = case.value(pointer)
-    if value is None:
+    if value is None or case.is_unsettled(pointer):
         return None
     floor = entropy_noise(case, process)
-    return Deviation(value, case.uncertainty(pointer) + floor, case.digit_move(pointer))
+    return Deviation(value, case.uncertainty_towards_zero(pointer) + floor, case.digit_move(pointer))
 
 
 def energy_residual(case: Case, process: str) -> Deviation | None:
