@@ -17,6 +17,8 @@ from checker.submission import Role
 FEWEST: float = 1e-4
 MOST: float = 1e7
 """Between these magnitudes a number is written without an exponent."""
+NOISE: float = 1e-6
+"""Part of the tolerance below which a recomputed value is zero."""
 
 
 def corrections_of(case: Case, locator: Locator) -> tuple[Correction, ...]:
@@ -37,6 +39,8 @@ def corrections_of(case: Case, locator: Locator) -> tuple[Correction, ...]:
 def _corrected_text(c: Compared, independent: float) -> str:
     """Return the text of a stated quantity with the recomputed number, to as many significant digits."""
     quantity = c.statement.quantity
+    if abs(independent) <= NOISE * c.tolerance:
+        independent = 0.0  # what arithmetic leaves of nothing
     value = quantity.number_of(c.statement.sign * (independent + c.shift.value))
     return quantity.text.replace(quantity.number_text, number_like(quantity.number_text, value), 1)
 
@@ -55,6 +59,8 @@ def number_like(written: str, value: float) -> str:
     digits = max(len("".join(ch for ch in mantissa if ch.isdigit()).lstrip("0")), 1)
     if value == 0.0:
         return "0"
+    if not mantissa.strip("-−+0."):  # of a zero the decimals are all that tells its digits
+        return f"{value:.{len(mantissa.partition('.')[2])}f}"
     if not FEWEST <= abs(value) < MOST or "e" in written.lower():
         return f"{value:.{digits - 1}e}"
     text = f"{value:.{digits - 1}e}"

@@ -141,13 +141,16 @@ CALLS = sorted(
 )
 
 
+OPTIONS = ("--pdf", "--json", "--sarif", "--corrected")
+
+
 @pytest.mark.parametrize("line", CALLS)
 def test_a_command_of_the_readme_does_what_it_names(folder: Path, line: str):
     """It leaves with 0 on accepted packages, and writes every file (or folder of files) that an option names."""
     words = shlex.split(line.partition(">")[0])[1:]
     out, err = io.StringIO(), io.StringIO()
     assert run(words, out, err) == Exit.ACCEPTED, err.getvalue()
-    named = [words[i + 1] for i, word in enumerate(words) if word in ("--pdf", "--json", "--sarif")]
+    named = [words[i + 1] for i, word in enumerate(words) if word in OPTIONS]
     assert [name for name in named if name != "-" and not (folder / name).exists()] == []
     assert out.getvalue() or named
 
