@@ -1,4 +1,4 @@
-"""Corrections: the recomputed number in place of the wrong one, to the originator's digits, and nothing else changed."""
+"""Corrections: the recomputed number for the wrong one, to the originator's digits, and nothing else changed."""
 
 from __future__ import annotations
 
@@ -10,7 +10,6 @@ import pytest
 from checker import Verdict, review
 from checker.correction import corrected_file, number_like
 from checker.findings import Correction, Location
-
 from tests.checker.cases import gas_bottle, package
 
 DEMO = Path(__file__).parents[2] / "fixtures" / "demo"
