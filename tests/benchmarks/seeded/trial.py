@@ -145,12 +145,14 @@ def _chosen(found: Written, rng: random.Random, kind: str | None, count: int) ->
 
 
 def _apart(found: Written, before: tuple[Slip, ...], slip: Slip) -> bool:
-    """Say whether a second slip acts in a place of its own and still counts on top of the first one."""
+    """Say whether a second slip acts in a place of its own, and each still counts on top of the other."""
     if not before:
         return True
     if any(slip.key == other.key for other in before):
         return False
-    return bool(moved_by(found, slip, before))
+    return bool(moved_by(found, slip, before)) and all(
+        moved_by(found, other, tuple(o for o in (*before, slip) if o is not other)) for other in before
+    )
 
 
 def counts(found: Written, slips: Sequence[Slip]) -> bool:
