@@ -37,7 +37,8 @@ def calculation_sheet(record: RecordReview) -> Any:
             rows.append([step, *_values(line.outputs[0], checked)])
         else:
             rows.append(Band(step))
-            rows += [[_name(value), *_values(value, checked)] for value in line.outputs]
+            several = len({_whose(value) for value in line.outputs}) > 1
+            rows += [[_name(value, several), *_values(value, checked)] for value in line.outputs]
     return ruled_table(_COLUMNS, rows) if rows else None
 
 
@@ -58,10 +59,17 @@ def _worked(line: SheetLine) -> str:
     return f"{line.formula}{join}{line.substituted}"
 
 
-def _name(value: SheetValue) -> Symbol:
-    """Return the last part of a pointer in words, with its symbol."""
+def _whose(value: SheetValue) -> str:
+    """Return in words whose quantity a pointer names, such as ``air in lifted``."""
+    parts = value.quantity.split("/")[:-1]
+    return f"{parts[2]} in {parts[1]}" if parts[:1] == ["states"] and len(parts) == 3 else "/".join(parts[1:])
+
+
+def _name(value: SheetValue, several: bool) -> Symbol:
+    """Return the last part of a pointer in words, with its symbol, and whose it is where a step finds ``several``."""
     name = words_of(value.quantity.rsplit("/", 1)[-1])
-    return Symbol(f"{name} {value.symbol}".rstrip())
+    whose = f", {_whose(value)}" if several else ""
+    return Symbol(f"{name} {value.symbol}".rstrip() + whose)
 
 
 def _values(value: SheetValue, checked: dict[str, Checked]) -> list[Any]:

@@ -4,7 +4,8 @@ from __future__ import annotations
 
 from dataclasses import replace
 
-from checker.findings import SheetLine
+from checker.findings import SheetLine, SheetValue
+from reports.pdf.sheet import _name as named
 from reports.pdf.sheet import _worked as worked
 from reports.pdf.sheet import calculation_sheet
 from tests.reports.sample_records import BOTTLE
@@ -37,3 +38,10 @@ def test_a_long_formula_takes_the_whole_width() -> None:
         calculation_sheet(replace(BOTTLE, sheet=(replace(LINE, substituted=text),))) for text in ("1", LISTED)
     )
     assert [len(table._cellvalues) for table in (short, long)] == [2, 3]  # the head, and one row or two
+
+
+def test_outputs_of_several_states_say_whose_they_are() -> None:
+    """A step that finds two states at once names them; one that finds one does not repeat its title."""
+    value = SheetValue("states/lifted/air/specific_volume", "v", None, None, None)
+    assert named(value, several=True) == "specific volume v, air in lifted"
+    assert named(value, several=False) == "specific volume v"
