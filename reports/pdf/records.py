@@ -11,6 +11,7 @@ from reportlab.platypus import CondPageBreak, KeepTogether, PageBreak
 from checker.findings import RecordReview, Review
 from reports.order import Group
 from reports.pdf.checks import account, checked_table
+from reports.pdf.corrections import correction_table
 from reports.pdf.diagrams import diagram_rows
 from reports.pdf.findings import finding_blocks
 from reports.pdf.flows import flow_blocks
@@ -41,6 +42,7 @@ def record_section(
         head.append(paragraph(BODY, "This record could not be read: nothing in it was checked."))
     parts = [
         _blocks(number, "findings", "Findings", finding_blocks(group.comments)),
+        _table(number, "corrections", "Corrections", correction_table(record)),
         _table(number, "states", "States", state_table(record)),
         _blocks(
             number, "balances", "Balances", [*totals_blocks(record.totals), *ledger_blocks(record.ledgers)]
