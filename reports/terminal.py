@@ -131,7 +131,7 @@ def _particulars(finding: Finding, values: Mapping[str, Checked]) -> Iterator[tu
     yield "formula", finding.formula
     yield "origin", origin(finding)
     for item in finding.causes:
-        yield "likely cause" if item.likely else "possible cause", cause(item, finding)
+        yield "likely cause" if item.likely else "possible slip", cause(item, finding)
     for quantity in finding.spoils:
         held_back = values.get(quantity)
         if held_back is not None and held_back.recomputed is None:
