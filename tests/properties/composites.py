@@ -281,7 +281,7 @@ def gases(draw: st.DrawFn) -> Kind:
         cv, constant = draw(_rounded(400.0, 3200.0)), draw(_rounded(150.0, 2100.0))
         held = {"specific_heat_at_constant_volume": cv, "gas_constant": constant}
         return Kind("Purge gas", "constant specific heat", ConstantHeatGas(cv, constant), held)
-    name = draw(st.sampled_from(["Nitrogen", "Argon", "Methane", "Oxygen"]))
+    name = draw(st.sampled_from(["Nitrogen", "Argon", "Oxygen"]))
     if word == "ideal":
         return Kind(name, "ideal gas", IdealGas(name))
     return Kind(name, "real fluid", RealFluid(name))
