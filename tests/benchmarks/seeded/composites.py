@@ -180,7 +180,7 @@ def _gas_mass(draft: Draft, name: str) -> None:
     p, volume, t, key = f"1.p:{name}", f"V:{name}", f"1.t:{name}", f"m:{name}"
     slips = (
         ("Celsius in a ratio", lambda v: (v[p] * v[volume] / (v["R"] * (v[t] - 273.15)),)),
-        ("universal for specific gas constant", lambda v: (v[p] * v[volume] / (8314.46 * v[t]),)),
+        ("universal for specific gas constant", lambda v: (v[p] * v[volume] / (8314.0 * v[t]),)),
     )
     parents = (p, volume, t, "R")
     draft.step(key, parents, lambda v: (v[p] * v[volume] / (v["R"] * v[t]),), slips)

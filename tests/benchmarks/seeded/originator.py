@@ -53,10 +53,9 @@ def references_of(draft: Draft, values: Mapping[str, float]) -> dict[str, float]
         name = group.split(":")[0]
         size = max(abs(value) for value in sizes)
         if name in ("u", "s"):
-            name_of = {"u": "uh", "s": "s"}[name]
-            same = [v for k, v in values.items() if k.split(".")[-1] in name_of and k[:1].isdigit()]
-            sizes = [v for v in same if math.isfinite(v)]
-            size = max(max(sizes) - min(sizes), 0.02 * size)
+            # along an isotherm or an isentropic the other property tells what is small
+            energy, entropy = spread_of(values, "u"), spread_of(values, "s")
+            size = max(energy, 60.0 * entropy) if name == "u" else max(entropy, energy / 300.0)
         if name == "quality":
             size = 1.0
         if name == "entropy" and size < 1e-9:  # an isentropic change: its energies tell what is small
@@ -64,6 +63,12 @@ def references_of(draft: Draft, values: Mapping[str, float]) -> dict[str, float]
             size = max((abs(values[key]) for key in energies if key in values), default=0.0) / 300.0
         found.update(dict.fromkeys(keys, size))
     return found
+
+
+def spread_of(values: Mapping[str, float], name: str) -> float:
+    """Return the change of a property over the states."""
+    found = [v for k, v in values.items() if k[:1].isdigit() and k.endswith(f".{name}") and math.isfinite(v)]
+    return max(found) - min(found) if found else 0.0
 
 
 def rounded(

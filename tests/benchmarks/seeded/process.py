@@ -225,10 +225,9 @@ def _work(draft: Draft, leg: Leg, model_of: ModelOf) -> None:
 def _heat(draft: Draft, leg: Leg) -> None:
     de, w, q, wb, el = leg.key("de"), leg.key("w"), leg.key("q"), leg.key("wb"), leg.electrical
     if leg.heat is None:
-        slips: list[tuple[str, Function]] = [
-            ("work for heat", lambda v: (v[w],)),
-            ("heat sign reversed", lambda v: (-v[de] - v[w],)),
-        ]
+        slips: list[tuple[str, Function]] = [("heat sign reversed", lambda v: (-v[de] - v[w],))]
+        if el is not None or leg.path not in ("constant volume", "free expansion", ""):
+            slips.append(("work for heat", lambda v: (v[w],)))
         if leg.path not in ("constant volume", "free expansion", ""):
             slips += [
                 ("boundary work omitted", lambda v: (v[de] + v[w] - v[wb],)),

@@ -34,6 +34,7 @@ def of_slipped(outcomes: Sequence[Outcomes], wrong: Sequence[bool] = ()) -> Iter
     known = [o for o in outcomes if o.trial.identifiable] if count == 1 else list(outcomes)
     yield f"records with {'one slip' if count == 1 else 'two slips'}: {len(outcomes)}"
     yield f"  detected                     {rate(o.detected for o in outcomes)}"
+    yield f"  missed, yet with a query     {rate(bool(o.queries) for o in outcomes if not o.detected)}"
     yield f"  origin right                 {rate(o.origin_hit for o in outcomes)}"
     yield f"  origin in the first step     {rate(o.first_hit for o in outcomes)}"
     yield f"  cause first, identifiable    {rate(o.cause_first for o in known)}"

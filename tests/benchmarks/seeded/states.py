@@ -132,7 +132,7 @@ def _wrong(
         model, state = model_of(values), found(values)
         if not isinstance(model, IdealPart | PolynomialGas) or "v" in pair:
             raise NoStateError("no gas constant taken here")
-        return state._replace(v=8314.46 * state.t / state.p)
+        return state._replace(v=8314.0 * state.t / state.p)
 
     if "x" in pair:
         yield "quality ignored", wet(lambda state: 1.0)
@@ -151,7 +151,7 @@ def _wrong(
             yield "pressure taken as unchanged", lambda v: found(v)._replace(p=v[f"{before}.p"])
         if pair.keys() == {"t", "p"} and not pair["p"].startswith(before):
             yield "volume taken as unchanged", lambda v: found(v)._replace(v=v[f"{before}.v"])
-        if "t" not in pair and not {"u", "h"} & pair.keys():
+        if "t" not in pair and not {"u", "h"} & pair.keys() and pair.keys() != {"p", "v"}:
             other = next(name for name in pair if name not in ("s",) or len(pair) == 1)
             yield (
                 "temperature taken as unchanged",
