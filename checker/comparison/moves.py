@@ -20,8 +20,9 @@ from checker.comparison.montecarlo import Interval, propagate
 from checker.comparison.sources import input_statements, sources_of, with_links
 from checker.sheet.keys import given
 from checker.sheet.step import Sheet, Values, reevaluate
-from checker.submission import Record, Role
+from checker.submission import Record, Role, Statement
 from checker.substances.interface import Substance
+from checker.vocabulary import Allowance
 
 LINEAR_ENOUGH: Final = 0.1
 """Largest part of its tolerance that a result may bend over the reach of its inputs before Monte Carlo (chosen)."""
@@ -109,13 +110,18 @@ def _last_digits(
     broken: set[str] = set()
     by_input = []
     for key, statement in input_statements(record, sheet).items():
-        half_width = statement.quantity.half_width
+        half_width = 0.0 if _is_all_or_nothing(statement) else statement.quantity.half_width
         if statement.quantity.plus_minus is None and half_width > 0.0:
             moved = _moved(sheet, base, given(key), half_width, broken)
             by_input.append((statement.pointer, moved))
             for name, size in moved.items():
                 squares[name] += size**2
     return {key: math.sqrt(value) for key, value in squares.items()}, broken, tuple(by_input)
+
+
+def _is_all_or_nothing(statement: Statement) -> bool:
+    """Say whether an input is a fraction of none or of all, which says what the state is and is not rounded."""
+    return statement.term.allowance is Allowance.FRACTION and statement.quantity.value in (0.0, 1.0)
 
 
 def _moved(sheet: Sheet, base: Values, key: str, size: float, broken: set[str]) -> dict[str, float]:
