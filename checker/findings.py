@@ -6,6 +6,7 @@ import hashlib
 from dataclasses import dataclass
 from enum import StrEnum
 
+from checker.budget import Budget
 from checker.figures import Diagram, FlowDiagram
 
 
@@ -85,6 +86,7 @@ class Finding:
     suggestion: str = ""
     basis: str = ""
     location: Location | None = None
+    budget: Budget | None = None
 
     @property
     def fingerprint(self) -> str:
@@ -142,6 +144,7 @@ class Checked:
     standing: Standing
     reason: str = ""
     location: Location | None = None
+    budget: Budget | None = None
 
 
 @dataclass(frozen=True, slots=True)

@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Mapping
 
 from checker.case import Case, Raised
+from checker.comparison.budget import as_stated
 from checker.comparison.compare import Compared
 from checker.display import stated_amount
 from checker.document.nodes import Document
@@ -89,6 +90,7 @@ def finding_of(rule: Rule, raised: Raised, case: Case | None, locator: Locator) 
         suggestion=raised.suggestion,
         basis=rule.basis,
         location=locator.at(place, raised.at_key),
+        budget=as_stated(compared.budget, compared.statement) if compared else None,
     )
 
 

@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterator, Sequence
 
 from checker.case import Case
+from checker.comparison.budget import as_stated
 from checker.comparison.compare import Compared
 from checker.correction import corrections_of
 from checker.display import as_text, stated_amount
@@ -105,6 +106,7 @@ def _checked(case: Case, c: Compared, locator: Locator) -> Checked:
         standing=c.standing,
         reason=c.reason or c.shift.note,
         location=locator.at(statement.place),
+        budget=as_stated(c.budget, c.statement),
     )
 
 

@@ -8,6 +8,7 @@ from __future__ import annotations
 from dataclasses import fields
 from typing import BinaryIO
 
+from checker.budget import Budget, BudgetTerm
 from checker.figures import FlowDiagram
 from checker.findings import (
     Amount,
@@ -106,6 +107,7 @@ def _finding(finding: Finding) -> Tree:
         "deviation": finite(finding.deviation),
         "half_width": finite(finding.half_width),
         "tolerance": finite(finding.tolerance),
+        "budget": _budget(finding.budget),
         "origin": finding.origin,
         "inherits_from": list(finding.inherits_from),
         "spoils": list(finding.spoils),
@@ -133,10 +135,34 @@ def _checked(item: Checked) -> Tree:
         "carried": _amount(item.carried),
         "deviation": finite(item.deviation),
         "tolerance": finite(item.tolerance),
+        "budget": _budget(item.budget),
         "outcome": item.outcome.value,
         "standing": item.standing.value,
         "reason": item.reason,
     }
+
+
+def _budget(budget: Budget | None) -> Tree | None:
+    if budget is None:
+        return None
+    return {
+        "allowance": finite(budget.allowance),
+        "share": finite(budget.share),
+        "reference": finite(budget.reference),
+        "of": budget.of,
+        "coverage_factor": finite(budget.coverage),
+        "method": budget.method.value,
+        "trials": budget.trials,
+        "below": finite(budget.below),
+        "above": finite(budget.above),
+        "terms": [_budget_term(term) for term in budget.terms],
+        "last_digits": finite(budget.last_digits),
+        "open_inputs": [_budget_term(term) for term in budget.open_inputs],
+    }
+
+
+def _budget_term(term: BudgetTerm) -> Tree:
+    return {"kind": term.kind.value, "source": term.source, "size": finite(term.size), "basis": term.basis}
 
 
 def _state(row: StateRow) -> Tree:

@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterable
 from typing import Final
 
+from checker.budget import Kind, Method
 from checker.findings import Grade, Outcome, Standing, Verdict
 
 Schema = dict[str, object]
@@ -31,7 +32,7 @@ def review_schema() -> Schema:
             basis=_words("Setting → value of the review basis that was applied."),
             cautions=_list("What a reader must bear in mind.", _text("One caution.")),
         ),
-        "$defs": {"amount": _amount()},
+        "$defs": {"amount": _amount(), "budget": _budget()},
     }
 
 
@@ -79,6 +80,34 @@ def _amount() -> Schema:
         value=_number("The number; null for a word such as a phase."),
         unit=_text("The unit; empty for pure numbers and words."),
         text=_text("As written where it was stated, else as rounded for print."),
+    )
+
+
+def _budget() -> Schema:
+    return _object(
+        "What a tolerance is made of, in the unit of the stated quantity.",
+        allowance=_number("What the reviewer tolerates."),
+        share=_number("The allowance is this share of the reference; 0 where the basis gives it as it is."),
+        reference=_number("What the allowance is a share of; 0 where there is no share."),
+        of=_text("What the reference is."),
+        coverage_factor=_number("k of the expanded uncertainty."),
+        method=_one_of("How inputs and models were carried to the result.", Method),
+        trials={"type": "integer", "description": "Trials of a Monte Carlo propagation; 0 without one."},
+        below=_number("Expanded uncertainty towards smaller values."),
+        above=_number("Expanded uncertainty towards larger values."),
+        terms=_list("Contributions to the uncertainty, expanded.", _budget_term("One contribution.")),
+        last_digits=_number("What the last digits of the inputs would move; no part of the tolerance."),
+        open_inputs=_list("The inputs whose last digits move most.", _budget_term("One input.")),
+    )
+
+
+def _budget_term(description: str) -> Schema:
+    return _object(
+        description,
+        kind=_one_of("What contributes.", Kind),
+        source=_text("Pointer of the input, or names of the bodies that share a model."),
+        size=_number("Coverage factor × standard uncertainty; of a last digit, what it moves."),
+        basis=_text("Published source of a model's uncertainty."),
     )
 
 
@@ -145,7 +174,8 @@ def _checked() -> Schema:
         recomputed=_maybe_amount("From the inputs alone."),
         carried=_maybe_amount("From the originator's own stated values."),
         deviation=_number("Stated minus recomputed."),
-        tolerance=_number("Allowance plus uncertainty."),
+        tolerance=_number("Allowance plus uncertainty, on the side of the deviation."),
+        budget={"description": "Its parts.", "oneOf": [{"$ref": "#/$defs/budget"}, {"type": "null"}]},
         outcome=_one_of("Outcome of the comparison.", Outcome),
         standing=_one_of("Where a deviation comes from.", Standing),
         reason=_text("Why it was not evaluable, or what else is to be said."),
@@ -301,7 +331,8 @@ def _finding() -> Schema:
         carried=_maybe_amount("From the originator's own stated values."),
         deviation=_number("Stated minus recomputed."),
         half_width=_number("Half a unit of the last stated digit."),
-        tolerance=_number("Allowance plus uncertainty."),
+        tolerance=_number("Allowance plus uncertainty, on the side of the deviation."),
+        budget={"description": "Its parts.", "oneOf": [{"$ref": "#/$defs/budget"}, {"type": "null"}]},
         origin=_truth("Whether the deviation starts here; null where unknown or not applicable."),
         inherits_from=_list("Where it was inherited from.", _text("Pointer of a quantity.")),
         spoils=_list("What it spoiled.", _text("Pointer of a quantity.")),

@@ -12,6 +12,7 @@ from textwrap import wrap
 from typing import BinaryIO, Final
 
 from checker.findings import Checked, Finding, Grade, RecordReview, Review
+from reports.budgets import budget_line
 from reports.numbers import shown
 from reports.order import Comment, Group, grouped
 from reports.phrases import (
@@ -128,6 +129,7 @@ def _particulars(finding: Finding, values: Mapping[str, Checked]) -> Iterator[tu
     yield "recomputed", shown(finding.recomputed) if finding.recomputed else ""
     yield "carried", shown(finding.carried) if finding.carried else ""
     yield "deviation", deviation(finding)
+    yield "tolerance", budget_line(finding.budget, finding.deviation, finding.stated)
     yield "formula", finding.formula
     yield "origin", origin(finding)
     for item in finding.causes:

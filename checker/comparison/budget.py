@@ -11,6 +11,7 @@ from checker.budget import Budget, BudgetTerm, Kind
 from checker.comparison.moves import Moves
 from checker.comparison.references import References
 from checker.sheet.keys import plain, term_for
+from checker.submission import Statement
 from checker.vocabulary import PER_MASS, Allowance
 
 KEPT: Final = 6
@@ -62,6 +63,11 @@ def budget_of(
         last_digits=moves.digits.get(key, 0.0),
         open_inputs=_open_inputs(key, moves),
     )
+
+
+def as_stated(budget: Budget, statement: Statement) -> Budget:
+    """Return a budget in the unit and the sign in which a quantity is stated."""
+    return budget.scaled(statement.quantity.difference_of(1.0), statement.sign)
 
 
 def _words(key: str, kind: Allowance, reference: float, size: float) -> str:

@@ -8,6 +8,7 @@ from typing import Any, Final
 from reportlab.platypus import Spacer, Table, TableStyle
 
 from checker.findings import Finding
+from reports.budgets import budget_line, open_line, sources
 from reports.numbers import deviation, shown, tolerance
 from reports.order import Comment
 from reports.pdf.keys import comment_key, finding_key
@@ -87,6 +88,7 @@ def _particulars(finding: Finding) -> Iterator[tuple[str, str]]:
         yield "Quantity", pointer(finding.quantity, _ACROSS, CELL)
     if finding.formula:
         yield "Formula", formula(finding.formula)
+    yield from _budget(finding)
     if text := origin(finding):
         yield "Origin", text
     for item in finding.causes:
@@ -97,3 +99,14 @@ def _particulars(finding: Finding) -> Iterator[tuple[str, str]]:
         yield "Suggestion", finding.suggestion
     if finding.basis:
         yield "Basis", finding.basis
+
+
+def _budget(finding: Finding) -> Iterator[tuple[str, str]]:
+    """Yield what the tolerance is made of."""
+    budget = finding.budget
+    if text := budget_line(budget, finding.deviation, finding.stated):
+        yield "Tolerance", text
+    if text := open_line(budget, finding.stated):
+        yield "Inputs' last digits", text
+    if budget is not None and finding.deviation is not None and (published := sources(budget)):
+        yield "Model uncertainty", "; ".join(published)

@@ -10,6 +10,7 @@ from reportlab.platypus import CondPageBreak, KeepTogether, PageBreak
 
 from checker.findings import RecordReview, Review
 from reports.order import Group
+from reports.pdf.budgets import budget_table
 from reports.pdf.checks import account, checked_table
 from reports.pdf.corrections import correction_table
 from reports.pdf.diagrams import diagram_rows
@@ -50,6 +51,7 @@ def record_section(
         _blocks(number, "flows", "Flows between the bodies", flow_blocks(record.flows)),
         _blocks(number, "diagrams", "Diagrams", diagram_rows(record.diagrams)),
         _table(number, "checked", "Results held against the recomputation", checked_table(record)),
+        _table(number, "budgets", "What the tolerances are made of", budget_table(record)),
         _table(number, "account", "Not checked, assumed, models", account(record, common)),
         _table(number, "sheet", "Alternate calculation sheet", calculation_sheet(record)),
     ]

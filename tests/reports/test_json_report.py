@@ -59,7 +59,7 @@ def test_schema_is_closed_and_described() -> None:
             walk(item)
 
     walk(review_schema())
-    assert seen == 28
+    assert seen == 31
 
 
 def test_an_unknown_field_is_refused() -> None:
@@ -75,7 +75,7 @@ def test_keys_stand_in_the_order_of_the_contract() -> None:
     assert list(tree)[:3] == ["tool", "package", "verdict"]
     assert list(tree["findings"][0]) == [
         "rule", "theme", "grade", "record", "quantity", "role", "stated", "recomputed", "carried",
-        "deviation", "half_width", "tolerance", "origin", "inherits_from", "spoils", "causes", "message",
+        "deviation", "half_width", "tolerance", "budget", "origin", "inherits_from", "spoils", "causes", "message",
         "suggestion", "basis", "formula", "fingerprint", "location",
     ]  # fmt: skip
 
