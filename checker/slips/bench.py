@@ -10,7 +10,7 @@ from checker.case import Case
 from checker.comparison.compare import Compared
 from checker.outcomes import NotEvaluable
 from checker.sheet.keys import given, plain
-from checker.sheet.step import Step, Values, run_step
+from checker.sheet.step import SEARCH_COST, Step, Values, run_step
 from checker.submission import Role, Statement
 from checker.substances.interface import PropertyState, Substance
 
@@ -20,13 +20,14 @@ class Bench:
     """An origin with the steps that lead to it from stated values and inputs.
 
     ``values`` holds every key as the originator had it: stated results where they are stated, else what follows
-    from them (or from the inputs alone, for ``stated`` empty).
+    from them (or from the inputs alone); ``carried`` says that the stated numbers themselves are used.
     """
 
     case: Case
     origin: Compared
     values: Values
     stated: Mapping[str, float]
+    carried: bool = False
 
     @property
     def key(self) -> str:
@@ -109,6 +110,17 @@ class Bench:
         base = f"states/{state}/{body}/"
         t, p, v, u, h, s, x = (self.get(base + name) for name in STATE)
         return None if t is None or u is None or s is None else PropertyState(t, p, v, u, h, s, x)
+
+    def closed_with(self, change: Mapping[str, float]) -> Iterator[dict[str, float]]:
+        """Yield what the dear steps that search for a state give under a change that concerns them alone."""
+        for step in self.steps:
+            if step.cost < SEARCH_COST or set(change).isdisjoint(step.parents):
+                continue
+            values: Values = {**self._around}
+            run_step(step, values, {**self._instead, **change})
+            found = {key: value for key in step.outputs if isinstance(value := values[key], float)}
+            if found:
+                yield found
 
     def cost_of(self, change: Mapping[str, float]) -> int:
         """Return what it costs to try a change, about, in property states."""

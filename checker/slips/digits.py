@@ -28,9 +28,11 @@ def doubled(text: str) -> Iterator[float]:
     yield from _parsed(text[: i + 1] + text[i:] for i in range(len(text)) if text[i].isdigit())
 
 
-def shifted(value: float) -> Iterator[float]:
-    """Yield a number with its decimal point one or two places, or three, beside where it belongs."""
-    yield from (value * factor for factor in (10.0, 0.1, 100.0, 0.01, 1000.0, 0.001))
+def shifted(value: float, places: int) -> Iterator[float]:
+    """Yield a number with its decimal point up to so many places beside where it belongs."""
+    for count in range(1, places + 1):
+        yield value * 10.0**count
+        yield value / 10.0**count
 
 
 def _parsed(texts: Iterator[str]) -> Iterator[float]:
@@ -40,6 +42,6 @@ def _parsed(texts: Iterator[str]) -> Iterator[float]:
             value = float(text.replace("−", "-"))
         except ValueError:
             continue
-        if value not in seen:
+        if value and value not in seen:
             seen.add(value)
             yield value

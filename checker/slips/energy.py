@@ -2,16 +2,19 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Iterator
 from typing import Final
 
 from checker.sheet.keys import body_key, state_key
 from checker.sheet.step import Step
-from checker.slips.bench import Bench
+from checker.slips.bench import Bench, tried
 from checker.slips.slip import Change, Slip
+from checker.substances.interface import Substance
+
+CELSIUS_ZERO: Final = 273.15
 
 CHANGES: Final = ("internal_energy_change", "enthalpy_change", "entropy_change")
-KINDS: Final = ("boundary_work", "shaft_work", "electrical_work", "friction_work")
 NATURAL: Final = 2.302585092994046
 """ln 10."""
 
@@ -46,7 +49,65 @@ def cp_for_cv(bench: Bench) -> Iterator[Change]:
         if parts and heats:
             span = _span(bench, *parts[1:])
             yield {step.outputs[0]: mass * heats[1] * span}
+    yield from _entropies_by_other_heat(bench, "specific_volume")
     yield from _end_by_other_heat(bench, "specific_internal_energy", 1.0)
+
+
+def _entropies_by_other_heat(bench: Bench, name: str) -> Iterator[Change]:
+    """Yield changes of entropy in which the term in T has the other specific heat: one term in R·ln(T₂/T₁) off."""
+    for step, (mass, *_) in bench.named("entropy_change"):
+        parts = _change_parts(step)
+        made = made_by(bench, step)
+        if not parts or made is None or not _is_gas(bench, parts[1]):
+            continue
+        ratio = _ratio(bench, *parts[1:])
+        constant = bench.case.plan.substances[parts[1]].gas_constant
+        if ratio and constant:
+            sign = 1.0 if name == "specific_volume" else -1.0  # c_p with the term in v, c_v with that in p
+            yield {step.outputs[0]: made + sign * mass * constant * math.log(ratio)}
+
+
+def _ratio(bench: Bench, body: str, first: str, last: str) -> float | None:
+    """Return T₂/T₁ of a body."""
+    one, two = (bench.get(state_key(state, body, "temperature")) for state in (first, last))
+    return two / one if one and two and one * two > 0.0 else None
+
+
+def made_by(bench: Bench, step: Step) -> float | None:
+    """Return the value of a hidden step, or that of the origin without a slip."""
+    return _own(bench) if step.outputs[0] == bench.key else bench.get(step.outputs[0])
+
+
+def entropy_by_ratio(bench: Bench, celsius: bool) -> Iterator[Change]:
+    """Yield changes of entropy with the ratio of temperatures inverted, or formed of Celsius temperatures."""
+    for step, (mass, *_) in bench.named("entropy_change"):
+        parts = _change_parts(step)
+        made = made_by(bench, step)
+        if not parts or made is None:
+            continue
+        own = bench.case.plan.substances.get(parts[1])
+        ratio = _ratio(bench, *parts[1:])
+        if own is None or own.model == "real fluid" or ratio is None or abs(math.log(ratio)) < 1e-9:
+            continue
+        one, two = (bench.get(state_key(state, parts[1], "temperature")) or 0.0 for state in parts[2:])
+        wrong = (
+            (two - CELSIUS_ZERO) / (one - CELSIUS_ZERO) if celsius and one != CELSIUS_ZERO else 1.0 / ratio
+        )
+        if wrong <= 0.0:
+            continue
+        for heat in _constant_heats(bench, own, *parts[1:]):
+            yield {step.outputs[0]: made + mass * heat * (math.log(wrong) - math.log(ratio))}
+
+
+def _constant_heats(bench: Bench, own: Substance, body: str, first: str, last: str) -> Iterator[float]:
+    """Yield the specific heats of the term in T of a change of entropy: c, or c_p and c_v. [J/(kg·K)]"""
+    heats = _heats(bench, body, first, last)
+    one, two = bench.state(first, body), bench.state(last, body)
+    if own.incompressible and one is not None and two is not None and one.temperature != two.temperature:
+        span = two.temperature - one.temperature
+        yield (two.specific_internal_energy - one.specific_internal_energy) / span
+    elif heats is not None:
+        yield from (heats[1], heats[0])
 
 
 def _end_by_other_heat(bench: Bench, name: str, power: float) -> Iterator[Change]:
@@ -71,6 +132,7 @@ def cv_for_cp(bench: Bench) -> Iterator[Change]:
         heats = _heats(bench, *parts[1:]) if parts and _is_gas(bench, parts[1]) else None
         if parts and heats:
             yield {step.outputs[0]: mass * heats[0] * _span(bench, *parts[1:])}
+    yield from _entropies_by_other_heat(bench, "pressure")
     yield from _end_by_other_heat(bench, "specific_enthalpy", -1.0)
 
 
@@ -95,13 +157,24 @@ def states_swapped(bench: Bench) -> Iterator[Change]:
 
 
 def mass_left_out(bench: Bench) -> Iterator[Change]:
-    """Yield changes and works per unit mass in place of those of the whole mass."""
+    """Yield changes and works per unit mass in place of those of the whole mass, and unweighted final temperatures."""
+    yield from _unweighted(bench)
     for step, values in bench.named(*CHANGES, "boundary_work"):
         key = next((k for k in step.parents if k.endswith("/mass")), None)
         mass = None if key is None else bench.get(key)
         made = bench.get(step.outputs[0]) if step.outputs[0] != bench.key else _own(bench)
         if mass and made is not None and values:
             yield {step.outputs[0]: made / mass}
+
+
+def _unweighted(bench: Bench) -> Iterator[Change]:
+    """Yield a temperature in which several bodies come to rest, with the same mass for all of them."""
+    masses = {body_key(body, "mass") for body in bench.case.record.bodies} & bench.parents
+    if len(masses) > 1:
+        for closed in bench.closed_with(dict.fromkeys(sorted(masses), 1.0)):
+            yield {key: value for key, value in closed.items() if key.endswith("/temperature")}
+            if bench.key.endswith("/temperature") and (value := bench.value_with(closed)) is not None:
+                yield {bench.key: value}
 
 
 def mass_twice(bench: Bench) -> Iterator[Change]:
@@ -135,8 +208,6 @@ def constant_heat(bench: Bench) -> Iterator[Change]:
 
 def _slope(bench: Bench, body: str, state: str, temperature: float | None, name: str) -> float | None:
     """Return the derivative of u or h with the temperature, at the volume (or pressure) of a state. [J/(kg·K)]"""
-    from checker.slips.bench import tried
-
     substance, found = bench.case.plan.substances[body], bench.state(state, body)
     if found is None or temperature is None:
         return None
@@ -204,7 +275,18 @@ def isentropic_exponent(bench: Bench) -> Iterator[Change]:
                 ratio = _heat_ratio(bench, body, state)
                 if ratio is not None and substance is bench.case.plan.substances.get(body):
                     yield {key: ratio}
+                    yield from _in_work_alone(bench, key, ratio)
                     break
+
+
+def _in_work_alone(bench: Bench, key: str, exponent: float) -> Iterator[Change]:
+    """Yield the work of the boundary with another exponent between the same states."""
+    for step, values in bench.named("boundary_work"):
+        if key in step.parents and abs(exponent - 1.0) > 1e-6:
+            changed = [exponent if k == key else v for k, v in zip(step.parents, values, strict=True)]
+            found = step.function(*changed)[0]
+            if isinstance(found, float):
+                yield {step.outputs[0]: found}
 
 
 def _heat_ratio(bench: Bench, body: str, state: str) -> float | None:

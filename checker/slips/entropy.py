@@ -23,7 +23,9 @@ def _at(bench: Bench, temperatures: Callable[[Bench, Step, float], Iterator[floa
 
 def celsius_boundary(bench: Bench) -> Iterator[Change]:
     """Yield Q/T_b with T_b in Celsius."""
-    return _at(bench, lambda _b, _s, own: iter((own - CELSIUS_ZERO,)))
+    for step, values in bench.named("item_entropy"):
+        if len(values) > 1 and values[1] != CELSIUS_ZERO:
+            yield {step.outputs[0]: values[0] / (values[1] - CELSIUS_ZERO)}
 
 
 def _body_temperatures(bench: Bench, step: Step, _: float) -> Iterator[float]:
@@ -158,12 +160,23 @@ def generation_reversed(bench: Bench) -> Iterator[Change]:
 def heat_over_mean(bench: Bench) -> Iterator[Change]:
     """Yield ΔS = Q/T with the mean temperature of the system."""
     for step, _ in bench.named("entropy_change"):
-        base = "/".join(step.outputs[0].split("/")[:2])
-        heat = bench.get(f"{base}/heat")
-        found = tuple(_body_temperatures(bench, step, 0.0))
-        if heat and len(found) >= 2:
-            for temperature in (0.5 * (found[0] + found[1]), found[0], found[1]):
-                yield {step.outputs[0]: heat / temperature}
+        base = step.outputs[0].rsplit("/", 1)[0]
+        heats = [bench.get(f"{base}/{name}") for name in ("heat", "internal_energy_change")]
+        found = tuple(_own_temperatures(bench, step))
+        if len(found) == 2 and abs(found[0] - found[1]) > 1e-6:  # at one temperature it is no slip
+            for heat in heats:
+                for temperature in (0.5 * (found[0] + found[1]), found[0], found[1]):
+                    if heat and temperature:
+                        yield {step.outputs[0]: heat / temperature}
+
+
+def _own_temperatures(bench: Bench, step: Step) -> Iterator[float]:
+    """Yield the temperatures of the body between whose states a change is taken."""
+    for key in step.parents:
+        if key.startswith("states/"):
+            value = bench.get(f"{key.rsplit('/', 1)[0]}/temperature")
+            if value is not None:
+                yield value
 
 
 def exergy_with_change(bench: Bench) -> Iterator[Change]:

@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Callable, Iterator
 from typing import Final
 
+from checker.findings import Outcome
 from checker.quantity import dimensions as dim
 from checker.slips.bench import Bench
 from checker.slips.digits import doubled, dropped, shifted, transposed
@@ -13,10 +14,12 @@ from checker.submission import Role, Statement
 
 CELSIUS_ZERO: Final = 273.15
 ATMOSPHERE: Final = 101325.0
-PRESSURE_UNITS: Final = (10.0, 100.0, 1000.0, 14.503774, 1.01325, 1.0197162, 6.8947573, 750.06168)
-"""Neighbouring units of pressure: decades of pascal, psi, atm, kgf/cm², kPa per psi, torr per bar."""
-VOLUME_UNITS: Final = (1000.0, 3.7854118, 35.314667, 0.133681)
-MASS_UNITS: Final = (1000.0, 2.2046226)
+PRESSURE_UNITS: Final = (1.0, 1e2, 1e3, 1e5, 1e6, 6894.757293168361, 101325.0, 98066.5, 101325.0 / 760.0)
+"""Pa, mbar, kPa, bar, MPa, psi, atm, kgf/cm², torr. [Pa]"""
+VOLUME_UNITS: Final = (1.0, 1e-3, 1e-6, 3.785411784e-3, 0.028316846592)
+"""m³, litre, cm³, US gallon, cubic foot. [m³]"""
+MASS_UNITS: Final = (1.0, 1e-3, 1e3, 0.45359237)
+"""kg, gram, tonne, pound. [kg]"""
 
 
 def _each(
@@ -59,7 +62,7 @@ def _is_scale(statement: Statement) -> bool:
 
 def celsius_as_kelvin(bench: Bench) -> Iterator[Change]:
     """Yield Celsius numbers used as absolute temperatures; boundaries and surroundings have slips of their own."""
-    own = ("boundary_temperature", "reservoir_temperature", "surroundings/temperature")
+    own = ("boundary_temperature", "surroundings/temperature")
     return _each(
         bench,
         dim.TEMPERATURE,
@@ -81,29 +84,31 @@ def fahrenheit_as_celsius(bench: Bench) -> Iterator[Change]:
     return _each(bench, dim.TEMPERATURE, wrong)
 
 
-def _scaled(factors: tuple[float, ...]) -> Callable[[Statement], Iterator[float]]:
+def _in_units(sizes: tuple[float, ...]) -> Callable[[Statement], Iterator[float]]:
+    """Return what yields the number of an input in each other unit."""
+
     def wrong(s: Statement) -> Iterator[float]:
-        bare = s.value - s.quantity.atmosphere
-        for factor in factors:
-            yield bare * factor + s.quantity.atmosphere
-            yield bare / factor + s.quantity.atmosphere
+        own = s.quantity.unit.factor
+        for size in sizes:
+            if abs(size - own) > 1e-6 * own:
+                yield (s.value - s.quantity.atmosphere) * size / own + s.quantity.atmosphere
 
     return wrong
 
 
 def pressure_unit(bench: Bench) -> Iterator[Change]:
     """Yield pressures read in a neighbouring unit."""
-    return _each(bench, dim.PRESSURE, _scaled(PRESSURE_UNITS))
+    return _each(bench, dim.PRESSURE, _in_units(PRESSURE_UNITS))
 
 
 def volume_unit(bench: Bench) -> Iterator[Change]:
     """Yield volumes read in a neighbouring unit."""
-    return _each(bench, dim.VOLUME, _scaled(VOLUME_UNITS))
+    return _each(bench, dim.VOLUME, _in_units(VOLUME_UNITS))
 
 
 def mass_unit(bench: Bench) -> Iterator[Change]:
     """Yield masses read in a neighbouring unit."""
-    return _each(bench, dim.MASS, _scaled(MASS_UNITS))
+    return _each(bench, dim.MASS, _in_units(MASS_UNITS))
 
 
 def _written(bench: Bench, numbers: Callable[[str], Iterator[float]]) -> Iterator[Change]:
@@ -132,7 +137,7 @@ def input_shifted(bench: Bench) -> Iterator[Change]:
     """Yield inputs with a shifted decimal point."""
     for s in bench.inputs:
         bare = s.quantity.number_of(s.sign * s.value)
-        for number in shifted(bare):
+        for number in shifted(bare, 2):  # 1000 is a unit, mostly
             value = number * s.quantity.unit.factor + s.quantity.unit.offset + s.quantity.atmosphere
             yield {bench.input_key(s): s.sign * value}
 
@@ -146,8 +151,14 @@ def of_another_state(bench: Bench) -> Iterator[Change]:
         for other in bench.case.record.statements:
             them = other.pointer.split("/")
             same = len(them) == len(parts) and them[0] == "states" and them[2:] == parts[2:]
-            if same and them[1] != parts[1] and other.usable:
+            if same and them[1] != parts[1] and other.usable and _is_firm(bench, other):
                 yield {bench.input_key(s): other.value}
+
+
+def _is_firm(bench: Bench, statement: Statement) -> bool:
+    """Say whether a value is an input, or a result that is right: a wrong one may itself follow from the slip."""
+    right = {c.statement.pointer for c in bench.case.compared if c.outcome is Outcome.AGREES}
+    return statement.role is Role.INPUT or statement.pointer in right
 
 
 def of_another_record(bench: Bench) -> Iterator[Change]:

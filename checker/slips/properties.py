@@ -8,9 +8,10 @@ from functools import partial
 from typing import Final
 
 from checker.outcomes import NotEvaluable
-from checker.sheet.keys import plain, state_key
+from checker.sheet.keys import body_key, given, plain, state_key
 from checker.sheet.step import Step
 from checker.slips.bench import Bench, state_change, tried
+from checker.slips.energy import entropy_by_ratio
 from checker.slips.slip import Change, Slip
 from checker.substances import make_substance
 from checker.substances.interface import PropertyState, Substance
@@ -35,6 +36,7 @@ OTHERS: Final = (
     "Ammonia",
 )
 UNIVERSAL: Final = 8.314462618
+CELSIUS_ZERO: Final = 273.15
 
 
 def _known(bench: Bench, step: Step) -> dict[str, float]:
@@ -94,6 +96,8 @@ def saturated_vapour(bench: Bench) -> Iterator[Change]:
                 other = _saturated(substance, known, 1)
                 if other is not None:
                     yield state_change(step, other)
+                    kept = replace(other, temperature=found.temperature, pressure=found.pressure)
+                    yield state_change(step, replace(kept, quality=None))
 
 
 def _two_phase(bench: Bench, quality: float | None) -> Iterator[Change]:
@@ -204,10 +208,19 @@ def neighbouring_row(bench: Bench) -> Iterator[Change]:
         for name, rows in (("temperature", ROWS), ("pressure", PRESSURE_ROWS)):
             if name not in known:
                 continue
-            for size in rows:
+            for size in _rows(known[name], name, rows):
                 for moved in (known[name] + size, known[name] - size):
                     if moved > 0.0 and (found := tried(substance, {**known, name: moved})) is not None:
                         yield {**state_change(step, found), **_kept(bench, step, name)}
+
+
+def _rows(value: float, name: str, rows: tuple[float, ...]) -> Iterator[float]:
+    """Yield the steps of the tables that have a row at a value; 5 K and 10 K also where one would interpolate."""
+    zero = CELSIUS_ZERO if name == "temperature" else 0.0
+    for size in rows:
+        place = (value - zero) / size
+        if abs(place - round(place)) < 1e-6 or (zero and size in (5.0, 10.0)):
+            yield size
 
 
 def _kept(bench: Bench, step: Step, name: str) -> Change:
@@ -231,7 +244,7 @@ def _other_property(bench: Bench, name: str, wrong: str) -> Iterator[Change]:
     """Yield one property in the place of another: in all states at once, then in each alone."""
     every: dict[str, float] = {}
     for key in sorted({*bench.parents, bench.key}):
-        if key.startswith("states/") and key.endswith(f"/{name}"):
+        if key.startswith("states/") and key.endswith(f"/{name}") and _has_table(bench, key.split("/")[2]):
             value = bench.get(f"{key.rsplit('/', 1)[0]}/{wrong}")
             if value is not None:
                 every[key] = value
@@ -240,11 +253,20 @@ def _other_property(bench: Bench, name: str, wrong: str) -> Iterator[Change]:
     yield from ({key: value} for key, value in every.items())
 
 
+def _has_table(bench: Bench, body: str) -> bool:
+    """Say whether u and h of a body are read side by side; of a gas they are c_v·T and c_p·T."""
+    own = bench.case.plan.substances.get(body)
+    return own is not None and own.model not in ("ideal gas", "constant specific heat")
+
+
 def universal_constant(bench: Bench) -> Iterator[Change]:
     """Yield masses and volumes found with 8.314 in place of the specific gas constant, or the other way round."""
     for body, substance in bench.case.plan.substances.items():
         if not substance.gas_constant:
             continue
+        given_constant = given(body_key(body, "gas_constant"))
+        if given_constant in bench.parents:
+            yield from ({given_constant: value} for value in (8314.0, 8314.462618, 8.314, 8.314462618))
         factor = substance.gas_constant / (UNIVERSAL * 1000.0)
         for name, power in (("mass", 1), ("volume", -1)):
             key = f"bodies/{body}/{name}"
@@ -268,6 +290,7 @@ def ratio_inverted(bench: Bench) -> Iterator[Change]:
                 mine, theirs = getattr(found, name), getattr(before, name) if before else None
                 if mine and theirs and mine != theirs:
                     yield {state_key(state, body, name): theirs * theirs / mine}
+    yield from entropy_by_ratio(bench, celsius=False)
 
 
 def celsius_in_ratio(bench: Bench) -> Iterator[Change]:
@@ -279,23 +302,34 @@ def celsius_in_ratio(bench: Bench) -> Iterator[Change]:
                 continue
             right = found.temperature / before.temperature
             cold, warm = before.temperature - 273.15, found.temperature - 273.15
-            if cold and warm:
+            if cold:
                 wrong = warm / cold
                 for name in ("pressure", "specific_volume"):
                     value = getattr(found, name)
-                    if value:
+                    if value is not None:
                         yield {state_key(state, body, name): value * wrong / right}
                 yield {state_key(state, body, "temperature"): cold * right + 273.15}
+    yield from entropy_by_ratio(bench, celsius=True)
 
 
 def unchanged(name: str, bench: Bench) -> Iterator[Change]:
     """Yield a property taken over unchanged from the state before."""
-    for _, state, body, _, _ in bench.states():
+    for step, state, body, found, substance in bench.states():
         for other in _neighbours(bench, state, body):
             before = bench.state(other, body)
             value = getattr(before, name) if before else None
-            if value:
-                yield {state_key(state, body, name): value}
+            if not value:
+                continue
+            yield {state_key(state, body, name): value}
+            if name == "pressure" and found.specific_enthalpy is not None and found.specific_volume:
+                enthalpy = found.specific_internal_energy + value * found.specific_volume
+                yield {
+                    state_key(state, body, name): value,
+                    state_key(state, body, "specific_enthalpy"): enthalpy,
+                }
+            held = {} if substance.incompressible else {"pressure": found.pressure or 0.0}
+            if name == "temperature" and (same := tried(substance, {name: value, **held})) is not None:
+                yield state_change(step, same)
 
 
 CATALOGUE: Final = (

@@ -13,22 +13,17 @@ from checker.facts.origins import origins
 from checker.findings import Cause, Outcome
 from checker.outcomes import NotEvaluable
 from checker.slips.bench import Bench
+from checker.slips.budget import Budget
 from checker.slips.catalogue import CATALOGUE
+from checker.slips.chance import LEAST_CHANCE, by_chance, evidence
+from checker.slips.match import MOST_ORIGINS_WEIGHED, TIERS, Match, Weighing, distinct, window
 from checker.slips.slip import Candidate, Change, Slip
 from checker.submission import Role
 
-MOST_COST: Final = 3000
-"""What the search for the cause of one origin may cost, in property states; where more would be needed, the
-diagnosis says so. The simplest slips are tried first."""
-LEAST_CHANCE: Final = 0.03
-"""A cause is stated where fewer chance matches than this are expected."""
-ROUNDED: Final = 1.02
-"""Half-widths within which a candidate agrees with the stated digits: a number on the edge may go either way."""
-NEAR: Final = math.log(2.0)
-"""Candidates within this factor of the stated value (as a logarithm) tell how dense they lie there."""
-
 BARELY: Final = 0.25
 """Part of the stated half-width below which it makes no difference whether the originator rounded early."""
+MOST_WEIGHED: Final = 16
+"""Matches of one origin that are held against all of its record."""
 
 NONE_FITS: Final = "no slip of the catalogue reproduces the stated digits"
 BY_CHANCE: Final = "several or chance explanations"
@@ -42,7 +37,7 @@ class Diagnosis:
     Attributes
     ----------
     causes : tuple of Cause
-        The slips that reproduce the stated digits, the simplest first.
+        The slips that reproduce the stated digits: what leaves least unexplained first, then the simplest.
     note : str
         Empty where the first of them is stated as the cause; else why no cause is.
     chance : float
@@ -64,23 +59,24 @@ def diagnose(case: Case, catalogue: Sequence[Slip] = CATALOGUE) -> dict[str, Dia
     """
     found: dict[str, Diagnosis] = {}
     done: set[str] = set()
-    groups = [group for group in origins(case) if any(not c.explained_by_digits for c in group)]
-    for group in groups:
-        lead = next(c for c in group if not c.explained_by_digits)
-        if lead.statement.pointer in done or lead.deviation is None:
-            continue
-        others = [g for g in groups if g is not group]
-        own = _Inquiry(case, lead, catalogue).diagnosis(others)
-        found[lead.statement.pointer] = own
-        done.update(own.explains)
+    firm = (next((c for c in group if not c.explained_by_digits), None) for group in origins(case))
+    leads = tuple(c for c in firm if c is not None and c.deviation is not None)
+    for lead in leads:
+        if lead.statement.pointer not in done:
+            own = _Inquiry(case, lead, leads, catalogue).diagnosis()
+            found[lead.statement.pointer] = own
+            done.update(own.explains)
     return found
 
 
 class _Inquiry:
     """The search for the cause of one origin; lives as long as it takes."""
 
-    def __init__(self, case: Case, lead: Compared, catalogue: Sequence[Slip]) -> None:
-        self.case, self.lead, self.catalogue = case, lead, catalogue
+    def __init__(
+        self, case: Case, lead: Compared, leads: Sequence[Compared], catalogue: Sequence[Slip]
+    ) -> None:
+        self.case, self.lead, self.leads, self.catalogue = case, lead, leads, catalogue
+        self.budget = Budget.of(len(leads))
         self.benches = tuple(_benches(case, lead))
         step = case.plan.sheet.made_by.get(lead.key)
         outputs = set(step.outputs) if step is not None else {lead.key}
@@ -93,108 +89,93 @@ class _Inquiry:
             and c.deviation is not None
         ]
 
-    def diagnosis(self, others: Sequence[Sequence[Compared]]) -> Diagnosis:
+    def diagnosis(self) -> Diagnosis:
         """Return what the catalogue says of the origin, and which of the other origins it explains."""
-        tried, capped = self._candidates()
-        matches = [(c, bench) for c, bench in tried if self._fits(c, bench)]
+        tried = list(self._candidates())
+        matches = self._matches(tried)
         if not matches:
-            return Diagnosis(note=f"{NONE_FITS}; {CAPPED}" if capped else NONE_FITS)
-        ranked = sorted(
-            _distinct(matches), key=lambda pair: (pair[0].slip.rank, _place(pair[0]), pair[0].slip.name)
-        )
-        best, bench = ranked[0]
-        explained = tuple(self._explained(best, others))
-        chance = self._chance(best, bench, [c for c, _ in tried]) * self._evidence(explained, best)
-        note = "" if chance < LEAST_CHANCE else BY_CHANCE
+            return Diagnosis(note=f"{NONE_FITS}; {CAPPED}" if self.budget.hit else NONE_FITS)
+        best = matches[0]
+        explained = tuple(self._explained(best))
+        half = window(self.case, self.lead, best.bench, best.candidate.value, best.tier)
+        chance = by_chance(self.lead, best, [c for c, _ in tried], half) * self._evidence(explained, best)
+        note = "" if chance < LEAST_CHANCE and not best.against else BY_CHANCE
         return Diagnosis(
-            tuple(self._cause(c, not note) for c, _ in ranked),
-            f"{note}; {CAPPED}" if note and capped else note,
+            tuple(self._cause(match.candidate, not note) for match in matches),
+            f"{note}; {CAPPED}" if note and self.budget.hit else note,
             chance,
             tuple(c.statement.pointer for c in explained) if not note else (),
         )
 
-    def _candidates(self) -> tuple[list[tuple[Candidate, Bench]], bool]:
-        """Return every candidate with its bench, and whether some were left out."""
-        found: list[tuple[Candidate, Bench]] = []
-        left, capped = MOST_COST, False
-        for cost, slip, change, bench in sorted(self._offers(), key=lambda offer: (offer[1].rank, offer[0])):
-            if cost > left:
-                capped = True
-                continue
-            left -= cost
-            value = _value(bench, change)
-            if value is not None:
-                found.append((Candidate(slip, change, value), bench))
-        return found, capped
+    def _candidates(self) -> Iterator[tuple[Candidate, Bench]]:
+        """Yield every candidate with its bench, simple and cheap ones first, as long as the budget lasts."""
+        for slip in sorted(self.catalogue, key=lambda slip: slip.rank):
+            if self.budget.spent:
+                self.budget.hit = True
+                return
+            offers = [
+                (bench.cost_of(change), place, change, bench)
+                for place, bench in enumerate(self.benches)
+                for change in _changes(bench, slip)
+            ]
+            for cost, _, change, bench in sorted(offers, key=lambda offer: offer[:2]):
+                if self.budget.spend(cost) and (value := _value(bench, change)) is not None:
+                    yield Candidate(slip, change, value), bench
 
-    def _offers(self) -> Iterator[tuple[int, Slip, Change, Bench]]:
-        """Yield everything that might be tried, with its cost."""
-        for slip in self.catalogue:
-            for bench in self.benches:
-                for change in _changes(bench, slip):
-                    yield bench.cost_of(change), slip, change, bench
+    def _matches(self, tried: Sequence[tuple[Candidate, Bench]]) -> list[Match]:
+        """Return the candidates that agree with the stated digits, the best of each slip, in order."""
+        found = [Match(c, bench, tier) for c, bench in tried if (tier := self._tier(c, bench)) is not None]
+        found.sort(key=lambda match: match.order)
+        if len(self.leads) <= MOST_ORIGINS_WEIGHED and found:
+            weighing = Weighing(self.case, self.lead, self.leads)
+            found = [weighing.weighed(match) for match in found[:MOST_WEIGHED]]
+            found.sort(key=lambda match: match.order)
+        return list(distinct(found))
 
-    def _fits(self, candidate: Candidate, bench: Bench) -> bool:
-        """Say whether a candidate agrees with every stated digit of the step that the origin belongs to."""
-        if abs(candidate.value - self.lead.stated) > self._window(self.lead, bench, candidate.value):
-            return False
-        if abs(candidate.value - _plain(bench)) <= 0.2 * abs(self.lead.stated - _plain(bench)):
-            return False  # it hardly changes anything: the digits of the parents explain as much
-        return all(self._agrees(c, candidate, bench) for c in self.siblings)
+    def _tier(self, candidate: Candidate, bench: Bench) -> int | None:
+        """Return how strictly a candidate agrees with every stated digit of the origin's step; None if it does not."""
+        away, plain = abs(candidate.value - self.lead.stated), _plain(bench)
+        if abs(candidate.value - plain) <= 0.2 * abs(self.lead.stated - plain):
+            return None  # it hardly changes anything: the digits of the parents explain as much
+        if self.lead.stated == 0.0 and abs(candidate.value) > 1e-9 * abs(plain):
+            return None  # nothing is stated: what is small would have been written with its digits
+        for tier in TIERS:
+            if away <= window(self.case, self.lead, bench, candidate.value, tier):
+                agrees = all(self._agrees(c, candidate, bench, tier) for c in self.siblings)
+                return tier if agrees else None
+        return None
 
-    def _agrees(self, c: Compared, candidate: Candidate, bench: Bench) -> bool:
+    def _agrees(self, c: Compared, candidate: Candidate, bench: Bench, tier: int) -> bool:
         """Say whether a stated output of the same step agrees with a candidate."""
         if self.lead.key in candidate.change and c.key not in candidate.change:
             return c.outcome is not Outcome.WRONG
         other = replace(bench, origin=c)
         value = other.value_with(candidate.change)
-        return value is not None and abs(value - c.stated) <= self._window(c, other, value)
+        if value is None:
+            return False
+        return abs(value - c.stated) <= window(self.case, c, other, value, max(tier, 1))
 
-    def _window(self, c: Compared, bench: Bench, value: float) -> float:
-        """Return how far a candidate may lie from the stated value: its digits, and those of stated parents."""
-        half = ROUNDED * c.statement.quantity.half_width + 1e-12 * abs(c.stated)
-        if not bench.stated or bench.values is self.case.values:
-            return half
-        plain = bench.values.get(c.key)
-        scale = abs(value / plain) if isinstance(plain, float) and plain else 1.0
-        return half + self.case.carried.spread(c.key) * min(max(scale, 1.0), 1e3)
-
-    def _chance(self, best: Candidate, bench: Bench, tried: Sequence[Candidate]) -> float:
-        """Return how many matches by chance are expected among slips as simple as the one found."""
-        stated = self.lead.stated
-        if stated == 0.0:
-            return 1.0
-        near = {
-            float(f"{c.value:.6e}")
-            for c in tried
-            if c.slip.rank <= best.slip.rank
-            and c.value * stated > 0.0
-            and abs(math.log(c.value / stated)) < NEAR
-        }
-        spread = 1.5 * abs(stated)
-        return max(len(near), 1) * 2.0 * self._window(self.lead, bench, best.value) / spread
-
-    def _evidence(self, explained: Sequence[Compared], best: Candidate) -> float:
+    def _evidence(self, explained: Sequence[Compared], best: Match) -> float:
         """Return the factor by which further results that agree make chance less likely."""
-        factor = 1.0
-        wrong = [c for c in self.siblings if c.outcome is Outcome.WRONG and c.key not in best.change]
-        for c in (*explained, *wrong):
-            if c.stated:
-                factor *= min(1.0, 2.0 * c.statement.quantity.half_width / (1.5 * abs(c.stated)))
-        return factor
+        change = best.candidate.change
+        wrong = [c for c in self.siblings if c.outcome is Outcome.WRONG and c.key not in change]
+        return evidence((*explained, *wrong))
 
-    def _explained(self, best: Candidate, others: Sequence[Sequence[Compared]]) -> Iterator[Compared]:
+    def _explained(self, best: Match) -> Iterator[Compared]:
         """Yield the leads of other origins that the same change reproduces."""
-        for group in others:
-            lead = next(c for c in group if not c.explained_by_digits)
-            if lead.deviation is None:
+        change = best.candidate.change
+        for lead in self.leads:
+            if lead is self.lead or set(change) <= {self.lead.key}:
                 continue
-            inquiry = _Inquiry(self.case, lead, ())
+            inquiry = _Inquiry(self.case, lead, self.leads, ())
             for bench in inquiry.benches:
-                if not set(best.change) & bench.parents:
+                if not set(change) & bench.parents:
                     continue
-                value = bench.value_with(best.change)
-                if value is not None and inquiry._fits(Candidate(best.slip, best.change, value), bench):
+                value = bench.value_with(change)
+                if (
+                    value is not None
+                    and inquiry._tier(Candidate(best.candidate.slip, change, value), bench) is not None
+                ):
                     yield lead
                     break
 
@@ -223,10 +204,17 @@ def _benches(case: Case, lead: Compared) -> Iterator[Bench]:
     if not wrong & set(hidden):
         exact = {key: own for key in hidden if isinstance(own := case.values.get(key), float)}
         yield Bench(case, lead, case.values, exact)
-        if case.carried.spread(lead.key) <= BARELY * lead.statement.quantity.half_width:
-            return  # the digits of the parents could not move the result beyond its own
+        half = BARELY * lead.statement.quantity.half_width
+        away = _difference(case.carried.value(lead.key), lead.independent)
+        if case.carried.spread(lead.key) <= half and away <= half:
+            return  # the numbers stated above could not move the result beyond its own digits
     if hidden:
-        yield Bench(case, lead, case.carried.values, hidden)
+        yield Bench(case, lead, case.carried.values, hidden, carried=True)
+
+
+def _difference(one: object, other: object) -> float:
+    """Return how far two values lie apart; nothing where one of them is none."""
+    return abs(one - other) if isinstance(one, float) and isinstance(other, float) else 0.0
 
 
 def _changes(bench: Bench, slip: Slip) -> Iterator[Change]:
@@ -242,17 +230,3 @@ def _value(bench: Bench, change: Mapping[str, float]) -> float | None:
         return None
     value = bench.value_with(change)
     return value if value is not None and math.isfinite(value) else None
-
-
-def _place(candidate: Candidate) -> int:
-    """Return how far from the origin a slip happens: fewer changed keys are simpler."""
-    return len(candidate.change)
-
-
-def _distinct(matches: Sequence[tuple[Candidate, Bench]]) -> Iterator[tuple[Candidate, Bench]]:
-    """Yield the first match of every slip."""
-    seen: set[str] = set()
-    for candidate, bench in matches:
-        if candidate.slip.name not in seen:
-            seen.add(candidate.slip.name)
-            yield candidate, bench

@@ -13,6 +13,7 @@ from checker.vocabulary import Allowance
 
 ENERGIES: Final = (dim.ENERGY, dim.ENTROPY, dim.SPECIFIC_ENERGY, dim.SPECIFIC_ENTROPY)
 EXTENSIVE: Final = (dim.ENERGY, dim.ENTROPY, dim.VOLUME)
+SPECIFIC: Final = (dim.SPECIFIC_ENERGY, dim.SPECIFIC_ENTROPY, dim.SPECIFIC_VOLUME)
 CELSIUS_ZERO: Final = 273.15
 MOST_DIGITS: Final = 6
 
@@ -26,17 +27,15 @@ def _right(bench: Bench) -> float | None:
 def _times(
     bench: Bench, factors: Iterator[float] | tuple[float, ...], where: tuple[dim.Dimension, ...]
 ) -> Iterator[Change]:
-    value = _right(bench)
+    value, shift = _right(bench), bench.origin.shift.value
     if value and bench.origin.statement.term.dimension in where:
         for factor in factors:
-            yield {bench.key: value * factor}
+            yield {bench.key: (value + shift) * factor - shift}
 
 
 def sign(bench: Bench) -> Iterator[Change]:
     """Yield the result with the other sign."""
-    value = _right(bench)
-    if value and bench.origin.statement.term.dimension in (dim.ENERGY, dim.ENTROPY, *ENERGIES):
-        yield {bench.key: -value}
+    return _times(bench, (-1.0,), ENERGIES)
 
 
 def kilo(bench: Bench) -> Iterator[Change]:
@@ -61,9 +60,13 @@ def british(bench: Bench) -> Iterator[Change]:
 
 def rate(bench: Bench) -> Iterator[Change]:
     """Yield a rate for a total, where a duration is known."""
-    base = "/".join(bench.key.split("/")[:2])
-    durations = [bench.get(key) for key in (f"{base}/duration", f"{bench.key.rsplit('/', 1)[0]}/duration")]
-    for duration in durations:
+    base = "/".join(bench.key.split("/")[:2]) + "/"
+    durations = {
+        s.value
+        for s in bench.case.record.statements
+        if s.usable and s.pointer.startswith(base) and s.pointer.endswith("/duration")
+    }
+    for duration in sorted(durations):
         if duration:
             yield from _times(
                 bench, (1.0 / duration, duration, 60.0 / duration, 3600.0 / duration), (dim.ENERGY,)
@@ -72,7 +75,7 @@ def rate(bench: Bench) -> Iterator[Change]:
 
 def _masses(bench: Bench) -> Iterator[float]:
     for body in bench.case.record.bodies:
-        mass = bench.get(f"bodies/{body}/mass")
+        mass = bench.get(f"bodies/{body}/mass") or bench.case.value(f"bodies/{body}/mass")
         if mass:
             yield mass
 
@@ -84,7 +87,7 @@ def per_mass(bench: Bench) -> Iterator[Change]:
 
 def of_the_total(bench: Bench) -> Iterator[Change]:
     """Yield the total where a value per unit mass belongs, or the mass once more."""
-    return _times(bench, _masses(bench), (*EXTENSIVE, dim.SPECIFIC_ENERGY, dim.SPECIFIC_ENTROPY))
+    return _times(bench, _masses(bench), (*EXTENSIVE, *SPECIFIC))
 
 
 def per_mole(bench: Bench) -> Iterator[Change]:
@@ -136,10 +139,11 @@ def digit_doubled(bench: Bench) -> Iterator[Change]:
 
 def decimal_shifted(bench: Bench) -> Iterator[Change]:
     """Yield the result with a shifted decimal point."""
+    yield from _rewritten(bench, lambda text: shifted(float(text), 2))
     value, quantity = _right(bench), bench.origin.statement.quantity
     if value is not None:
         scale, shift = bench.origin.statement.sign, bench.origin.shift.value
-        for number in shifted(quantity.number_of(scale * (value + shift))):
+        for number in shifted(quantity.number_of(scale * (value + shift)), 2):  # 1000 is a unit, mostly
             changed = number * quantity.unit.factor + quantity.unit.offset + quantity.atmosphere
             yield {bench.key: scale * changed - shift}
 
@@ -194,26 +198,31 @@ def reciprocal(bench: Bench) -> Iterator[Change]:
 
 def twice(bench: Bench) -> Iterator[Change]:
     """Yield the double."""
-    value = _right(bench)
-    if value:
-        yield {bench.key: 2.0 * value}
+    return _times(bench, (2.0,), (bench.origin.statement.term.dimension,))
 
 
 def half(bench: Bench) -> Iterator[Change]:
     """Yield the half."""
-    value = _right(bench)
-    if value:
-        yield {bench.key: 0.5 * value}
+    return _times(bench, (0.5,), (bench.origin.statement.term.dimension,))
 
 
 def rejected_for_supplied(bench: Bench) -> Iterator[Change]:
     """Yield an efficiency over the heat rejected, or over the net heat."""
     work, out = bench.get("results/net_work"), bench.get("results/heat_rejected")
+    if bench.key == "results/heat_supplied" and (rejected := _rejected(bench)):
+        yield {bench.key: rejected}
     if bench.key == "results/thermal_efficiency" and work and out:
         yield {bench.key: work / out}
         supplied = bench.get("results/heat_supplied")
         if supplied:
             yield {bench.key: out / supplied}
+
+
+def _rejected(bench: Bench) -> float | None:
+    """Return the heat rejected of a cycle, stated or not."""
+    stated = bench.get("results/heat_rejected")
+    own = bench.case.values.get("results/heat_rejected")
+    return stated if stated is not None else own if isinstance(own, float) else None
 
 
 def heating_for_cooling(bench: Bench) -> Iterator[Change]:
