@@ -79,7 +79,7 @@ def _internal(draft: Draft, leg: Leg, model_of: ModelOf) -> None:
         return enthalpy(v)
 
     def real(v: Values) -> float:
-        if not isinstance(model_of(v), RealFluid):
+        if not isinstance(model_of(v), RealFluid | IdealPart | PolynomialGas):
             raise NoStateError("no table")
         return enthalpy(v)
 
@@ -322,8 +322,8 @@ def _entropy_change(draft: Draft, leg: Leg, model_of: ModelOf) -> None:
         ("decimal logarithm", lambda v: (decimal(v),)),
         ("Celsius in a ratio", lambda v: (c_log(v, celsius(v)),)),
         ("ratio inverted", lambda v: (c_log(v, 1.0 / warm(v)),)),
-        ("cv for cp", lambda v: (v[m] * constant(v).cv * math.log(warm(v)) - p_term(v),)),
-        ("cp for cv", lambda v: (v[m] * (constant(v).cv + gas(v)) * math.log(warm(v)) + v_term(v),)),
+        ("cv for cp", lambda v: (change(v) - v[m] * gas(v) * math.log(warm(v)),)),
+        ("cp for cv", lambda v: (change(v) + v[m] * gas(v) * math.log(warm(v)),)),
         ("states swapped", lambda v: (-change(v),)),
         ("mass left out", lambda v: (change(v) / v[m],)),
     ]

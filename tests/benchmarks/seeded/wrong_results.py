@@ -30,27 +30,28 @@ def result_slips(
 ) -> Iterator[Slip]:
     """Yield every way in which a claim can be written wrongly, each carried on and not."""
     for claim in chain.claims:
-        rewrites = (*_rewrites(claim, molar_mass, duration), *_pens(claim, texts[claim.key]))
-        for kind, rewrite in rewrites:
-            for carried in (True, False):
+        for carried in (True, False):
+            for kind, rewrite in _rewrites(claim, molar_mass, duration):
                 yield Slip(kind, claim.key, rewrite=rewrite, carried=carried)
+            for kind, retext in _pens(claim, texts[claim.key]):
+                yield Slip(kind, claim.key, retext=retext, carried=carried)
 
 
-def _pens(claim: Claim, text: str) -> Iterator[tuple[str, Rewrite]]:
+def _pens(claim: Claim, text: str) -> Iterator[tuple[str, Callable[[str], str]]]:
     """Yield the slips of the pen on the text of a claim, whatever its digits will be."""
     for manner in DIGITS:
         for place in range(len(_altered(claim, text, manner))):
             yield DIGITS[manner], _pen(claim, manner, place)
 
 
-def _pen(claim: Claim, manner: str, place: int) -> Rewrite:
-    def rewrite(right: float, values: Values) -> float:
-        found = _altered(claim, claim.text(right), manner)
+def _pen(claim: Claim, manner: str, place: int) -> Callable[[str], str]:
+    def retext(text: str) -> str:
+        found = _altered(claim, text, manner)
         if place >= len(found):
             raise NoStateError("no such digit")
-        return claim.value(found[place])
+        return f"{found[place]} {claim.unit.text}".strip()
 
-    return rewrite
+    return retext
 
 
 def _altered(claim: Claim, text: str, manner: str) -> list[str]:
@@ -64,8 +65,9 @@ def _times(factor: float) -> Rewrite:
 
 def _rewrites(claim: Claim, molar_mass: float | None, duration: str | None) -> Iterator[tuple[str, Rewrite]]:
     kind = claim.kind
-    if kind not in ("temperature", "pressure"):
+    if kind in ("energy", "entropy"):
         yield "sign reversed", _times(-1.0)
+    if kind not in ("temperature", "pressure"):
         yield "doubled", _times(2.0)
         yield "halved", _times(0.5)
     if kind in ("energy", "specific energy"):
