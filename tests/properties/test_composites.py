@@ -23,8 +23,8 @@ from checker.findings import Grade, Verdict
 from checker.outcomes import NotEvaluable
 from checker.package import submit
 from checker.sheet.build import RecordPlan, build_sheet
-from checker.sheet.closing import block
-from checker.sheet.step import Values, evaluate
+from checker.sheet.closing.trials import Search
+from checker.sheet.step import Values, evaluate, reevaluate
 from tests.properties.composites import KINDS, Composite, Part
 from tests.properties.physics import State
 from tests.properties.trial import steady
@@ -61,18 +61,23 @@ class Found:
 
 def calculated(composite: Composite) -> Found:
     """Read a composite as any package is read, and calculate it."""
+    plan = planned(composite)
+    return Found(plan, evaluate(plan.sheet.steps, plan.sheet.leaves))
+
+
+def planned(composite: Composite) -> RecordPlan:
+    """Read a composite as any package is read, and plan its sheet."""
     submission = submit(read_document(composite.package(), "trial.json"))
     assert not submission.problems, submission.problems
     (record,) = submission.records
     assert not record.problems, record.problems
-    plan = build_sheet(record)
-    return Found(plan, evaluate(plan.sheet.steps, plan.sheet.leaves))
+    return build_sheet(record)
 
 
 @contextmanager
 def counting(most: int) -> Iterator[list[int]]:
     """Count the evaluations of blocks, and stop the test at too many."""
-    count, plain = [0], block._Search.residuals
+    count, plain = [0], Search.residuals
 
     def counted(self: Any, x: Any) -> list[float]:
         count[0] += 1
@@ -80,7 +85,7 @@ def counting(most: int) -> Iterator[list[int]]:
         return plain(self, x)
 
     with pytest.MonkeyPatch.context() as patch:
-        patch.setattr(block._Search, "residuals", counted)
+        patch.setattr(Search, "residuals", counted)
         yield count
 
 
@@ -249,3 +254,24 @@ def test_equalisation_conserves_the_energy(composite: Composite) -> None:
     """Gases that mix their pressures and temperatures in an insulated vessel keep their energy."""
     change = calculated(composite).value("processes/meeting/internal_energy_change")
     assert change == pytest.approx(0.0, abs=1e-9 * held(composite))
+
+
+@steady(15)
+@given(drawn(), st.floats(0.9, 1.1))
+def test_what_was_evaluated_before_changes_nothing(composite: Composite, factor: float) -> None:
+    """Inputs that move, and come back, lead to the values of a sheet that was never evaluated with others."""
+    found, fresh = calculated(composite), planned(composite)
+    sheet = found.plan.sheet
+    given_first = sorted(key for key in sheet.leaves if key.startswith("given/states/start/"))
+    moved = {key: sheet.leaves[key] * (1.0 + 0.02 * (factor - 1.0)) for key in given_first[:2]}
+    there = {**found.values, **reevaluate(sheet, found.values, moved)}
+    direct = evaluate(fresh.sheet.steps, {**fresh.sheet.leaves, **moved})
+    back = reevaluate(sheet, there, {key: sheet.leaves[key] for key in moved})
+    for key, value in back.items():
+        assert value == found.values[key] or isinstance(value, NotEvaluable), key
+    for spot in [key for key in direct if key.startswith("states/") and key.endswith("/temperature")]:
+        one, other = there[spot], direct[spot]
+        if isinstance(one, float) and isinstance(other, float):
+            assert one == pytest.approx(other, rel=1e-10)
+        else:
+            assert isinstance(one, NotEvaluable) == isinstance(other, NotEvaluable)

@@ -8,9 +8,10 @@ from dataclasses import dataclass
 from typing import Final
 
 from checker.sheet.closing import balances, relations
-from checker.sheet.closing.block import System, Unknown, block_step
+from checker.sheet.closing.block import block_step
 from checker.sheet.closing.charts import PRESSURE, TEMPERATURE, Chart, chart_of, usable_clues
 from checker.sheet.closing.structure import blocks, match, undetermined
+from checker.sheet.closing.system import System, Unknown
 from checker.sheet.closing.world import PROPERTIES, Equation, Spot
 from checker.sheet.context import ProcessContext
 from checker.sheet.keys import body_key, state_key

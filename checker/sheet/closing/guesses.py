@@ -13,7 +13,7 @@ from checker.sheet.endstates import enthalpy_range
 from checker.substances.interface import PropertyState, Substance
 
 if TYPE_CHECKING:
-    from checker.sheet.closing.block import System
+    from checker.sheet.closing.system import System
 
 ROOM: Final = 300.0
 """[K], where nothing at all is known."""
@@ -34,7 +34,7 @@ def guess(
         return _mass(body, system, world)
     near = [state for spot in spots if (state := _near(spot, system, world)) is not None]
     if name == TEMPERATURE:
-        low, high = _temperatures(models[spot] for spot in spots)
+        low, high = temperatures(models[spot] for spot in spots)
         return min(max(_warmth(near, world), low), high)
     if name == VOLUME:
         return _volume(spots[0], near, world, models)
@@ -106,7 +106,7 @@ def _mass(body: str, system: System, world: World) -> float:
     return 1.0
 
 
-def _temperatures(models: Iterable[Substance]) -> tuple[float, float]:
+def temperatures(models: Iterable[Substance]) -> tuple[float, float]:
     """Return the temperatures in which all of several models hold. [K]"""
     low, high = 1.0, 2e4
     for model in models:
@@ -128,14 +128,14 @@ def span(
 ) -> tuple[float, float]:
     """Return the span in which an unknown is sought. [SI]"""
     if name == TEMPERATURE:
-        return _temperatures(models[spot] for spot in spots)
+        return temperatures(models[spot] for spot in spots)
     if name not in (ENERGY, ENTHALPY):
         return centre / DECADES, centre * DECADES
     model, fixed = models[spots[0]], system.charts[spots[0]].fixed
     if name == ENTHALPY and fixed is not None:
         low, high = enthalpy_range(model, world.value(fixed.key))
         return min(low, high), max(low, high)
-    coldest, hottest = _temperatures((model,))
+    coldest, hottest = temperatures((model,))
     pressure = {} if fixed is None else {fixed.name: world.value(fixed.key)}
     ends = [
         model.state({TEMPERATURE: t, **pressure}).specific_internal_energy
