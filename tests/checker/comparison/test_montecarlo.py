@@ -97,7 +97,7 @@ def test_an_interval_may_be_asymmetric_and_each_side_is_held():
 
 
 def test_trials_without_a_value_settle_nothing():
-    """x with a root at zero: a quarter of the trials have none, more than a 95 % interval leaves out."""
+    """A root that ends at zero: a quarter of the trials have none, more than a 95 % interval leaves out."""
     sheet = sheet_of(math.sqrt, "x")
     found = propagate("r", sheet, {"x": 1.0, "y": 1.0}, [source("x", 2.0 / math.sqrt(3.0))], ["y"], 2.0)["y"]
     assert found.failed == pytest.approx(found.trials / 4, abs=0.02 * found.trials)
@@ -151,7 +151,7 @@ def test_generation_is_judged_on_the_side_of_zero():
 
 
 def test_coverage_follows_the_basis():
-    """k = 3 of a normal distribution leaves out 0.27 %: a wider interval than k = 2."""
+    """With k = 3 a normal distribution leaves out 0.27 %: a wider interval than with k = 2."""
     record = vapour("150.0 ± 40.0 kPa", "1.188 m³/kg")
     two, three = (
         compared(case(record, basis=Basis(coverage_factor=k)), LAST + "specific_volume").budget

@@ -105,14 +105,14 @@ def test_sum_of_four_rectangular_quantities():
 
 
 def test_reciprocal_of_a_rectangular_quantity():
-    """y = 1/x is monotonic: its interval ends at the reciprocals of those of x (JCGM 101:2008, 7.7)."""
+    """The function 1/x is monotonic: its interval ends at the reciprocals of those of x (JCGM 101:2008, 7.7)."""
     low, high = drawn(lambda x: 1.0 / x, [rectangular("x", 0.5)], x=1.0)
     assert low == pytest.approx(1.0 / (1.0 + 0.5 * LEVEL), rel=0.01)
     assert high == pytest.approx(1.0 / (1.0 - 0.5 * LEVEL), rel=0.01)
 
 
 def test_square_about_zero_of_a_normal_quantity():
-    """y = x² about zero is χ² of one degree: the upper end is the square of the normal quantile, the lower one 0."""
+    """The square about zero is χ² of one degree: it ends at the square of the normal quantile, and at 0."""
     low, high = drawn(lambda x: x * x, [normal("x", 1.0)], x=0.0)
     assert low == 0.0
     assert high == pytest.approx(
