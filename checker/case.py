@@ -56,9 +56,9 @@ class Unchecked:
 Yielded = Iterator[Raised | Unchecked]
 
 
-@dataclass(frozen=True, slots=True)
+@dataclass(frozen=True, slots=True, eq=False)
 class Case:
-    """A record, its sheet, and its values: independent, carried, moved and compared."""
+    """A record, its sheet, and its values: independent, carried, moved and compared. Each is equal to itself alone."""
 
     head: PackageHead
     record: Record

@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 from collections import defaultdict
-from collections.abc import Iterator
 from typing import Final
 
 from checker.case import Case, Raised, Yielded
@@ -11,54 +10,32 @@ from checker.comparison.compare import Compared
 from checker.facts.gaps import unexplained
 from checker.facts.mass import contradicts_mass
 from checker.facts.naming import name_of
-from checker.facts.origins import group_of, is_impossible, origins, spoiled_by
+from checker.facts.origins import is_impossible, origins, spoiled_by
 from checker.facts.paths import any_follows
 from checker.facts.use import untraceable
 from checker.findings import Grade, Outcome, Standing
-from checker.slips import Diagnosis, diagnose
 from checker.submission import Role
+from rules.causes import cause_told, causes_of, spoils_of
 from rules.rule import Rule, Scope
 
 
 def disagrees(case: Case) -> Yielded:
     """Yield one finding per origin, with everything that it spoiled."""
-    diagnoses = diagnose(case)
-    elsewhere = {pointer for diagnosis in diagnoses.values() for pointer in diagnosis.explains}
-    groups = {group[0].statement.pointer: group for group in _firm(case)}
-    for pointer, firm in groups.items():
+    causes = causes_of(case)
+    for pointer, firm in causes.firm.items():
         first = firm[0]
-        if is_impossible(case, first) or pointer in elsewhere:
+        if is_impossible(case, first) or pointer in causes.elsewhere:
             continue
-        diagnosis = diagnoses.get(pointer, Diagnosis())
-        spoiled = spoiled_by(case, group_of(case, first), first)
-        for other in diagnosis.explains:
-            spoiled = (*spoiled, other, *spoiled_by(case, group_of(case, groups[other][0]), groups[other][0]))
-        spoiled = tuple(dict.fromkeys(spoiled))
+        spoiled = spoils_of(case, causes, first)
         yield Raised(
-            " ".join((_message(case, first), *_cause_told(diagnosis))),
+            " ".join((_message(case, first), *cause_told(case, causes, pointer))),
             compared=first,
             theme=first.statement.term.theme,
             origin=None if first.standing is Standing.ORIGIN_UNKNOWN else True,
             spoils=spoiled,
-            causes=diagnosis.causes,
+            causes=causes.of(pointer).causes,
             suggestion=_suggestion(first, spoiled),
         )
-
-
-def _firm(case: Case) -> Iterator[list[Compared]]:
-    """Yield for every origin what open digits do not explain of it."""
-    for group in origins(case):
-        if firm := [c for c in group if not c.explained_by_digits]:
-            yield firm
-
-
-def _cause_told(diagnosis: Diagnosis) -> Iterator[str]:
-    """Yield what the message says of the cause."""
-    if diagnosis.causes and not diagnosis.note:
-        first = diagnosis.causes[0].statement
-        yield f"This slip gives the stated digits: {first}."
-    elif diagnosis.note:
-        yield f"Cause: {diagnosis.note}."
 
 
 def digits_explain(case: Case) -> Yielded:

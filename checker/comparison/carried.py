@@ -6,14 +6,16 @@ with one of the state's clues, since a person who misread one property looks the
 
 from __future__ import annotations
 
+import math
 from collections import defaultdict
 from collections.abc import Iterator, Mapping, Sequence
 from dataclasses import dataclass, field, replace
 
 from checker.comparison.datums import NO_SHIFT, Shift
+from checker.comparison.rereading import Stated, Variant, left_out, read_anew
 from checker.outcomes import NotEvaluable
 from checker.sheet.build import RecordPlan, build_sheet
-from checker.sheet.step import Found, Values, evaluate, reevaluate
+from checker.sheet.step import Found, Sheet, Values, evaluate, reevaluate
 from checker.submission import Record, Role, Statement
 
 DIRECT = ("temperature", "pressure", "specific_volume", "quality")
@@ -23,20 +25,13 @@ MAX_VARIANTS = 12
 
 
 @dataclass(frozen=True, slots=True)
-class Variant:
-    """Carried values that start from a wrong stated property of a state; they speak only for what lies below it."""
-
-    state: str
-    values: Values
-
-
-@dataclass(frozen=True, slots=True)
 class Carried:
     """The carried values, their alternatives, and how far the stated digits of the parents move them."""
 
     values: Values
     variants: tuple[Variant, ...] = ()
     spreads: Mapping[str, float] = field(default_factory=dict)
+    stated: Mapping[str, float] = field(default_factory=dict)
 
     def value(self, key: str) -> Found:
         """Return the carried value of a key (None where the model has none)."""
@@ -46,15 +41,37 @@ class Carried:
         """Return how far the digits of the stated parents move the carried value."""
         return self.spreads.get(key, 0.0)
 
-    def nearest(self, key: str, above: frozenset[str], stated: float) -> Found:
-        """Return the carried value that comes nearest to the stated one.
+    def nearest(self, key: str, above: frozenset[str], stated: float) -> tuple[Found, tuple[str, ...]]:
+        """Return the carried value that comes nearest to the stated one, and the wrong value it starts from, if any.
 
         ``above`` holds the ancestors of the key: a variant counts only below its state. Of equally good values
         the plain one is returned.
         """
-        sources = [self.values, *(variant.values for variant in self.variants if variant.state in above)]
-        found = [value for values in sources if isinstance(value := values.get(key), float)]
-        return min(found, key=lambda value: abs(stated - value)) if found else self.value(key)
+        read = (variant for variant in self.variants if variant.speaks(above) and not variant.left)
+        sources: list[tuple[Values, tuple[str, ...]]] = [(self.values, ())]
+        sources += [(variant.values, (variant.state,)) for variant in read]
+        found = [(value, start) for values, start in sources if isinstance(value := values.get(key), float)]
+        return min(found, key=lambda pair: abs(stated - pair[0])) if found else (self.value(key), ())
+
+    @property
+    def marks(self) -> frozenset[str]:
+        """Keys below which variants speak."""
+        return frozenset(key for variant in self.variants for key in (variant.state, *variant.partners))
+
+    def without(self, key: str, above: frozenset[str]) -> Iterator[tuple[str, float]]:
+        """Yield the carried values of a key if one of its wrong stated ancestors is not carried on, with that one."""
+        for variant in self.variants:
+            value = variant.values.get(key)
+            if variant.left in above and isinstance(value, float):
+                yield variant.left, value
+
+    def moved(self, sheet: Sheet, key: str, leaf: str, size: float) -> float:
+        """Return how far the carried value of a key moves with a leaf; infinitely where it has none any more."""
+        start, before = self.values.get(leaf), self.values.get(key)
+        if size <= 0.0 or not isinstance(start, float) or not isinstance(before, float):
+            return 0.0
+        found = reevaluate(sheet, self.values, {leaf: start + size}, self.stated).get(key, before)
+        return abs(found - before) if isinstance(found, float) else math.inf
 
 
 def carry(
@@ -75,8 +92,11 @@ def carry(
             before = values.get(name)
             if isinstance(value, float) and isinstance(before, float):
                 spreads[name] += abs(value - before)
-    variants = tuple(_variants(record, leaves, independent, substitutes, widths))
-    return Carried(values, variants, dict(spreads))
+    stated = Stated(sheet, plan.substances, independent, values, substitutes, widths)
+    planned = _variants(record, leaves, independent, substitutes, widths)
+    return Carried(
+        values, (*planned, *read_anew(stated), *left_out(stated)), dict(spreads), dict(substitutes)
+    )
 
 
 def _substitutes(

@@ -14,7 +14,7 @@ from checker.comparison.datums import NO_SHIFT, Shift
 from checker.comparison.lineage import Lineage
 from checker.comparison.moves import Moves
 from checker.comparison.references import References
-from checker.comparison.sources import standard_uncertainty
+from checker.comparison.sources import input_statements, standard_uncertainty
 from checker.findings import Outcome, Standing
 from checker.outcomes import NotEvaluable
 from checker.sheet.keys import again, given
@@ -94,8 +94,24 @@ def compare_all(
         if statement.usable and not statement.term.text and _is_compared(statement, sheet, values)
     ]
     wrong = {c.key for c in found if c.outcome is Outcome.WRONG}
-    above = Lineage(sheet, wrong | {variant.state for variant in carried.variants})
-    return _one_origin_per_step([_with_standing(c, above, carried, wrong) for c in found], sheet)
+    above = Lineage(sheet, wrong | carried.marks)
+    standing = [_with_standing(c, above, carried, wrong) for c in found]
+    return _one_origin_per_step([_with_digits_used(c, record, sheet, carried) for c in standing], sheet)
+
+
+def _with_digits_used(c: Compared, record: Record, sheet: Sheet, carried: Carried) -> Compared:
+    """Return an origin with whether open digits explain it from the originator's own numbers as well.
+
+    What the inputs' last digits move above a stated result is in that result: they move it no further.
+    """
+    if c.standing is not Standing.ORIGIN or not c.explained_by_digits or not isinstance(c.carried, float):
+        return c
+    squares = 0.0
+    for key, statement in input_statements(record, sheet).items():
+        if statement.quantity.plus_minus is None:
+            squares += carried.moved(sheet, c.key, given(key), statement.quantity.half_width) ** 2
+    reach = max(c.open_tolerance, c.tolerance + math.sqrt(squares)) + c.carried_tolerance - c.tolerance
+    return replace(c, explained_by_digits=abs(c.stated - c.carried) <= reach)
 
 
 def _one_origin_per_step(found: list[Compared], sheet: Sheet) -> tuple[Compared, ...]:
@@ -238,14 +254,34 @@ def _hangs_on_unsettled(budget: Budget, deviation: float) -> bool:
     return budget.method is Method.UNSETTLED and abs(deviation) > certain
 
 
+def _is_near(c: Compared) -> bool | None:
+    """Say whether a result follows from its carried value; None where there is none."""
+    return abs(c.stated - c.carried) <= c.carried_tolerance if isinstance(c.carried, float) else None
+
+
+def _not_carried_on(
+    c: Compared, above: frozenset[str], carried: Carried, ancestors: list[str]
+) -> tuple[Compared, list[str]]:
+    """Return a wrong result as it follows if one wrong ancestor was only written wrongly, and the other ancestors."""
+    for left, value in carried.without(c.key, above):
+        others = [key for key in ancestors if key != left]
+        if others and abs(c.stated - value) <= c.carried_tolerance:
+            return replace(c, carried=value), others
+    return c, ancestors
+
+
 def _with_standing(c: Compared, lineage: Lineage, carried: Carried, wrong: set[str]) -> Compared:
     """Return the comparison with where its deviation comes from: the four cases of section 5."""
     if c.outcome is Outcome.NOT_EVALUABLE:
         return c
     above = lineage.above(c.key)
-    ancestors = sorted(above & wrong)
-    c = replace(c, carried=carried.nearest(c.key, above, c.stated))
-    near = abs(c.stated - c.carried) <= c.carried_tolerance if isinstance(c.carried, float) else None
+    value, start = carried.nearest(c.key, above, c.stated)
+    ancestors = sorted((above | set(start)) & wrong)
+    c = replace(c, carried=value)
+    near = _is_near(c)
+    if near is False and c.outcome is Outcome.WRONG:
+        c, ancestors = _not_carried_on(c, above, carried, ancestors)
+        near = _is_near(c)
     if c.outcome is Outcome.AGREES:
         cancels = near is False and bool(ancestors)
         return replace(

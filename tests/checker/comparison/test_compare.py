@@ -273,3 +273,28 @@ def test_a_quality_of_one_is_all_vapour(text, outcome):
         "processes": [],
     }
     assert compared(case(record), "states/now/water/quality").outcome is outcome
+
+
+def with_coarse_mass(**stated: str) -> dict[str, Any]:
+    """Return the bottle with its mass to three digits and S_gen off by 0.00051 kJ/K."""
+    record = gas_bottle({**stated, "entropy_generation": f"{GENERATED + 0.00051:.5f} kJ/K"})
+    record["bodies"]["gas"]["inputs"]["mass"] = "0.100 kg"
+    return record
+
+
+def test_last_digits_above_stated_results_explain_nothing_below_them():
+    """With Q and ΔS stated right to four digits, the open digits of the mass cannot have moved S_gen = ΔS − Q/T_b."""
+    alone = compared(case(with_coarse_mass()), SGEN)
+    beside = compared(case(with_coarse_mass(heat="31.16 kJ", entropy_change="0.08964 kJ/K")), SGEN)
+    assert (alone.outcome, alone.explained_by_digits) == (Outcome.WRONG, True)
+    assert (beside.outcome, beside.standing, beside.explained_by_digits) == (
+        Outcome.WRONG,
+        Standing.ORIGIN,
+        False,
+    )
+
+
+def test_last_digits_below_stated_results_still_explain():
+    """Q alone stated: ΔS, and with it S_gen, still moves with the digits of the mass."""
+    found = compared(case(with_coarse_mass(heat="31.16 kJ")), SGEN)
+    assert found.explained_by_digits
