@@ -41,7 +41,8 @@ def constant_gas(draft: Draft, tree: dict[str, Any], name: str | None = None) ->
 
 def ideal_gas(draft: Draft, tree: dict[str, Any], polynomial: bool) -> ModelOf:
     """Take a gas with c_p(T), by the polynomial or by the ideal part of its equation."""
-    name = draft.rng.choice(IDEAL_GASES)
+    squeezed = any(word in draft.situation for word in ("isothermal", "isentropic", "polytropic"))
+    name = draft.rng.choice(("Nitrogen", "Oxygen", "Argon") if squeezed else IDEAL_GASES)
     tree.update(substance=name, model="ideal gas")
     model = PolynomialGas(name) if polynomial else IdealPart(name)
     return lambda values: model

@@ -79,5 +79,5 @@ def decimals_for(size: float, unit: Unit, digits: int) -> int:
 
 
 def fitting(size: float, units: tuple[Unit, ...]) -> Unit:
-    """Return the unit in which a size reads as a number between 1 and 10 000, else the last one."""
-    return next((unit for unit in units if 1.0 <= abs(size) / unit.size < 1e4), units[-1])
+    """Return the unit in which a size reads as a number below 10 000, else the largest; units rise in size."""
+    return next((unit for unit in units if abs(size) / unit.size < 1e4), units[-1])
