@@ -58,7 +58,7 @@ def chart_of(plan: StatePlan, substance: Substance, clues: dict[str, Clue]) -> C
     """Return the chart of an unknown state; None where its clues fix it and only its evaluation is due."""
     if plan.incompressible:
         pressure = clues.get(PRESSURE)
-        free = ENERGY if substance.model == "phase change" else TEMPERATURE
+        free = ENERGY if melts(substance) else TEMPERATURE
         return None if free in clues else Chart(plan, substance, pressure, (free,))
     if VOLUME in clues:
         return Chart(plan, substance, clues[VOLUME], (TEMPERATURE,)) if TEMPERATURE not in clues else None
@@ -76,3 +76,8 @@ def chart_of(plan: StatePlan, substance: Substance, clues: dict[str, Clue]) -> C
 def boils(substance: Substance) -> bool:
     """Say whether temperature and pressure do not fix every state of a substance."""
     return substance.model == "real fluid" and substance.critical_point is not None
+
+
+def melts(substance: Substance) -> bool:
+    """Say whether a substance is a body that melts, whose temperature stands still while it does."""
+    return substance.model == "phase change"

@@ -3,11 +3,11 @@
 from __future__ import annotations
 
 import statistics
-from collections.abc import Iterable, Mapping, Sequence
+from collections.abc import Iterable, Iterator, Mapping, Sequence
 from typing import TYPE_CHECKING, Final
 
 from checker.outcomes import NotEvaluable
-from checker.sheet.closing.charts import ENERGY, ENTHALPY, PRESSURE, TEMPERATURE, VOLUME
+from checker.sheet.closing.charts import ENERGY, ENTHALPY, PRESSURE, TEMPERATURE, VOLUME, melts
 from checker.sheet.closing.world import Spot, World
 from checker.sheet.endstates import enthalpy_range
 from checker.substances.interface import PropertyState, Substance
@@ -15,6 +15,7 @@ from checker.substances.interface import PropertyState, Substance
 if TYPE_CHECKING:
     from checker.sheet.closing.system import System
 
+MELTED: Final = "melted_fraction"
 ROOM: Final = 300.0
 """[K], where nothing at all is known."""
 DECADES: Final = 1e4
@@ -89,6 +90,13 @@ def caloric(
     except NotEvaluable:
         return None
     return value
+
+
+def half_melted(models: Mapping[Spot, Substance]) -> Iterator[tuple[Spot, PropertyState]]:
+    """Yield the unknown states of bodies that melt, each with itself half melted."""
+    for spot, model in models.items():
+        if melts(model):
+            yield spot, model.state({MELTED: 0.5})
 
 
 def _mass(body: str, system: System, world: World) -> float:

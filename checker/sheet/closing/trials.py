@@ -7,7 +7,7 @@ from collections.abc import Iterator, Sequence
 from typing import Final
 
 from checker.sheet.closing.charts import ENERGY, ENTHALPY, TEMPERATURE, VOLUME, Chart
-from checker.sheet.closing.guesses import caloric, guess, span, temperatures, warmth
+from checker.sheet.closing.guesses import caloric, guess, half_melted, span, temperatures, warmth
 from checker.sheet.closing.newton import Matrix, Settled, settled
 from checker.sheet.closing.system import System
 from checker.sheet.closing.world import Spot, World
@@ -87,7 +87,10 @@ class Search:
         return math.log(ends[0] / centre), math.log(ends[1] / centre)
 
     def _starts(self) -> Iterator[tuple[float, ...]]:
-        """Yield the guess, then common temperatures of all bodies: u and h tell none where a body boils or melts."""
+        """Yield the guess, then common temperatures of all bodies: u and h tell none where a body boils or melts.
+
+        In the end the temperatures of melting themselves: a body that melts takes or gives heat at no other.
+        """
         yield (0.0,) * len(self.centre)
         level = warmth([spot for u in self.system.unknowns for spot in u.spots], self.system, self.world)
         for warm, wide in FACTORS:
@@ -95,12 +98,21 @@ class Search:
                 self._at_level(index, level * warm) if u.name in (TEMPERATURE, *LINEAR) else math.log(wide)
                 for index, u in enumerate(self.system.unknowns)
             )
+        for melting, half in half_melted(self.models):
+            yield tuple(
+                (half.specific_internal_energy - self.centre[index]) / LINEAR[ENERGY]
+                if melting in u.spots
+                else self._at_level(index, half.temperature)
+                for index, u in enumerate(self.system.unknowns)
+            )
 
     def _at_level(self, index: int, temperature: float) -> float:
         """Return a scaled T, u or h at a temperature; the guess where there is no such state."""
         unknown, centre = self.system.unknowns[index], self.centre[index]
-        if unknown.name not in LINEAR:
+        if unknown.name == TEMPERATURE:
             return math.log(temperature / centre)
+        if unknown.name not in LINEAR:
+            return 0.0
         at = caloric(unknown.name, unknown.spots[0], temperature, self.system, self.world, self.models)
         return 0.0 if at is None else (at - centre) / LINEAR[unknown.name]
 
