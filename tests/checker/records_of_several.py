@@ -46,7 +46,7 @@ def quench(**more: Any) -> Tree:
             }
         ],
     }
-    record["processes"][0].update(more)  # type: ignore[index]
+    record["processes"][0].update(more)  # type: ignore[index]  # the literal has values of several types
     return record
 
 

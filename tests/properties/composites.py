@@ -311,7 +311,7 @@ def fluid_parts(draw: st.DrawFn, last: float) -> Part:
         assume(boiling is None or abs(boiling - last) > 0.1)
         assume(last > 275.0)
     held = {"v": start.v} if path == "constant volume" else {"p": start.p}
-    return Part(kind, mass, path, start, kind.physics.at(t=last, **held))  # type: ignore[arg-type]
+    return Part(kind, mass, path, start, kind.physics.at(t=last, **held))  # type: ignore[arg-type]  # the properties held are not None for a fluid
 
 
 @st.composite
@@ -433,7 +433,7 @@ def partings(draw: st.DrawFn) -> Composite:
         path = draw(st.sampled_from(["constant volume", "constant pressure"]))
         start = kind.physics.at(t=first, p=draw(_rounded(5e4, 5e6)))
         held = {"v": start.v} if path == "constant volume" else {"p": start.p}
-        end = kind.physics.at(t=last, **held)  # type: ignore[arg-type]
+        end = kind.physics.at(t=last, **held)  # type: ignore[arg-type]  # the properties held are not None for a fluid
         parts.append(Part(kind, mass, path, start, end))
     found = Composite(tuple(parts), ("temperature",), "heat", needed(tuple(parts), False), "", at_start=True)
     return replace(found, by_volume=draw(st.booleans()))
