@@ -207,10 +207,10 @@ def half(bench: Bench) -> Iterator[Change]:
 
 
 def rejected_for_supplied(bench: Bench) -> Iterator[Change]:
-    """Yield an efficiency over the heat rejected, or over the net heat."""
-    work, out = bench.get("results/net_work"), bench.get("results/heat_rejected")
-    if bench.key == "results/heat_supplied" and (rejected := _rejected(bench)):
-        yield {bench.key: rejected}
+    """Yield the heat rejected in place of that supplied, and an efficiency over it."""
+    work, out = bench.get("results/net_work"), _rejected(bench)
+    if bench.key == "results/heat_supplied" and out:
+        yield {bench.key: out}
     if bench.key == "results/thermal_efficiency" and work and out:
         yield {bench.key: work / out}
         supplied = bench.get("results/heat_supplied")
@@ -219,10 +219,12 @@ def rejected_for_supplied(bench: Bench) -> Iterator[Change]:
 
 
 def _rejected(bench: Bench) -> float | None:
-    """Return the heat rejected of a cycle, stated or not."""
+    """Return the heat rejected of a cycle: as stated, else what its work leaves of the heat supplied."""
     stated = bench.get("results/heat_rejected")
-    own = bench.case.values.get("results/heat_rejected")
-    return stated if stated is not None else own if isinstance(own, float) else None
+    work, supplied = bench.get("results/net_work"), bench.get("results/heat_supplied")
+    if stated is not None or work is None or supplied is None:
+        return stated if stated is not None else bench.case.value("results/heat_rejected")
+    return supplied - work
 
 
 def heating_for_cooling(bench: Bench) -> Iterator[Change]:
