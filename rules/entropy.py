@@ -6,7 +6,7 @@ from collections.abc import Callable
 from typing import Final
 
 from checker.case import Case, Raised, Unchecked, Yielded
-from checker.facts import balance, boundaries, cycles, exchange, stated
+from checker.facts import balance, bodies, boundaries, cycles, exchange, stated
 from checker.facts.deviation import Deviation
 from checker.facts.origins import is_destroyed_inside
 from checker.facts.spans import Crossing
@@ -41,6 +41,8 @@ def _below_zero(case: Case, process: str, name: str) -> Yielded:
     if found is None and name == "entropy_generation":
         yield Unchecked(f"second law: processes/{process}", case.why_not(pointer))
     if found is not None and found.below:
+        if name == "entropy_generation" and bodies.destroyed_between_bodies(case, process, found):
+            return  # said where the heat between the bodies is listed
         yield _impossible(case, process, pointer, found)
         return
     yield from stated_below_zero(

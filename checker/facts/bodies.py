@@ -173,6 +173,19 @@ def uphill_between_bodies(case: Case, process: str) -> Iterator[Uphill]:
             yield Uphill(item, abs(heat), giver, taker, generated)
 
 
+def destroyed_between_bodies(case: Case, process: str, total: Deviation) -> bool:
+    """Say whether heat that runs uphill between bodies is all that makes a total entropy generation negative.
+
+    It is not where the rest of it is negative too, or where the uphill heat is but a query and the total is more.
+    """
+    found = tuple(uphill_between_bodies(case, process))
+    if not found or any(u.generation and u.generation.grade is not total.grade for u in found):
+        return False
+    pointers = [f"processes/{process}/heat_transfers/{u.item.id}/entropy_generation" for u in found]
+    values = [value for pointer in pointers if (value := case.value(pointer)) is not None]
+    return len(values) == len(pointers) and total.size - sum(values) >= -total.tolerance
+
+
 def _may_pump(case: Case, ctx: ProcessContext) -> bool:
     items = [item for item in ctx.process.work_transfers or () if item.kind in ("shaft", "electrical")]
     if items and all(item.body is not None for item in items):

@@ -83,3 +83,40 @@ def test_uphill_heat_that_a_heat_pump_may_carry_is_not_accused():
     assert "heat-between-bodies-uphill" in rules_of(quench(heat_transfers=uphill, results={}))
     found = rules_of(quench(heat_transfers=uphill, work_transfers=pumped, results={}))
     assert "heat-between-bodies-uphill" not in found
+
+
+def uphill(bath: str, *walls: dict[str, Any]) -> dict[str, Any]:
+    """Return a block of 350 K that gives 40 kJ to a hotter bath, which may take more through walls."""
+    record = quench(
+        heat_transfers=[
+            {"id": "skin", "from": "block", "to": "bath", "inputs": {"energy": "40.000 kJ"}},
+            *walls,
+        ],
+        results={"entropy_change": "0.0 kJ/K"},
+    )
+    del record["processes"][0]["insulated"], record["processes"][0]["results"]
+    record["bodies"]["bath"]["inputs"]["mass"] = "20.000 kg"
+    for state, block, own in (("before", "350.00 K", "360.00 K"), ("after", "342.00 K", bath)):
+        record["states"][state] = {
+            "block": {"inputs": {"temperature": block}},
+            "bath": {"inputs": {"temperature": own}},
+        }
+    return record
+
+
+def test_heat_uphill_is_one_finding():
+    """That it destroys entropy in the sum over the bodies is not said again."""
+    assert "generation-negative" not in rules_of(uphill("361.00 K"))
+    assert rules_of(uphill("361.00 K")).count("heat-between-bodies-uphill") == 1
+
+
+def test_what_else_destroys_entropy_stays_a_finding_of_its_own():
+    """Heat that enters at a wall colder than the bath is wrong also without the heat between the bodies."""
+    wall = {
+        "id": "wall",
+        "body": "bath",
+        "boundary_temperature": "250.00 K",
+        "inputs": {"energy": "80.000 kJ"},
+    }
+    found = rules_of(uphill("363.00 K", wall))
+    assert {"generation-negative", "heat-between-bodies-uphill"} <= set(found)
