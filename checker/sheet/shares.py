@@ -66,6 +66,7 @@ def share_steps(ctx: ProcessContext) -> Iterator[Step]:
         yield from _boundary_work(ctx, body)
         yield from _energy_change(ctx, body)
         yield from _work_and_heat(ctx, body)
+        yield from _entropy_generation(ctx, body)
     yield _total_boundary_work(ctx)
     for item in ctx.internal_heats:
         key = ctx.heat_item(item.id)
@@ -99,6 +100,62 @@ def _boundary_work(ctx: ProcessContext, body: str) -> Iterator[Step]:
             "W_b = −ΣW_b,others",
             f"−({sum_text(len(others))})",
         )
+    yield from _boundary_work_from_balance(ctx, body)
+
+
+def _boundary_work_from_balance(ctx: ProcessContext, body: str) -> Iterator[Step]:
+    """Yield what a body's own balance leaves for its boundary, where its heats and its other works are its own."""
+    heats, works = heats_of_body(ctx, body), works_of_body(ctx, body)
+    if heats is None or works is None or ctx.boundary_work_is_zero(body):
+        return
+    signs = (-1.0, *(sign for _, sign in heats), *(-1.0 for _ in works))
+    yield Step(
+        f"Boundary work from the balance{_of(ctx, body)}",
+        (ctx.share(body, "boundary_work"),),
+        (ctx.share(body, "energy_change"), *(key for key, _ in heats), *works),
+        lambda *terms: (sum(sign * term for sign, term in zip(signs, terms, strict=True)),),
+        "W_b = Q − ΔE − ΣW_others" if works else "W_b = Q − ΔE" if heats else "W_b = −ΔE (no heat)",
+    )
+
+
+def _entropy_generation(ctx: ProcessContext, body: str) -> Iterator[Step]:
+    """Yield ΔS − ΣQ_k/T_b,k of a body, where all its heats are its own.
+
+    Heat from another body crosses at the body's own temperature: no temperature of what lies between is stated.
+    """
+    if heats_of_body(ctx, body) is None or ctx.is_given(ctx.share(body, "heat")):
+        return
+    adiabatic = any(path.no_heat for path in ctx.paths_of(body))
+    own = () if adiabatic else tuple(i for i in ctx.external_heats or () if i.body == body)
+    inner = () if adiabatic else tuple(i for i in ctx.internal_heats if body in (i.from_body, i.to_body))
+    alone, change = _only_heat(ctx, body), ctx.share(body, "entropy_change")
+    ends = tuple(state_key(s, body, "temperature") for s in (ctx.process.from_state, ctx.process.to_state))
+    signs = [1.0 if item.to_body == body else -1.0 for item in inner]
+    base = f"processes/{ctx.process.id}/heat_transfers"
+
+    def generated(gained: float, *values: float) -> tuple[float]:
+        crossed, rest = values[: len(own)], values[len(own) :]
+        if inner:
+            first, last, *heats = rest
+            taken = [
+                _entropy_taken(sign * heat, first, last, gained if alone else None)
+                for sign, heat in zip(signs, heats, strict=True)
+            ]
+            return (gained - sum(crossed) - sum(taken),)
+        return (gained - sum(crossed),)
+
+    yield Step(
+        f"Entropy generation{_of(ctx, body)}",
+        (ctx.share(body, "entropy_generation"),),
+        (
+            change,
+            *(f"{base}/{item.id}/item_entropy" for item in own),
+            *(ends if inner else ()),
+            *(ctx.heat_item(item.id) for item in inner),
+        ),
+        generated,
+        "S_gen = ΔS − ΣQ_k/T_b,k" if own or inner else "S_gen = ΔS (no heat)",
+    )
 
 
 def _energy_change(ctx: ProcessContext, body: str) -> Iterator[Step]:
