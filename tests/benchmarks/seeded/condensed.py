@@ -7,8 +7,9 @@ from typing import Any
 
 from tests.benchmarks.seeded import units as un
 from tests.benchmarks.seeded.draft import Draft, head_of
+from tests.benchmarks.seeded.leg import GRAVITY, Leg
 from tests.benchmarks.seeded.onebody import condensed, direct_and_place, skeleton
-from tests.benchmarks.seeded.process import GRAVITY, Leg, add_process
+from tests.benchmarks.seeded.process import add_process
 from tests.benchmarks.seeded.states import claim_state, state_step
 
 

@@ -8,8 +8,9 @@ from typing import Any
 from tests.benchmarks.seeded import units as un
 from tests.benchmarks.seeded.draft import Draft, head_of, work_sign
 from tests.benchmarks.seeded.equation import NoStateError
+from tests.benchmarks.seeded.leg import Leg
 from tests.benchmarks.seeded.onebody import constant_gas, direct_and_place, mass_step, process_tree
-from tests.benchmarks.seeded.process import Leg, add_process
+from tests.benchmarks.seeded.process import add_process
 from tests.benchmarks.seeded.states import claim_state, state_step
 
 

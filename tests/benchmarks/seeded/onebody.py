@@ -12,7 +12,8 @@ from tests.benchmarks.seeded.draft import Draft, head_of
 from tests.benchmarks.seeded.equation import NoStateError
 from tests.benchmarks.seeded.fluids import RealFluid
 from tests.benchmarks.seeded.gases import ConstantGas, IdealPart, PolynomialGas, Solid
-from tests.benchmarks.seeded.process import ADIABATIC, Leg, add_process
+from tests.benchmarks.seeded.leg import ADIABATIC, Leg
+from tests.benchmarks.seeded.process import add_process
 from tests.benchmarks.seeded.states import ModelOf, claim_state, state_step
 
 KJ_KGK = un.KJ_KGK

@@ -9,6 +9,7 @@ from tests.benchmarks.seeded import units as un
 from tests.benchmarks.seeded.draft import Draft, head_of
 from tests.benchmarks.seeded.equation import NoStateError
 from tests.benchmarks.seeded.fluids import RealFluid
+from tests.benchmarks.seeded.leg import Leg
 from tests.benchmarks.seeded.onebody import (
     Maker,
     direct_and_place,
@@ -17,7 +18,7 @@ from tests.benchmarks.seeded.onebody import (
     real_fluid,
     skeleton,
 )
-from tests.benchmarks.seeded.process import Leg, add_process
+from tests.benchmarks.seeded.process import add_process
 from tests.benchmarks.seeded.states import ModelOf, claim_state, state_step
 
 
