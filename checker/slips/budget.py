@@ -5,9 +5,9 @@ from __future__ import annotations
 from dataclasses import dataclass
 from typing import Final
 
-MOST_PER_ORIGIN: Final = 4000
+MOST_PER_ORIGIN: Final = 2500
 """What dear trials for one origin may cost, in property states; where more is needed, the diagnosis says so."""
-MOST_PER_RECORD: Final = 12000
+MOST_PER_RECORD: Final = 8000
 """What all dear trials of a record may cost; many origins share it evenly."""
 LEAST_PER_ORIGIN: Final = 200
 """What every origin has at least: enough for the slips of one formula."""

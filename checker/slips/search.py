@@ -12,6 +12,7 @@ from checker.comparison.compare import Compared
 from checker.facts.origins import origins
 from checker.findings import Cause, Outcome
 from checker.outcomes import NotEvaluable
+from checker.sheet.step import reevaluate
 from checker.slips.bench import Bench
 from checker.slips.budget import Budget
 from checker.slips.catalogue import CATALOGUE
@@ -22,7 +23,7 @@ from checker.submission import Role
 
 BARELY: Final = 0.25
 """Part of the stated half-width below which it makes no difference whether the originator rounded early."""
-MOST_WEIGHED: Final = 16
+MOST_WEIGHED: Final = 8
 """Matches of one origin that are held against all of its record."""
 
 NONE_FITS: Final = "no slip of the catalogue reproduces the stated digits"
@@ -55,17 +56,22 @@ class Diagnosis:
 def diagnose(case: Case, catalogue: Sequence[Slip] = CATALOGUE) -> dict[str, Diagnosis]:
     """Return a diagnosis for the first result of every origin, by its pointer.
 
-    An origin that the cause of an earlier one reproduces is named under that one, and has none of its own.
+    An origin that the cause of an earlier one reproduces is named under that one, and has none of its own. A later
+    origin is also looked at with the slips in force that are stated as the causes of earlier ones: that is how two
+    slips of one record are told apart.
     """
     found: dict[str, Diagnosis] = {}
     done: set[str] = set()
+    made: dict[str, float] = {}
     firm = (next((c for c in group if not c.explained_by_digits), None) for group in origins(case))
     leads = tuple(c for c in firm if c is not None and c.deviation is not None)
     for lead in leads:
         if lead.statement.pointer not in done:
-            own = _Inquiry(case, lead, leads, catalogue).diagnosis()
+            inquiry = _Inquiry(case, lead, leads, catalogue, made)
+            own = inquiry.diagnosis()
             found[lead.statement.pointer] = own
             done.update(own.explains)
+            made.update(inquiry.change if not own.note else {})
     return found
 
 
@@ -73,11 +79,17 @@ class _Inquiry:
     """The search for the cause of one origin; lives as long as it takes."""
 
     def __init__(
-        self, case: Case, lead: Compared, leads: Sequence[Compared], catalogue: Sequence[Slip]
+        self,
+        case: Case,
+        lead: Compared,
+        leads: Sequence[Compared],
+        catalogue: Sequence[Slip],
+        made: Mapping[str, float] | None = None,
     ) -> None:
         self.case, self.lead, self.leads, self.catalogue = case, lead, leads, catalogue
         self.budget = Budget.of(len(leads))
-        self.benches = tuple(_benches(case, lead))
+        self.change: Change = {}
+        self.benches = (*_benches(case, lead), *_slipped_benches(case, lead, made or {}))
         step = case.plan.sheet.made_by.get(lead.key)
         outputs = set(step.outputs) if step is not None else {lead.key}
         self.siblings = [
@@ -96,6 +108,7 @@ class _Inquiry:
         if not matches:
             return Diagnosis(note=f"{NONE_FITS}; {CAPPED}" if self.budget.hit else NONE_FITS)
         best = matches[0]
+        self.change = best.candidate.change
         explained = tuple(self._explained(best))
         half = window(self.case, self.lead, best.bench, best.candidate.value, best.tier)
         chance = by_chance(self.lead, best, [c for c, _ in tried], half) * self._evidence(explained, best)
@@ -210,6 +223,17 @@ def _benches(case: Case, lead: Compared) -> Iterator[Bench]:
             return  # the numbers stated above could not move the result beyond its own digits
     if hidden:
         yield Bench(case, lead, case.carried.values, hidden, carried=True)
+
+
+def _slipped_benches(case: Case, lead: Compared, made: Mapping[str, float]) -> Iterator[Bench]:
+    """Yield the bench on which the slips found so far are in force, where they lead to the origin."""
+    if set(made).isdisjoint(case.plan.sheet.ancestors(lead.key)):
+        return
+    changes = {key: value for key, value in made.items() if key != lead.key}
+    values = {**case.values, **reevaluate(case.plan.sheet, case.values, changes), **changes}
+    own = {c.key for c in case.compared if c.statement.role is Role.RESULT and c.key != lead.key}
+    known = {key: value for key in own if isinstance(value := values.get(key), float)}
+    yield Bench(case, lead, values, {**known, **changes})
 
 
 def _difference(one: object, other: object) -> float:

@@ -108,7 +108,10 @@ def boundary_work_twice(bench: Bench) -> Iterator[Change]:
 
 def work_sign(bench: Bench) -> Iterator[Change]:
     """Yield balances with the sign of the work reversed."""
-    return _with_term(bench, ("work", *KINDS), -1.0)
+    yield from _with_term(bench, ("work", *KINDS), -1.0)
+    value = bench.get(bench.key)
+    if value and (bench.key.rsplit("/", 1)[-1] in ("work", *KINDS) or "/work_transfers/" in bench.key):
+        yield {bench.key: -value}
 
 
 def heat_sign(bench: Bench) -> Iterator[Change]:

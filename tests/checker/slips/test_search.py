@@ -174,3 +174,19 @@ def test_a_search_of_a_failing_slip_goes_on(monkeypatch):
     broken = (Slip("broken", "it breaks", 1, failing), *CATALOGUE)
     assert only(change("51.93 kJ"), broken).causes[0].slip == "cp for cv"
     assert search.CATALOGUE is CATALOGUE
+
+
+def test_the_second_slip_of_a_record_is_found_under_the_first():
+    """With a mass of 0.12 kg used as 0.21 kg, ΔS from that mass has the decimal logarithm."""
+    record = gas(
+        results={
+            "internal_energy_change": f"{0.21 * CV * (T2 - T1) / 1000.0:.6g} kJ",
+            "entropy_change": f"{0.21 * CV * math.log10(T2 / T1):.6g} J/K",
+        },
+        body={"mass": "0.1200 kg"},
+    )
+    found = diagnose(case(record))
+    assert [own.causes[0].slip for own in found.values()] == [
+        "input digits transposed",
+        "decimal logarithm",
+    ] or [own.causes[0].slip for own in found.values()] == ["decimal logarithm", "input digits transposed"]
