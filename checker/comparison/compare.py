@@ -95,7 +95,8 @@ def compare_all(
     ]
     wrong = {c.key for c in found if c.outcome is Outcome.WRONG}
     above = Lineage(sheet, wrong | carried.marks)
-    standing = [_with_standing(c, above, carried, wrong) for c in found]
+    own = References(sheet, {**carried.values, **carried.stated}, basis)
+    standing = [_with_standing(c, above, carried, own, wrong) for c in found]
     return _one_origin_per_step([_with_digits_used(c, record, sheet, carried) for c in standing], sheet)
 
 
@@ -270,14 +271,23 @@ def _not_carried_on(
     return c, ancestors
 
 
-def _with_standing(c: Compared, lineage: Lineage, carried: Carried, wrong: set[str]) -> Compared:
+def _more_allowed(c: Compared, carried: Carried, own: References) -> float:
+    """Return what the allowance is larger where it is taken of the balance that the originator had."""
+    value = carried.value(c.key)
+    return max(0.0, own.allowance(c.key, value) - c.allowance) if isinstance(value, float) else 0.0
+
+
+def _with_standing(
+    c: Compared, lineage: Lineage, carried: Carried, own: References, wrong: set[str]
+) -> Compared:
     """Return the comparison with where its deviation comes from: the four cases of section 5."""
     if c.outcome is Outcome.NOT_EVALUABLE:
         return c
     above = lineage.above(c.key)
     value, start = carried.nearest(c.key, above, c.stated)
     ancestors = sorted((above | set(start)) & wrong)
-    c = replace(c, carried=value)
+    more = _more_allowed(c, carried, own) if ancestors else 0.0
+    c = replace(c, carried=value, carried_tolerance=c.carried_tolerance + more)
     near = _is_near(c)
     if near is False and c.outcome is Outcome.WRONG:
         c, ancestors = _not_carried_on(c, above, carried, ancestors)

@@ -9,7 +9,7 @@ from __future__ import annotations
 import math
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
-from typing import Final
+from typing import Final, NamedTuple
 
 from checker.case import Case
 from checker.comparison.compare import Compared
@@ -95,21 +95,20 @@ class _Purse:
 
 def _best(case: Case, lead: Compared, others: Sequence[Compared], purse: _Purse) -> Common | None:
     """Return the parent that explains most of the other origins together with the first one."""
-    best: Common | None = None
     hidden = {c.key: frozenset(_hidden(case, c.key)) for c in (lead, *others)}
     parents = [key for key in _hidden(case, lead.key) if any(key in hidden[c.key] for c in others)]
-    for key in parents[:MOST_PARENTS]:
-        below = [c for c in others if key in hidden[c.key]]
-        if best is not None and len(below) <= len(best.others):
-            continue
-        solved = _solved(case, lead, key, purse)
-        if solved is None:
-            continue
-        agree = [c for c in below if _agrees(case, c, key, solved)]
-        chance = len(parents) * math.prod(_chance(case, c, key, solved) for c in agree)
+    trials = [
+        (key, solved, {c: _window(case, c, key, solved) for c in others if key in hidden[c.key]})
+        for key in parents[:MOST_PARENTS]
+        if (solved := _solved(case, lead, key, purse)) is not None
+    ]
+    told = len({tuple(f"{window.middle:.3e}" for window in seen.values()) for _, _, seen in trials})
+    best: Common | None = None
+    for key, solved, seen in trials:
+        agree = [c for c, window in seen.items() if window.holds(c)]
+        chance = told * math.prod(seen[c].chance(c) for c in agree)
         if agree and chance < LEAST_CHANCE and (best is None or len(agree) > len(best.others)):
-            pointers = tuple(c.statement.pointer for c in agree)
-            best = Common(key, solved[0], lead.statement.pointer, pointers)
+            best = Common(key, solved[0], lead.statement.pointer, tuple(c.statement.pointer for c in agree))
     return best
 
 
@@ -165,24 +164,27 @@ def _next(one: tuple[float, float], two: tuple[float, float], wanted: float) -> 
     return x2 + (wanted - y2) * (x2 - x1) / (y2 - y1)
 
 
-def _window(case: Case, c: Compared, key: str, solved: tuple[float, float]) -> tuple[float, float] | None:
-    """Return what follows for an origin, and how far the digits of all that it follows from may move it."""
+class _Window(NamedTuple):
+    """What follows for an origin, and how far the digits of all that it follows from may move it."""
+
+    middle: float
+    half: float
+
+    def holds(self, c: Compared) -> bool:
+        """Say whether the stated value lies within."""
+        return abs(self.middle - c.stated) <= self.half
+
+    def chance(self, c: Compared) -> float:
+        """Return how likely an origin lies within by chance: the window beside its deviation."""
+        if not isinstance(c.carried, float) or c.stated == c.carried:
+            return 1.0
+        return min(1.0, 2.0 * self.half / abs(c.stated - c.carried))
+
+
+def _window(case: Case, c: Compared, key: str, solved: tuple[float, float]) -> _Window:
     value, half = solved
     middle, end = _follow(case, c.key, key, value), _follow(case, c.key, key, value + half)
     if middle is None or end is None:
-        return None
+        return _Window(math.nan, 0.0)
     own = ROUNDED * c.statement.quantity.half_width + case.carried.spread(c.key)
-    return middle, own + ROUNDED * abs(end - middle)
-
-
-def _agrees(case: Case, c: Compared, key: str, solved: tuple[float, float]) -> bool:
-    window = _window(case, c, key, solved)
-    return window is not None and abs(window[0] - c.stated) <= window[1]
-
-
-def _chance(case: Case, c: Compared, key: str, solved: tuple[float, float]) -> float:
-    """Return how likely an origin agrees by chance: its window beside its deviation."""
-    window = _window(case, c, key, solved)
-    if window is None or not isinstance(c.carried, float):
-        return 1.0
-    return min(1.0, 2.0 * window[1] / max(abs(c.stated - c.carried), 1e-300))
+    return _Window(middle, own + ROUNDED * abs(end - middle))

@@ -298,3 +298,11 @@ def test_last_digits_below_stated_results_still_explain():
     """Q alone stated: ΔS, and with it S_gen, still moves with the digits of the mass."""
     found = compared(case(with_coarse_mass(heat="31.16 kJ")), SGEN)
     assert found.explained_by_digits
+
+
+@pytest.mark.parametrize(("generation", "standing"), [(2.047, Standing.INHERITED), (2.1, Standing.ORIGIN)])
+def test_what_follows_from_a_large_wrong_number_is_held_to_its_own_size(generation, standing):
+    """Q and ΔS stated a hundred times too large: S_gen follows within 0.5 % of 8.96 kJ/K, not of 0.0896 kJ/K."""
+    stated = {"heat": "3116 kJ", "entropy_change": "8.964 kJ/K"}
+    found = case(gas_bottle({**stated, "entropy_generation": f"{generation:.3f} kJ/K"}))
+    assert compared(found, SGEN).standing is standing
