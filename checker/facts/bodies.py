@@ -70,6 +70,10 @@ def _allowance(case: Case, name: str, value: float) -> float:
     return case.basis.allowances[Allowance.VALUE] * abs(value)
 
 
+EVACUATED = "rest of the volume evacuated"
+"""The assumption that a shared volume is not filled at the start: a vessel beside the bodies is empty."""
+
+
 @dataclass(frozen=True, slots=True)
 class Occupied:
     """What bodies fill of a shared volume in a state, and what there is of it. [m³]"""
@@ -107,6 +111,9 @@ def misfit(case: Case, process: str) -> Occupied | None:
         Occupied(state, filled, volume, Deviation(filled - volume, slack + uncertainty, digits))
         for state, (filled, uncertainty, digits) in sums.items()
     ]
+    if any(assumption.word == EVACUATED for assumption in case.record.assumptions):
+        first = ctx.process.from_state
+        fits = [found for found in fits if found.state != first or found.deviation.size > 0.0]
     wrong = [found for found in fits if found.deviation.beyond]
     return max(wrong, key=lambda found: abs(found.deviation.size), default=None)
 

@@ -52,6 +52,9 @@ ASSUMPTIONS: Final[tuple[KnownAssumption, ...]] = (
                     also=("heat loss negligible", "heat losses negligible")),
     KnownAssumption("incompressible",
                     "the density of the body is the same in all states within the allowance"),
+    KnownAssumption("rest of the volume evacuated",
+                    "the bodies that share a volume fill only a part of it at the start of a process",
+                    also=("vessel evacuated", "evacuated vessel")),
 )  # fmt: skip
 
 _BY_WORDING: Final[dict[str, KnownAssumption]] = {

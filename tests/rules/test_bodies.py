@@ -120,3 +120,43 @@ def test_what_else_destroys_entropy_stays_a_finding_of_its_own():
     }
     found = rules_of(uphill("363.00 K", wall))
     assert {"generation-negative", "heat-between-bodies-uphill"} <= set(found)
+
+
+def filling(*assumptions: dict[str, str]) -> dict[str, Any]:
+    """Return two parcels of gas from one bottle of 60.9 L that fill it and an empty vessel, 100 L together."""
+    gas = {"substance": "Purge gas", "model": "constant specific heat"}
+    inputs = {"cv": "0.72000 kJ/(kg·K)", "gas_constant": "0.29000 kJ/(kg·K)"}
+    shut = {"inputs": {"temperature": "300.00 K", "pressure": "2000.0 kPa"}}
+    return {
+        "id": "r",
+        "title": "Bottle joined to an empty vessel",
+        "bodies": {
+            "stayed": {**gas, "inputs": {**inputs, "mass": "0.90000 kg"}},
+            "passed": {**gas, "inputs": {**inputs, "mass": "0.50000 kg"}},
+        },
+        "states": {
+            "shut": {"stayed": shut, "passed": shut},
+            # The energy of a perfect gas is p·V·c_v/R, whatever the temperatures: p₂ = m·R·T₁/V.
+            "open": {"stayed": {"results": {"pressure": "1218.0 kPa"}}, "passed": {}},
+        },
+        "processes": [
+            {
+                "id": "filling",
+                "from": "shut",
+                "to": "open",
+                "path": {"stayed": "isentropic"},
+                "insulated": "true",
+                "equilibrium": ["pressure"],
+                "total_volume": {"bodies": ["stayed", "passed"], "inputs": {"volume": "0.10000 m³"}},
+                "heat_transfers": [],
+                "work_transfers": [],
+            }
+        ],
+        "assumptions": list(assumptions),
+    }
+
+
+def test_a_volume_that_is_filled_in_part_needs_the_word_that_the_rest_is_evacuated():
+    """Without it the bodies do not add up to the volume; with it the package stands as it is."""
+    assert "shared-volume-contradicted" in rules_of(filling())
+    assert rules_of(filling({"id": "empty", "text": "Rest of the volume evacuated."})) == []
