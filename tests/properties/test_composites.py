@@ -36,6 +36,8 @@ FOUND: Final = 1e-6
 """Relative difference between a value withheld and the value found, where both are true to the balance."""
 CLOSED: Final = 1e-8
 """Largest residual, relative to the terms of its equation."""
+SAME: Final = 1e-9
+"""Relative difference between two ways to write one composite."""
 FLOOR: Final = 1.0
 """[J/(kg·K)] times mass and temperature: energies below it are no terms."""
 
@@ -208,7 +210,7 @@ def assert_same(one: dict[str, float], other: dict[str, float], bodies: float) -
     assert one.keys() == other.keys()
     for name, value in one.items():
         slack = {"heat": 1.0, "work": 1.0, "internal_energy_change": 1.0, "entropy_generation": 1e-3}
-        assert other[name] == pytest.approx(value, rel=1e-7, abs=1e-7 * bodies * slack.get(name, 0.0)), name
+        assert other[name] == pytest.approx(value, rel=SAME, abs=SAME * bodies * slack.get(name, 0.0)), name
 
 
 def held(composite: Composite) -> float:
@@ -244,7 +246,7 @@ def test_two_halves_of_a_body_behave_as_the_body(composite: Composite) -> None:
     whole, parted = values_of(composite), values_of(other)
     last, extra = len(composite.parts) - 1, len(composite.parts)
     for name in [name for name in whole if f" {last} " in name]:
-        assert parted.pop(name.replace(f" {last} ", f" {extra} ")) == pytest.approx(whole[name], rel=1e-7)
+        assert parted.pop(name.replace(f" {last} ", f" {extra} ")) == pytest.approx(whole[name], rel=SAME)
     assert_same(whole, parted, held(composite))
 
 

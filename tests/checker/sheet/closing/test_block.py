@@ -109,3 +109,57 @@ def test_no_solution_names_unknowns_and_equations():
     assert isinstance(found, NotEvaluable)
     assert found.reason.startswith("no T of left and right in after")
     assert "energy balance of joining" in found.reason
+
+
+def waxed() -> dict[str, Any]:
+    """Return a block, wax and twice water, cooled until they are at the wax's melting point; the wax melts in part."""
+    water = {"substance": "Water", "model": "real fluid"}
+    wax = {
+        "melting_temperature": "362.952 K",
+        "latent_heat": "202868 J/kg",
+        "specific_heat_of_solid": "2551.49 J/(kg·K)",
+        "specific_heat_of_liquid": "989.178 J/(kg·K)",
+        "mass": "3.60755 kg",
+    }
+    block = {"specific_heat": "1633.04 J/(kg·K)", "mass": "30.7265 kg"}
+    start = {
+        "block": {"temperature": "406.902 K"},
+        "wax": {"temperature": "276.311 K"},
+        "liquid": {"temperature": "354.799 K", "pressure": "854842 Pa"},
+        "steam": {"temperature": "365.009 K", "quality": "0.837513"},
+    }
+    return {
+        "id": "waxed",
+        "bodies": {
+            "block": {"substance": "Block", "model": "constant specific heat", "inputs": block},
+            "wax": {"substance": "Wax", "model": "phase change", "inputs": wax},
+            "liquid": {**water, "inputs": {"mass": "12.9754 kg"}},
+            "steam": {**water, "inputs": {"mass": "10.3739 kg"}},
+        },
+        "states": {
+            "before": {name: {"inputs": known} for name, known in start.items()},
+            "after": {name: {"results": {"temperature": "362.952 K"}} for name in start},
+        },
+        "processes": [
+            {
+                "id": "cooling",
+                "from": "before",
+                "to": "after",
+                "path": dict.fromkeys(("liquid", "steam"), "constant pressure"),
+                "equilibrium": ["temperature"],
+                "work_transfers": [],
+                "heat_transfers": [
+                    {"id": "wall", "boundary_temperature": "100 K", "inputs": {"energy": "-20394.323118 kJ"}}
+                ],
+            }
+        ],
+    }
+
+
+def test_a_body_that_melts_in_part_beside_water_is_found():
+    """All come to the temperature of melting, at which 61 % of the wax is liquid."""
+    plan = planned(waxed())
+    values = evaluate(plan.sheet.steps, plan.sheet.leaves)
+    for body in ("block", "wax", "liquid", "steam"):
+        assert values[f"states/after/{body}/temperature"] == pytest.approx(362.952, rel=1e-9)
+    assert values["states/after/wax/specific_internal_energy"] == pytest.approx(0.612318 * 202868.0, rel=1e-4)
