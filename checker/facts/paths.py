@@ -177,7 +177,9 @@ def heats_against_paths(case: Case, process: str) -> Iterator[tuple[str, str, st
     for item in ctx.process.heat_transfers or () if ctx and len(ctx.bodies) > 1 else ():
         pointer = f"processes/{process}/heat_transfers/{item.id}/energy"
         for body in (item.body, item.from_body, item.to_body):
-            kind = next((path.kind for path in ctx.paths_of(body) if path.no_heat), "") if ctx and body else ""
+            kind = (
+                next((path.kind for path in ctx.paths_of(body) if path.no_heat), "") if ctx and body else ""
+            )
             if body and kind and case.given(pointer):
                 yield pointer, body, kind
 

@@ -117,7 +117,11 @@ def _rule(case: Case, found: BodyState, failure: NotEvaluable | None, reason: st
     quality = case.given(f"{base}quality")
     if quality is not None and not 0.0 <= quality <= 1.0:
         return "quality-outside-range"
-    near = REACHES_ACROSS in reason or UNTOLD in reason or (failure is not None and failure.kind == "near-saturation")
+    near = (
+        REACHES_ACROSS in reason
+        or UNTOLD in reason
+        or (failure is not None and failure.kind == "near-saturation")
+    )
     if near:
         return TWO_PHASE if _claims_two_phases(case, found) else "near-saturation"
     return RULE_OF_KIND.get(failure.kind, UNDETERMINED) if failure else UNDETERMINED

@@ -117,7 +117,9 @@ class ProcessContext:
         heats = {self.item_base("heat", item.id): item.id for item in self.external_heats or ()}
         finite = [f"{base}/final_reservoir_temperature" for base in heats if self.has_finite_reservoir(base)]
         timed = self.losses is not None
-        lost = [self.heat_item(item) for base, item in heats.items() if timed and self.loses_by_coefficient(base)]
+        lost = [
+            self.heat_item(item) for base, item in heats.items() if timed and self.loses_by_coefficient(base)
+        ]
         return (self.key("boundary_work"), *((self.key("duration"),) if timed else ()), *finite, *lost)
 
     @property
@@ -209,7 +211,11 @@ class ProcessContext:
         incompressible = self.boundary_work_is_zero(body)
         for path in self.paths_of(body):
             # Without change of volume there is no work, and neither p nor the end state need be known for it.
-            held = incompressible and path.kind in ("isothermal", "constant pressure") and not self._expands(body)
+            held = (
+                incompressible
+                and path.kind in ("isothermal", "constant pressure")
+                and not self._expands(body)
+            )
             if path.work is not None and not held:
                 return _work_step(self, body, path.work, output, f"{title} ({path.kind})")
         if incompressible:

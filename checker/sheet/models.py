@@ -105,9 +105,7 @@ def _with_water(record: Record, model: BodyModel) -> BodyModel:
         content = source.value()
     except NotEvaluable as outcome:
         return replace(model, refusal=outcome)
-    return replace(
-        model, constants=(*model.constants, WATER_CONTENT), nominal=(*model.nominal, content)
-    )
+    return replace(model, constants=(*model.constants, WATER_CONTENT), nominal=(*model.nominal, content))
 
 
 def outputs_of(state: PropertyState) -> tuple[float | str | None, ...]:

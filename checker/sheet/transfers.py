@@ -57,9 +57,7 @@ def heat_candidates(ctx: ProcessContext) -> Iterator[Step]:
 
 def _unknown_item(ctx: ProcessContext, keys: list[str]) -> Iterator[Step]:
     """Yield the one heat transfer that nobody gave, from the balance less the others."""
-    supplied = {
-        ctx.heat_item(i.id) for i in ctx.external_heats or () if ctx.is_supplied("heat", i.id)
-    }
+    supplied = {ctx.heat_item(i.id) for i in ctx.external_heats or () if ctx.is_supplied("heat", i.id)}
     unknown = [key for key in keys if key not in supplied]
     if len(unknown) != 1:
         return

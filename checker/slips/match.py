@@ -84,7 +84,8 @@ class Weighing:
     def weighed(self, match: Match) -> Match:
         """Return the match with what it leaves unexplained, in the reading that leaves least."""
         change, lead = match.candidate.change, self.lead.key
-        readings: list[tuple[Mapping[str, float], int]] = [({lead: match.candidate.value}, 0), ({}, 0)]
+        # A slip of the origin itself may take other outputs of its step along, or be one of the pen alone.
+        readings: list[tuple[Mapping[str, float], int]] = [(change, 0), ({}, 0)]
         if lead not in change:
             given = any(key.startswith("given/") for key in change)
             readings = [(change, 0), ({lead: match.candidate.value}, int(given))]

@@ -108,7 +108,10 @@ def _two_phase(bench: Bench, quality: float | None) -> Iterator[Change]:
         wrong = 1.0 - found.quality if quality is None else quality
         other = tried(substance, {"temperature": found.temperature, "quality": wrong})
         if other is not None:
-            yield state_change(step, other)
+            # What the state is known by stays: with its volume given, only what is looked up with x is wrong.
+            kept = set(_known(bench, step)) - {"quality"}
+            changed = state_change(step, other)
+            yield {key: value for key, value in changed.items() if key.rsplit("/", 1)[-1] not in kept}
 
 
 def quality_ignored(bench: Bench) -> Iterator[Change]:

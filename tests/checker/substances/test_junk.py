@@ -65,7 +65,9 @@ def model(name: str) -> Substance:
 def test_junk_is_not_evaluable_and_never_an_error(name: str) -> None:
     """For every pair of properties any numbers give states that make sense, or one of the kinds of NotEvaluable."""
     substance = model(name)
-    model("water").crosses_saturation(300.0, 1.0, 1e5, 1.0)  # loads the property library, which is not to be timed
+    model("water").crosses_saturation(
+        300.0, 1.0, 1e5, 1.0
+    )  # loads the property library, which is not to be timed
     asked = 0
 
     @settings(max_examples=120, deadline=None, derandomize=True)
