@@ -178,14 +178,21 @@ def possible(composite: Composite) -> bool:
     return composite.generation > 1.0
 
 
+ON_THE_MODEL = ("ideal-gas-too-dense", "constant-specific-heat-over-wide-span")
+"""Rules that do the record again with a better model: gas equalised from 8 bar ends a kelvin colder in truth."""
+
+
 @steady(15)
 @given(drawn().filter(possible))
 def test_a_correct_composite_is_accepted(composite: Composite) -> None:
-    """Everything that is withheld is claimed as it is: nothing is left to answer."""
+    """Everything that is withheld is claimed as it is: nothing is left to answer but for the choice of the model."""
     found = review(composite.package(), name="trial")
-    blocking = [f"{f.rule} {f.quantity}: {f.message}" for f in found.findings if f.grade is not Grade.REMARK]
+    of_calculation = [f for f in found.findings if f.rule not in ON_THE_MODEL]
+    blocking = [f"{f.rule} {f.quantity}: {f.message}" for f in of_calculation if f.grade is not Grade.REMARK]
     assert not blocking, "\n".join(blocking)
-    assert found.verdict in (Verdict.ACCEPT, Verdict.ACCEPT_AS_NOTED)
+    assert found.verdict in (Verdict.ACCEPT, Verdict.ACCEPT_AS_NOTED) or len(of_calculation) < len(
+        found.findings
+    )
 
 
 def values_of(composite: Composite) -> dict[str, float]:
