@@ -8,7 +8,7 @@ from typing import Final
 from checker.outcomes import NotEvaluable
 from checker.sheet.balances import same_value, sum_text, total
 from checker.sheet.context import ProcessContext
-from checker.sheet.keys import given
+from checker.sheet.keys import given, state_key
 from checker.sheet.step import Step
 from checker.submission import Record, Role
 
@@ -120,10 +120,24 @@ def sequence_steps(record: Record, contexts: Sequence[ProcessContext]) -> Iterat
                 "sum over the sequence",
                 sum_text(len(members)),
             )
+        yield from _stops(sequence.id, members)
         for name in (*SUMS, "lift_pressure", "stop_volume"):
             key = f"{base}/{name}"
             if record.stated(key, Role.INPUT):
                 yield same_value(key, given(key), f"{name.replace('_', ' ')}, {sequence.id}", "given")
+
+
+def _stops(sequence: str, members: Sequence[ProcessContext]) -> Iterator[Step]:
+    """Yield the pressure at which the piston lifts and the volume at its stop, from the states where they are known."""
+    for ctx in members[:-1]:
+        if len(ctx.bodies) != 1:
+            continue
+        body, end = ctx.bodies[0], ctx.process.to_state
+        rests = any(path.holds == "specific_volume" for path in ctx.paths_of(body))
+        name, prop = ("lift_pressure", "pressure") if rests else ("stop_volume", "volume")
+        title = f"{name.replace('_', ' ').capitalize()}, sequence {sequence}"
+        source = state_key(end, body, prop)
+        yield same_value(f"sequences/{sequence}/{name}", source, title, f"that of {body} in {end}")
 
 
 def _destruction_with_surroundings(sequence: str) -> Step:

@@ -11,7 +11,8 @@ from typing import Any
 import pytest
 
 from checker.case import Case
-from tests.checker.cases import case
+from checker.findings import Outcome
+from tests.checker.cases import case, compared
 from tests.checker.records_of_several import stops
 
 CV, CP, R = 0.72, 1.01, 0.29
@@ -125,3 +126,13 @@ def test_a_condition_on_the_other_side_of_the_start_passes_no_stop():
     end = 300.0 - 36.0 / CV
     assert temperatures(lifting({"heat": "-36 kJ"})) == pytest.approx((end, end), rel=1e-10)
     assert math.isclose(end, 250.0)
+
+
+@pytest.mark.parametrize(("stated", "agrees"), [("150.0 kPa", True), ("200.0 kPa", False)])
+def test_a_lift_pressure_beside_known_states_is_held_against_them(stated: str, agrees: bool):
+    """Warmed at rest to 450 K the gas has 150 kPa: another lift pressure contradicts the state in which it lifts."""
+    record = sequence(("constant volume", "constant pressure"), {"lift_pressure": stated})
+    record["states"]["lifted"]["gas"] = {"inputs": {"temperature": "450.0 K"}}
+    record["states"]["hot"]["gas"] = {"inputs": {"temperature": "600.0 K"}}
+    found = compared(case(record), "sequences/all/lift_pressure")
+    assert (found.outcome is Outcome.AGREES) is agrees
