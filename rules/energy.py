@@ -35,6 +35,7 @@ def not_closed(case: Case, process: str) -> Yielded:
     if abs(left) <= allowed + change.half_width + heat.half_width + work.half_width:
         return
     if not stated.any_wrong(case, change, heat, work):
+        open_digits = sum(term.open_half_width for term in (change, heat, work))
         pointer = f"processes/{process}/energy_change"
         parts = (change.value, heat.value, work.value)
         shown = [case.show_difference(pointer, value) for value in parts]
@@ -43,6 +44,7 @@ def not_closed(case: Case, process: str) -> Yielded:
             f"{case.show_difference(pointer, left)} of ΔE − Q + W.",
             statement=(change.parts or heat.parts or work.parts)[0],
             quantity=pointer,
+            grade=Grade.QUERY if abs(left) <= allowed + open_digits else None,
             suggestion="Find the term that is wrong or missing; all of them are the originator's own.",
         )
 

@@ -18,6 +18,11 @@ class Stated:
     half_width: float
     parts: tuple[Statement, ...] = ()
 
+    @property
+    def open_half_width(self) -> float:
+        """The half-width where zeros that end an integer are not significant. [SI]"""
+        return sum(max(part.quantity.half_width, part.quantity.open_half_width) for part in self.parts)
+
 
 NOTHING = Stated(0.0, 0.0)
 
