@@ -162,7 +162,7 @@ def boundary_implausible(case: Case, process: str) -> Yielded:
             case,
             process,
             c,
-            lambda q, tb, _, word=word, than=than: f"{q} {word} at {tb}, {than} than the body ever is.",  # type: ignore[misc]
+            lambda q, tb, _, word=word, than=than: f"{q} {word} at {tb}, {than} than the body ever is.",  # type: ignore[misc]  # defaults
             "The boundary temperature is where this heat crosses, on the side of the system.",
         )
 

@@ -25,9 +25,9 @@ ROOT = Path(__file__).resolve().parents[2]
 if str(ROOT) not in sys.path:
     sys.path.insert(0, str(ROOT))
 
-from tests.benchmarks.seeded import score, show  # noqa: E402
-from tests.benchmarks.seeded.judge import Outcomes, judged, left_out  # noqa: E402
-from tests.benchmarks.seeded.trial import Trial, correct_trial, slipped_trial, where_kinds_happen  # noqa: E402
+from tests.benchmarks.seeded import score, show  # noqa: E402 - after the path is set
+from tests.benchmarks.seeded.judge import Outcomes, judged, left_out  # noqa: E402 - after the path is set
+from tests.benchmarks.seeded.trial import Trial, correct_trial, slipped_trial, where_kinds_happen  # noqa: E402 - after the path is set
 
 LEAVE_OUT_EVERY = 3
 """Every third single slip is reviewed once more with its kind left out of the catalogue."""

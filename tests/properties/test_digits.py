@@ -53,7 +53,7 @@ def test_a_right_result_is_not_accused_however_it_is_rounded(
     """Two digits or six, and with no allowance at all: rounding alone is within its own half-width."""
     record = bottle(*temperatures)
     text = f"{rounded(exact(*temperatures)[name], digits)} {UNITS[name]}"
-    record["processes"][0]["results"] = {name: text}  # type: ignore[index]
+    record["processes"][0]["results"] = {name: text}  # type: ignore[index]  # plain JSON
     found = compared(case(record, basis=NOTHING_ALLOWED), f"processes/warming/{name}")
     assert found.outcome is Outcome.AGREES
 
@@ -77,6 +77,6 @@ def test_a_result_off_by_more_than_its_digits_is_held_to_them(
     if wrong <= 0.0 or math.floor(math.log10(wrong)) != math.floor(math.log10(value)):
         return  # another power of ten has other half-widths
     record = bottle(*temperatures)
-    record["processes"][0]["results"] = {name: f"{rounded(wrong, digits)} {UNITS[name]}"}  # type: ignore[index]
+    record["processes"][0]["results"] = {name: f"{rounded(wrong, digits)} {UNITS[name]}"}  # type: ignore[index]  # plain JSON
     found = compared(case(record, basis=NOTHING_ALLOWED), f"processes/warming/{name}")
     assert found.outcome is Outcome.WRONG

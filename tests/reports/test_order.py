@@ -78,4 +78,4 @@ def test_the_verdict_on_a_record_follows_what_concerns_it(
     review: Review, record: object, verdict: Verdict
 ) -> None:
     """A record is judged by its own findings, by what it inherited, and by what could not be recomputed."""
-    assert review.verdict_of(record) is verdict  # type: ignore[arg-type]
+    assert review.verdict_of(record) is verdict  # type: ignore[arg-type]  # a list of parametrize

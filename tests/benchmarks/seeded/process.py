@@ -126,13 +126,13 @@ def _motion(draft: Draft, leg: Leg) -> None:
 
 def _work(draft: Draft, leg: Leg, model_of: ModelOf) -> None:
     m, a, b, wb = leg.mass, f"{leg.first}.", f"{leg.last}.", leg.key("wb")
-    swept: Callable[[Values], float] = lambda v: v[m] * (v[b + "v"] - v[a + "v"])  # noqa: E731
-    pv: Callable[[Values], float] = lambda v: v[m] * (v[b + "p"] * v[b + "v"] - v[a + "p"] * v[a + "v"])  # noqa: E731
+    swept: Callable[[Values], float] = lambda v: v[m] * (v[b + "v"] - v[a + "v"])  # noqa: E731 - a formula on one line
+    pv: Callable[[Values], float] = lambda v: v[m] * (v[b + "p"] * v[b + "v"] - v[a + "p"] * v[a + "v"])  # noqa: E731 - a formula on one line
     slips: list[tuple[str, Function]] = []
     parents: tuple[str, ...] = (m, a + "p", a + "v", b + "p", b + "v")
     function: Function
     if leg.path == "constant pressure":
-        function = lambda v: (v[a + "p"] * swept(v),)  # noqa: E731
+        function = lambda v: (v[a + "p"] * swept(v),)  # noqa: E731 - a formula on one line
         parents = (m, a + "p", a + "v", b + "v")
     elif leg.path == "isothermal":
 

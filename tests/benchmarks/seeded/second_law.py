@@ -76,7 +76,7 @@ def entropy_change(draft: Draft, leg: Leg, model_of: ModelOf) -> None:
         slips = []  # zero by its name; nobody works it out
     if leg.wall and leg.path != "isentropic":
         q = leg.key("q")
-        mean: Function = lambda v: (v[q] / (0.5 * (v[a + "t"] + v[b + "t"])),)  # noqa: E731
+        mean: Function = lambda v: (v[q] / (0.5 * (v[a + "t"] + v[b + "t"])),)  # noqa: E731 - a formula
         slips.append(("heat over mean temperature for the entropy change", mean))
     draft.step(ds, (m, a + "s", b + "s"), lambda v: (change(v),), slips)
 
